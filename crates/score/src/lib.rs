@@ -19,7 +19,7 @@ mod voice;
 pub use bar::{Bar, Place as BarPlace};
 pub use interval::Interval;
 pub use key::{Key, Mode};
-pub use kind::{Compass, Kind};
+pub use kind::{Compass, KINDS, Kind};
 pub use metre::{Metre, MetreError};
 pub use pitch::{Pitch, PitchError};
 pub use score::{Change, Note, Score, Sound};
