@@ -1,1 +1,36 @@
-//! .
+//! The catalogue: one file a rule, and the styles that say which rules apply and how strictly.
+//!
+//! A rule never sees text and never computes an interval: it reads the steps that
+//! `partwright_score` laid out, and names voices and moments.
+
+mod catalogue;
+mod finding;
+mod found;
+pub mod list;
+mod page;
+mod rule;
+pub mod source;
+mod style;
+mod view;
+
+pub use catalogue::{Entry, catalogue, entry, family_of, is_family};
+pub use finding::{Finding, Role, Spot};
+pub use found::Found;
+pub use page::{Example, Page};
+pub use rule::{Case, FAMILIES, Looks, Rule, Severity};
+pub use source::Source;
+pub use style::{STYLES, Setting, Strictness, Style};
+pub use view::{Crossing, Direct, Line, PairMove, Piece, Run, Sounding};
+
+/// What every rule file needs.
+pub mod prelude {
+    pub use partwright_score::{Interval, Pair};
+    pub use partwright_space::{Consecutive, Family, Motion, Way};
+
+    pub use crate::finding::{Role, Spot};
+    pub use crate::found::Found;
+    pub use crate::rule::{Case, Looks, Rule, Severity};
+    pub use crate::source::{self, Source};
+    pub use crate::style::{Setting, Style, allow, fault, remark, weakness};
+    pub use crate::view::{Direct, Line, PairMove, Piece, Sounding};
+}

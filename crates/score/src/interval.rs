@@ -62,6 +62,12 @@ impl Interval {
         (off, matches!(simple, 0 | 3 | 4))
     }
 
+    /// Smaller than minor or perfect.
+    #[must_use]
+    pub fn is_diminished(self) -> bool {
+        matches!(self.quality(), (..=-1, true) | (..=-2, false))
+    }
+
     /// In full: `perfect fifth`, `minor tenth`, `octave`, `augmented fourth`.
     #[must_use]
     pub fn name(self) -> String {

@@ -17,6 +17,21 @@ pub struct Compass {
     pub high: Pitch,
 }
 
+impl Compass {
+    /// On which side of the compass a pitch lies, by sound: 1 above, -1 below, 0 inside.
+    #[must_use]
+    pub const fn side(self, pitch: Pitch) -> i32 {
+        let at = pitch.place().semitone;
+        if at > self.high.place().semitone {
+            1
+        } else if at < self.low.place().semitone {
+            -1
+        } else {
+            0
+        }
+    }
+}
+
 /// What a voice is, as declared in its `voice` line.
 #[derive(Clone, Copy, Debug, PartialEq, Eq, Hash)]
 pub struct Kind {
@@ -241,6 +256,12 @@ impl Kind {
     #[must_use]
     pub fn named(name: &str) -> Option<&'static Kind> {
         KINDS.iter().find(|kind| kind.name == name)
+    }
+
+    /// Whether a singer has it.
+    #[must_use]
+    pub fn is_sung(&self) -> bool {
+        matches!(self.name, "soprano" | "mezzo" | "alto" | "tenor" | "baritone" | "bass" | "voice")
     }
 
     /// The kind of a voice about which nothing is declared.

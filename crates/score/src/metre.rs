@@ -114,6 +114,14 @@ impl Metre {
         Time::new(1, i64::from(self.unit))
     }
 
+    /// The weakest level that is still on a beat: in a compound metre of short units the groups
+    /// are the beats (a dotted crotchet in 6/8), else the cells are. See [`Metre::level`].
+    #[must_use]
+    pub fn beat_level(&self) -> u8 {
+        let by_threes = matches!(self.count, 6 | 9 | 12) && self.groups.is_empty();
+        if by_threes && self.unit >= 8 && self.cell == self.unit() { 1 } else { 2 }
+    }
+
     /// How strong a moment is, by its distance from the bar line: 0 the bar line, 1 a group,
     /// 2 a cell, 3 its half, 4 its quarter and so on. Inside a cell of 3, 5 or 7 parts only the
     /// first is stronger than the rest.

@@ -1,0 +1,44 @@
+//! Running the rules over a score.
+
+use partwright_rules::{Finding, Found, Line, Looks, Piece, Strictness, catalogue};
+use partwright_score::{Score, Texture};
+
+/// The findings of all the rules that take part, in terms of voices and moments, in no order.
+#[must_use]
+pub fn notes_findings(score: &Score, texture: &Texture, strictness: &Strictness) -> Vec<Finding> {
+    let piece = Piece { score, texture };
+    let mut list = Vec::new();
+    let (mut pairs, mut sonorities) = (Vec::new(), Vec::new());
+    for entry in catalogue() {
+        let id = entry.id.as_str();
+        if !strictness.takes(id, entry.family) {
+            continue;
+        }
+        match entry.rule.looks {
+            Looks::Pairs(check) => pairs.push((id, check)),
+            Looks::Sonorities(check) => sonorities.push((id, check)),
+            Looks::Lines(check) => {
+                for voice in 0..score.voices.len() {
+                    check(
+                        &Line { piece, voice },
+                        &mut Found::new(id, strictness, &mut list),
+                    );
+                }
+            }
+            Looks::Piece(check) => check(&piece, &mut Found::new(id, strictness, &mut list)),
+            Looks::Text => {}
+        }
+    }
+    // One sweep for all the rules that look at single steps, so that a step is fetched once.
+    for sounding in piece.soundings() {
+        for &(id, check) in &sonorities {
+            check(&sounding, &mut Found::new(id, strictness, &mut list));
+        }
+        for step in sounding.moves() {
+            for &(id, check) in &pairs {
+                check(&step, &mut Found::new(id, strictness, &mut list));
+            }
+        }
+    }
+    list
+}

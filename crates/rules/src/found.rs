@@ -1,0 +1,99 @@
+//! The list a rule writes its findings to.
+
+use partwright_score::Time;
+
+use crate::finding::{Finding, Role, Spot};
+use crate::rule::{Case, Severity};
+use crate::style::{Strictness, Style};
+use crate::view::PairMove;
+
+/// Collects the findings of one rule under one style.
+pub struct Found<'a> {
+    rule: &'static str,
+    strictness: &'a Strictness,
+    list: &'a mut Vec<Finding>,
+}
+
+impl<'a> Found<'a> {
+    /// A collector for a rule.
+    pub fn new(
+        rule: &'static str,
+        strictness: &'a Strictness,
+        list: &'a mut Vec<Finding>,
+    ) -> Found<'a> {
+        Found {
+            rule,
+            strictness,
+            list,
+        }
+    }
+
+    /// The style in force.
+    #[must_use]
+    pub fn style(&self) -> Style {
+        self.strictness.style
+    }
+
+    /// How much the style minds a case; `None` where it allows it.
+    #[must_use]
+    pub fn severity(&self, case: &'static Case) -> Option<Severity> {
+        case.setting(self.strictness.style)?.severity
+    }
+
+    /// A finding about a pair's step: it stands at the arrival and names the notes it left.
+    /// The message is only made where the style minds.
+    pub fn pair(
+        &mut self,
+        case: &'static Case,
+        step: &PairMove<'_>,
+        message: impl FnOnce() -> String,
+    ) {
+        let Some(severity) = self.severity(case) else {
+            return;
+        };
+        let (upper, lower) = (step.pair.upper, step.pair.lower);
+        let spot = |voice, at| Spot { voice, at };
+        let from = step.departure();
+        self.list.push(Finding {
+            rule: self.rule,
+            severity,
+            message: message(),
+            voices: vec![upper, lower],
+            spot: spot(upper, step.arrival()),
+            until: None,
+            related: vec![
+                (Role::From, spot(upper, from)),
+                (Role::From, spot(lower, from)),
+                (Role::With, spot(lower, step.arrival())),
+            ],
+        });
+    }
+
+    /// A finding about a passage: it stands at the beginning, once, with its extent.
+    pub fn passage(
+        &mut self,
+        case: &'static Case,
+        voices: &[usize],
+        (at, until): (Time, Time),
+        message: impl FnOnce() -> String,
+    ) {
+        let Some(severity) = self.severity(case) else {
+            return;
+        };
+        let Some((&first, others)) = voices.split_first() else {
+            return;
+        };
+        self.list.push(Finding {
+            rule: self.rule,
+            severity,
+            message: message(),
+            voices: voices.to_vec(),
+            spot: Spot { voice: first, at },
+            until: Some(until),
+            related: others
+                .iter()
+                .map(|&voice| (Role::With, Spot { voice, at }))
+                .collect(),
+        });
+    }
+}

@@ -1,0 +1,140 @@
+//! A voice goes below the one that stands under it in the score.
+//!
+//! Why: singers keep their place in the chord by the voices above and below them, and the ear
+//! follows the pitch, not the part: where two voices cross, both lines are lost.
+//!
+//! # Fails
+//!
+//! ```voices
+//! style chorale
+//!
+//! S | D4 E F |
+//! A | C4 F E |
+//! //     ^ crossing (weakness): S and A
+//! B | A3 C D |
+//! ```
+//!
+//! Under the bass it is a fault in a chorale:
+//!
+//! ```voices
+//! style chorale
+//!
+//! S | C5 B4 C5 |
+//! T | E4 D3 E  |
+//! B | C4 G3 C4 |
+//! //     ^^ crossing: T and B
+//! ```
+//!
+//! # Passes
+//!
+//! Meeting in a unison and parting again is no crossing:
+//!
+//! ```voices
+//! style chorale
+//!
+//! S | E4 D E |
+//! B | C4 D C |
+//! ```
+//!
+//! # Does not apply
+//!
+//! Equal voices that may cross, and a bass doubled an octave lower:
+//!
+//! ```voices
+//! style chorale
+//! equal S1 S2
+//! voice S1 soprano
+//! voice S2 soprano
+//!
+//! S1 | D5 C B4 |
+//! S2 | B4 D C |
+//! ```
+//!
+//! ```voices
+//! style chorale
+//! voice T tenor
+//! voice B bass sixteen-foot
+//!
+//! T | E4 A3 E4 |
+//! B | C4 B3 C4 |
+//! ```
+//!
+//! # What to do
+//!
+//! Exchange the two notes, or declare voices that share a register with `equal`.
+
+use crate::prelude::*;
+
+/// The rule.
+pub const RULE: Rule = Rule {
+    looks: Looks::Piece(check),
+    cases: &[&ORDINARY, &BASS],
+    sources: &[
+        source::JEPPESEN.looser("there is no real polyphony without crossing"),
+        source::LEHMANN
+            .at("lesson II")
+            .looser("one or two notes, if the voices part at once"),
+        source::FUX_FIGURES.at("6 of 44 in two parts cross"),
+        source::BACH_CHORALES.at("782 of 30,038 sonorities"),
+    ],
+};
+
+static ORDINARY: Case = Case {
+    name: "",
+    when: "between any two voices but those declared equal",
+    settings: &[
+        weakness(
+            Style::Free,
+            "it happens in 2.6% of the sonorities of the chorales",
+        ),
+        allow(
+            Style::Motet,
+            "equal voices cross freely (Jeppesen, from memory)",
+        ),
+        weakness(
+            Style::Species1,
+            "one or two notes are let pass (Lehmann, lesson II)",
+        ),
+    ],
+};
+
+static BASS: Case = Case {
+    name: "bass",
+    when: "an upper voice below the bass, unless that is doubled an octave lower",
+    settings: &[
+        weakness(Style::Free, "the chord changes its bass"),
+        fault(
+            Style::Chorale,
+            "the chord changes its bass (common practice)",
+        ),
+        allow(Style::Motet, "any voice may be the lowest"),
+        weakness(Style::Species1, "as between other voices"),
+    ],
+};
+
+fn check(piece: &Piece<'_>, found: &mut Found<'_>) {
+    for &pair in piece.texture.pairs() {
+        let bass = pair.lower + 1 == piece.score.voices.len();
+        let doubled_below = piece
+            .score
+            .voices
+            .get(pair.lower)
+            .is_some_and(|v| v.sixteen_foot);
+        if piece.score.are_equal(pair.upper, pair.lower) || doubled_below {
+            continue;
+        }
+        for passage in piece.crossings(pair) {
+            if found.style().is_species() && passage.returns && passage.notes <= 2 {
+                continue;
+            }
+            let case = if bass { &BASS } else { &ORDINARY };
+            found.passage(case, &[pair.upper, pair.lower], (passage.from, passage.until), || {
+                let (upper, lower) = (piece.name(pair.upper), piece.name(pair.lower));
+                format!(
+                    "Crossing: {upper} goes below {lower} {}. Exchange their notes, or declare the two equal.",
+                    piece.extent_text(passage.from, passage.until)
+                )
+            });
+        }
+    }
+}

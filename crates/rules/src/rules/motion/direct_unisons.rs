@@ -1,0 +1,114 @@
+//! Two voices reach a unison in similar motion.
+//!
+//! Why: both run into one note, and a voice is lost on the way there as well as at the end.
+//!
+//! # Fails
+//!
+//! ```voices
+//! style species-1
+//!
+//! S | E4 G4 |
+//! B | C4 G4 |
+//! //     ^^ direct unisons: S and B
+//! ```
+//!
+//! # Passes
+//!
+//! The voices meet from opposite sides:
+//!
+//! ```voices
+//! style species-1
+//!
+//! S | E4 D |
+//! B | C4 D |
+//! ```
+//!
+//! # Does not apply
+//!
+//! In four strict parts:
+//!
+//! ```voices
+//! style species-1
+//!
+//! S | C5 B4 |
+//! A | A4 D4 |
+//! T | F4 D4 |
+//! B | F3 G3 |
+//! ```
+//!
+//! # What to do
+//!
+//! Let one of the two stay or move the other way.
+
+use crate::prelude::*;
+
+/// The rule.
+pub const RULE: Rule = Rule {
+    looks: Looks::Pairs(check),
+    cases: &[&TWO_PARTS, &THREE_PARTS, &MORE_PARTS],
+    sources: &[
+        source::FUX.at("Book II, the four rules of motion"),
+        source::GROVE.at("Hidden Fifths and Octaves"),
+        source::BACH_CHORALES
+            .at("about three in a hundred bars")
+            .looser("inner voices run into unisons freely"),
+    ],
+};
+
+static TWO_PARTS: Case = Case {
+    name: "two-parts",
+    when: "in two parts",
+    settings: &[
+        weakness(
+            Style::Free,
+            "the chorales have about three in a hundred bars",
+        ),
+        fault(
+            Style::Motet,
+            "two parts keep the cardinal rules of motion (Fux)",
+        ),
+        fault(
+            Style::Species1,
+            "to a perfect consonance only by contrary or oblique motion (Fux)",
+        ),
+    ],
+};
+
+static THREE_PARTS: Case = Case {
+    name: "three-parts",
+    when: "in three parts, the upper one leaping",
+    settings: &[weakness(Style::Free, "as for direct fifths and octaves")],
+};
+
+static MORE_PARTS: Case = Case {
+    name: "more-parts",
+    when: "in three parts with the upper one moving by step, and in four or more parts",
+    settings: &[
+        weakness(
+            Style::Free,
+            "the chorales have about three in a hundred bars",
+        ),
+        allow(
+            Style::Species1,
+            "four parts are free of direct perfects; a step covers in three",
+        ),
+    ],
+};
+
+fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
+    if step.consecutive() != Some(Consecutive::Direct(Family::Octave)) || !step.is_in_unison_after()
+    {
+        return;
+    }
+    let case = match step.direct() {
+        Direct::TwoParts | Direct::TwoPartsStep => &TWO_PARTS,
+        Direct::ThreeOuter | Direct::ThreeInner => &THREE_PARTS,
+        Direct::Outer | Direct::Covered => &MORE_PARTS,
+    };
+    found.pair(case, step, || {
+        format!(
+            "Direct unison: {} in the same direction. Let one of them stay or move the other way.",
+            step.story()
+        )
+    });
+}

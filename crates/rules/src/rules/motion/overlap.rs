@@ -1,0 +1,99 @@
+//! A voice moves beyond the note that its neighbour has just left.
+//!
+//! Why: the ear takes the new note for a continuation of the other voice.
+//!
+//! # Fails
+//!
+//! ```voices
+//! style chorale
+//!
+//! S | E4 B |
+//! A | C4 F |
+//! //     ^ overlap (weakness): S and A
+//! B | C3 D |
+//! ```
+//!
+//! # Passes
+//!
+//! ```voices
+//! style chorale
+//!
+//! S | E4 B |
+//! A | C4 D |
+//! B | C3 G |
+//! ```
+//!
+//! # Does not apply
+//!
+//! The chord may well be the same, only its notes change place:
+//!
+//! ```voices
+//! style chorale
+//!
+//! S | E4 C5 |
+//! A | C4 G4 |
+//! B | C3 E3 |
+//! ```
+//!
+//! # What to do
+//!
+//! Keep the voice inside the space its neighbour leaves it.
+
+use crate::prelude::*;
+
+/// The rule.
+pub const RULE: Rule = Rule {
+    looks: Looks::Pairs(check),
+    cases: &[&ORDINARY],
+    sources: &[
+        source::OPEN_MUSIC_THEORY,
+        source::KOSTKA_PAYNE.at("ch. 5"),
+        source::BACH_CHORALES
+            .at("some 1,536 between neighbours")
+            .looser("common in inner voices"),
+    ],
+};
+
+static ORDINARY: Case = Case {
+    name: "",
+    when: "between neighbouring voices, both ends uncrossed, not from a unison",
+    settings: &[
+        allow(Style::Free, "too common to be worth a word"),
+        weakness(
+            Style::Chorale,
+            "handbooks warn of it; the chorales have some 1,500",
+        ),
+        weakness(Style::Species1, "handbooks warn of it (Open Music Theory)"),
+    ],
+};
+
+fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
+    if !step.step.overlaps() || step.is_in_unison_before() || !step.are_neighbours() {
+        return;
+    }
+    let score = step.sounding.piece.score;
+    let bass_changes_octave = step.is_with_bass() && step.size_of_move(step.foot()) == Some(7);
+    if bass_changes_octave
+        || score.are_equal(step.pair.upper, step.pair.lower)
+        || step.sounding.may_keep_chord()
+    {
+        return;
+    }
+    found.pair(&ORDINARY, step, || {
+        let piece = step.sounding.piece;
+        let up = step.rises(step.pair.lower);
+        let (mover, other) = if up {
+            (step.pair.lower, step.pair.upper)
+        } else {
+            (step.pair.upper, step.pair.lower)
+        };
+        format!(
+            "Overlap: {} moves to {}, {} the {} that {} has just left. Keep it inside.",
+            piece.name(mover),
+            step.pitch_after(mover),
+            if up { "above" } else { "below" },
+            step.pitch_before(other),
+            piece.name(other),
+        )
+    });
+}

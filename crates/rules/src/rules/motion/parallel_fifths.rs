@@ -1,0 +1,121 @@
+//! Two voices move in parallel from one perfect fifth to another.
+//!
+//! Why: the two lines fuse into one, and the ear loses a voice.
+//!
+//! # Fails
+//!
+//! ```voices
+//! S | D5 E |
+//! B | G3 A |
+//! //     ^ parallel fifths: S and B
+//! ```
+//!
+//! A fifth to a twelfth in the same direction is no better:
+//!
+//! ```voices
+//! S | G4 A5 |
+//! B | C4 D4 |
+//! //     ^^ parallel fifths: S and B
+//! ```
+//!
+//! Off the beat, where a passing note or an anticipation may be the cause, it is a weakness:
+//!
+//! ```voices
+//! style chorale
+//!
+//! S | C5 F5.E D |
+//! B | C4 A3   G |
+//! //          ^ parallel fifths (weakness): S and B
+//! ```
+//!
+//! # Passes
+//!
+//! The voices move against each other, or one of them stays:
+//!
+//! ```voices
+//! S | D5 C |
+//! B | G3 A |
+//! ```
+//!
+//! ```voices
+//! S | G4 G |
+//! B | C4 C |
+//! ```
+//!
+//! # Does not apply
+//!
+//! The phrase ends between the two fifths:
+//!
+//! ```voices
+//! S | D5^ E |
+//! B | G3  A |
+//! ```
+//!
+//! Both voices only change the octave:
+//!
+//! ```voices
+//! S | G4 G5 |
+//! B | C4 C5 |
+//! ```
+//!
+//! # What to do
+//!
+//! Move one of the two voices the other way, or let one of them stay.
+
+use crate::prelude::*;
+
+/// The rule.
+pub const RULE: Rule = Rule {
+    looks: Looks::Pairs(check),
+    cases: &[&ORDINARY, &OFF_BEAT],
+    sources: &[
+        source::FUX.at("Book II, the four rules of motion"),
+        source::LEHMANN.at("lesson I"),
+        source::GROVE.at("Strict Counterpoint"),
+        source::FUX_FIGURES.at("none in 115 figures"),
+        source::BACH_CHORALES.at("16, nine of them an anticipation at the cadence"),
+        source::DAHN.looser("fifths that ornaments make are passed over"),
+    ],
+};
+
+static ORDINARY: Case = Case {
+    name: "",
+    when: "between any two voices, compound fifths included",
+    settings: &[fault(Style::Free, "every treatise forbids it")],
+};
+
+static OFF_BEAT: Case = Case {
+    name: "off-beat",
+    when: "either fifth begins between beats, where an ornament may make it",
+    settings: &[
+        weakness(
+            Style::Free,
+            "an anticipation or an unaccented ornament may be the cause (Dahn 2016)",
+        ),
+        fault(
+            Style::Motet,
+            "the 16th century makes no exception for ornaments",
+        ),
+        fault(
+            Style::Species1,
+            "strict counterpoint makes no exception for ornaments",
+        ),
+    ],
+};
+
+fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
+    if step.consecutive() != Some(Consecutive::Same(Family::Fifth)) || step.step.keeps_classes() {
+        return;
+    }
+    let case = if step.is_off_beat() {
+        &OFF_BEAT
+    } else {
+        &ORDINARY
+    };
+    found.pair(case, step, || {
+        format!(
+            "Parallel fifths: {}. Move one voice the other way.",
+            step.story()
+        )
+    });
+}

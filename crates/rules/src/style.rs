@@ -1,0 +1,178 @@
+//! Styles: a base plus overrides, each with its reason.
+//!
+//! The overrides stand in the rule files, beside the cases they set, so that a rule is added in
+//! one file; the shape of a style (its base and what it is for) stands here.
+
+use std::iter::successors;
+
+use crate::rule::Severity;
+
+/// Which rules apply, and how strictly. The order is the order of every list.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, Hash, PartialOrd, Ord)]
+pub enum Style {
+    /// Free common practice.
+    Free,
+    /// The four-part chorale of the 18th century.
+    Chorale,
+    /// 16th-century vocal polyphony.
+    Motet,
+    /// Strict counterpoint, note against note.
+    Species1,
+    /// Two notes against one.
+    Species2,
+    /// Four notes against one.
+    Species3,
+    /// Suspensions.
+    Species4,
+    /// Florid.
+    Species5,
+}
+
+/// Every style, in the order of lists.
+pub const STYLES: [Style; 8] = [
+    Style::Free,
+    Style::Chorale,
+    Style::Motet,
+    Style::Species1,
+    Style::Species2,
+    Style::Species3,
+    Style::Species4,
+    Style::Species5,
+];
+
+impl Style {
+    /// The name a sheet uses.
+    #[must_use]
+    pub const fn name(self) -> &'static str {
+        match self {
+            Style::Free => "free",
+            Style::Chorale => "chorale",
+            Style::Motet => "motet",
+            Style::Species1 => "species-1",
+            Style::Species2 => "species-2",
+            Style::Species3 => "species-3",
+            Style::Species4 => "species-4",
+            Style::Species5 => "species-5",
+        }
+    }
+
+    /// The style of that name.
+    #[must_use]
+    pub fn named(name: &str) -> Option<Style> {
+        STYLES.into_iter().find(|style| style.name() == name)
+    }
+
+    /// What it stands for, in a line.
+    #[must_use]
+    pub const fn summary(self) -> &'static str {
+        match self {
+            Style::Free => "free common practice",
+            Style::Chorale => "the four-part chorale of the 18th century",
+            Style::Motet => "16th-century vocal polyphony",
+            Style::Species1 => "strict counterpoint, note against note",
+            Style::Species2 => "strict counterpoint, two notes against one",
+            Style::Species3 => "strict counterpoint, four notes against one",
+            Style::Species4 => "strict counterpoint, suspensions",
+            Style::Species5 => "strict counterpoint, florid",
+        }
+    }
+
+    /// The style it starts from.
+    #[must_use]
+    pub const fn base(self) -> Option<Style> {
+        match self {
+            Style::Free => None,
+            Style::Chorale | Style::Motet | Style::Species1 => Some(Style::Free),
+            Style::Species2 | Style::Species3 | Style::Species4 | Style::Species5 => {
+                Some(Style::Species1)
+            }
+        }
+    }
+
+    /// Itself, its base, and so on.
+    pub fn with_bases(self) -> impl Iterator<Item = Style> {
+        successors(Some(self), |style| style.base())
+    }
+
+    /// Whether it is one of the five species.
+    #[must_use]
+    pub const fn is_species(self) -> bool {
+        matches!(
+            self,
+            Style::Species1 | Style::Species2 | Style::Species3 | Style::Species4 | Style::Species5
+        )
+    }
+}
+
+/// One override: how strictly a style takes a case, and why.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub struct Setting {
+    /// The style.
+    pub style: Style,
+    /// Its severity; `None` allows.
+    pub severity: Option<Severity>,
+    /// The reason, with its source where it is not among the rule's own.
+    pub because: &'static str,
+}
+
+const fn setting(style: Style, severity: Option<Severity>, because: &'static str) -> Setting {
+    Setting {
+        style,
+        severity,
+        because,
+    }
+}
+
+/// The style forbids it.
+#[must_use]
+pub const fn fault(style: Style, because: &'static str) -> Setting {
+    setting(style, Some(Severity::Fault), because)
+}
+
+/// The style discourages it.
+#[must_use]
+pub const fn weakness(style: Style, because: &'static str) -> Setting {
+    setting(style, Some(Severity::Weakness), because)
+}
+
+/// The style only remarks on it.
+#[must_use]
+pub const fn remark(style: Style, because: &'static str) -> Setting {
+    setting(style, Some(Severity::Remark), because)
+}
+
+/// The style allows it.
+#[must_use]
+pub const fn allow(style: Style, because: &'static str) -> Setting {
+    setting(style, None, because)
+}
+
+/// How strictly a check is done: a style, and which rules take part.
+#[derive(Clone, Debug, PartialEq, Eq)]
+pub struct Strictness {
+    /// The style.
+    pub style: Style,
+    /// Only these rules and families; empty for all.
+    pub pick: Vec<String>,
+    /// Not these rules and families.
+    pub drop: Vec<String>,
+}
+
+impl Strictness {
+    /// A style with nothing changed.
+    #[must_use]
+    pub const fn plain(style: Style) -> Strictness {
+        Strictness {
+            style,
+            pick: Vec::new(),
+            drop: Vec::new(),
+        }
+    }
+
+    /// Whether a rule takes part; dropping comes after picking.
+    #[must_use]
+    pub fn takes(&self, id: &str, family: &str) -> bool {
+        let named = |list: &[String]| list.iter().any(|name| name == id || name == family);
+        (self.pick.is_empty() || named(&self.pick)) && !named(&self.drop)
+    }
+}

@@ -1,0 +1,52 @@
+//! What a rule sees: a pair's step, a sonority, a line, the piece.
+//!
+//! These views only read what `partwright_score` laid out, and put it into a musician's words.
+
+mod line;
+mod pair;
+mod piece;
+mod sounding;
+
+use partwright_score::{Pair, PairStep, Score, Texture};
+
+pub use line::Run;
+pub use pair::Direct;
+pub use piece::Crossing;
+
+/// A score with its texture.
+#[derive(Clone, Copy)]
+pub struct Piece<'a> {
+    /// The score.
+    pub score: &'a Score,
+    /// Its sonorities and steps.
+    pub texture: &'a Texture,
+}
+
+/// One sonority, and the step into it.
+#[derive(Clone, Copy)]
+pub struct Sounding<'a> {
+    /// The piece.
+    pub piece: Piece<'a>,
+    /// Which sonority, from 0.
+    pub index: usize,
+}
+
+/// One pair of voices and its step into a sonority.
+#[derive(Clone, Copy)]
+pub struct PairMove<'a> {
+    /// The sonority it arrives at.
+    pub sounding: Sounding<'a>,
+    /// The two voices.
+    pub pair: Pair,
+    /// What they do.
+    pub step: &'a PairStep,
+}
+
+/// One voice as a line.
+#[derive(Clone, Copy)]
+pub struct Line<'a> {
+    /// The piece.
+    pub piece: Piece<'a>,
+    /// The voice, by index.
+    pub voice: usize,
+}

@@ -1,0 +1,286 @@
+//! One pair of voices and its step.
+
+use partwright_score::{Interval, Time, ZERO};
+use partwright_space::{Consecutive, Motion};
+
+use super::{PairMove, Sounding};
+use crate::rule::Case;
+
+/// How a perfect interval reached in similar motion stands in the texture.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub enum Direct {
+    /// In two parts, the upper voice leaping.
+    TwoParts,
+    /// In two parts, the upper voice moving by step.
+    TwoPartsStep,
+    /// In three parts, between the outer voices, the upper one leaping.
+    ThreeOuter,
+    /// In three parts, between voices not both outer, the upper one leaping.
+    ThreeInner,
+    /// In four or more parts, between the outer voices, the upper one leaping.
+    Outer,
+    /// A step in the upper voice or the other voices cover it.
+    Covered,
+}
+
+impl<'a> PairMove<'a> {
+    /// How the pair moves.
+    #[must_use]
+    pub fn motion(&self) -> Option<Motion> {
+        self.step.motion()
+    }
+
+    /// What the step does with the perfect intervals.
+    #[must_use]
+    pub fn consecutive(&self) -> Option<Consecutive> {
+        self.step.consecutive()
+    }
+
+    /// The interval left.
+    #[must_use]
+    pub fn before(&self) -> Option<Interval> {
+        self.step.before().map(Interval)
+    }
+
+    /// The interval reached.
+    #[must_use]
+    pub fn after(&self) -> Option<Interval> {
+        self.step.after().map(Interval)
+    }
+
+    /// When the pair arrives.
+    #[must_use]
+    pub fn arrival(&self) -> Time {
+        self.sounding.onset()
+    }
+
+    /// When the sonority it leaves began.
+    #[must_use]
+    pub fn departure(&self) -> Time {
+        self.sounding.neighbour(-1).map_or(ZERO, Sounding::onset)
+    }
+
+    /// The voice that sounds higher at the arrival; on a unison, the upper in the score.
+    #[must_use]
+    pub fn top(&self) -> usize {
+        if self.step.is_crossed() {
+            self.pair.lower
+        } else {
+            self.pair.upper
+        }
+    }
+
+    /// The voice that sounds lower at the arrival.
+    #[must_use]
+    pub fn foot(&self) -> usize {
+        if self.step.is_crossed() {
+            self.pair.upper
+        } else {
+            self.pair.lower
+        }
+    }
+
+    /// A voice moves by a step of the scale.
+    #[must_use]
+    pub fn steps(&self, voice: usize) -> bool {
+        self.size_of_move(voice) == Some(1)
+    }
+
+    /// A voice leaps: a third or more.
+    #[must_use]
+    pub fn leaps(&self, voice: usize) -> bool {
+        self.size_of_move(voice).is_some_and(|size| size >= 2)
+    }
+
+    /// Scale steps a voice moves, without direction.
+    #[must_use]
+    pub fn size_of_move(&self, voice: usize) -> Option<i32> {
+        let piece = self.sounding.piece;
+        let moved = piece
+            .texture
+            .displacement(piece.score, self.sounding.index, voice)?;
+        Some(Interval(moved).size())
+    }
+
+    /// A voice moves up.
+    #[must_use]
+    pub fn rises(&self, voice: usize) -> bool {
+        let piece = self.sounding.piece;
+        let moved = piece
+            .texture
+            .displacement(piece.score, self.sounding.index, voice);
+        moved.is_some_and(|gap| gap.semitones > 0)
+    }
+
+    /// The pair is the outermost that sounds.
+    #[must_use]
+    pub fn is_outer(&self) -> bool {
+        self.sounding.outer() == Some(self.pair)
+    }
+
+    /// The lower of the two has the lowest note of all.
+    #[must_use]
+    pub fn is_with_bass(&self) -> bool {
+        self.sounding.bass().is_some_and(|bass| bass == self.foot())
+    }
+
+    /// The same pair's step into the next sonority in which either of them moves, if pair rules
+    /// look at it.
+    #[must_use]
+    pub fn next(&self) -> Option<PairMove<'a>> {
+        let mut there = self.sounding;
+        loop {
+            there = there.neighbour(1)?;
+            let step = there
+                .piece
+                .texture
+                .step(there.index, self.pair.upper, self.pair.lower)?;
+            step.motion()?;
+            if step.across_phrase() {
+                return None;
+            }
+            if step.motion() != Some(Motion::Still) {
+                return Some(PairMove {
+                    sounding: there,
+                    pair: self.pair,
+                    step,
+                });
+            }
+        }
+    }
+
+    /// The two leave the same pitch.
+    #[must_use]
+    pub fn is_in_unison_before(&self) -> bool {
+        self.step.before().is_some_and(|gap| gap.semitones == 0)
+    }
+
+    /// No voice that sounds stands between them in the score.
+    #[must_use]
+    pub fn are_neighbours(&self) -> bool {
+        let mut sounding = self.sounding.piece.texture.sounding(self.sounding.index);
+        !sounding.any(|v| self.pair.upper < v && v < self.pair.lower)
+    }
+
+    /// The pitch a voice reaches, as text.
+    #[must_use]
+    pub fn pitch_after(&self, voice: usize) -> String {
+        self.sounding
+            .pitch(voice)
+            .map(|p| p.to_string())
+            .unwrap_or_default()
+    }
+
+    /// The pitch a voice leaves, as text.
+    #[must_use]
+    pub fn pitch_before(&self, voice: usize) -> String {
+        let before = self.sounding.neighbour(-1).and_then(|s| s.pitch(voice));
+        before.map(|p| p.to_string()).unwrap_or_default()
+    }
+
+    /// Either of the two sonorities begins between beats.
+    #[must_use]
+    pub fn is_off_beat(&self) -> bool {
+        self.sounding.is_off_beat()
+            || self
+                .sounding
+                .neighbour(-1)
+                .is_some_and(Sounding::is_off_beat)
+    }
+
+    /// The two arrive on the same pitch.
+    #[must_use]
+    pub fn is_in_unison_after(&self) -> bool {
+        self.step.after().is_some_and(|gap| gap.semitones == 0)
+    }
+
+    /// The case that fits, of those for the last chord, for the outer voices, and for a pair
+    /// with an inner voice.
+    #[must_use]
+    pub fn close_outer_or_inner(&self, [close, outer, inner]: [&'static Case; 3]) -> &'static Case {
+        if self.sounding.is_close() {
+            close
+        } else if self.is_outer() {
+            outer
+        } else {
+            inner
+        }
+    }
+
+    /// How a direct perfect interval stands in the texture.
+    #[must_use]
+    pub fn direct(&self) -> Direct {
+        match (
+            self.sounding.parts(),
+            self.leaps(self.top()),
+            self.is_outer(),
+        ) {
+            (..=2, true, _) => Direct::TwoParts,
+            (..=2, false, _) => Direct::TwoPartsStep,
+            (3, true, true) => Direct::ThreeOuter,
+            (3, true, false) => Direct::ThreeInner,
+            (_, true, true) => Direct::Outer,
+            _ => Direct::Covered,
+        }
+    }
+
+    /// What a direct perfect interval does and what helps: the end of its message.
+    #[must_use]
+    pub fn direct_story(&self) -> String {
+        let top = self.top();
+        let way = if self.rises(top) { "up" } else { "down" };
+        let help = if self.leaps(top) && self.direct() != Direct::TwoParts {
+            "Let the upper one step, or move one of them the other way."
+        } else {
+            "Move one of them the other way, or let it stay."
+        };
+        format!("{}, both {way}. {help}", self.story())
+    }
+
+    /// The fifth of a pair of horns: from a sixth or third by a step in the upper voice, and on
+    /// to a third or sixth in the same direction.
+    #[must_use]
+    pub fn is_horn_fifth(&self) -> bool {
+        let imperfect =
+            |interval: Option<Interval>| interval.is_some_and(|i| matches!(i.size() % 7, 2 | 5));
+        let goes_on = self.next().is_some_and(|next| {
+            imperfect(next.after())
+                && next.steps(next.top())
+                && next.rises(next.top()) == self.rises(self.top())
+        });
+        imperfect(self.before()) && self.steps(self.top()) && goes_on
+    }
+
+    /// `soprano and bass`.
+    #[must_use]
+    pub fn names(&self) -> String {
+        let piece = self.sounding.piece;
+        format!(
+            "{} and {}",
+            piece.name(self.pair.upper),
+            piece.name(self.pair.lower)
+        )
+    }
+
+    /// `G3–D5`, lower note first, at the departure and at the arrival.
+    #[must_use]
+    pub fn ends(&self) -> (String, String) {
+        let text = |there: Option<Sounding<'_>>| {
+            let pitch = |v| {
+                there
+                    .and_then(|s| s.pitch(v))
+                    .map(|p| p.to_string())
+                    .unwrap_or_default()
+            };
+            format!("{}–{}", pitch(self.pair.lower), pitch(self.pair.upper))
+        };
+        (text(self.sounding.neighbour(-1)), text(Some(self.sounding)))
+    }
+
+    /// `soprano and bass go from G3–D5 to A3–E5`.
+    #[must_use]
+    pub fn story(&self) -> String {
+        let (from, to) = self.ends();
+        format!("{} go from {from} to {to}", self.names())
+    }
+}

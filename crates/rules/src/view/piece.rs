@@ -1,0 +1,116 @@
+//! The piece as a whole: names, places in words, passages.
+
+use partwright_score::{Pair, Time};
+
+use super::{Piece, Sounding};
+
+/// A passage in which two voices are crossed.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub struct Crossing {
+    /// Where they cross.
+    pub from: Time,
+    /// Where they part again, or stop sounding.
+    pub until: Time,
+    /// Notes struck by either voice in between.
+    pub notes: usize,
+    /// They part again while both sound.
+    pub returns: bool,
+}
+
+impl<'a> Piece<'a> {
+    /// The sonorities in order.
+    pub fn soundings(self) -> impl Iterator<Item = Sounding<'a>> {
+        (0..self.texture.sonorities().len()).map(move |index| Sounding { piece: self, index })
+    }
+
+    /// What a musician calls a voice.
+    #[must_use]
+    pub fn name(self, voice: usize) -> &'a str {
+        self.score.voice_name(voice)
+    }
+
+    /// A moment in words: `bar 3, beat 2`.
+    #[must_use]
+    pub fn place_text(self, at: Time) -> String {
+        let place = self.score.place(at);
+        format!("bar {}, beat {}", place.bar, beat_words(place.beat))
+    }
+
+    /// `in bar 3` or `from bar 3 to bar 5`.
+    #[must_use]
+    pub fn extent_text(self, from: Time, until: Time) -> String {
+        let first = self.score.place(from).bar;
+        let ends = self
+            .texture
+            .sonorities()
+            .partition_point(|s| s.onset < until);
+        let last = ends
+            .checked_sub(1)
+            .and_then(|i| self.texture.sonorities().get(i));
+        let last = last.map_or(first, |s| self.score.place(s.onset).bar);
+        if first == last {
+            format!("in bar {first}")
+        } else {
+            format!("from bar {first} to bar {last}")
+        }
+    }
+
+    /// The passages in which a pair is crossed.
+    #[must_use]
+    pub fn crossings(self, pair: Pair) -> Vec<Crossing> {
+        let mut passages = Vec::new();
+        let mut open: Option<Crossing> = None;
+        for (k, sonority) in self.texture.sonorities().iter().enumerate() {
+            let step = self.texture.step(k, pair.upper, pair.lower);
+            let sounds = step.is_some_and(|s| s.after().is_some());
+            let crossed = sounds && step.is_some_and(|s| s.is_crossed() && !s.is_one_voice());
+            let struck =
+                sonority.struck >> pair.upper & 1 == 1 || sonority.struck >> pair.lower & 1 == 1;
+            match &mut open {
+                Some(passage) if crossed => {
+                    passage.notes += usize::from(struck);
+                    passage.until = self.end_of(k);
+                }
+                Some(passage) => {
+                    passage.returns = sounds;
+                    passages.extend(open.take());
+                }
+                None if crossed => {
+                    let (from, until) = (sonority.onset, self.end_of(k));
+                    open = Some(Crossing {
+                        from,
+                        until,
+                        notes: 1,
+                        returns: false,
+                    });
+                }
+                None => {}
+            }
+        }
+        passages.extend(open);
+        passages
+    }
+
+    /// Where the sonority ends, or the score.
+    #[must_use]
+    pub fn end_of(self, sonority: usize) -> Time {
+        let next = self.texture.sonorities().get(sonority + 1);
+        next.map_or_else(|| self.score.end(), |s| s.onset)
+    }
+}
+
+/// A beat as it is said: `2`, `2½`, `3¼`, else the fraction.
+#[must_use]
+fn beat_words(beat: Time) -> String {
+    let whole = beat.trunc().to_integer();
+    let rest = beat.fract();
+    match (*rest.numer(), *rest.denom()) {
+        (0, _) => whole.to_string(),
+        (1, 2) => format!("{whole}½"),
+        (1, 4) => format!("{whole}¼"),
+        (3, 4) => format!("{whole}¾"),
+        (1, 3) => format!("{whole}⅓"),
+        (2, 3) => format!("{whole}⅔"),
+        (n, d) => format!("{whole} {n}/{d}"),
+    }
+}
