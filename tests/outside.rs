@@ -1,0 +1,13 @@
+//! Truth outside ourselves: the checker held to treatises, chorales and judged passages.
+//!
+//! The data stands in a folder of its own beside the repository (or where `PARTWRIGHT_SHARED`
+//! points) and is no part of it; where it is absent these tests say so and are left out.
+
+#[path = "outside/consecutives.rs"]
+mod consecutives;
+#[path = "outside/first_species.rs"]
+mod first_species;
+#[path = "outside/judged.rs"]
+mod judged;
+#[path = "outside/scores.rs"]
+mod scores;
