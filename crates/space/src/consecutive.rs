@@ -44,8 +44,8 @@ impl Gap {
     #[must_use]
     pub const fn family(self) -> Option<Family> {
         let g = self.sounding();
-        let octaves = g.steps.div_euclid(7);
-        match (g.steps.rem_euclid(7), g.semitones - 12 * octaves) {
+        let octaves = g.steps.div_euclid(7) as i64;
+        match (g.steps.rem_euclid(7), g.semitones as i64 - 12 * octaves) {
             (0, 0) => Some(Family::Octave),
             (4, 7) => Some(Family::Fifth),
             _ => None,

@@ -22,12 +22,31 @@ pub struct Gap {
 }
 
 impl Place {
-    /// The ordered interval from `self` up to `other`.
+    /// The place of a white key, by its letter position. Seven notes spread over twelve as evenly
+    /// as can be: `floor((12 step + 5) / 7)` above C0 (the J-function of Clough and Douthett
+    /// 1991, from memory; held against the white keys by a test).
+    #[must_use]
+    pub const fn white_key(step: i32) -> Place {
+        let semitone = (12 * step as i64 + 5).div_euclid(7) + 12;
+        Place {
+            step,
+            semitone: if semitone > i32::MAX as i64 {
+                i32::MAX
+            } else if semitone < i32::MIN as i64 {
+                i32::MIN
+            } else {
+                semitone as i32
+            },
+        }
+    }
+
+    /// The ordered interval from `self` up to `other`. Beyond the reach of `i32` it stays at the
+    /// end of that reach.
     #[must_use]
     pub const fn up_to(self, other: Place) -> Gap {
         Gap {
-            steps: other.step - self.step,
-            semitones: other.semitone - self.semitone,
+            steps: other.step.saturating_sub(self.step),
+            semitones: other.semitone.saturating_sub(self.semitone),
         }
     }
 }
@@ -39,8 +58,8 @@ impl Gap {
     pub const fn sounding(self) -> Gap {
         if self.semitones < 0 || (self.semitones == 0 && self.steps < 0) {
             Gap {
-                steps: -self.steps,
-                semitones: -self.semitones,
+                steps: self.steps.saturating_neg(),
+                semitones: self.semitones.saturating_neg(),
             }
         } else {
             self

@@ -1,6 +1,7 @@
 //! The motion of one step of two voices: where its vector lies against the 45-degree cone.
 
 use crate::lattice::{Gap, Place};
+use crate::norm::Norm;
 
 /// How a pair of voices takes a step.
 #[derive(Clone, Copy, Debug, PartialEq, Eq, Hash)]
@@ -31,21 +32,23 @@ impl Vector {
     /// The component along the diagonal, doubled to stay whole: `dx + dy`.
     #[must_use]
     pub const fn along(self) -> i32 {
-        self.dx + self.dy
+        self.dx.saturating_add(self.dy)
     }
 
     /// The component across the diagonal, doubled to stay whole: `dy - dx`, the change of the
     /// ordered interval.
     #[must_use]
     pub const fn across(self) -> i32 {
-        self.dy - self.dx
+        self.dy.saturating_sub(self.dx)
     }
 
     /// The class of the vector by its place against the cone `|along| = |across|`, on this
     /// lattice alone.
     #[must_use]
     pub const fn class(self) -> Motion {
-        let (s, t) = (self.along().abs(), self.across().abs());
+        // Wider than the fields, so that no extreme vector changes its class by saturating.
+        let s = (self.dx as i64 + self.dy as i64).abs();
+        let t = (self.dy as i64 - self.dx as i64).abs();
         if s == 0 && t == 0 {
             Motion::Still
         } else if s == t {
@@ -56,6 +59,35 @@ impl Vector {
             Motion::Similar
         } else {
             Motion::Contrary
+        }
+    }
+
+    /// Contrary motion by equal distances: straight across, at right angles to the mirror.
+    #[must_use]
+    pub const fn exactly_contrary(self) -> bool {
+        self.dx != 0 && self.dx as i64 + self.dy as i64 == 0
+    }
+
+    /// The size of the step (squared in [`Norm::L2`]), read off the two components: the larger of
+    /// them in L1, half the sum of their squares in L2, half their sum in Linf.
+    #[must_use]
+    pub const fn size(self, norm: Norm) -> i64 {
+        let s = (self.dx as i64 + self.dy as i64).abs();
+        let t = (self.dy as i64 - self.dx as i64).abs();
+        match norm {
+            Norm::L1 => {
+                if s >= t {
+                    s
+                } else {
+                    t
+                }
+            }
+            // Both halves of a sum of squares of one parity; too large only at the ends of i32.
+            Norm::L2 => match s.saturating_mul(s).checked_add(t.saturating_mul(t)) {
+                Some(twice) => twice / 2,
+                None => i64::MAX,
+            },
+            Norm::Linf => (s + t) / 2,
         }
     }
 }
@@ -75,8 +107,8 @@ impl Leg {
     #[must_use]
     pub const fn semitones(self) -> Vector {
         Vector {
-            dx: self.lower.1.semitone - self.lower.0.semitone,
-            dy: self.upper.1.semitone - self.upper.0.semitone,
+            dx: self.lower.1.semitone.saturating_sub(self.lower.0.semitone),
+            dy: self.upper.1.semitone.saturating_sub(self.upper.0.semitone),
         }
     }
 
@@ -84,8 +116,8 @@ impl Leg {
     #[must_use]
     pub const fn steps(self) -> Vector {
         Vector {
-            dx: self.lower.1.step - self.lower.0.step,
-            dy: self.upper.1.step - self.upper.0.step,
+            dx: self.lower.1.step.saturating_sub(self.lower.0.step),
+            dy: self.upper.1.step.saturating_sub(self.upper.0.step),
         }
     }
 
