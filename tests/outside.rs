@@ -5,9 +5,9 @@
 
 #[path = "outside/consecutives.rs"]
 mod consecutives;
-#[path = "outside/first_species.rs"]
-mod first_species;
 #[path = "outside/judged.rs"]
 mod judged;
 #[path = "outside/scores.rs"]
 mod scores;
+#[path = "outside/treatise.rs"]
+mod treatise;

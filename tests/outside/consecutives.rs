@@ -31,19 +31,42 @@ fn counted(direction: &str, ids: &BTreeSet<String>) -> Option<BTreeSet<Place>> {
     let wanted = places.iter().filter(|p| {
         p["dir"] == direction && p["fermata"] == false && ids.contains(p["id"].as_str().unwrap())
     });
-    Some(wanted.map(|p| (word(&p["id"]), word(&p["kind"]), word(&p["t1"]), word(&p["voices"]))).collect())
+    Some(
+        wanted
+            .map(|p| {
+                (
+                    word(&p["id"]),
+                    word(&p["kind"]),
+                    word(&p["t1"]),
+                    word(&p["voices"]),
+                )
+            })
+            .collect(),
+    )
 }
 
 /// The places our rules report, under the style in which every one of them counts.
 fn reported(pieces: &[Piece], rules: &[(&str, &str)]) -> BTreeSet<Place> {
     let mut places = BTreeSet::new();
     for piece in pieces {
-        let style = if piece.id.starts_with("fux") { Style::Species1 } else { Style::Chorale };
-        let wishes = Wishes { style: Some(style), ..Wishes::default() };
+        let style = if piece.id.starts_with("fux") {
+            Style::Species1
+        } else {
+            Style::Chorale
+        };
+        let wishes = Wishes {
+            style: Some(style),
+            ..Wishes::default()
+        };
         for finding in check_score(&piece.score, &wishes) {
-            let Some((_, kind)) = rules.iter().find(|(rule, _)| *rule == finding.rule) else { continue };
-            let names: Vec<&str> =
-                finding.voices.iter().map(|&v| piece.score.voices[v].label.as_str()).collect();
+            let Some((_, kind)) = rules.iter().find(|(rule, _)| *rule == finding.rule) else {
+                continue;
+            };
+            let names: Vec<&str> = finding
+                .voices
+                .iter()
+                .map(|&v| piece.score.voices[v].label.as_str())
+                .collect();
             let at = show_time(finding.at.unwrap());
             places.insert((piece.id.clone(), (*kind).to_owned(), at, names.join("/")));
         }
@@ -65,10 +88,18 @@ fn parallels_of_treatise_and_chorales_are_found_and_none_more() {
     let counted = counted("similar", &ids).unwrap();
     let reported = reported(
         &pieces,
-        &[("parallel-fifths", "fifth"), ("parallel-octaves", "octave"), ("parallel-unisons", "octave")],
+        &[
+            ("parallel-fifths", "fifth"),
+            ("parallel-octaves", "octave"),
+            ("parallel-unisons", "octave"),
+        ],
     );
     compare(&counted, &reported);
-    println!("outside: {} parallels in {} pieces", counted.len(), pieces.len());
+    println!(
+        "outside: {} parallels in {} pieces",
+        counted.len(),
+        pieces.len()
+    );
 }
 
 #[test]
@@ -81,25 +112,39 @@ fn contrary_consecutives_of_treatise_and_chorales_are_found_and_none_more() {
         &[("contrary-fifths", "fifth"), ("contrary-octaves", "octave")],
     );
     compare(&counted, &reported);
-    println!("outside: {} contrary consecutives in {} pieces", counted.len(), pieces.len());
+    println!(
+        "outside: {} contrary consecutives in {} pieces",
+        counted.len(),
+        pieces.len()
+    );
 }
 
 /// Every counted place but the lawful ones is reported, and none more.
 fn compare(counted: &BTreeSet<Place>, reported: &BTreeSet<Place>) {
-    let lawful: BTreeSet<Place> =
-        LAWFUL.iter().map(|&(id, kind, at, voices)| (id.into(), kind.into(), at.into(), voices.into())).collect();
+    let lawful: BTreeSet<Place> = LAWFUL
+        .iter()
+        .map(|&(id, kind, at, voices)| (id.into(), kind.into(), at.into(), voices.into()))
+        .collect();
     let wanted: BTreeSet<Place> = counted.difference(&lawful).cloned().collect();
     let missed: Vec<&Place> = wanted.difference(reported).collect();
     let extra: Vec<&Place> = reported.difference(&wanted).collect();
-    assert!(missed.is_empty() && extra.is_empty(), "missed {missed:#?}\nmore than counted {extra:#?}");
+    assert!(
+        missed.is_empty() && extra.is_empty(),
+        "missed {missed:#?}\nmore than counted {extra:#?}"
+    );
 }
 
 #[test]
 fn the_lawful_places_are_counted_ones() {
-    let Some(places) = lines("scores/consecutives.jsonl") else { return };
+    let Some(places) = lines("scores/consecutives.jsonl") else {
+        return;
+    };
     for (id, kind, at, voices) in LAWFUL {
         assert!(
-            places.iter().any(|p| p["id"] == id && p["kind"] == kind && p["t1"] == at && p["voices"] == voices),
+            places.iter().any(|p| p["id"] == id
+                && p["kind"] == kind
+                && p["t1"] == at
+                && p["voices"] == voices),
             "{id} no longer stands in the count"
         );
     }
@@ -114,7 +159,17 @@ fn the_table_of_steps_agrees_with_the_count_everywhere() {
     let counted: BTreeSet<(Place, String)> = lines("scores/consecutives.jsonl")
         .unwrap()
         .iter()
-        .map(|p| ((word(&p["id"]), word(&p["kind"]), word(&p["t1"]), word(&p["voices"])), word(&p["dir"])))
+        .map(|p| {
+            (
+                (
+                    word(&p["id"]),
+                    word(&p["kind"]),
+                    word(&p["t1"]),
+                    word(&p["voices"]),
+                ),
+                word(&p["dir"]),
+            )
+        })
         .collect();
     let mut found = BTreeSet::new();
     for piece in &all {
@@ -126,16 +181,32 @@ fn the_table_of_steps_agrees_with_the_count_everywhere() {
                     Some(Consecutive::Contrary(family)) => (family, "contrary"),
                     _ => continue,
                 };
-                let kind = if family == Family::Fifth { "fifth" } else { "octave" };
+                let kind = if family == Family::Fifth {
+                    "fifth"
+                } else {
+                    "octave"
+                };
                 let label = |v: usize| piece.score.voices[v].label.clone();
                 let voices = format!("{}/{}", label(pair.upper), label(pair.lower));
-                let place = (piece.id.clone(), kind.to_owned(), show_time(sonority.onset), voices);
+                let place = (
+                    piece.id.clone(),
+                    kind.to_owned(),
+                    show_time(sonority.onset),
+                    voices,
+                );
                 found.insert((place, direction.to_owned()));
             }
         }
     }
     let missed: Vec<_> = counted.difference(&found).take(20).collect();
     let extra: Vec<_> = found.difference(&counted).take(20).collect();
-    assert!(missed.is_empty() && extra.is_empty(), "missed {missed:#?}\nmore than counted {extra:#?}");
-    println!("outside: {} consecutives in {} pieces", counted.len(), all.len());
+    assert!(
+        missed.is_empty() && extra.is_empty(),
+        "missed {missed:#?}\nmore than counted {extra:#?}"
+    );
+    println!(
+        "outside: {} consecutives in {} pieces",
+        counted.len(),
+        all.len()
+    );
 }

@@ -21,29 +21,114 @@ use Verdict::{Bad, Clean, Fault};
 
 /// Source, style, passage (rows joined by `/`), verdict.
 const CASES: &[(&str, &str, &str, Verdict)] = &[
-    ("Lehmann, Fig. 92c", "species-1", "a | F4 G | / b | B3 C4 | / c | D3 E |", Clean("motion")),
-    ("parallel fifths", "chorale", "a | G4 A | / b | C4 D |", Fault("parallel-fifths")),
-    ("parallel fifths", "free", "a | G4 A | / b | C4 D |", Fault("parallel-fifths")),
-    ("parallel fifths", "motet", "a | G4 A | / b | C4 D |", Fault("parallel-fifths")),
-    ("parallel fifths", "species-3", "a | G4 A | / b | C4 D |", Fault("parallel-fifths")),
-    ("re-struck fifth", "chorale", "a | G4 G | / b | C4 C |", Clean("motion")),
-    ("fifths by contrary motion", "chorale", "a | G4 D5 | / b | C4 G3 |", Fault("contrary-fifths")),
-    ("parallel octaves", "chorale", "a | C5 D | / b | C4 D |", Fault("parallel-octaves")),
-    ("octaves of one voice", "chorale", "voice a soprano/voice b alto doubles a/a | C5 D | / b | C4 D |", Clean("motion")),
-    ("direct fifth, upper voice leaping", "chorale", "a | E4 A | / b | C4 D |", Fault("direct-fifths")),
-    ("direct fifth, upper voice by step", "species-1", "a | B4 A | / b | G3 D |", Fault("direct-fifths")),
-    ("direct fifth, upper voice by step", "chorale", "a | B4 A | / b | G3 D |", Clean("motion")),
-    ("unequal fifths with the bass", "chorale", "a | F4 G | / b | B3 C4 |", Fault("unequal-fifths")),
-    ("a diminished fifth that closes", "chorale", "a | F4 E | / b | B3 C4 |", Clean("motion")),
-    ("crossing", "chorale", "a | D4 E | / b | C4 F |", Bad("crossing")),
+    (
+        "Lehmann, Fig. 92c",
+        "species-1",
+        "a | F4 G | / b | B3 C4 | / c | D3 E |",
+        Clean("motion"),
+    ),
+    (
+        "parallel fifths",
+        "chorale",
+        "a | G4 A | / b | C4 D |",
+        Fault("parallel-fifths"),
+    ),
+    (
+        "parallel fifths",
+        "free",
+        "a | G4 A | / b | C4 D |",
+        Fault("parallel-fifths"),
+    ),
+    (
+        "parallel fifths",
+        "motet",
+        "a | G4 A | / b | C4 D |",
+        Fault("parallel-fifths"),
+    ),
+    (
+        "parallel fifths",
+        "species-3",
+        "a | G4 A | / b | C4 D |",
+        Fault("parallel-fifths"),
+    ),
+    (
+        "re-struck fifth",
+        "chorale",
+        "a | G4 G | / b | C4 C |",
+        Clean("motion"),
+    ),
+    (
+        "fifths by contrary motion",
+        "chorale",
+        "a | G4 D5 | / b | C4 G3 |",
+        Fault("contrary-fifths"),
+    ),
+    (
+        "parallel octaves",
+        "chorale",
+        "a | C5 D | / b | C4 D |",
+        Fault("parallel-octaves"),
+    ),
+    (
+        "octaves of one voice",
+        "chorale",
+        "voice a soprano/voice b alto doubles a/a | C5 D | / b | C4 D |",
+        Clean("motion"),
+    ),
+    (
+        "direct fifth, upper voice leaping",
+        "chorale",
+        "a | E4 A | / b | C4 D |",
+        Fault("direct-fifths"),
+    ),
+    (
+        "direct fifth, upper voice by step",
+        "species-1",
+        "a | B4 A | / b | G3 D |",
+        Fault("direct-fifths"),
+    ),
+    (
+        "direct fifth, upper voice by step",
+        "chorale",
+        "a | B4 A | / b | G3 D |",
+        Clean("motion"),
+    ),
+    (
+        "unequal fifths with the bass",
+        "chorale",
+        "a | F4 G | / b | B3 C4 |",
+        Fault("unequal-fifths"),
+    ),
+    (
+        "a diminished fifth that closes",
+        "chorale",
+        "a | F4 E | / b | B3 C4 |",
+        Clean("motion"),
+    ),
+    (
+        "crossing",
+        "chorale",
+        "a | D4 E | / b | C4 F |",
+        Bad("crossing"),
+    ),
     (
         "inner leading note falls, outer octave by step",
         "chorale",
         "s | D5 C | / a | B4 G4 | / t | F4 E4 | / b | G3 C3 |",
         Clean("motion"),
     ),
-    ("outer octave with a leap in the soprano", "chorale", "s | B4 G4 | / a | D4 E4 | / t | G3 G3 | / b | G3 C3 |", Fault("direct-octaves")),
-    ("unequal fifths rising over tenths", "chorale", "s | F4 G4 | / a | B3 C4 | / b | D3 E3 |", Clean("motion")),
+    (
+        "outer octave with a leap in the soprano",
+        "chorale",
+        "s | B4 G4 | / a | D4 E4 | / t | G3 G3 | / b | G3 C3 |",
+        Fault("direct-octaves"),
+    ),
+    (
+        "unequal fifths rising over tenths",
+        "chorale",
+        "s | F4 G4 | / a | B3 C4 | / b | D3 E3 |",
+        Clean("motion"),
+    ),
 ];
 
 #[test]
@@ -53,12 +138,19 @@ fn judged_passages_get_their_verdict() {
         let rows: Vec<&str> = passage.split('/').map(str::trim).collect();
         let text = format!("style {style}\n{}\n", rows.join("\n"));
         let checked = Checked::text(&text, &Wishes::default());
-        let found: Vec<_> = checked.findings.iter().map(|f| (f.rule, f.severity)).collect();
+        let found: Vec<_> = checked
+            .findings
+            .iter()
+            .map(|f| (f.rule, f.severity))
+            .collect();
         let family = match verdict {
             Bad(rule) | Fault(rule) => family_of(rule).unwrap(),
             Clean(family) => family,
         };
-        let of_family: Vec<_> = found.iter().filter(|(rule, _)| family_of(rule) == Some(family)).collect();
+        let of_family: Vec<_> = found
+            .iter()
+            .filter(|(rule, _)| family_of(rule) == Some(family))
+            .collect();
         let right = match verdict {
             Bad(rule) => matches!(of_family[..], [(r, s)] if r == rule && *s >= Severity::Weakness),
             Fault(rule) => matches!(of_family[..], [(r, Severity::Fault)] if r == rule),

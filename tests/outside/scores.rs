@@ -28,12 +28,21 @@ pub(crate) fn folder() -> Option<PathBuf> {
 /// The lines of a JSON Lines file under the outside data.
 pub(crate) fn lines(name: &str) -> Option<Vec<Value>> {
     let text = fs::read_to_string(folder()?.join(name)).unwrap();
-    Some(text.lines().map(|line| serde_json::from_str(line).unwrap()).collect())
+    Some(
+        text.lines()
+            .map(|line| serde_json::from_str(line).unwrap())
+            .collect(),
+    )
 }
 
 /// The pieces of one set: `fux`, `chorales-nba`, `chorales-dcml`, `renaissance`.
 pub(crate) fn set(name: &str) -> Option<Vec<Piece>> {
-    Some(lines(&format!("scores/{name}.jsonl"))?.into_iter().map(piece).collect())
+    Some(
+        lines(&format!("scores/{name}.jsonl"))?
+            .into_iter()
+            .map(piece)
+            .collect(),
+    )
 }
 
 fn time(numerator: &Value, denominator: &Value) -> Time {
@@ -54,10 +63,22 @@ fn piece(about: Value) -> Piece {
                 last.fermata |= fermata;
                 continue;
             }
-            let sound = note[4].as_str().map_or(Sound::Rest, |p| Sound::Pitch(p.parse::<Pitch>().unwrap()));
-            read.notes.push(Note { fermata, ..Note::new(onset, length, sound) });
+            let sound = note[4]
+                .as_str()
+                .map_or(Sound::Rest, |p| Sound::Pitch(p.parse::<Pitch>().unwrap()));
+            read.notes.push(Note {
+                fermata,
+                ..Note::new(onset, length, sound)
+            });
         }
         score.voices.push(read);
+    }
+    // The treatise set says which voice is the cantus, counted from the top.
+    let cantus = about["cf_voice"]
+        .as_u64()
+        .and_then(|n| usize::try_from(n).ok()?.checked_sub(1));
+    if let Some(voice) = cantus.and_then(|v| score.voices.get_mut(v)) {
+        voice.cantus = true;
     }
     bars(&mut score, &about);
     let id = about["id"].as_str().unwrap().to_owned();
@@ -80,19 +101,33 @@ fn metres(about: &Value) -> Vec<(Option<String>, Metre)> {
 }
 
 fn bars(score: &mut Score, about: &Value) {
-    let end = score.voices.iter().filter_map(|v| v.notes.last()).map(Note::end).max().unwrap_or(ZERO);
+    let end = score
+        .voices
+        .iter()
+        .filter_map(|v| v.notes.last())
+        .map(Note::end)
+        .max()
+        .unwrap_or(ZERO);
     let stated: Vec<(String, Time)> = about["bars"]
         .as_array()
         .unwrap()
         .iter()
-        .map(|bar| (bar[0].as_str().unwrap_or_default().to_owned(), time(&bar[1], &bar[2])))
+        .map(|bar| {
+            (
+                bar[0].as_str().unwrap_or_default().to_owned(),
+                time(&bar[1], &bar[2]),
+            )
+        })
         .collect();
     let metres = metres(about);
     score.metres = metres.iter().map(|m| m.1.clone()).collect();
     let mut metre = 0;
     let mut number = 0;
     for (i, (label, onset)) in stated.iter().enumerate() {
-        if let Some(change) = metres.iter().position(|(from, _)| from.as_deref() == Some(label)) {
+        if let Some(change) = metres
+            .iter()
+            .position(|(from, _)| from.as_deref() == Some(label))
+        {
             metre = change;
         }
         let next = stated.get(i + 1).map_or(end, |bar| bar.1);
@@ -100,7 +135,11 @@ fn bars(score: &mut Score, about: &Value) {
         let full = score.metres[metre].bar_length().unwrap();
         // A first bar short of its metre is a pickup: it takes the last beats of bar 0.
         let pickup = i == 0 && length < full && stated.len() > 1;
-        number = label.trim_start_matches('X').parse().unwrap_or(if pickup { 0 } else { number + 1 });
+        number =
+            label
+                .trim_start_matches('X')
+                .parse()
+                .unwrap_or(if pickup { 0 } else { number + 1 });
         score.bars.push(Bar {
             number,
             onset: *onset,

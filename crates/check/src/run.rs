@@ -8,7 +8,7 @@ use partwright_score::{Score, Texture};
 pub fn notes_findings(score: &Score, texture: &Texture, strictness: &Strictness) -> Vec<Finding> {
     let piece = Piece { score, texture };
     let mut list = Vec::new();
-    let (mut pairs, mut sonorities) = (Vec::new(), Vec::new());
+    let (mut pairs, mut sonorities, mut lines) = (Vec::new(), Vec::new(), Vec::new());
     for entry in catalogue() {
         let id = entry.id.as_str();
         if !strictness.takes(id, entry.family) {
@@ -17,16 +17,20 @@ pub fn notes_findings(score: &Score, texture: &Texture, strictness: &Strictness)
         match entry.rule.looks {
             Looks::Pairs(check) => pairs.push((id, check)),
             Looks::Sonorities(check) => sonorities.push((id, check)),
-            Looks::Lines(check) => {
-                for voice in 0..score.voices.len() {
-                    check(
-                        &Line { piece, voice },
-                        &mut Found::new(id, strictness, &mut list),
-                    );
-                }
-            }
+            Looks::Lines(check) => lines.push((id, check)),
             Looks::Piece(check) => check(&piece, &mut Found::new(id, strictness, &mut list)),
             Looks::Text => {}
+        }
+    }
+    for voice in 0..score.voices.len() {
+        let moves = piece.line_moves(voice);
+        let line = Line {
+            piece,
+            voice,
+            moves: &moves,
+        };
+        for &(id, check) in &lines {
+            check(&line, &mut Found::new(id, strictness, &mut list));
         }
     }
     // One sweep for all the rules that look at single steps, so that a step is fetched once.

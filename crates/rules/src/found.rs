@@ -5,7 +5,7 @@ use partwright_score::Time;
 use crate::finding::{Finding, Role, Spot};
 use crate::rule::{Case, Severity};
 use crate::style::{Strictness, Style};
-use crate::view::PairMove;
+use crate::view::{Line, LineMove, PairMove};
 
 /// Collects the findings of one rule under one style.
 pub struct Found<'a> {
@@ -67,6 +67,47 @@ impl<'a> Found<'a> {
                 (Role::With, spot(lower, step.arrival())),
             ],
         });
+    }
+
+    /// A finding about one voice's move: it stands at the note reached.
+    pub fn line(
+        &mut self,
+        case: &'static Case,
+        line: &Line<'_>,
+        step: &LineMove,
+        message: impl FnOnce() -> String,
+    ) {
+        let Some(severity) = self.severity(case) else {
+            return;
+        };
+        let spot = |at| Spot {
+            voice: line.voice,
+            at,
+        };
+        self.list.push(Finding {
+            rule: self.rule,
+            severity,
+            message: message(),
+            voices: vec![line.voice],
+            spot: spot(step.to.onset),
+            until: None,
+            related: vec![(Role::From, spot(step.from.onset))],
+        });
+    }
+
+    /// A finding about a sonority: it stands where it begins, in the first of the voices.
+    pub fn sonority(
+        &mut self,
+        case: &'static Case,
+        voices: &[usize],
+        at: Time,
+        message: impl FnOnce() -> String,
+    ) {
+        let before = self.list.len();
+        self.passage(case, voices, (at, at), message);
+        if let Some(finding) = self.list.get_mut(before) {
+            finding.until = None;
+        }
     }
 
     /// A finding about a passage: it stands at the beginning, once, with its extent.

@@ -20,7 +20,9 @@ pub use page::{Example, Page};
 pub use rule::{Case, FAMILIES, Looks, Rule, Severity};
 pub use source::Source;
 pub use style::{STYLES, Setting, Strictness, Style};
-pub use view::{Crossing, Direct, Line, PairMove, Piece, Run, Sounding};
+pub use view::{
+    Crossing, Direct, Line, LineMove, NotesOver, PairMove, Passage, Piece, Run, Sounding,
+};
 
 /// What every rule file needs.
 pub mod prelude {
@@ -32,5 +34,5 @@ pub mod prelude {
     pub use crate::rule::{Case, Looks, Rule, Severity};
     pub use crate::source::{self, Source};
     pub use crate::style::{Setting, Style, allow, fault, remark, weakness};
-    pub use crate::view::{Direct, Line, PairMove, Piece, Sounding};
+    pub use crate::view::{Direct, Line, LineMove, NotesOver, PairMove, Passage, Piece, Sounding};
 }

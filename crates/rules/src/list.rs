@@ -2,6 +2,14 @@
 
 use crate::catalogue::File;
 
+#[path = "rules/motion/all_one_way.rs"]
+pub mod all_one_way;
+#[path = "rules/line/augmented_interval.rs"]
+pub mod augmented_interval;
+#[path = "rules/line/chromatic_semitone.rs"]
+pub mod chromatic_semitone;
+#[path = "rules/cadence/closing_interval.rs"]
+pub mod closing_interval;
 #[path = "rules/range/compass.rs"]
 pub mod compass;
 #[path = "rules/motion/contrary_fifths.rs"]
@@ -10,14 +18,24 @@ pub mod contrary_fifths;
 pub mod contrary_octaves;
 #[path = "rules/motion/crossing.rs"]
 pub mod crossing;
+#[path = "rules/line/diminished_interval.rs"]
+pub mod diminished_interval;
 #[path = "rules/motion/direct_fifths.rs"]
 pub mod direct_fifths;
 #[path = "rules/motion/direct_octaves.rs"]
 pub mod direct_octaves;
 #[path = "rules/motion/direct_unisons.rs"]
 pub mod direct_unisons;
+#[path = "rules/line/leap_beyond_octave.rs"]
+pub mod leap_beyond_octave;
+#[path = "rules/line/leap_unrecovered.rs"]
+pub mod leap_unrecovered;
+#[path = "rules/line/leaps_one_way.rs"]
+pub mod leaps_one_way;
 #[path = "rules/writing/octave_doubt.rs"]
 pub mod octave_doubt;
+#[path = "rules/sonority/opening_interval.rs"]
+pub mod opening_interval;
 #[path = "rules/motion/overlap.rs"]
 pub mod overlap;
 #[path = "rules/motion/parallel_fifths.rs"]
@@ -28,6 +46,18 @@ pub mod parallel_octaves;
 pub mod parallel_unisons;
 #[path = "rules/writing/reading.rs"]
 pub mod reading;
+#[path = "rules/line/repeated_note.rs"]
+pub mod repeated_note;
+#[path = "rules/line/seventh_leap.rs"]
+pub mod seventh_leap;
+#[path = "rules/motion/similar_leaps.rs"]
+pub mod similar_leaps;
+#[path = "rules/line/sixth_leap.rs"]
+pub mod sixth_leap;
+#[path = "rules/sonority/spacing.rs"]
+pub mod spacing;
+#[path = "rules/species/species_rhythm.rs"]
+pub mod species_rhythm;
 #[path = "rules/motion/unequal_fifths.rs"]
 pub mod unequal_fifths;
 #[path = "rules/writing/unwritten.rs"]
@@ -36,6 +66,72 @@ pub mod unwritten;
 pub mod voice_silent;
 
 pub(crate) static FILES: &[File] = &[
+    File {
+        family: "cadence",
+        stem: "closing_interval",
+        rule: &closing_interval::RULE,
+        text: include_str!("rules/cadence/closing_interval.rs"),
+    },
+    File {
+        family: "line",
+        stem: "augmented_interval",
+        rule: &augmented_interval::RULE,
+        text: include_str!("rules/line/augmented_interval.rs"),
+    },
+    File {
+        family: "line",
+        stem: "chromatic_semitone",
+        rule: &chromatic_semitone::RULE,
+        text: include_str!("rules/line/chromatic_semitone.rs"),
+    },
+    File {
+        family: "line",
+        stem: "diminished_interval",
+        rule: &diminished_interval::RULE,
+        text: include_str!("rules/line/diminished_interval.rs"),
+    },
+    File {
+        family: "line",
+        stem: "leap_beyond_octave",
+        rule: &leap_beyond_octave::RULE,
+        text: include_str!("rules/line/leap_beyond_octave.rs"),
+    },
+    File {
+        family: "line",
+        stem: "leap_unrecovered",
+        rule: &leap_unrecovered::RULE,
+        text: include_str!("rules/line/leap_unrecovered.rs"),
+    },
+    File {
+        family: "line",
+        stem: "leaps_one_way",
+        rule: &leaps_one_way::RULE,
+        text: include_str!("rules/line/leaps_one_way.rs"),
+    },
+    File {
+        family: "line",
+        stem: "repeated_note",
+        rule: &repeated_note::RULE,
+        text: include_str!("rules/line/repeated_note.rs"),
+    },
+    File {
+        family: "line",
+        stem: "seventh_leap",
+        rule: &seventh_leap::RULE,
+        text: include_str!("rules/line/seventh_leap.rs"),
+    },
+    File {
+        family: "line",
+        stem: "sixth_leap",
+        rule: &sixth_leap::RULE,
+        text: include_str!("rules/line/sixth_leap.rs"),
+    },
+    File {
+        family: "motion",
+        stem: "all_one_way",
+        rule: &all_one_way::RULE,
+        text: include_str!("rules/motion/all_one_way.rs"),
+    },
     File {
         family: "motion",
         stem: "contrary_fifths",
@@ -98,6 +194,12 @@ pub(crate) static FILES: &[File] = &[
     },
     File {
         family: "motion",
+        stem: "similar_leaps",
+        rule: &similar_leaps::RULE,
+        text: include_str!("rules/motion/similar_leaps.rs"),
+    },
+    File {
+        family: "motion",
         stem: "unequal_fifths",
         rule: &unequal_fifths::RULE,
         text: include_str!("rules/motion/unequal_fifths.rs"),
@@ -107,6 +209,24 @@ pub(crate) static FILES: &[File] = &[
         stem: "compass",
         rule: &compass::RULE,
         text: include_str!("rules/range/compass.rs"),
+    },
+    File {
+        family: "sonority",
+        stem: "opening_interval",
+        rule: &opening_interval::RULE,
+        text: include_str!("rules/sonority/opening_interval.rs"),
+    },
+    File {
+        family: "sonority",
+        stem: "spacing",
+        rule: &spacing::RULE,
+        text: include_str!("rules/sonority/spacing.rs"),
+    },
+    File {
+        family: "species",
+        stem: "species_rhythm",
+        rule: &species_rhythm::RULE,
+        text: include_str!("rules/species/species_rhythm.rs"),
     },
     File {
         family: "writing",

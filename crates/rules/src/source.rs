@@ -154,6 +154,13 @@ pub const PROUT_HARMONY: Source = source(
     1889,
     Known::FromMemory,
 );
+/// Counterpoint after Schenker.
+pub const SALZER_SCHACHTER: Source = source(
+    "F. Salzer, C. Schachter",
+    "Counterpoint in Composition",
+    1969,
+    Known::FromMemory,
+);
 /// Jeppesen's study of the Palestrina style.
 pub const JEPPESEN: Source = source(
     "K. Jeppesen",

@@ -94,6 +94,19 @@ impl Style {
         successors(Some(self), |style| style.base())
     }
 
+    /// The species, 1 to 5.
+    #[must_use]
+    pub const fn species(self) -> Option<u8> {
+        match self {
+            Style::Species1 => Some(1),
+            Style::Species2 => Some(2),
+            Style::Species3 => Some(3),
+            Style::Species4 => Some(4),
+            Style::Species5 => Some(5),
+            Style::Free | Style::Chorale | Style::Motet => None,
+        }
+    }
+
     /// Whether it is one of the five species.
     #[must_use]
     pub const fn is_species(self) -> bool {

@@ -68,6 +68,18 @@ impl Interval {
         matches!(self.quality(), (..=-1, true) | (..=-2, false))
     }
 
+    /// Larger than major or perfect.
+    #[must_use]
+    pub fn is_augmented(self) -> bool {
+        self.quality().0 > 0
+    }
+
+    /// Minor.
+    #[must_use]
+    pub fn is_minor(self) -> bool {
+        self.quality() == (-1, false)
+    }
+
     /// In full: `perfect fifth`, `minor tenth`, `octave`, `augmented fourth`.
     #[must_use]
     pub fn name(self) -> String {

@@ -3,6 +3,7 @@
 mod list;
 mod scaffold;
 mod suite;
+mod tools;
 
 use std::path::PathBuf;
 use std::process::ExitCode;

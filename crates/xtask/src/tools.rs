@@ -59,9 +59,11 @@ fn program(environment: &Path, name: &str) -> PathBuf {
     }
 }
 
+/// Whether it answers. It starts a log even so, which belongs in no home folder.
 fn is_neovim(path: &Path) -> bool {
     let said = Command::new(path)
         .arg("--version")
+        .env("XDG_STATE_HOME", path.with_file_name("state"))
         .stdin(Stdio::null())
         .output();
     said.is_ok_and(|said| {

@@ -1,8 +1,8 @@
 //! One voice as a line.
 
-use partwright_score::{Pitch, Time};
+use partwright_score::{Interval, Note, Pitch, Time, Voice};
 
-use super::Line;
+use super::{Line, Piece, Sounding};
 
 /// Notes in a row of which the same can be said.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
@@ -21,19 +21,207 @@ pub struct Run<K> {
     pub highest: Pitch,
 }
 
-impl Line<'_> {
+/// One voice going from a note to the next, inside a phrase and without a rest between.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub struct LineMove {
+    /// The note left.
+    pub from: Note,
+    /// The note reached.
+    pub to: Note,
+    /// The interval, upward or downward.
+    pub interval: Interval,
+    /// Nothing of the line comes right before: it starts with the note left.
+    pub starts: bool,
+}
+
+impl LineMove {
+    /// Scale steps, without direction: 0 a repetition or a chromatic semitone, 1 a step.
+    #[must_use]
+    pub fn size(&self) -> i32 {
+        self.interval.size()
+    }
+
+    /// Upward.
+    #[must_use]
+    pub fn rises(&self) -> bool {
+        self.interval.0.semitones > 0
+    }
+
+    /// The same pitch again.
+    #[must_use]
+    pub fn is_repeat(&self) -> bool {
+        self.interval.0.semitones == 0 && self.interval.0.steps == 0
+    }
+
+    /// A third or more.
+    #[must_use]
+    pub fn is_leap(&self) -> bool {
+        self.size() >= 2
+    }
+
+    /// Both move, the same way.
+    #[must_use]
+    pub fn goes_on_from(&self, other: &LineMove) -> bool {
+        !self.is_repeat() && !other.is_repeat() && self.rises() == other.rises()
+    }
+
+    /// The pitch left and the pitch reached, as text.
+    #[must_use]
+    pub fn ends(&self) -> (String, String) {
+        let text = |note: &Note| {
+            note.sound
+                .pitch()
+                .map(|p| p.to_string())
+                .unwrap_or_default()
+        };
+        (text(&self.from), text(&self.to))
+    }
+}
+
+impl<'a> Piece<'a> {
+    /// The moves of one voice.
+    #[must_use]
+    pub fn line_moves(self, voice: usize) -> Vec<LineMove> {
+        let notes = self.score.voices.get(voice).map_or(&[][..], |v| &v.notes);
+        let mut moves: Vec<LineMove> = Vec::with_capacity(notes.len());
+        let mut joined = false;
+        for pair in notes.windows(2) {
+            let &[from, to] = pair else { continue };
+            let (Some(left), Some(reached)) = (from.sound.pitch(), to.sound.pitch()) else {
+                joined = false;
+                continue;
+            };
+            if from.ends_phrase() || self.starts_section(to.onset) {
+                joined = false;
+                continue;
+            }
+            let interval = Interval(left.place().up_to(reached.place()));
+            moves.push(LineMove {
+                from,
+                to,
+                interval,
+                starts: !joined,
+            });
+            joined = true;
+        }
+        moves
+    }
+
+    /// A section of the score ended just before a moment.
+    fn starts_section(self, at: Time) -> bool {
+        let before = self.score.bars.partition_point(|bar| bar.onset < at);
+        let starts = self
+            .score
+            .bars
+            .get(before)
+            .is_some_and(|bar| bar.onset == at);
+        let closed = before.checked_sub(1).and_then(|i| self.score.bars.get(i));
+        starts && closed.is_some_and(|bar| bar.section_end)
+    }
+}
+
+impl<'a> Line<'a> {
+    /// The voice.
+    #[must_use]
+    pub fn declared(&self) -> Option<&'a Voice> {
+        self.piece.score.voices.get(self.voice)
+    }
+
+    /// The voice is given, not composed: nothing is said about its line.
+    #[must_use]
+    pub fn is_given(&self) -> bool {
+        self.declared()
+            .is_some_and(|v| v.cantus || v.doubles.is_some())
+    }
+
+    /// The voice is the lowest in the score, under at least one other.
+    #[must_use]
+    pub fn is_bass(&self) -> bool {
+        self.voice > 0 && self.voice + 1 == self.piece.score.voices.len()
+    }
+
+    /// The voice is the highest in the score.
+    #[must_use]
+    pub fn is_top(&self) -> bool {
+        self.voice == 0
+    }
+
+    /// The number of independent voices that sound where a move arrives.
+    #[must_use]
+    pub fn parts_at(&self, step: &LineMove) -> usize {
+        self.sounding_at(step).map_or(1, Sounding::parts)
+    }
+
+    /// The sonority a move arrives in.
+    #[must_use]
+    pub fn sounding_at(&self, step: &LineMove) -> Option<Sounding<'a>> {
+        let index = self.piece.texture.at(step.to.onset)?;
+        Some(Sounding {
+            piece: self.piece,
+            index,
+        })
+    }
+
+    /// The next move to another pitch, if the line goes on to one.
+    #[must_use]
+    pub fn after(&self, index: usize) -> Option<&'a LineMove> {
+        let rest = self.moves.get(index + 1..).unwrap_or_default();
+        rest.iter()
+            .take_while(|m| !m.starts)
+            .find(|m| !m.is_repeat())
+    }
+
+    /// The move to another pitch that comes after the next one.
+    #[must_use]
+    pub fn after_next(&self, index: usize) -> Option<&'a LineMove> {
+        let rest = self.moves.get(index + 1..).unwrap_or_default();
+        rest.iter()
+            .take_while(|m| !m.starts)
+            .filter(|m| !m.is_repeat())
+            .nth(1)
+    }
+
+    /// The move right before, if the line came from somewhere.
+    #[must_use]
+    pub fn before(&self, index: usize) -> Option<&'a LineMove> {
+        let this = self.moves.get(index)?;
+        if this.starts {
+            None
+        } else {
+            self.moves.get(index.checked_sub(1)?)
+        }
+    }
+
+    /// Three notes (a move and the one after it) outline a triad, or divide an octave into a
+    /// fourth and a fifth.
+    #[must_use]
+    pub fn outlines_chord(first: &LineMove, second: &LineMove) -> bool {
+        let pitches = [first.from, first.to, second.to].map(|n| n.sound.pitch());
+        let [Some(a), Some(b), Some(c)] = pitches else {
+            return true;
+        };
+        let class = |p: Pitch| p.place().semitone.rem_euclid(12);
+        let mut classes = [class(a), class(b), class(c)];
+        classes.sort_unstable();
+        let [x, y, z] = classes;
+        if x == y || y == z {
+            return true;
+        }
+        let gaps = [y - x, z - y, 12 - (z - x)];
+        // Major, minor and diminished triads by their cycles of gaps.
+        let shapes = [[4, 3, 5], [3, 4, 5], [3, 3, 6]];
+        (0..3).any(|turn| {
+            let turned = [0, 1, 2].map(|i| gaps.get((i + turn) % 3).copied().unwrap_or(0));
+            shapes.contains(&turned)
+        })
+    }
+
     /// The runs of notes to which `say` gives the same answer; silence does not break a run.
     #[must_use]
     pub fn runs<K: Copy + PartialEq>(&self, say: impl Fn(Pitch) -> Option<K>) -> Vec<Run<K>> {
         let mut runs: Vec<Run<K>> = Vec::new();
         let mut goes_on = false;
-        let notes = self
-            .piece
-            .score
-            .voices
-            .get(self.voice)
-            .map_or(&[][..], |v| &v.notes);
-        for note in notes {
+        for note in self.declared().map_or(&[][..], |v| &v.notes) {
             let Some(pitch) = note.sound.pitch() else {
                 continue;
             };

@@ -2,6 +2,7 @@
 //!
 //! These views only read what `partwright_score` laid out, and put it into a musician's words.
 
+mod close;
 mod line;
 mod pair;
 mod piece;
@@ -9,9 +10,10 @@ mod sounding;
 
 use partwright_score::{Pair, PairStep, Score, Texture};
 
-pub use line::Run;
+pub use close::NotesOver;
+pub use line::{LineMove, Run};
 pub use pair::Direct;
-pub use piece::Crossing;
+pub use piece::{Crossing, Passage};
 
 /// A score with its texture.
 #[derive(Clone, Copy)]
@@ -49,4 +51,6 @@ pub struct Line<'a> {
     pub piece: Piece<'a>,
     /// The voice, by index.
     pub voice: usize,
+    /// Its moves from note to note.
+    pub moves: &'a [LineMove],
 }

@@ -118,10 +118,15 @@ impl<'a> PairMove<'a> {
         self.sounding.outer() == Some(self.pair)
     }
 
-    /// The lower of the two has the lowest note of all.
+    /// The lower of the two has the lowest note of all; `None` where that cannot be told, since
+    /// a voice is not written yet.
     #[must_use]
-    pub fn is_with_bass(&self) -> bool {
-        self.sounding.bass().is_some_and(|bass| bass == self.foot())
+    pub fn is_with_bass(&self) -> Option<bool> {
+        let voices = self.sounding.piece.score.voices.len();
+        if self.sounding.sonority().is_some_and(|s| s.unknown != 0) && self.foot() + 1 == voices {
+            return Some(true);
+        }
+        self.sounding.bass().map(|bass| bass == self.foot())
     }
 
     /// The same pair's step into the next sonority in which either of them moves, if pair rules
@@ -153,13 +158,6 @@ impl<'a> PairMove<'a> {
     #[must_use]
     pub fn is_in_unison_before(&self) -> bool {
         self.step.before().is_some_and(|gap| gap.semitones == 0)
-    }
-
-    /// No voice that sounds stands between them in the score.
-    #[must_use]
-    pub fn are_neighbours(&self) -> bool {
-        let mut sounding = self.sounding.piece.texture.sounding(self.sounding.index);
-        !sounding.any(|v| self.pair.upper < v && v < self.pair.lower)
     }
 
     /// The pitch a voice reaches, as text.

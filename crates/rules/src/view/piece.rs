@@ -17,7 +17,52 @@ pub struct Crossing {
     pub returns: bool,
 }
 
+/// A run of sonorities of which the same can be said.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub struct Passage {
+    /// Its first sonority.
+    pub first: usize,
+    /// One past its last sonority.
+    pub end: usize,
+    /// How many chords it holds: sonorities that begin on a beat, at least one.
+    pub chords: usize,
+    /// Where it begins.
+    pub from: Time,
+    /// Where it ends.
+    pub until: Time,
+}
+
 impl<'a> Piece<'a> {
+    /// A sonority by its index.
+    #[must_use]
+    pub fn sounding(self, index: usize) -> Sounding<'a> {
+        Sounding { piece: self, index }
+    }
+
+    /// The longest runs of sonorities of which `holds` is true.
+    #[must_use]
+    pub fn passages(self, holds: impl Fn(Sounding<'a>) -> bool) -> Vec<Passage> {
+        let mut passages: Vec<Passage> = Vec::new();
+        for there in self.soundings().filter(|&there| holds(there)) {
+            let (index, until) = (there.index, self.end_of(there.index));
+            match passages.last_mut() {
+                Some(last) if last.end == index => {
+                    last.end = index + 1;
+                    last.chords += usize::from(!there.is_off_beat());
+                    last.until = until;
+                }
+                _ => passages.push(Passage {
+                    first: index,
+                    end: index + 1,
+                    chords: 1,
+                    from: there.onset(),
+                    until,
+                }),
+            }
+        }
+        passages
+    }
+
     /// The sonorities in order.
     pub fn soundings(self) -> impl Iterator<Item = Sounding<'a>> {
         (0..self.texture.sonorities().len()).map(move |index| Sounding { piece: self, index })

@@ -28,39 +28,107 @@ impl<'a> Sounding<'a> {
             })
     }
 
-    /// The number of independent voices that sound: doublings count once.
+    /// The voices that sound or of which nothing is known, in score order: a voice not written
+    /// yet may turn out to sound.
+    fn present(self) -> impl Iterator<Item = usize> {
+        let set = self.sonority().map_or(0, |s| s.sounding | s.unknown);
+        (0..self.piece.score.voices.len()).filter(move |v| set >> v & 1 == 1)
+    }
+
+    /// The number of independent voices: doublings count once, voices not written yet count.
     #[must_use]
     pub fn parts(self) -> usize {
-        let texture = self.piece.texture;
-        let voices = texture.sounding(self.index);
-        voices
-            .filter(|&v| {
-                let above = texture.sounding(self.index).take_while(|&u| u < v);
-                let mut doubled = above.filter_map(|u| texture.step(self.index, u, v));
-                !doubled.any(PairStep::is_one_voice)
-            })
+        let doubles = |u: usize, v: usize| {
+            let step = self.piece.texture.step(self.index, u, v);
+            step.is_some_and(PairStep::is_one_voice)
+        };
+        self.present()
+            .filter(|&v| !self.present().take_while(|&u| u < v).any(|u| doubles(u, v)))
             .count()
     }
 
-    /// The highest and the lowest voice in the score that sound.
+    /// The highest and the lowest voice in the score that sound, or may.
     #[must_use]
     pub fn outer(self) -> Option<Pair> {
-        let mut sounding = self.piece.texture.sounding(self.index);
-        let upper = sounding.next()?;
-        let lower = sounding.last()?;
+        let mut present = self.present();
+        let upper = present.next()?;
+        let lower = present.last()?;
         Some(Pair { upper, lower })
+    }
+
+    /// No voice that sounds, or may, stands between the two in the score.
+    #[must_use]
+    pub fn are_neighbours(self, pair: Pair) -> bool {
+        !self.present().any(|v| pair.upper < v && v < pair.lower)
+    }
+
+    /// No voice that sounds, or may, stands below this one in the score.
+    #[must_use]
+    pub fn is_lowest_present(self, voice: usize) -> bool {
+        self.present().last() == Some(voice)
+    }
+
+    /// The pair is the first and the third of the voices in the score that sound, or may.
+    #[must_use]
+    pub fn are_first_and_third(self, pair: Pair) -> bool {
+        self.present().next() == Some(pair.upper) && self.present().nth(2) == Some(pair.lower)
+    }
+
+    /// Two voices stand further apart than a number of scale steps.
+    #[must_use]
+    pub fn is_wider_than(self, pair: Pair, steps: i32) -> bool {
+        let gap = self.piece.texture.gap(self.index, pair.upper, pair.lower);
+        gap.is_some_and(|gap| Interval(gap).size() > steps)
+    }
+
+    /// Every voice sounds on both sides of the step, moves, and all move the same way: whether
+    /// upward. `None` otherwise, and across the end of a phrase.
+    #[must_use]
+    pub fn all_move_one_way(self) -> Option<bool> {
+        let texture = self.piece.texture;
+        if self.sonority()?.unknown != 0
+            || texture
+                .steps(self.index)
+                .any(|(_, step)| step.across_phrase())
+        {
+            return None;
+        }
+        let mut ways = texture.sounding(self.index).map(|voice| {
+            let moved = texture.displacement(self.piece.score, self.index, voice)?;
+            (moved.semitones != 0).then_some(moved.semitones > 0)
+        });
+        let first = ways.next()??;
+        ways.all(|way| way == Some(first)).then_some(first)
+    }
+
+    /// The voices go in sixth chords: over the lowest a third and a sixth, before and after.
+    #[must_use]
+    pub fn goes_in_sixth_chords(self) -> bool {
+        let sixth_chord = |there: Sounding<'_>| {
+            let Some(bass) = there.bass() else {
+                return false;
+            };
+            let texture = there.piece.texture;
+            let sizes: Vec<Option<i32>> = texture
+                .sounding(there.index)
+                .filter(|&v| v != bass)
+                .map(|v| {
+                    texture
+                        .gap(there.index, v, bass)
+                        .map(|gap| Interval(gap).size() % 7)
+                })
+                .collect();
+            sizes.contains(&Some(2))
+                && sizes.contains(&Some(5))
+                && sizes.iter().all(|size| matches!(size, Some(0 | 2 | 5)))
+        };
+        sixth_chord(self) && self.neighbour(-1).is_some_and(sixth_chord)
     }
 
     /// The voice with the lowest note; `None` where a voice is not known.
     #[must_use]
     pub fn bass(self) -> Option<usize> {
         self.piece.texture.bass(self.piece.score, self.index)
-    }
-
-    /// Whether something is not known here: not written yet, or not readable.
-    #[must_use]
-    pub fn has_unknown(self) -> bool {
-        self.sonority().is_some_and(|s| s.unknown != 0)
     }
 
     /// At least three voices sound, all of them in unisons and octaves.
@@ -123,12 +191,18 @@ impl<'a> Sounding<'a> {
         closed && !strikes_later()
     }
 
-    /// The letters and signs of this sonority and of the one before fit into one triad or
-    /// seventh chord: the chord may be the same. (Without the harmony no more can be said.)
+    /// The letters and signs of this sonority and of the one before fit into one chord, so that
+    /// the chord may be the same: a seventh chord in three parts and more, a triad in two. One
+    /// voice alone makes none. (Without the harmony no more can be said.)
     #[must_use]
     pub fn may_keep_chord(self) -> bool {
         let Some(before) = self.neighbour(-1) else {
             return false;
+        };
+        let thirds = match self.parts() {
+            ..=1 => return false,
+            2 => 3,
+            _ => 4,
         };
         let mut signs: [Option<i8>; 7] = [None; 7];
         for there in [before, self] {
@@ -149,8 +223,8 @@ impl<'a> Sounding<'a> {
         }
         let used = |letter: usize| signs.get(letter % 7).is_some_and(Option::is_some);
         (0..7).any(|root| {
-            let chord = [root, root + 2, root + 4, root + 6].map(|l| l % 7);
-            (0..7).all(|letter| !used(letter) || chord.contains(&letter))
+            let of_chord = |letter| (0..thirds).any(|third| (root + 2 * third) % 7 == letter);
+            (0..7).all(|letter| !used(letter) || of_chord(letter))
         })
     }
 

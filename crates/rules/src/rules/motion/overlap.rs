@@ -68,11 +68,15 @@ static ORDINARY: Case = Case {
 };
 
 fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
-    if !step.step.overlaps() || step.is_in_unison_before() || !step.are_neighbours() {
+    if !step.step.overlaps()
+        || step.is_in_unison_before()
+        || !step.sounding.are_neighbours(step.pair)
+    {
         return;
     }
     let score = step.sounding.piece.score;
-    let bass_changes_octave = step.is_with_bass() && step.size_of_move(step.foot()) == Some(7);
+    let bass_changes_octave =
+        step.is_with_bass() == Some(true) && step.size_of_move(step.foot()) == Some(7);
     if bass_changes_octave
         || score.are_equal(step.pair.upper, step.pair.lower)
         || step.sounding.may_keep_chord()

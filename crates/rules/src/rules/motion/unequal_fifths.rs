@@ -122,10 +122,13 @@ fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
     let is_diminished = |i: Option<Interval>| i.is_some_and(Interval::is_diminished);
     match way {
         Way::IntoPerfect => {
-            if !is_diminished(step.before()) || is_covered(step) {
+            let Some(with_bass) = step.is_with_bass() else {
+                return;
+            };
+            if !is_diminished(step.before()) || (!with_bass && is_covered(step)) {
                 return;
             }
-            let case = if step.is_with_bass() {
+            let case = if with_bass {
                 &INTO_WITH_BASS
             } else {
                 &INTO_PERFECT
@@ -154,9 +157,6 @@ fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
 /// Two upper voices that fall, or that rise by step while the bass goes in tenths or sixths with
 /// one of them.
 fn is_covered(step: &PairMove<'_>) -> bool {
-    if step.is_with_bass() {
-        return false;
-    }
     if !step.rises(step.top()) {
         return true;
     }

@@ -1,0 +1,163 @@
+//! A piece does not close on its final in a consonance that closes.
+//!
+//! Why: only unison and octave, and over the final the major third and fifth, come to rest.
+//!
+//! # Fails
+//!
+//! ```voices
+//! style species-1
+//! voice S
+//! voice C cantus
+//!
+//! S | A4 E4 F4 C#4 A4 ||
+//! //               ^^ closing interval: S and C
+//! C | D4 A3 D4 E4  D4 ||
+//! ```
+//!
+//! Over the wrong bass:
+//!
+//! ```voices
+//! style chorale
+//! key C major
+//!
+//! S | G4 F4 E4 ||
+//! A | E4 C4 C4 ||
+//! B | C4 A3 A3 ||
+//! //        ^^ closing interval: B
+//! ```
+//!
+//! # Passes
+//!
+//! ```voices
+//! style species-1
+//! voice S
+//! voice C cantus
+//!
+//! S | A4 E4 F4 C#4 D4 ||
+//! C | D4 A3 D4 E4  D4 ||
+//! ```
+//!
+//! # Does not apply
+//!
+//! Without a final `||` nothing closes:
+//!
+//! ```voices
+//! style species-1
+//! voice S
+//! voice C cantus
+//!
+//! S | A4 E4 F4 C#4 A4 |
+//! C | D4 A3 D4 E4  D4 |
+//! ```
+//!
+//! # What to do
+//!
+//! Close on the final: two voices in unison or octave, more with the final lowest.
+
+use crate::prelude::*;
+
+/// The rule.
+pub const RULE: Rule = Rule {
+    looks: Looks::Piece(check),
+    cases: &[&TWO_PARTS, &MORE_PARTS, &LOWEST],
+    sources: &[
+        source::FUX,
+        source::FUX_FIGURES.at("two parts: 43 of 43; three parts: 20 unisons and octaves, 17 with a major third, 4 with a fifth"),
+        source::OPEN_MUSIC_THEORY,
+    ],
+};
+
+static TWO_PARTS: Case = Case {
+    name: "",
+    when: "in two parts, not a unison or octave",
+    settings: &[
+        weakness(Style::Free, "an open ending may be meant"),
+        fault(Style::Species1, "no exception in 43 figures of Fux"),
+    ],
+};
+
+static MORE_PARTS: Case = Case {
+    name: "more-parts",
+    when: "in three parts or more, over the lowest voice something else than octave, fifth and third (in strict styles the major third)",
+    settings: &[
+        weakness(Style::Free, "an open ending may be meant"),
+        fault(
+            Style::Chorale,
+            "the close is a triad in root position (common practice)",
+        ),
+        weakness(
+            Style::Motet,
+            "the close is the final with its third and fifth",
+        ),
+        fault(
+            Style::Species1,
+            "only final, major third and fifth (Fux's figures)",
+        ),
+    ],
+};
+
+static LOWEST: Case = Case {
+    name: "lowest",
+    when: "where the lowest voice does not have the final or the tonic",
+    settings: &[
+        weakness(Style::Free, "an open ending may be meant"),
+        fault(
+            Style::Chorale,
+            "the close stands on the tonic (common practice)",
+        ),
+        weakness(
+            Style::Motet,
+            "the final in the lowest voice (Jeppesen, from memory)",
+        ),
+        fault(Style::Species1, "the lowest voice has the final (Fux)"),
+    ],
+};
+
+fn check(piece: &Piece<'_>, found: &mut Found<'_>) {
+    let Some(there) = piece.close() else { return };
+    let voices: Vec<usize> = piece.texture.sounding(there.index).collect();
+    let at = there.onset();
+    let strict = found.style().is_species();
+    let Some(bass) = there.bass().filter(|_| voices.len() >= 2) else {
+        return;
+    };
+    if piece.has_final(there, bass) == Some(false) {
+        found.sonority(&LOWEST, &[bass], at, || {
+            format!(
+                "Closing interval: {} has the lowest note and closes on {}, not on the final. Close on the final.",
+                piece.name(bass),
+                there.pitch_text(bass)
+            )
+        });
+        return;
+    }
+    for &voice in voices.iter().filter(|&&v| v != bass) {
+        let pair = Pair {
+            upper: voice.min(bass),
+            lower: voice.max(bass),
+        };
+        let (Some(interval), family) = (there.interval_of(pair), there.family_of(pair)) else {
+            continue;
+        };
+        let third = interval.size() % 7 == 2 && !(strict && interval.is_minor());
+        let rests = family == Some(Family::Octave)
+            || (voices.len() >= 3 && (third || family == Some(Family::Fifth)));
+        if rests {
+            continue;
+        }
+        let case = if voices.len() == 2 {
+            &TWO_PARTS
+        } else {
+            &MORE_PARTS
+        };
+        found.sonority(case, &[pair.upper, pair.lower], at, || {
+            format!(
+                "Closing interval: {} and {} close with a {}. Close on the final.",
+                piece.name(pair.upper),
+                piece.name(pair.lower),
+                interval.name()
+            )
+        });
+        return;
+    }
+}

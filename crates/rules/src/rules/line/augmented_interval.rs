@@ -1,0 +1,99 @@
+//! A voice moves by an augmented interval.
+//!
+//! Why: singers have nothing to hold it by; it is the hardest interval to pitch, and an augmented
+//! second or fourth stands out of any line.
+//!
+//! # Fails
+//!
+//! ```voices
+//! style chorale
+//!
+//! S | G4 Ab4 B4 C5 |
+//! //         ^^ augmented interval: S
+//! ```
+//!
+//! In open score writing it is a weakness:
+//!
+//! ```voices
+//! S | C5 B4 F4 G4 |
+//! //        ^^ augmented interval (weakness): S
+//! ```
+//!
+//! # Passes
+//!
+//! ```voices
+//! style chorale
+//!
+//! S | G4 Ab4 Bb4 C5 |
+//! ```
+//!
+//! # Does not apply
+//!
+//! Inside what may well be one chord:
+//!
+//! ```voices
+//! style chorale
+//!
+//! S | B4 F5 |
+//! A | G4 G4 |
+//! B | D3 G2 |
+//! ```
+//!
+//! # What to do
+//!
+//! Fill the interval, turn it into its diminished complement, or change the sign of one note.
+
+use crate::prelude::*;
+
+/// The rule.
+pub const RULE: Rule = Rule {
+    looks: Looks::Lines(check),
+    cases: &[&ORDINARY],
+    sources: &[
+        source::LEHMANN.at("lesson I"),
+        source::OPEN_MUSIC_THEORY,
+        source::PROUT_HARMONY.at("ch. IV"),
+    ],
+};
+
+static ORDINARY: Case = Case {
+    name: "",
+    when: "an augmented second, fourth, fifth or sixth between successive notes",
+    settings: &[
+        weakness(
+            Style::Free,
+            "instruments take it more lightly (common practice)",
+        ),
+        fault(
+            Style::Chorale,
+            "the treatises forbid it (Prout, from memory)",
+        ),
+        fault(Style::Motet, "not among the intervals of the style"),
+        fault(
+            Style::Species1,
+            "not among the permitted intervals (Lehmann, lesson I)",
+        ),
+    ],
+};
+
+fn check(line: &Line<'_>, found: &mut Found<'_>) {
+    for step in line.moves {
+        let one_chord = || {
+            !found.style().is_species()
+                && line
+                    .sounding_at(step)
+                    .is_some_and(|s| s.parts() >= 3 && s.may_keep_chord())
+        };
+        if line.is_given() || step.size() == 0 || !step.interval.is_augmented() || one_chord() {
+            continue;
+        }
+        found.line(&ORDINARY, line, step, || {
+            let (from, to) = step.ends();
+            let name = step.interval.name();
+            format!(
+                "Augmented interval: {} goes from {from} to {to}, an {name}. Fill it or change a sign.",
+                line.piece.name(line.voice)
+            )
+        });
+    }
+}

@@ -1,0 +1,147 @@
+//! After a large leap the line does not turn back.
+//!
+//! Why: a leap stretches the line, and the ear waits for what it jumped over; going on the same
+//! way strains the singer as well.
+//!
+//! # Fails
+//!
+//! ```voices
+//! style motet
+//!
+//! S | E4 C5 D5 |
+//! //     ^^ leap unrecovered (weakness): S
+//! ```
+//!
+//! An octave weighs more:
+//!
+//! ```voices
+//! style motet
+//!
+//! S | C4 C5 D5 |
+//! //     ^^ leap unrecovered: S
+//! ```
+//!
+//! A fourth or a fifth only if the line goes on for more than a step:
+//!
+//! ```voices
+//! style motet
+//!
+//! S | C4 G4 A4 B4 |
+//! //     ^^ leap unrecovered (weakness): S
+//! ```
+//!
+//! # Passes
+//!
+//! ```voices
+//! style motet
+//!
+//! S | E4 C5 B4 |
+//! ```
+//!
+//! ```voices
+//! style motet
+//!
+//! S | D4 A4 Bb4 A4 |
+//! ```
+//!
+//! # Does not apply
+//!
+//! In the bass, in free writing, and where the phrase ends:
+//!
+//! ```voices
+//! style chorale
+//!
+//! S | E4 C5^ D5 |
+//! B | C3 C4  D4 |
+//! ```
+//!
+//! # What to do
+//!
+//! Turn back after the leap, best by step.
+
+use crate::prelude::*;
+
+/// The rule.
+pub const RULE: Rule = Rule {
+    looks: Looks::Lines(check),
+    cases: &[&LARGE, &OCTAVE, &SMALL],
+    sources: &[
+        source::OPEN_MUSIC_THEORY,
+        source::JEPPESEN,
+        source::FUX_FIGURES.at("10 leaps of a fifth or more not turned back, in 44 figures"),
+    ],
+};
+
+static LARGE: Case = Case {
+    name: "",
+    when: "a sixth or more, not followed by a move the other way",
+    settings: &[
+        allow(Style::Free, "a matter of taste"),
+        weakness(Style::Chorale, "handbooks ask for it (Open Music Theory)"),
+        weakness(Style::Motet, "handbooks ask for it (Jeppesen, from memory)"),
+        weakness(Style::Species1, "handbooks ask for it (Open Music Theory)"),
+    ],
+};
+
+static OCTAVE: Case = Case {
+    name: "octave",
+    when: "an octave, not followed by a move the other way",
+    settings: &[
+        allow(Style::Free, "a matter of taste"),
+        weakness(Style::Chorale, "handbooks ask for it"),
+        fault(
+            Style::Motet,
+            "the octave is always balanced (Jeppesen, from memory)",
+        ),
+        weakness(Style::Species1, "the octave is balanced (Fux)"),
+    ],
+};
+
+static SMALL: Case = Case {
+    name: "fourth-or-fifth",
+    when: "a fourth or fifth after which the line goes on the same way for two steps, or leaps on out of a triad",
+    settings: &[
+        allow(Style::Free, "a matter of taste"),
+        weakness(Style::Chorale, "handbooks ask for it (Open Music Theory)"),
+        weakness(Style::Motet, "handbooks ask for it (Jeppesen, from memory)"),
+        weakness(
+            Style::Species1,
+            "Fux turns back after all but ten of his leaps",
+        ),
+    ],
+};
+
+fn check(line: &Line<'_>, found: &mut Found<'_>) {
+    if line.is_given() || (line.is_bass() && !found.style().is_species()) {
+        return;
+    }
+    for (i, step) in line.moves.iter().enumerate() {
+        let case = match step.size() {
+            7 => &OCTAVE,
+            5.. => &LARGE,
+            3 | 4 => &SMALL,
+            _ => continue,
+        };
+        let Some(next) = line.after(i) else { continue };
+        // After a fourth or fifth the line may fill out a triad, or top the leap with one step.
+        let excused = step.size() <= 4
+            && if next.is_leap() {
+                Line::outlines_chord(step, next)
+            } else {
+                line.after_next(i)
+                    .is_none_or(|third| !third.goes_on_from(step))
+            };
+        if !next.goes_on_from(step) || excused {
+            continue;
+        }
+        found.line(case, line, step, || {
+            let (from, to) = step.ends();
+            let way = if step.rises() { "up" } else { "down" };
+            format!(
+                "Leap unrecovered: {} leaps {way} from {from} to {to} and goes on {way} to {}. Turn back after the leap.",
+                line.piece.name(line.voice),
+                next.ends().1
+            )
+        });
+    }
+}

@@ -1,0 +1,101 @@
+//! A voice leaps a seventh.
+//!
+//! Why: it is a step spoilt by an octave; singers miss it, and the line breaks.
+//!
+//! # Fails
+//!
+//! ```voices
+//! style chorale
+//!
+//! S | C4 Bb4 A4 |
+//! A | A3 D4  F4 |
+//! //     ^^ seventh leap: S
+//! ```
+//!
+//! # Passes
+//!
+//! ```voices
+//! style chorale
+//!
+//! S | C4 A4 Bb4 |
+//! ```
+//!
+//! # Does not apply
+//!
+//! Inside what may well be one chord:
+//!
+//! ```voices
+//! style chorale
+//!
+//! S | G4 F5 |
+//! A | D4 D4 |
+//! B | B2 B2 |
+//! ```
+//!
+//! # What to do
+//!
+//! Take the step or an octave's complement, or divide the leap.
+
+use crate::prelude::*;
+
+/// The rule.
+pub const RULE: Rule = Rule {
+    looks: Looks::Lines(check),
+    cases: &[&ORDINARY, &BASS],
+    sources: &[
+        source::LEHMANN.at("lesson I"),
+        source::BACH_CHORALES
+            .at("43 in the bass, 3 or 4 in each other voice, of some 55,000 intervals"),
+    ],
+};
+
+static ORDINARY: Case = Case {
+    name: "",
+    when: "a major or minor seventh, not inside one chord",
+    settings: &[
+        weakness(
+            Style::Free,
+            "instruments take it more lightly (common practice)",
+        ),
+        fault(Style::Chorale, "3 or 4 in each upper voice of 370 chorales"),
+        fault(Style::Motet, "not among the intervals of the style"),
+        fault(Style::Species1, "not among the permitted intervals (Fux)"),
+    ],
+};
+
+static BASS: Case = Case {
+    name: "bass",
+    when: "in the bass, where a step is taken in another octave",
+    settings: &[
+        weakness(
+            Style::Free,
+            "instruments take it more lightly (common practice)",
+        ),
+        weakness(Style::Chorale, "43 in the basses of 370 chorales"),
+        fault(Style::Motet, "not among the intervals of the style"),
+        fault(Style::Species1, "not among the permitted intervals (Fux)"),
+    ],
+};
+
+fn check(line: &Line<'_>, found: &mut Found<'_>) {
+    for step in line.moves {
+        let one_chord = || {
+            !found.style().is_species()
+                && line
+                    .sounding_at(step)
+                    .is_some_and(|s| s.parts() >= 3 && s.may_keep_chord())
+        };
+        let plain = !step.interval.is_augmented() && !step.interval.is_diminished();
+        if line.is_given() || step.size() != 6 || !plain || one_chord() {
+            continue;
+        }
+        let case = if line.is_bass() { &BASS } else { &ORDINARY };
+        found.line(case, line, step, || {
+            let (from, to) = step.ends();
+            format!(
+                "Seventh leap: {} goes from {from} to {to}. Take the step instead, or divide the leap.",
+                line.piece.name(line.voice)
+            )
+        });
+    }
+}

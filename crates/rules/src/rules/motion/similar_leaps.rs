@@ -1,0 +1,86 @@
+//! Two voices leap at once in the same direction.
+//!
+//! Why: while both leap, neither holds the other; together they sound like one clumsy voice.
+//!
+//! # Fails
+//!
+//! ```voices
+//! style species-1
+//!
+//! S | C5 F5 |
+//! B | E4 A4 |
+//! //     ^^ similar leaps (weakness): S and B
+//! ```
+//!
+//! # Passes
+//!
+//! ```voices
+//! style species-1
+//!
+//! S | C5 D5 |
+//! B | E4 B4 |
+//! ```
+//!
+//! # Does not apply
+//!
+//! The bass leaps a fourth or a fifth in three parts or more, or the chord may be the same:
+//!
+//! ```voices
+//! style chorale
+//!
+//! S | D5 F5 |
+//! A | B4 A4 |
+//! B | G3 D4 |
+//! ```
+//!
+//! ```voices
+//! style chorale
+//!
+//! S | C5 E5 |
+//! A | E4 G4 |
+//! B | C3 C3 |
+//! ```
+//!
+//! # What to do
+//!
+//! Let one of the two step, stay, or move the other way.
+
+use crate::prelude::*;
+
+/// The rule.
+pub const RULE: Rule = Rule {
+    looks: Looks::Pairs(check),
+    cases: &[&ORDINARY],
+    sources: &[source::OPEN_MUSIC_THEORY, source::SALZER_SCHACHTER],
+};
+
+static ORDINARY: Case = Case {
+    name: "",
+    when: "both a third or more, outside one chord; in three parts and more not where the bass leaps a fourth or fifth",
+    settings: &[
+        allow(Style::Free, "a matter of taste"),
+        weakness(Style::Chorale, "handbooks warn of it"),
+        weakness(Style::Motet, "handbooks warn of it"),
+        weakness(Style::Species1, "handbooks warn of it (Open Music Theory)"),
+    ],
+};
+
+fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
+    let (top, foot) = (step.top(), step.foot());
+    let same_way = matches!(step.motion(), Some(Motion::Parallel | Motion::Similar));
+    if !same_way || !step.leaps(top) || !step.leaps(foot) || step.sounding.may_keep_chord() {
+        return;
+    }
+    let root_moves =
+        matches!(step.size_of_move(foot), Some(3 | 4)) && step.is_with_bass() != Some(false);
+    if root_moves && step.sounding.parts() >= 3 {
+        return;
+    }
+    found.pair(&ORDINARY, step, || {
+        let way = if step.rises(top) { "up" } else { "down" };
+        format!(
+            "Similar leaps: {}, both leaping {way}. Let one of them step or stay.",
+            step.story()
+        )
+    });
+}

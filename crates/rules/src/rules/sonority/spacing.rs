@@ -1,0 +1,237 @@
+//! Neighbouring voices stand too far apart.
+//!
+//! Why: a gap between upper voices makes the chord fall into two groups, and the singers no
+//! longer hear each other.
+//!
+//! # Fails
+//!
+//! ```voices
+//! style chorale
+//!
+//! S | C5 E5 C5 |
+//! //     ^^ spacing (weakness): S and A
+//! A | E4 D4 E4 |
+//! T | G3 B3 G3 |
+//! B | C3 G2 C3 |
+//! ```
+//!
+//! Over more than two chords it is a fault in a chorale:
+//!
+//! ```voices
+//! style chorale
+//!
+//! S | E5 F5 G5 |
+//! //  ^^ spacing: S and A
+//! A | C4 D4 E4 |
+//! T | B3 C4 D4 |
+//! B | C3 D3 E3 |
+//! ```
+//!
+//! In two strict parts, beyond a twelfth, or beyond a tenth for long:
+//!
+//! ```voices
+//! style species-1
+//!
+//! S | E5 A5 G5 |
+//! //     ^^ spacing (weakness): S and B
+//! B | C4 C4 E4 |
+//! ```
+//!
+//! # Passes
+//!
+//! ```voices
+//! style chorale
+//!
+//! S | C5 D5 C5 |
+//! A | E4 D4 E4 |
+//! T | G3 B3 G3 |
+//! B | C3 G2 C3 |
+//! ```
+//!
+//! # Does not apply
+//!
+//! Instruments, and the gap between tenor and bass within two octaves:
+//!
+//! ```voices
+//! voice V violin
+//! voice A viola
+//! voice C cello
+//!
+//! V | E6 F6 |
+//! A | C4 D4 |
+//! C | C3 D3 |
+//! ```
+//!
+//! # What to do
+//!
+//! Raise the lower voice or lower the upper one, or exchange notes with a third.
+
+use crate::prelude::*;
+
+/// The rule.
+pub const RULE: Rule = Rule {
+    looks: Looks::Piece(check),
+    cases: &[&UPPER, &UPPER_LONG, &TWO_PARTS, &TWO_PARTS_LONG, &BASS, &SOPRANO_TENOR],
+    sources: &[
+        source::OPEN_MUSIC_THEORY,
+        source::LEHMANN.at("lesson XI"),
+        source::BACH_CHORALES.at("soprano and alto 143, alto and tenor 334, of 30,038 sonorities; the bass beyond a twelfth 312"),
+        source::FUX_FIGURES.at("at most a twelfth and a semitone in two parts"),
+    ],
+};
+
+static UPPER: Case = Case {
+    name: "",
+    when: "neighbouring upper voices more than an octave apart, in three parts or more",
+    settings: &[
+        weakness(Style::Free, "common practice"),
+        weakness(Style::Chorale, "one or two chords are let pass with a word"),
+        weakness(Style::Species1, "in three parts (Lehmann, lesson XI)"),
+    ],
+};
+
+static UPPER_LONG: Case = Case {
+    name: "long",
+    when: "the same over more than two successive chords",
+    settings: &[
+        weakness(Style::Free, "common practice"),
+        fault(Style::Chorale, "handbooks allow one or two chords"),
+    ],
+};
+
+static TWO_PARTS: Case = Case {
+    name: "two-parts",
+    when: "two voices more than a twelfth apart, in two parts",
+    settings: &[
+        allow(Style::Free, "open writing is free"),
+        weakness(Style::Motet, "as in strict counterpoint"),
+        weakness(Style::Species1, "Fux stays within it but once"),
+    ],
+};
+
+static TWO_PARTS_LONG: Case = Case {
+    name: "two-parts-long",
+    when: "two voices more than a tenth apart over more than two sonorities, in two parts",
+    settings: &[
+        allow(Style::Free, "open writing is free"),
+        weakness(Style::Motet, "as in strict counterpoint"),
+        weakness(Style::Species1, "eight sonorities in Fux's figures"),
+    ],
+};
+
+static BASS: Case = Case {
+    name: "bass",
+    when: "the bass more than two octaves under its neighbour, in three parts or more",
+    settings: &[
+        allow(Style::Free, "open writing is free"),
+        weakness(Style::Chorale, "choral handbooks"),
+    ],
+};
+
+static SOPRANO_TENOR: Case = Case {
+    name: "soprano-tenor",
+    when: "the first and the third of four voices more than a twelfth apart",
+    settings: &[
+        allow(Style::Free, "open writing is free"),
+        weakness(Style::Chorale, "choral handbooks"),
+    ],
+};
+
+fn check(piece: &Piece<'_>, found: &mut Found<'_>) {
+    let sung = |v: usize| piece.score.voices.get(v).is_some_and(|v| v.kind.is_sung());
+    for &pair in piece.texture.pairs() {
+        if !sung(pair.upper) || !sung(pair.lower) {
+            continue;
+        }
+        let upper = |s: &Sounding<'_>| {
+            s.parts() >= 3 && s.are_neighbours(pair) && !s.is_lowest_present(pair.lower)
+        };
+        report(
+            piece,
+            found,
+            pair,
+            &|s| upper(s) && s.is_wider_than(pair, 7),
+            &UPPER,
+            Some(&UPPER_LONG),
+            "an octave",
+        );
+        let two = |s: &Sounding<'_>| s.parts() == 2;
+        report(
+            piece,
+            found,
+            pair,
+            &|s| two(s) && s.is_wider_than(pair, 11),
+            &TWO_PARTS,
+            None,
+            "a twelfth",
+        );
+        let bass = |s: &Sounding<'_>| {
+            s.parts() >= 3 && s.are_neighbours(pair) && s.is_lowest_present(pair.lower)
+        };
+        report(
+            piece,
+            found,
+            pair,
+            &|s| bass(s) && s.is_wider_than(pair, 14),
+            &BASS,
+            None,
+            "two octaves",
+        );
+        let third = |s: &Sounding<'_>| s.parts() == 4 && s.are_first_and_third(pair);
+        report(
+            piece,
+            found,
+            pair,
+            &|s| third(s) && s.is_wider_than(pair, 11),
+            &SOPRANO_TENOR,
+            None,
+            "a twelfth",
+        );
+        for run in piece.passages(|s| two(&s) && s.is_wider_than(pair, 9)) {
+            let wider = (run.first..run.end).any(|k| piece.sounding(k).is_wider_than(pair, 11));
+            if run.chords > 2 && !wider {
+                tell(piece, found, pair, &run, &TWO_PARTS_LONG, "a tenth");
+            }
+        }
+    }
+}
+
+type Test<'a> = &'a dyn Fn(&Sounding<'_>) -> bool;
+
+fn report(
+    piece: &Piece<'_>,
+    found: &mut Found<'_>,
+    pair: Pair,
+    test: Test<'_>,
+    short: &'static Case,
+    long: Option<&'static Case>,
+    limit: &str,
+) {
+    for run in piece.passages(|s| test(&s)) {
+        let case = long.filter(|_| run.chords > 2).unwrap_or(short);
+        tell(piece, found, pair, &run, case, limit);
+    }
+}
+
+fn tell(
+    piece: &Piece<'_>,
+    found: &mut Found<'_>,
+    pair: Pair,
+    run: &Passage,
+    case: &'static Case,
+    limit: &str,
+) {
+    found.passage(
+        case,
+        &[pair.upper, pair.lower],
+        (run.from, run.until),
+        || {
+            format!(
+                "Spacing: {} and {} are more than {limit} apart {}. Bring them closer.",
+                piece.name(pair.upper),
+                piece.name(pair.lower),
+                piece.extent_text(run.from, run.until)
+            )
+        },
+    );
+}

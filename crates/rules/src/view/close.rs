@@ -1,0 +1,227 @@
+//! Where a piece opens and closes, its cantus and its final.
+
+use partwright_score::{Interval, Key, Note, Pair, Sound, Time};
+use partwright_space::Family;
+
+use super::{Piece, Sounding};
+use crate::style::Style;
+
+/// The notes of one voice over one note of the cantus.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub struct NotesOver {
+    /// Where the cantus's note begins.
+    pub from: Time,
+    /// Where it ends.
+    pub until: Time,
+    /// How many notes sound over it, one tied in from before included.
+    pub notes: usize,
+    /// They share its time equally.
+    pub is_equal: bool,
+    /// The last of them lasts beyond it.
+    pub is_tied_out: bool,
+    /// The first of them was struck before.
+    pub is_tied_in: bool,
+    /// A rest stands among them.
+    pub rests: bool,
+    /// Half of it is a rest, then one note fills the other half.
+    pub starts_with_half_a_rest: bool,
+    /// The cantus's note fills a bar in triple time.
+    pub is_triple: bool,
+    /// Something of it is not written yet, or not readable.
+    pub is_unknown: bool,
+}
+
+impl NotesOver {
+    /// One note struck with the cantus, and as long.
+    #[must_use]
+    pub fn is_one_whole(&self) -> bool {
+        self.notes == 1 && !self.is_tied_in && !self.is_tied_out && !self.rests
+    }
+}
+
+impl<'a> Piece<'a> {
+    /// The first sonority in which all the voices sound, if it comes at once or after rests in
+    /// the first bar only, and the piece has at least four sonorities.
+    #[must_use]
+    pub fn opening(self) -> Option<Sounding<'a>> {
+        if self.texture.sonorities().len() < 4 || self.score.voices.len() < 2 {
+            return None;
+        }
+        let all = (1_u128 << self.score.voices.len()) - 1;
+        let first_bar = self.texture.sonorities().first()?.bar;
+        let index = self
+            .texture
+            .sonorities()
+            .iter()
+            .position(|s| u128::from(s.sounding) == all)?;
+        let there = self.sounding(index);
+        let in_first_bar = there.sonority()?.bar == first_bar;
+        let nothing_moved = self
+            .texture
+            .sonorities()
+            .iter()
+            .take(index)
+            .skip(1)
+            .all(|s| s.struck == 0);
+        (in_first_bar && nothing_moved).then_some(there)
+    }
+
+    /// The last sonority in which something sounds, if the piece ends with `||` and is more than
+    /// a fragment.
+    #[must_use]
+    pub fn close(self) -> Option<Sounding<'a>> {
+        let last = self
+            .texture
+            .sonorities()
+            .iter()
+            .rposition(|s| s.sounding != 0)?;
+        let there = self.sounding(last);
+        let known = self
+            .texture
+            .sonorities()
+            .iter()
+            .skip(last)
+            .all(|s| s.unknown == 0);
+        let closed = self.score.bars.last().is_some_and(|bar| bar.section_end);
+        (closed && known && last >= 2).then_some(there)
+    }
+
+    /// Whether a voice is the cantus.
+    #[must_use]
+    pub fn is_cantus(self, voice: usize) -> bool {
+        self.score.voices.get(voice).is_some_and(|v| v.cantus)
+    }
+
+    /// The cantus, or where none is declared the voice with the fewest notes. `None` with less
+    /// than two voices.
+    #[must_use]
+    pub fn cantus_or_slowest(self) -> Option<usize> {
+        let voices = &self.score.voices;
+        let slowest = || {
+            let notes = |v: usize| voices.get(v).map_or(0, |voice| voice.notes.len());
+            (0..voices.len()).min_by_key(|&v| (notes(v), voices.len() - v))
+        };
+        let declared = voices.iter().position(|v| v.cantus);
+        if voices.len() < 2 {
+            None
+        } else {
+            declared.or_else(slowest)
+        }
+    }
+
+    /// The species a voice is in under a style: its own, else the style's; a voice in whole notes
+    /// with the cantus accompanies in the first. `None` for the cantus and outside species.
+    #[must_use]
+    pub fn species_of(self, voice: usize, style: Style) -> Option<u8> {
+        let declared = self.score.voices.get(voice)?;
+        let species = declared.species.or(style.species())?;
+        if declared.cantus {
+            return None;
+        }
+        let accompanies = declared.species.is_none()
+            && self.score.voices.len() >= 3
+            && self.cantus_or_slowest().is_some_and(|cantus| {
+                self.notes_over(cantus, voice)
+                    .iter()
+                    .all(NotesOver::is_one_whole)
+            });
+        Some(if accompanies { 1 } else { species })
+    }
+
+    /// Whether a voice has the final at a sonority: the last note of the cantus, else the tonic
+    /// of the first key stated. `None` where neither is known.
+    #[must_use]
+    pub fn has_final(self, there: Sounding<'_>, voice: usize) -> Option<bool> {
+        let cantus = self.score.voices.iter().find(|v| v.cantus);
+        let last = cantus.and_then(|v| v.notes.iter().rev().find_map(|n| n.sound.pitch()));
+        let tonic = self
+            .score
+            .keys
+            .first()
+            .and_then(|change| match change.value {
+                Key::Of { tonic, .. } => Some(tonic),
+                Key::None => None,
+            });
+        let last = last.or(tonic)?;
+        let pitch = there.pitch(voice)?;
+        Some(pitch.letter() == last.letter() && pitch.sign == last.sign)
+    }
+
+    /// A voice's notes over each note of the cantus, in order.
+    #[must_use]
+    pub fn notes_over(self, cantus: usize, voice: usize) -> Vec<NotesOver> {
+        let notes = |v: usize| {
+            self.score
+                .voices
+                .get(v)
+                .map_or(&[][..], |voice| &voice.notes)
+        };
+        let line = notes(voice);
+        let sounding = notes(cantus)
+            .iter()
+            .filter(|note| matches!(note.sound, Sound::Pitch(_)));
+        sounding.map(|note| self.over(note, line)).collect()
+    }
+
+    fn over(self, under: &Note, line: &[Note]) -> NotesOver {
+        let first = line.partition_point(|note| note.end() <= under.onset);
+        let above: Vec<&Note> = line
+            .iter()
+            .skip(first)
+            .take_while(|note| note.onset < under.end())
+            .collect();
+        let pitched = |note: &&&Note| matches!(note.sound, Sound::Pitch(_));
+        let notes = above.iter().filter(pitched).count();
+        let parts = i64::try_from(above.len().max(1)).unwrap_or(1);
+        let share = under.length / parts;
+        let within =
+            |note: &&Note| note.onset.max(under.onset) + share == note.end().min(under.end());
+        let metre = self
+            .score
+            .bar_at(under.onset)
+            .and_then(|i| self.score.bars.get(i));
+        let metre = metre.and_then(|bar| self.score.metres.get(bar.metre as usize));
+        NotesOver {
+            from: under.onset,
+            until: under.end(),
+            notes,
+            is_equal: above.iter().all(within),
+            is_tied_out: above.last().is_some_and(|note| note.end() > under.end()),
+            is_tied_in: above.first().is_some_and(|note| note.onset < under.onset),
+            rests: above.iter().any(|note| note.sound == Sound::Rest),
+            starts_with_half_a_rest: above.len() == 2
+                && above.iter().all(within)
+                && above.first().is_some_and(|note| note.sound == Sound::Rest)
+                && notes == 1,
+            is_triple: metre
+                .is_some_and(|m| m.cells() == Some(3) && m.bar_length() == Some(under.length)),
+            is_unknown: above.iter().any(|note| note.sound.is_unknown()),
+        }
+    }
+}
+
+impl Sounding<'_> {
+    /// The interval of two voices.
+    #[must_use]
+    pub fn interval_of(self, pair: Pair) -> Option<Interval> {
+        self.piece
+            .texture
+            .gap(self.index, pair.upper, pair.lower)
+            .map(Interval)
+    }
+
+    /// The perfect family of the interval of two voices.
+    #[must_use]
+    pub fn family_of(self, pair: Pair) -> Option<Family> {
+        self.piece
+            .texture
+            .gap(self.index, pair.upper, pair.lower)?
+            .family()
+    }
+
+    /// The pitch of a voice as text.
+    #[must_use]
+    pub fn pitch_text(self, voice: usize) -> String {
+        self.pitch(voice).map(|p| p.to_string()).unwrap_or_default()
+    }
+}
