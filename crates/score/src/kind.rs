@@ -45,6 +45,8 @@ pub struct Kind {
     pub clef: &'static str,
     /// Octaves by which it sounds away from where it is usually written.
     pub sounding_octave: i8,
+    /// Where the compasses are from.
+    pub source: &'static str,
     /// Program number of General MIDI level 1 (from 1) for playback.
     pub program: u8,
 }
@@ -70,6 +72,7 @@ const fn kind(
     clef: &'static str,
     sounding_octave: i8,
     program: u8,
+    source: &'static str,
 ) -> Kind {
     Kind {
         name,
@@ -84,8 +87,13 @@ const fn kind(
         clef,
         sounding_octave,
         program,
+        source,
     }
 }
+
+const CHOIR: &str = "common ground of Piston and Aldwell & Schachter, from memory; extremes: Bach's chorales and choral guides";
+const MIDDLE: &str = "common practice, from memory: between the voices above and below";
+const INSTRUMENT: &str = "common practice of orchestration handbooks, from memory; sounding pitch";
 
 /// Every kind the notation knows, choir first.
 pub static KINDS: [Kind; 20] = [
@@ -96,6 +104,7 @@ pub static KINDS: [Kind; 20] = [
         "treble",
         0,
         53,
+        CHOIR,
     ),
     kind(
         "mezzo",
@@ -104,6 +113,7 @@ pub static KINDS: [Kind; 20] = [
         "treble",
         0,
         53,
+        MIDDLE,
     ),
     kind(
         "alto",
@@ -112,6 +122,7 @@ pub static KINDS: [Kind; 20] = [
         "treble",
         0,
         53,
+        CHOIR,
     ),
     kind(
         "tenor",
@@ -120,6 +131,7 @@ pub static KINDS: [Kind; 20] = [
         "treble8",
         0,
         53,
+        CHOIR,
     ),
     kind(
         "baritone",
@@ -128,6 +140,7 @@ pub static KINDS: [Kind; 20] = [
         "bass",
         0,
         53,
+        MIDDLE,
     ),
     kind(
         "bass",
@@ -136,6 +149,7 @@ pub static KINDS: [Kind; 20] = [
         "bass",
         0,
         53,
+        CHOIR,
     ),
     kind(
         "violin",
@@ -144,6 +158,7 @@ pub static KINDS: [Kind; 20] = [
         "treble",
         0,
         41,
+        INSTRUMENT,
     ),
     kind(
         "viola",
@@ -152,6 +167,7 @@ pub static KINDS: [Kind; 20] = [
         "alto",
         0,
         42,
+        INSTRUMENT,
     ),
     kind(
         "cello",
@@ -160,6 +176,7 @@ pub static KINDS: [Kind; 20] = [
         "bass",
         0,
         43,
+        INSTRUMENT,
     ),
     kind(
         "doublebass",
@@ -168,6 +185,7 @@ pub static KINDS: [Kind; 20] = [
         "bass",
         -1,
         44,
+        INSTRUMENT,
     ),
     kind(
         "flute",
@@ -176,6 +194,7 @@ pub static KINDS: [Kind; 20] = [
         "treble",
         0,
         74,
+        INSTRUMENT,
     ),
     kind(
         "oboe",
@@ -184,6 +203,7 @@ pub static KINDS: [Kind; 20] = [
         "treble",
         0,
         69,
+        INSTRUMENT,
     ),
     kind(
         "clarinet",
@@ -192,6 +212,7 @@ pub static KINDS: [Kind; 20] = [
         "treble",
         0,
         72,
+        INSTRUMENT,
     ),
     kind(
         "bassoon",
@@ -200,6 +221,7 @@ pub static KINDS: [Kind; 20] = [
         "bass",
         0,
         71,
+        INSTRUMENT,
     ),
     kind(
         "horn",
@@ -208,6 +230,7 @@ pub static KINDS: [Kind; 20] = [
         "treble",
         0,
         61,
+        INSTRUMENT,
     ),
     kind(
         "trumpet",
@@ -216,6 +239,7 @@ pub static KINDS: [Kind; 20] = [
         "treble",
         0,
         57,
+        INSTRUMENT,
     ),
     kind(
         "trombone",
@@ -224,6 +248,7 @@ pub static KINDS: [Kind; 20] = [
         "bass",
         0,
         58,
+        INSTRUMENT,
     ),
     kind(
         "tuba",
@@ -232,6 +257,7 @@ pub static KINDS: [Kind; 20] = [
         "bass",
         0,
         59,
+        INSTRUMENT,
     ),
     kind(
         "organ",
@@ -240,6 +266,7 @@ pub static KINDS: [Kind; 20] = [
         "treble",
         0,
         20,
+        INSTRUMENT,
     ),
     Kind {
         name: "voice",
@@ -248,6 +275,7 @@ pub static KINDS: [Kind; 20] = [
         clef: "treble",
         sounding_octave: 0,
         program: 53,
+        source: "a plain voice has no compass",
     },
 ];
 
@@ -261,7 +289,10 @@ impl Kind {
     /// Whether a singer has it.
     #[must_use]
     pub fn is_sung(&self) -> bool {
-        matches!(self.name, "soprano" | "mezzo" | "alto" | "tenor" | "baritone" | "bass" | "voice")
+        matches!(
+            self.name,
+            "soprano" | "mezzo" | "alto" | "tenor" | "baritone" | "bass" | "voice"
+        )
     }
 
     /// The kind of a voice about which nothing is declared.

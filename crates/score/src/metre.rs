@@ -17,6 +17,26 @@ pub struct Metre {
     groups: Vec<u16>,
     /// Where groups begin, as lengths from the bar line; without the bar line itself.
     starts: Vec<Time>,
+    /// Cell and group starts on the grid; none where they do not fit it.
+    grid: Option<(i64, Vec<i64>)>,
+}
+
+/// Parts of a whole note on which nearly all music falls: levels are told there in integers.
+const GRID: i64 = 768;
+
+fn on_grid(time: Time) -> Option<i64> {
+    let denominator = *time.denom();
+    (GRID % denominator == 0).then(|| time.numer() * (GRID / denominator))
+}
+
+fn grid(cell: Time, starts: &[Time]) -> Option<(i64, Vec<i64>)> {
+    Some((
+        on_grid(cell)?,
+        starts
+            .iter()
+            .map(|&s| on_grid(s))
+            .collect::<Option<Vec<i64>>>()?,
+    ))
 }
 
 /// Why figures make no metre.
@@ -67,6 +87,7 @@ impl Metre {
             unit,
             cell,
             groups: groups.to_vec(),
+            grid: grid(cell, &starts),
             starts,
         })
     }
@@ -80,6 +101,7 @@ impl Metre {
             cell: Time::new(1, 4),
             groups: Vec::new(),
             starts: Vec::new(),
+            grid: grid(Time::new(1, 4), &[]),
         }
     }
 
@@ -119,7 +141,11 @@ impl Metre {
     #[must_use]
     pub fn beat_level(&self) -> u8 {
         let by_threes = matches!(self.count, 6 | 9 | 12) && self.groups.is_empty();
-        if by_threes && self.unit >= 8 && self.cell == self.unit() { 1 } else { 2 }
+        if by_threes && self.unit >= 8 && self.cell == self.unit() {
+            1
+        } else {
+            2
+        }
     }
 
     /// How strong a moment is, by its distance from the bar line: 0 the bar line, 1 a group,
@@ -133,14 +159,43 @@ impl Metre {
         if self.starts.binary_search(&offset).is_ok() {
             return 1;
         }
-        let den = *(offset / self.cell).denom();
-        if den == 1 {
-            return 2;
-        }
-        let halvings = den.trailing_zeros();
-        let odd = den >> halvings > 1;
-        u8::try_from(2 + halvings + u32::from(odd)).unwrap_or(u8::MAX)
+        weight_inside(*(offset / self.cell).denom())
     }
+
+    /// The level of a moment in a bar that begins `lead` into its full length: [`Metre::level`] of
+    /// `lead + at - bar`, in integers wherever the music falls on the grid.
+    pub(crate) fn level_at(&self, lead: Time, bar: Time, at: Time) -> u8 {
+        let whole = || {
+            Some((
+                on_grid(lead)? + on_grid(at)? - on_grid(bar)?,
+                self.grid.as_ref()?,
+            ))
+        };
+        let Some((offset, (cell, starts))) = whole() else {
+            return self.level(lead + at - bar);
+        };
+        if offset == 0 {
+            return 0;
+        }
+        if starts.binary_search(&offset).is_ok() {
+            return 1;
+        }
+        let (mut a, mut b) = (*cell, offset.rem_euclid(*cell));
+        while b != 0 {
+            (a, b) = (b, a % b);
+        }
+        weight_inside(cell / a)
+    }
+}
+
+/// The level of a moment whose distance from the last cell has this denominator, in cells.
+fn weight_inside(denominator: i64) -> u8 {
+    if denominator == 1 {
+        return 2;
+    }
+    let halvings = denominator.trailing_zeros();
+    let odd = denominator >> halvings > 1;
+    u8::try_from(2 + halvings + u32::from(odd)).unwrap_or(u8::MAX)
 }
 
 /// Where groups begin. Unwritten groups: four units pair up, and six, nine and twelve go by
@@ -185,7 +240,16 @@ mod tests {
 
     fn levels(metre: &Metre, parts: i64) -> Vec<u8> {
         let bar = metre.bar_length().unwrap();
-        (0..parts).map(|i| metre.level(bar * i / parts)).collect()
+        let level = |i| {
+            let level = metre.level(bar * i / parts);
+            // The way in integers says the same.
+            assert_eq!(
+                metre.level_at(ZERO, bar * 3, bar * 3 + bar * i / parts),
+                level
+            );
+            level
+        };
+        (0..parts).map(level).collect()
     }
 
     #[test]
@@ -201,6 +265,7 @@ mod tests {
         assert_eq!(levels(&five, 5), [0, 2, 2, 1, 2]);
         let three = Metre::new(3, 4, None, &[]).unwrap();
         assert_eq!(levels(&three, 9), [0, 3, 3, 2, 3, 3, 2, 3, 3]);
+        assert_eq!(levels(&three, 21)[..8], [0, 3, 3, 3, 3, 3, 3, 2]);
     }
 
     #[test]

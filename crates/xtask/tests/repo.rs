@@ -1,5 +1,7 @@
 //! Tests about the repository itself.
 
+#![allow(clippy::unwrap_used, clippy::panic)]
+
 use std::collections::BTreeSet;
 use std::fs;
 use std::path::{Path, PathBuf};
@@ -20,7 +22,10 @@ const MAY_IMPORT: &[(&str, &[&str])] = &[
     ("rules", &["score", "space"]),
     ("check", &["sheet", "score", "rules"]),
     ("server", &["check", "rules", "score", "sheet", "space"]),
-    ("partwright", &["server", "check", "rules", "score", "sheet", "space"]),
+    (
+        "partwright",
+        &["server", "check", "rules", "score", "sheet", "space"],
+    ),
     ("xtask", &[]),
 ];
 
@@ -30,8 +35,14 @@ fn arrows_point_one_way() {
         .unwrap()
         .map(|entry| entry.unwrap().file_name().into_string().unwrap())
         .collect();
-    let known: BTreeSet<String> = MAY_IMPORT.iter().map(|(name, _)| (*name).to_owned()).collect();
-    assert_eq!(folders, known, "a crate without a place in the table, or a place without a crate");
+    let known: BTreeSet<String> = MAY_IMPORT
+        .iter()
+        .map(|(name, _)| (*name).to_owned())
+        .collect();
+    assert_eq!(
+        folders, known,
+        "a crate without a place in the table, or a place without a crate"
+    );
     for (name, allowed) in MAY_IMPORT {
         let manifest = match *name {
             "partwright" => root().join("Cargo.toml"),
@@ -63,10 +74,25 @@ fn rules_compute_no_interval_and_no_motion() {
     assert!(files.len() >= 16);
     for path in files {
         let text = read(&path);
-        let code = text.lines().filter(|line| !line.trim_start().starts_with("//"));
+        let code = text
+            .lines()
+            .filter(|line| !line.trim_start().starts_with("//"));
         for line in code {
-            for word in ["semitone", ".place(", ".step -", "up_to(", "Leg {", "Vector {", "Place {", ".sign"] {
-                assert!(!line.contains(word), "{}: pitch arithmetic: {line}", path.display());
+            for word in [
+                ".semitone",
+                ".place(",
+                ".step -",
+                "up_to(",
+                "Leg {",
+                "Vector {",
+                "Place {",
+                ".sign",
+            ] {
+                assert!(
+                    !line.contains(word),
+                    "{}: pitch arithmetic: {line}",
+                    path.display()
+                );
             }
         }
     }
@@ -85,7 +111,10 @@ fn no_file_is_one_to_dread() {
 
 #[test]
 fn only_the_server_knows_the_protocol() {
-    for (name, _) in MAY_IMPORT.iter().filter(|(name, _)| !matches!(*name, "server" | "partwright")) {
+    for (name, _) in MAY_IMPORT
+        .iter()
+        .filter(|(name, _)| !matches!(*name, "server" | "partwright"))
+    {
         let manifest = read(&root().join("crates").join(name).join("Cargo.toml"));
         for library in ["tower-lsp", "lsp-types", "tokio"] {
             assert!(!manifest.contains(library), "{name} knows {library}");

@@ -84,6 +84,7 @@ impl<'a> Piece<'a> {
     pub fn line_moves(self, voice: usize) -> Vec<LineMove> {
         let notes = self.score.voices.get(voice).map_or(&[][..], |v| &v.notes);
         let mut moves: Vec<LineMove> = Vec::with_capacity(notes.len());
+        let ends = self.section_ends();
         let mut joined = false;
         for pair in notes.windows(2) {
             let &[from, to] = pair else { continue };
@@ -91,7 +92,7 @@ impl<'a> Piece<'a> {
                 joined = false;
                 continue;
             };
-            if from.ends_phrase() || self.starts_section(to.onset) {
+            if from.ends_phrase() || ends.binary_search(&to.onset).is_ok() {
                 joined = false;
                 continue;
             }
@@ -107,16 +108,10 @@ impl<'a> Piece<'a> {
         moves
     }
 
-    /// A section of the score ended just before a moment.
-    fn starts_section(self, at: Time) -> bool {
-        let before = self.score.bars.partition_point(|bar| bar.onset < at);
-        let starts = self
-            .score
-            .bars
-            .get(before)
-            .is_some_and(|bar| bar.onset == at);
-        let closed = before.checked_sub(1).and_then(|i| self.score.bars.get(i));
-        starts && closed.is_some_and(|bar| bar.section_end)
+    /// Where sections of the score end.
+    fn section_ends(self) -> Vec<Time> {
+        let closed = self.score.bars.iter().filter(|bar| bar.section_end);
+        closed.map(|bar| bar.onset + bar.length).collect()
     }
 }
 

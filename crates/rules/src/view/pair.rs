@@ -260,22 +260,26 @@ impl<'a> PairMove<'a> {
         )
     }
 
-    /// `G3–D5`, lower note first, at the departure and at the arrival.
+    /// `D5 over G3`, at the departure and at the arrival: the upper voice in the score first, as
+    /// its name comes first.
     #[must_use]
     pub fn ends(&self) -> (String, String) {
-        let text = |there: Option<Sounding<'_>>| {
-            let pitch = |v| {
-                there
-                    .and_then(|s| s.pitch(v))
-                    .map(|p| p.to_string())
-                    .unwrap_or_default()
-            };
-            format!("{}–{}", pitch(self.pair.lower), pitch(self.pair.upper))
-        };
-        (text(self.sounding.neighbour(-1)), text(Some(self.sounding)))
+        let (upper, lower) = (self.pair.upper, self.pair.lower);
+        (
+            format!(
+                "{} over {}",
+                self.pitch_before(upper),
+                self.pitch_before(lower)
+            ),
+            format!(
+                "{} over {}",
+                self.pitch_after(upper),
+                self.pitch_after(lower)
+            ),
+        )
     }
 
-    /// `soprano and bass go from G3–D5 to A3–E5`.
+    /// `soprano and bass go from D5 over G3 to E5 over A3`.
     #[must_use]
     pub fn story(&self) -> String {
         let (from, to) = self.ends();

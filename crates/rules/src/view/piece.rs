@@ -1,5 +1,7 @@
 //! The piece as a whole: names, places in words, passages.
 
+use std::borrow::Cow;
+
 use partwright_score::{Pair, Time};
 
 use super::{Piece, Sounding};
@@ -42,8 +44,26 @@ impl<'a> Piece<'a> {
     /// The longest runs of sonorities of which `holds` is true.
     #[must_use]
     pub fn passages(self, holds: impl Fn(Sounding<'a>) -> bool) -> Vec<Passage> {
+        self.runs(self.soundings().filter(|&there| holds(there)))
+    }
+
+    /// The same, looking only inside passages known already.
+    #[must_use]
+    pub fn within(
+        self,
+        passages: &[Passage],
+        holds: impl Fn(Sounding<'a>) -> bool,
+    ) -> Vec<Passage> {
+        let inside = passages
+            .iter()
+            .flat_map(|p| p.first..p.end)
+            .map(|k| self.sounding(k));
+        self.runs(inside.filter(|&there| holds(there)))
+    }
+
+    fn runs(self, soundings: impl Iterator<Item = Sounding<'a>>) -> Vec<Passage> {
         let mut passages: Vec<Passage> = Vec::new();
-        for there in self.soundings().filter(|&there| holds(there)) {
+        for there in soundings {
             let (index, until) = (there.index, self.end_of(there.index));
             match passages.last_mut() {
                 Some(last) if last.end == index => {
@@ -68,10 +88,22 @@ impl<'a> Piece<'a> {
         (0..self.texture.sonorities().len()).map(move |index| Sounding { piece: self, index })
     }
 
-    /// What a musician calls a voice.
+    /// What a musician calls a voice: `soprano`, `S1`; `voice A` where the bare label would read
+    /// as a note.
     #[must_use]
-    pub fn name(self, voice: usize) -> &'a str {
-        self.score.voice_name(voice)
+    pub fn name(self, voice: usize) -> Cow<'a, str> {
+        let name = self.score.voice_name(voice);
+        match name {
+            "A" | "B" | "C" | "D" | "E" | "F" | "G" | "H" => Cow::Owned(format!("voice {name}")),
+            _ => Cow::Borrowed(name),
+        }
+    }
+
+    /// Two voices of one kind, which may share a register.
+    #[must_use]
+    pub fn are_alike(self, pair: Pair) -> bool {
+        let kind = |v: usize| self.score.voices.get(v).map(|voice| voice.kind.name);
+        kind(pair.upper) == kind(pair.lower)
     }
 
     /// A moment in words: `bar 3, beat 2`.

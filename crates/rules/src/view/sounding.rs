@@ -1,9 +1,18 @@
 //! One sonority, and the step into it.
 
-use partwright_score::{Interval, Pair, PairStep, Pitch, Sonority, Time, ZERO};
+use partwright_score::{Interval, Pair, Pitch, Sonority, Time, ZERO};
 use partwright_space::{Family, Motion};
 
 use super::{PairMove, Sounding};
+
+/// The voices above one in the score, a bit each.
+const fn above(voice: usize) -> u64 {
+    if voice >= 64 {
+        u64::MAX
+    } else {
+        (1 << voice) - 1
+    }
+}
 
 impl<'a> Sounding<'a> {
     /// The sonority itself.
@@ -28,50 +37,45 @@ impl<'a> Sounding<'a> {
             })
     }
 
-    /// The voices that sound or of which nothing is known, in score order: a voice not written
-    /// yet may turn out to sound.
-    fn present(self) -> impl Iterator<Item = usize> {
-        let set = self.sonority().map_or(0, |s| s.sounding | s.unknown);
-        (0..self.piece.score.voices.len()).filter(move |v| set >> v & 1 == 1)
+    /// The voices that sound or of which nothing is known, a bit each: a voice not written yet
+    /// may turn out to sound.
+    fn present(self) -> u64 {
+        self.sonority().map_or(0, |s| s.sounding | s.unknown)
     }
 
     /// The number of independent voices: doublings count once, voices not written yet count.
     #[must_use]
     pub fn parts(self) -> usize {
-        let doubles = |u: usize, v: usize| {
-            let step = self.piece.texture.step(self.index, u, v);
-            step.is_some_and(PairStep::is_one_voice)
-        };
-        self.present()
-            .filter(|&v| !self.present().take_while(|&u| u < v).any(|u| doubles(u, v)))
-            .count()
+        self.sonority().map_or(0, |s| usize::from(s.parts))
     }
 
     /// The highest and the lowest voice in the score that sound, or may.
     #[must_use]
     pub fn outer(self) -> Option<Pair> {
-        let mut present = self.present();
-        let upper = present.next()?;
-        let lower = present.last()?;
-        Some(Pair { upper, lower })
+        let present = self.present();
+        let upper = present.trailing_zeros() as usize;
+        let lower = 63_usize.checked_sub(present.leading_zeros() as usize)?;
+        (upper < lower).then_some(Pair { upper, lower })
     }
 
     /// No voice that sounds, or may, stands between the two in the score.
     #[must_use]
     pub fn are_neighbours(self, pair: Pair) -> bool {
-        !self.present().any(|v| pair.upper < v && v < pair.lower)
+        self.present() & above(pair.lower) & !above(pair.upper + 1) == 0
     }
 
     /// No voice that sounds, or may, stands below this one in the score.
     #[must_use]
     pub fn is_lowest_present(self, voice: usize) -> bool {
-        self.present().last() == Some(voice)
+        self.outer().is_some_and(|outer| outer.lower == voice)
     }
 
     /// The pair is the first and the third of the voices in the score that sound, or may.
     #[must_use]
     pub fn are_first_and_third(self, pair: Pair) -> bool {
-        self.present().next() == Some(pair.upper) && self.present().nth(2) == Some(pair.lower)
+        let present = self.present();
+        let over = |voice| (present & above(voice)).count_ones();
+        over(pair.upper) == 0 && over(pair.lower) == 2
     }
 
     /// Two voices stand further apart than a number of scale steps.
@@ -128,7 +132,7 @@ impl<'a> Sounding<'a> {
     /// The voice with the lowest note; `None` where a voice is not known.
     #[must_use]
     pub fn bass(self) -> Option<usize> {
-        self.piece.texture.bass(self.piece.score, self.index)
+        self.piece.texture.bass(self.index)
     }
 
     /// At least three voices sound, all of them in unisons and octaves.

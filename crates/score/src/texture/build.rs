@@ -2,7 +2,7 @@
 
 use partwright_space::{Leg, Place};
 
-use super::{Pair, PairStep, Sonority, Texture};
+use super::{NO_BASS, Pair, PairStep, Sonority, Texture};
 use crate::{Note, Score, Sound, Time};
 
 /// A voice while the table is swept from left to right.
@@ -110,7 +110,7 @@ fn sonority(score: &Score, cursors: &[Cursor<'_>], onset: Time, bar: &mut usize)
     let this = score.bars.get(*bar);
     let level = this.and_then(|b| {
         let metre = score.metres.get(b.metre as usize)?;
-        Some(metre.level(b.lead + onset - b.onset))
+        Some(metre.level_at(b.lead, b.onset, onset))
     });
     let before = bar.checked_sub(1).and_then(|i| score.bars.get(i));
     Sonority {
@@ -120,13 +120,36 @@ fn sonority(score: &Score, cursors: &[Cursor<'_>], onset: Time, bar: &mut usize)
         struck,
         sounding,
         unknown,
-        new_section: this.is_some_and(|b| b.onset == onset)
-            && before.is_some_and(|b| b.section_end),
+        new_section: before.is_some_and(|b| b.section_end)
+            && this.is_some_and(|b| b.onset == onset),
+        parts: 0,
+        bass: bass(score, cursors, unknown),
     }
 }
 
-fn push(table: &mut Texture, sonority: Sonority, cursors: &[Cursor<'_>], leaders: &[usize]) {
+/// The voice with the lowest note, a sixteen-foot voice an octave down.
+fn bass(score: &Score, cursors: &[Cursor<'_>], unknown: u64) -> u8 {
+    if unknown != 0 {
+        return NO_BASS;
+    }
+    let mut lowest: Option<(i32, usize)> = None;
+    for (v, cursor) in cursors.iter().enumerate() {
+        let Some(place) = cursor.now else { continue };
+        let sixteen_foot = score.voices.get(v).is_some_and(|voice| voice.sixteen_foot);
+        let semitone = place.semitone - if sixteen_foot { 12 } else { 0 };
+        // Of two on one pitch the lower in the score counts.
+        if lowest.is_none_or(|(low, _)| semitone <= low) {
+            lowest = Some((semitone, v));
+        }
+    }
+    lowest
+        .and_then(|(_, v)| u8::try_from(v).ok())
+        .unwrap_or(NO_BASS)
+}
+
+fn push(table: &mut Texture, mut sonority: Sonority, cursors: &[Cursor<'_>], leaders: &[usize]) {
     let row = table.steps.len();
+    let mut doubled: u64 = 0;
     for p in 0..table.pairs.len() {
         let Pair { upper, lower } = table.pairs[p];
         let (u, l) = (&cursors[upper], &cursors[lower]);
@@ -153,6 +176,9 @@ fn push(table: &mut Texture, sonority: Sonority, cursors: &[Cursor<'_>], leaders
         };
         if leaders[upper] == leaders[lower] || copied(u, lower) || copied(l, upper) {
             step = step.as_one_voice();
+            if step.after().is_some() {
+                doubled |= 1 << lower;
+            }
         }
         table.steps.push(step);
     }
@@ -161,5 +187,7 @@ fn push(table: &mut Texture, sonority: Sonority, cursors: &[Cursor<'_>], leaders
             .iter()
             .map(|c| u32::try_from(c.index).unwrap_or(u32::MAX)),
     );
+    let present = (sonority.sounding | sonority.unknown) & !doubled;
+    sonority.parts = u8::try_from(present.count_ones()).unwrap_or(u8::MAX);
     table.sonorities.push(sonority);
 }

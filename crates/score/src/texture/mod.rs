@@ -30,7 +30,13 @@ pub struct Sonority {
     pub unknown: u64,
     /// A section of the score ended just before.
     pub new_section: bool,
+    /// Independent voices that sound or may: doublings count once, voices not known count.
+    pub parts: u8,
+    bass: u8,
 }
+
+/// No voice is the bass.
+const NO_BASS: u8 = u8::MAX;
 
 /// Two voices by index, the upper one in the score first.
 #[derive(Clone, Copy, Debug, PartialEq, Eq, Hash)]
@@ -140,22 +146,9 @@ impl Texture {
     /// The voice with the lowest sounding note, a sixteen-foot voice taken an octave down; the
     /// lower in the score where two share it. `None` in silence, and where any voice is unknown.
     #[must_use]
-    pub fn bass(&self, score: &Score, sonority: usize) -> Option<usize> {
-        if self.sonorities.get(sonority)?.unknown != 0 {
-            return None;
-        }
-        self.sounding(sonority)
-            .filter_map(|v| {
-                let place = self.pitch(score, sonority, v)?.place();
-                let down = if score.voices.get(v)?.sixteen_foot {
-                    12
-                } else {
-                    0
-                };
-                Some((place.semitone - down, v))
-            })
-            .min_by_key(|&(semitone, v)| (semitone, self.voices - v))
-            .map(|(_, v)| v)
+    pub fn bass(&self, sonority: usize) -> Option<usize> {
+        let bass = self.sonorities.get(sonority)?.bass;
+        (bass != NO_BASS).then_some(usize::from(bass))
     }
 
     /// The interval of two voices as they sound at a sonority, from the lower in the score up.

@@ -34,7 +34,7 @@
 //!
 //! # What to do
 //!
-//! Take the step or an octave's complement, or divide the leap.
+//! Move by step in the same octave, take another interval, or divide the leap.
 
 use crate::prelude::*;
 
@@ -93,7 +93,7 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
         found.line(case, line, step, || {
             let (from, to) = step.ends();
             format!(
-                "Seventh leap: {} goes from {from} to {to}. Take the step instead, or divide the leap.",
+                "Seventh leap: {} goes from {from} to {to}. Move by another interval, or divide the leap.",
                 line.piece.name(line.voice)
             )
         });

@@ -110,7 +110,7 @@ fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
     let case = step.close_outer_or_inner([&CLOSE, &OUTER, &INNER]);
     found.pair(case, step, || {
         format!(
-            "Octaves by contrary motion: {}. Let one voice reach a third or a sixth instead.",
+            "Contrary octaves: {}. Let one voice reach a third or a sixth instead.",
             step.story()
         )
     });

@@ -128,13 +128,21 @@ fn check(piece: &Piece<'_>, found: &mut Found<'_>) {
                 continue;
             }
             let case = if bass { &BASS } else { &ORDINARY };
-            found.passage(case, &[pair.upper, pair.lower], (passage.from, passage.until), || {
-                let (upper, lower) = (piece.name(pair.upper), piece.name(pair.lower));
-                format!(
-                    "Crossing: {upper} goes below {lower} {}. Exchange their notes, or declare the two equal.",
-                    piece.extent_text(passage.from, passage.until)
-                )
-            });
+            found.passage(
+                case,
+                &[pair.upper, pair.lower],
+                (passage.from, passage.until),
+                || {
+                    let (upper, lower) = (piece.name(pair.upper), piece.name(pair.lower));
+                    let help = if piece.are_alike(pair) {
+                        "Exchange their notes, or declare the two equal"
+                    } else {
+                        "Exchange their notes, or move one of them"
+                    };
+                    let extent = piece.extent_text(passage.from, passage.until);
+                    format!("Crossing: {upper} goes below {lower} {extent}. {help}.")
+                },
+            );
         }
     }
 }

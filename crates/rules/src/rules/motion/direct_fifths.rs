@@ -174,6 +174,6 @@ fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
         Direct::Covered => return,
     };
     found.pair(case, step, || {
-        format!("Direct fifth: {}", step.direct_story())
+        format!("Direct fifths: {}", step.direct_story())
     });
 }

@@ -159,6 +159,6 @@ fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
         Direct::Covered => return,
     };
     found.pair(case, step, || {
-        format!("Direct octave: {}", step.direct_story())
+        format!("Direct octaves: {}", step.direct_story())
     });
 }

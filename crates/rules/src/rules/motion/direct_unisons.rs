@@ -107,7 +107,7 @@ fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
     };
     found.pair(case, step, || {
         format!(
-            "Direct unison: {} in the same direction. Let one of them stay or move the other way.",
+            "Direct unisons: {} in the same direction. Let one of them stay or move the other way.",
             step.story()
         )
     });

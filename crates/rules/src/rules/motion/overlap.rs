@@ -92,12 +92,13 @@ fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
             (step.pair.upper, step.pair.lower)
         };
         format!(
-            "Overlap: {} moves to {}, {} the {} that {} has just left. Keep it inside.",
+            "Overlap: {} moves to {}, {} the {} that {} has just left. Keep it {} that note.",
             piece.name(mover),
             step.pitch_after(mover),
             if up { "above" } else { "below" },
             step.pitch_before(other),
             piece.name(other),
+            if up { "at or below" } else { "at or above" },
         )
     });
 }

@@ -120,7 +120,10 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
         };
         for run in line.runs(side) {
             found.passage(case, &[line.voice], (run.from, run.until), || {
-                let (reach, beyond) = if run.kind > 0 { (run.highest, "above") } else { (run.lowest, "below") };
+                let (reach, way, beyond) = match run.kind {
+                    1.. => (run.highest, "up", "above"),
+                    _ => (run.lowest, "down", "below"),
+                };
                 let ask = if voice.kind.is_sung() {
                     "ask the singers and whoever trains them"
                 } else {
@@ -128,7 +131,7 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
                 };
                 let running = if run.notes > 1 { format!(", {} notes running", run.notes) } else { String::new() };
                 format!(
-                    "Compass: {} has {reach}, {beyond} {words} this voice ({} to {}){running}. Move it, or {ask} first.",
+                    "Compass: {} goes {way} to {reach}, {beyond} {words} this voice ({} to {}){running}. Move it, or {ask} first.",
                     line.piece.name(line.voice),
                     compass.low,
                     compass.high,

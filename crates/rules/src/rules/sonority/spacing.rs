@@ -139,55 +139,35 @@ static SOPRANO_TENOR: Case = Case {
 
 fn check(piece: &Piece<'_>, found: &mut Found<'_>) {
     let sung = |v: usize| piece.score.voices.get(v).is_some_and(|v| v.kind.is_sung());
-    for &pair in piece.texture.pairs() {
-        if !sung(pair.upper) || !sung(pair.lower) {
-            continue;
-        }
-        let upper = |s: &Sounding<'_>| {
-            s.parts() >= 3 && s.are_neighbours(pair) && !s.is_lowest_present(pair.lower)
-        };
-        report(
-            piece,
-            found,
-            pair,
-            &|s| upper(s) && s.is_wider_than(pair, 7),
-            &UPPER,
-            Some(&UPPER_LONG),
-            "an octave",
-        );
-        let two = |s: &Sounding<'_>| s.parts() == 2;
-        report(
-            piece,
-            found,
-            pair,
-            &|s| two(s) && s.is_wider_than(pair, 11),
-            &TWO_PARTS,
-            None,
-            "a twelfth",
-        );
+    for &pair in piece
+        .texture
+        .pairs()
+        .iter()
+        .filter(|pair| sung(pair.upper) && sung(pair.lower))
+    {
+        // What is not even an octave apart is no matter: most sonorities end here.
+        let wide = piece.passages(|s| s.is_wider_than(pair, 7));
+        let report =
+            |found: &mut Found<'_>, test: Test<'_>, short, long: Option<&'static Case>, limit| {
+                for run in piece.within(&wide, |s| test(&s)) {
+                    let case = long.filter(|_| run.chords > 2).unwrap_or(short);
+                    tell(piece, found, pair, &run, case, limit);
+                }
+            };
+        let beside = |s: &Sounding<'_>| s.parts() >= 3 && s.are_neighbours(pair);
+        let upper = |s: &Sounding<'_>| beside(s) && !s.is_lowest_present(pair.lower);
+        report(found, &upper, &UPPER, Some(&UPPER_LONG), "an octave");
         let bass = |s: &Sounding<'_>| {
-            s.parts() >= 3 && s.are_neighbours(pair) && s.is_lowest_present(pair.lower)
+            s.is_wider_than(pair, 14) && beside(s) && s.is_lowest_present(pair.lower)
         };
-        report(
-            piece,
-            found,
-            pair,
-            &|s| bass(s) && s.is_wider_than(pair, 14),
-            &BASS,
-            None,
-            "two octaves",
-        );
-        let third = |s: &Sounding<'_>| s.parts() == 4 && s.are_first_and_third(pair);
-        report(
-            piece,
-            found,
-            pair,
-            &|s| third(s) && s.is_wider_than(pair, 11),
-            &SOPRANO_TENOR,
-            None,
-            "a twelfth",
-        );
-        for run in piece.passages(|s| two(&s) && s.is_wider_than(pair, 9)) {
+        report(found, &bass, &BASS, None, "two octaves");
+        let third = |s: &Sounding<'_>| {
+            s.is_wider_than(pair, 11) && s.parts() == 4 && s.are_first_and_third(pair)
+        };
+        report(found, &third, &SOPRANO_TENOR, None, "a twelfth");
+        let two = |s: &Sounding<'_>| s.is_wider_than(pair, 11) && s.parts() == 2;
+        report(found, &two, &TWO_PARTS, None, "a twelfth");
+        for run in piece.within(&wide, |s| s.is_wider_than(pair, 9) && s.parts() == 2) {
             let wider = (run.first..run.end).any(|k| piece.sounding(k).is_wider_than(pair, 11));
             if run.chords > 2 && !wider {
                 tell(piece, found, pair, &run, &TWO_PARTS_LONG, "a tenth");
@@ -197,21 +177,6 @@ fn check(piece: &Piece<'_>, found: &mut Found<'_>) {
 }
 
 type Test<'a> = &'a dyn Fn(&Sounding<'_>) -> bool;
-
-fn report(
-    piece: &Piece<'_>,
-    found: &mut Found<'_>,
-    pair: Pair,
-    test: Test<'_>,
-    short: &'static Case,
-    long: Option<&'static Case>,
-    limit: &str,
-) {
-    for run in piece.passages(|s| test(&s)) {
-        let case = long.filter(|_| run.chords > 2).unwrap_or(short);
-        tell(piece, found, pair, &run, case, limit);
-    }
-}
 
 fn tell(
     piece: &Piece<'_>,

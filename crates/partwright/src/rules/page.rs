@@ -1,0 +1,210 @@
+//! One rule whole: what it is, why, when, examples, what to do, and who says so.
+
+use partwright_rules::source::{Known, Stand};
+use partwright_rules::{Case, Entry, STYLES, Source, Style};
+
+use super::severity;
+use crate::prose::{block, list, wrap};
+use crate::report::{Plain, heading, severity_style};
+
+/// A rule's page, in every style or in one.
+pub(super) fn page(entry: &Entry, style: Option<Style>, look: Plain) -> String {
+    let mut text = format!("{} · {}\n", look.paint(heading(), &entry.id), entry.family);
+    text.push_str(&block(&entry.page.title, look.width, 0));
+    for paragraph in paragraphs(&entry.page.section("").unwrap_or_default()) {
+        text.push('\n');
+        text.push_str(&block(&paragraph, look.width, 0));
+    }
+    text.push_str(&title("When, and how strictly", look));
+    for (i, case) in entry.rule.cases.iter().enumerate() {
+        if i > 0 {
+            text.push('\n');
+        }
+        text.push_str(&case_text(case, style, look));
+    }
+    text.push_str(&sections(&entry.page.text, look));
+    text.push_str(&title("Sources", look));
+    for source in entry.rule.sources {
+        text.push_str(&source_text(source, look.width));
+    }
+    text
+}
+
+fn title(words: &str, look: Plain) -> String {
+    format!("\n{}\n", look.paint(heading(), words))
+}
+
+/// A case: when it applies, and what each style says to it. Styles that say the same share a line.
+fn case_text(case: &Case, style: Option<Style>, look: Plain) -> String {
+    let mut text = block(&sentence(case.when), look.width, 2);
+    let mut said: Vec<(Option<_>, &str, Vec<Style>)> = Vec::new();
+    for style in STYLES
+        .into_iter()
+        .filter(|s| style.is_none_or(|wanted| wanted == *s))
+    {
+        let because = case.setting(style).map_or("", |setting| setting.because);
+        let severity = severity(case, style);
+        match said
+            .iter_mut()
+            .find(|(s, b, _)| (*s, *b) == (severity, because))
+        {
+            Some((.., styles)) => styles.push(style),
+            None => said.push((severity, because, vec![style])),
+        }
+    }
+    for (severity, because, styles) in said {
+        let word = severity.map_or("allowed", |severity| severity.word());
+        let painted = severity.map_or(word.to_owned(), |severity| {
+            look.paint(severity_style(severity), word)
+        });
+        let reason = if because.is_empty() {
+            String::new()
+        } else {
+            format!(": {because}")
+        };
+        let lines = wrap(
+            &format!("{} in {}{reason}", word, styles_text(&styles)),
+            look.width,
+            6,
+        );
+        let lines = lines.join("\n      ");
+        text.push_str(&format!(
+            "    - {painted}{}\n",
+            lines.strip_prefix(word).unwrap_or(&lines)
+        ));
+    }
+    text
+}
+
+/// The styles by name; all of them, and all the species, in a word.
+fn styles_text(styles: &[Style]) -> String {
+    if styles.len() == STYLES.len() {
+        return "every style".to_owned();
+    }
+    let every = STYLES
+        .into_iter()
+        .filter(|style| style.is_species())
+        .all(|style| styles.contains(&style));
+    let mut names: Vec<&str> = styles
+        .iter()
+        .filter(|style| !(every && style.is_species()))
+        .map(|style| style.name())
+        .collect();
+    if every {
+        names.push("every species");
+    }
+    list(&names)
+}
+
+/// The page from its first heading on.
+fn sections(page: &str, look: Plain) -> String {
+    let mut text = String::new();
+    let mut prose = String::new();
+    let (mut inside, mut sheet) = (false, false);
+    let end = std::iter::once("# ");
+    for line in page.lines().chain(end) {
+        if sheet {
+            sheet = !line.starts_with("```");
+            if sheet {
+                text.push_str(format!("    {line}").trim_end());
+                text.push('\n');
+            }
+            continue;
+        }
+        if inside && (line.starts_with("# ") || line.starts_with("```")) {
+            for paragraph in paragraphs(&std::mem::take(&mut prose)) {
+                text.push_str(&gap(&text));
+                text.push_str(&block(&paragraph, look.width, 2));
+            }
+        }
+        if let Some(words) = line.strip_prefix("# ") {
+            inside = true;
+            if !words.is_empty() {
+                text.push_str(&title(words.trim(), look));
+            }
+        } else if let Some(kind) = line.strip_prefix("```") {
+            sheet = true;
+            text.push_str(&gap(&text));
+            if kind.contains("mended") {
+                text.push_str("    // mended:\n");
+            }
+        } else if inside {
+            prose.push_str(line);
+            prose.push('\n');
+        }
+    }
+    text
+}
+
+/// An empty line between two blocks below one heading.
+fn gap(text: &str) -> String {
+    let after_block = text
+        .lines()
+        .next_back()
+        .is_some_and(|line| line.starts_with("  "));
+    if after_block {
+        "\n".to_owned()
+    } else {
+        String::new()
+    }
+}
+
+/// The paragraphs of a text, each on one line.
+fn paragraphs(text: &str) -> Vec<String> {
+    text.split("\n\n")
+        .map(|p| p.split_whitespace().collect::<Vec<_>>().join(" "))
+        .filter(|p| !p.is_empty())
+        .collect()
+}
+
+/// The first letter large, a full stop at the end.
+fn sentence(words: &str) -> String {
+    let mut letters = words.chars();
+    let first: String = letters
+        .next()
+        .map(|c| c.to_uppercase().collect())
+        .unwrap_or_default();
+    format!("{first}{}:", letters.as_str().trim_end_matches('.'))
+}
+
+/// A source, how it is known, and how it stands to the rule.
+fn source_text(source: &Source, width: usize) -> String {
+    let plain = Source {
+        known: Known::Read,
+        stand: Stand::Same,
+        ..*source
+    };
+    let known = match source.known {
+        Known::Read => "read",
+        Known::FromMemory => "from memory",
+        Known::Counted => "counted in the music",
+    };
+    let stand = match (source.known, source.stand) {
+        // A count is evidence, and says nothing.
+        (Known::Counted, Stand::Same) => String::new(),
+        (_, Stand::Same) => "; says the same".to_owned(),
+        (_, Stand::Stricter(how)) => format!("; stricter: {how}"),
+        (_, Stand::Looser(how)) => format!("; looser: {how}"),
+    };
+    let lines = wrap(&format!("{plain} [{known}{stand}]"), width, 4);
+    format!("  - {}\n", lines.join("\n    "))
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    #[test]
+    fn styles_that_say_the_same_share_a_line() {
+        assert_eq!(styles_text(&STYLES), "every style");
+        assert_eq!(
+            styles_text(&[Style::Free, Style::Chorale]),
+            "free and chorale"
+        );
+        assert_eq!(styles_text(&STYLES[2..]), "motet and every species");
+        assert_eq!(
+            styles_text(&[Style::Species1, Style::Species2]),
+            "species-1 and species-2"
+        );
+    }
+}
