@@ -8,7 +8,10 @@ use partwright_check::{Checked, Wishes, unlike_drawn};
 #[test]
 fn demo_scores_give_what_they_state() {
     let folder = PathBuf::from(env!("CARGO_MANIFEST_DIR")).join("demo-scores");
-    let mut paths: Vec<PathBuf> = fs::read_dir(folder).unwrap().map(|e| e.unwrap().path()).collect();
+    let mut paths: Vec<PathBuf> = fs::read_dir(folder)
+        .unwrap()
+        .map(|e| e.unwrap().path())
+        .collect();
     paths.sort();
     assert!(paths.len() >= 5);
     let mut wrong = Vec::new();

@@ -3,11 +3,43 @@
 //! [`Sheet::read`] takes text apart system by system; a bad part spoils that part only.
 //! [`Sheet::lower`] turns the tree into a [`Reading`]: the score, what could not be read, and
 //! where everything stands in the text.
+//!
+//! Inside, in the order of the way through: lines (`lines`), gathered into systems (`sheet`); rows
+//! and their cells (`system`, `music`, `under`) into the tree (`tree`); the values of headers and
+//! voice lines (`headers`, `voices`, `footnotes`); and from the tree to the score (`lower`).
 
+mod chars;
+mod describe;
+mod drawn;
+mod explain;
+mod footnotes;
+mod harmony;
+mod headers;
+mod lines;
+mod lookup;
+mod lower;
+mod music;
+mod near;
+mod parts;
+mod position;
 mod problem;
+mod reading;
+mod sheet;
 mod span;
+mod system;
+mod tree;
+mod under;
+mod voices;
 
+pub use drawn::{DrawnMark, drawn_marks};
+pub use harmony::{Chord, Figure, Numeral};
+pub use position::{Lines, line_column};
 pub use problem::{Edit, Offer, Problem, ProblemKind};
+pub use reading::{
+    ChangeLine, Changed, Figures, Footnote, Harmony, Head, HeadLicence, Mark, Reading, Stated,
+    Syllable, Tempo, Words,
+};
+pub use sheet::Sheet;
 pub use span::Span;
 
 /// The largest sheet that is read, in bytes; a larger one is refused with that reason.

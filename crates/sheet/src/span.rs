@@ -36,4 +36,13 @@ impl Span {
             end: self.end + by,
         }
     }
+
+    /// Its first byte alone: a place in ASCII text, such as a bar line.
+    #[must_use]
+    pub(crate) fn first(self) -> Span {
+        Span {
+            start: self.start,
+            end: self.start + 1,
+        }
+    }
 }

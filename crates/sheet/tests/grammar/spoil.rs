@@ -1,0 +1,83 @@
+//! Sheets spoilt by a slip of the hand, and where the grammar and the reader of sheets are known to
+//! differ.
+
+use partwright_sheet::Problem;
+
+use crate::derive::Random;
+use crate::ebnf::BLANKS;
+
+/// What a hand strikes by mistake.
+const STRUCK: &str = "  \t\n\n||//..--__??^,*a1b#=:+\\~SG4x890rvV";
+
+/// A text with one or two slips in it.
+pub(crate) fn spoil(text: &str, random: &mut Random) -> String {
+    let struck: Vec<char> = STRUCK.chars().collect();
+    let mut all: Vec<char> = text.chars().collect();
+    for _ in 0..=random.below(2) {
+        if all.is_empty() {
+            break;
+        }
+        let at = random.below(all.len());
+        let c = *random.one(&struck).unwrap_or(&' ');
+        match random.below(6) {
+            0 => drop(all.remove(at)),
+            1 => all.insert(at, c),
+            2 => all[at] = c,
+            3 => {
+                let other = random.below(all.len());
+                all.swap(at, other);
+            }
+            4 => {
+                let next = (at + 1) % all.len();
+                all.swap(at, next);
+            }
+            _ => {
+                let end = (at + random.below(6)).min(all.len());
+                all.drain(at..end);
+            }
+        }
+    }
+    all.into_iter().collect()
+}
+
+/// The grammar lets a backslash make a blank plain in all free text; the reader does so in words,
+/// but in titles and reasons it takes the last blank of the text for the end of it, and two strokes
+/// after the blank for a comment.
+pub(crate) fn is_blank_made_plain(text: &str, problem: &Problem) -> bool {
+    let before = &text[..problem.span.end as usize];
+    let line = before.rsplit('\n').next().unwrap_or_default();
+    let after = text[problem.span.end as usize..].chars().next();
+    let row = line.trim_start().starts_with("words");
+    !row && before.ends_with('\\') && after.is_some_and(|c| BLANKS.contains(&c))
+}
+
+/// What the grammar refuses and the reader lets pass: a lone carriage return (a blank to it), a
+/// words row without any bar line, and a join of words with nothing to join.
+pub(crate) fn is_left_open(text: &str) -> bool {
+    let lone_return = text.replace("\r\n", "\n").contains('\r');
+    lone_return
+        || text
+            .lines()
+            .any(|line| is_words_left_open(line.trim_start()))
+}
+
+fn is_words_left_open(line: &str) -> bool {
+    if !line.starts_with("words") {
+        return false;
+    }
+    // What a backslash makes plain is as good as a letter.
+    let mut plain = String::new();
+    let mut all = line.chars();
+    while let Some(c) = all.next() {
+        plain.push(if c == '\\' {
+            all.next().map_or('\\', |_| 'x')
+        } else {
+            c
+        });
+    }
+    let edge = |c: Option<char>| c.is_none_or(|c| c == '|' || c == '~' || c.is_whitespace());
+    let joins_nothing = plain.match_indices('~').any(|(at, _)| {
+        edge(plain[..at].chars().next_back()) || edge(plain[at + 1..].chars().next())
+    });
+    joins_nothing || !line.contains('|')
+}

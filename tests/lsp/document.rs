@@ -1,0 +1,164 @@
+//! A document as the client keeps it.
+
+use std::ops::Range;
+
+use serde_json::{Value, json};
+
+use crate::client::Client;
+
+/// Two voices in parallel fifths: the finding stands on the soprano's E.
+pub(crate) const FIFTHS: &str = "S | D5 E |\nB | G3 A |\n";
+
+/// What columns count.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub(crate) enum Columns {
+    Utf8,
+    Utf16,
+}
+
+impl Columns {
+    pub(crate) fn name(self) -> &'static str {
+        match self {
+            Columns::Utf8 => "utf-8",
+            Columns::Utf16 => "utf-16",
+        }
+    }
+
+    pub(crate) fn count(self, text: &str) -> usize {
+        match self {
+            Columns::Utf8 => text.len(),
+            Columns::Utf16 => text.encode_utf16().count(),
+        }
+    }
+}
+
+pub(crate) struct Document {
+    pub(crate) uri: String,
+    pub(crate) version: i64,
+    pub(crate) text: String,
+    pub(crate) columns: Columns,
+}
+
+impl Document {
+    /// Opened.
+    pub(crate) fn open(client: &mut Client, uri: &str, text: &str) -> Document {
+        Document::open_in(client, uri, text, Columns::Utf16)
+    }
+
+    pub(crate) fn open_in(
+        client: &mut Client,
+        uri: &str,
+        text: &str,
+        columns: Columns,
+    ) -> Document {
+        let document = Document {
+            uri: uri.to_owned(),
+            version: 1,
+            text: text.to_owned(),
+            columns,
+        };
+        document.opened(client);
+        document
+    }
+
+    pub(crate) fn opened(&self, client: &mut Client) {
+        let Document {
+            uri, version, text, ..
+        } = self;
+        let item =
+            json!({ "uri": uri, "languageId": "voicesheet", "version": version, "text": text });
+        client.notify("textDocument/didOpen", json!({ "textDocument": item }));
+    }
+
+    pub(crate) fn close(&self, client: &mut Client) {
+        client.notify(
+            "textDocument/didClose",
+            json!({ "textDocument": { "uri": self.uri } }),
+        );
+    }
+
+    /// The position of a byte offset, line ends as the protocol has them.
+    pub(crate) fn position(&self, offset: usize) -> Value {
+        let before = &self.text[..offset];
+        let ends = before.replace("\r\n", "\n").replace('\r', "\n");
+        let line = before.rfind(['\n', '\r']).map_or(0, |at| at + 1);
+        json!({
+            "line": ends.matches('\n').count(),
+            "character": self.columns.count(&before[line..]),
+        })
+    }
+
+    /// Where some words stand for the first time.
+    pub(crate) fn at(&self, words: &str) -> Value {
+        self.position(self.text.find(words).unwrap())
+    }
+
+    pub(crate) fn range(&self, range: Range<usize>) -> Value {
+        json!({ "start": self.position(range.start), "end": self.position(range.end) })
+    }
+
+    /// One change here: gives its form for the server.
+    pub(crate) fn change(&mut self, range: Range<usize>, new: &str) -> Value {
+        let change = json!({ "range": self.range(range.clone()), "text": new });
+        self.text.replace_range(range, new);
+        change
+    }
+
+    /// The message that carries changes, as the next version.
+    pub(crate) fn message(&mut self, changes: &[Value]) -> Value {
+        self.version += 1;
+        json!({ "jsonrpc": "2.0", "method": "textDocument/didChange", "params": {
+            "textDocument": { "uri": self.uri, "version": self.version },
+            "contentChanges": changes,
+        }})
+    }
+
+    /// One change, here and there.
+    pub(crate) fn edit(&mut self, client: &mut Client, range: Range<usize>, new: &str) {
+        let change = self.change(range, new);
+        let message = self.message(&[change]);
+        client.send(&message);
+    }
+
+    /// Replaces the first place where some words stand.
+    pub(crate) fn replace(&mut self, client: &mut Client, old: &str, new: &str) {
+        let at = self.text.find(old).unwrap();
+        self.edit(client, at..at + old.len(), new);
+    }
+
+    /// The findings of the version as it is now.
+    pub(crate) fn findings(&self, client: &mut Client) -> Vec<Value> {
+        client.findings(&self.uri, self.version)
+    }
+
+    /// The same, by rule and place: `parallel-fifths 0:7-0:8`.
+    pub(crate) fn short(&self, client: &mut Client) -> Vec<String> {
+        let findings = self.findings(client);
+        let place = |p: &Value| format!("{}:{}", p["line"], p["character"]);
+        findings
+            .iter()
+            .map(|f| {
+                let (start, end) = (place(&f["range"]["start"]), place(&f["range"]["end"]));
+                format!("{} {start}-{end}", f["code"].as_str().unwrap_or("none"))
+            })
+            .collect()
+    }
+
+    pub(crate) fn hover(&self, client: &mut Client, position: &Value) -> Value {
+        let params = json!({ "textDocument": { "uri": self.uri }, "position": position });
+        client.request("textDocument/hover", params)
+    }
+
+    /// The text of a hover on the first place where some words stand.
+    pub(crate) fn hover_text(&self, client: &mut Client, words: &str) -> String {
+        let answer = self.hover(client, &self.at(words));
+        let text = answer["result"]["contents"]["value"].as_str();
+        text.unwrap_or_else(|| panic!("{words}: {answer}"))
+            .to_owned()
+    }
+}
+
+/// A long sheet without findings: that many lines.
+pub(crate) fn long_sheet(lines: usize) -> String {
+    "S | G4 A B G |\nB | G3 F E G |\n\n".repeat(lines / 3)
+}
