@@ -131,16 +131,26 @@ impl Document {
         client.findings(&self.uri, self.version)
     }
 
-    /// The same, by rule and place: `parallel-fifths 0:7-0:8`.
-    pub(crate) fn short(&self, client: &mut Client) -> Vec<String> {
-        let findings = self.findings(client);
-        let place = |p: &Value| format!("{}:{}", p["line"], p["character"]);
+    /// The findings of one rule, for the version as it is now.
+    pub(crate) fn findings_of(&self, client: &mut Client, rule: &str) -> Vec<Value> {
+        let mut findings = self.findings(client);
+        findings.retain(|finding| finding["code"] == rule);
         findings
+    }
+
+    /// What the two rules find that these tests go by, in short: `parallel-fifths 0:7-0:8`. Other
+    /// rules may find something too.
+    pub(crate) fn short(&self, client: &mut Client) -> Vec<String> {
+        let place = |p: &Value| format!("{}:{}", p["line"], p["character"]);
+        let short = |f: &Value| {
+            let (start, end) = (place(&f["range"]["start"]), place(&f["range"]["end"]));
+            format!("{} {start}-{end}", f["code"].as_str().unwrap_or("none"))
+        };
+        let ours = |f: &&Value| f["code"] == "parallel-fifths" || f["code"] == "reading";
+        self.findings(client)
             .iter()
-            .map(|f| {
-                let (start, end) = (place(&f["range"]["start"]), place(&f["range"]["end"]));
-                format!("{} {start}-{end}", f["code"].as_str().unwrap_or("none"))
-            })
+            .filter(ours)
+            .map(short)
             .collect()
     }
 

@@ -33,12 +33,12 @@ fn a_note_tells_what_sounds_and_how_it_got_there() {
 
 bar 1, beat 2
 
-- alto C5: major third below; parallel, B4–D5 to C5–E5
-- bass A3: perfect twelfth below; parallel, G3–D5 to A3–E5
+- alto C5: major third below; parallel, D5 over B4 to E5 over C5
+- bass A3: perfect twelfth below; parallel, D5 over G3 to E5 over A3
 
 The other pairs:
 
-- alto and bass: parallel, G3–B4 to A3–C5
+- alto and bass: parallel, B4 over G3 to C5 over A3
 
 Found here:
 

@@ -54,10 +54,7 @@ fn reported(pieces: &[Piece], rules: &[(&str, &str)]) -> BTreeSet<Place> {
         } else {
             Style::Chorale
         };
-        let wishes = Wishes {
-            style: Some(style),
-            ..Wishes::default()
-        };
+        let wishes = Wishes::of_style(style);
         for finding in check_score(&piece.score, &wishes) {
             let Some((_, kind)) = rules.iter().find(|(rule, _)| *rule == finding.rule) else {
                 continue;

@@ -54,10 +54,7 @@ fn first_and_second_species_hold_no_fault_but_the_listed_ones() {
     assert_eq!(figures.len(), 36);
     let mut remain = Vec::new();
     for (piece, style) in &figures {
-        let wishes = Wishes {
-            style: Some(*style),
-            ..Wishes::default()
-        };
+        let wishes = Wishes::of_style(*style);
         for finding in check_score(&piece.score, &wishes) {
             if finding.severity == Severity::Fault {
                 let voices: Vec<&str> = finding
@@ -104,10 +101,7 @@ fn first_species_in_two_parts_is_clean_but_for_one_bass_line() {
         .filter(|(p, style)| *style == Style::Species1 && p.score.voices.len() == 2)
         .collect();
     assert_eq!(two.len(), 6);
-    let wishes = Wishes {
-        style: Some(Style::Species1),
-        ..Wishes::default()
-    };
+    let wishes = Wishes::of_style(Style::Species1);
     let faults: Vec<_> = two
         .iter()
         .flat_map(|(piece, _)| check_score(&piece.score, &wishes))

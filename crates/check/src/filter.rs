@@ -16,6 +16,14 @@ pub struct BarRange {
     pub last: u32,
 }
 
+impl BarRange {
+    /// Whether a bar number lies inside.
+    #[must_use]
+    pub fn holds(self, bar: u32) -> bool {
+        (self.first..=self.last).contains(&bar)
+    }
+}
+
 /// Why a filter makes no sense.
 #[derive(Clone, Debug, PartialEq, Eq)]
 pub enum FilterError {
@@ -74,7 +82,7 @@ impl Filter {
     #[must_use]
     pub fn shows(&self, finding: &Finding, score: &Score) -> bool {
         let in_bars = match (self.bars, finding.place) {
-            (Some(range), Some(place)) => (range.first..=range.last).contains(&place.bar),
+            (Some(range), Some(place)) => range.holds(place.bar),
             _ => true,
         };
         let label = |v: &usize| score.voices.get(*v).map(|voice| voice.label.as_str());

@@ -27,6 +27,17 @@ pub struct Finding {
     pub related: Vec<Related>,
     /// Right forms to choose from, where the text is at fault.
     pub offers: Vec<Offer>,
+    /// The licence that lifts it.
+    pub licence: Option<Lifted>,
+}
+
+/// The licence that lifts a finding.
+#[derive(Clone, Debug, PartialEq, Eq)]
+pub struct Lifted {
+    /// The mark's letters; `None` for a licence of the whole sheet or of the house.
+    pub mark: Option<String>,
+    /// Why.
+    pub reason: String,
 }
 
 /// Another place that belongs to a finding.

@@ -3,25 +3,45 @@
 mod drawn;
 mod filter;
 mod finding;
+pub mod house;
+mod licence;
 mod place;
 mod run;
 mod text;
 
 pub use drawn::unlike_drawn;
 pub use filter::{BarRange, Filter, FilterError};
-pub use finding::{Finding, Related};
+pub use finding::{Finding, Lifted, Related};
+pub use house::House;
 pub use partwright_rules::{Role, STYLES, Severity, Style};
 pub use run::notes_findings;
 
+use std::path::PathBuf;
+use std::sync::Arc;
+
+use house::HouseLicence;
 use partwright_rules::Strictness;
 use partwright_score::{Score, Texture};
 use partwright_sheet::{Reading, Sheet};
+
+/// Which style is asked for, whatever the sheet says.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub enum Choice {
+    /// One of ours.
+    Style(Style),
+    /// The house style, by its name.
+    House,
+}
 
 /// How a check is done.
 #[derive(Clone, Debug, Default, PartialEq, Eq)]
 pub struct Wishes {
     /// The style, whatever the sheet says.
-    pub style: Option<Style>,
+    pub style: Option<Choice>,
+    /// The nearest house style.
+    pub house: Option<Arc<House>>,
+    /// The file that is checked, for the licences of the house style.
+    pub file: Option<PathBuf>,
     /// Only these rules and families; empty for all.
     pub pick: Vec<String>,
     /// Not these rules and families; dropping comes after picking.
@@ -29,11 +49,55 @@ pub struct Wishes {
 }
 
 impl Wishes {
-    fn strictness(&self, named: Option<Style>) -> Strictness {
+    /// A style, and nothing else.
+    #[must_use]
+    pub fn of_style(style: Style) -> Wishes {
+        Wishes {
+            style: Some(Choice::Style(style)),
+            ..Wishes::default()
+        }
+    }
+
+    /// Whether the house style goes by a name.
+    #[must_use]
+    pub fn house_is_called(&self, name: &str) -> bool {
+        self.house
+            .as_ref()
+            .is_some_and(|house| house.name.as_deref() == Some(name))
+    }
+
+    /// The strictness that results: `--style`, else the sheet's own style, else the house's, else
+    /// `free`.
+    fn strictness(&self, sheet: Option<&str>) -> Strictness {
+        let named = sheet.and_then(|name| match Style::named(name) {
+            Some(style) => Some(Choice::Style(style)),
+            None => self.house_is_called(name).then_some(Choice::House),
+        });
+        let choice = self.style.or(named).unwrap_or(match self.house {
+            Some(_) => Choice::House,
+            None => Choice::Style(Style::Free),
+        });
+        let plain = match (choice, &self.house) {
+            (Choice::House, Some(house)) => Strictness {
+                overrides: house.overrides.clone(),
+                numbers: house.numbers.clone(),
+                across_phrases: house.across_phrases,
+                ..Strictness::plain(house.base.unwrap_or(Style::Free))
+            },
+            (Choice::House, None) => Strictness::plain(Style::Free),
+            (Choice::Style(style), _) => Strictness::plain(style),
+        };
         Strictness {
-            style: self.style.or(named).unwrap_or(Style::Free),
             pick: self.pick.clone(),
             drop: self.drop.clone(),
+            ..plain
+        }
+    }
+
+    fn house_licences(&self) -> Vec<HouseLicence> {
+        match (&self.house, &self.file) {
+            (Some(house), Some(file)) => house.licences_for(file),
+            _ => Vec::new(),
         }
     }
 }
@@ -47,8 +111,8 @@ pub struct Checked {
     pub reading: Reading,
     /// The sonorities and steps.
     pub texture: Texture,
-    /// The style in force.
-    pub style: Style,
+    /// The style in force, and what the house changes in it.
+    pub strictness: Strictness,
     /// The findings, by place in the score, then by rule.
     pub findings: Vec<Finding>,
 }
@@ -70,32 +134,45 @@ impl Checked {
     fn of(sheet: Sheet, text: &str, wishes: &Wishes) -> Checked {
         let reading = sheet.lower(text);
         let texture = Texture::of(&reading.score);
-        let named = reading.score.style.as_deref().and_then(Style::named);
-        let strictness = wishes.strictness(named);
-        let mut findings = text::findings(&reading, &strictness);
+        let strictness = wishes.strictness(reading.score.style.as_deref());
+        let mut findings = text::findings(&reading, wishes, &strictness);
         let notes = notes_findings(&reading.score, &texture, &strictness);
         findings.extend(notes.into_iter().map(|f| place::in_text(f, &reading)));
+        licence::apply_house(&wishes.house_licences(), &reading.score, &mut findings);
+        for (id, problem) in licence::apply(&reading, &mut findings) {
+            // A licence is idle only if its rules were looked at.
+            if id != "licence-idle" || (strictness.pick.is_empty() && strictness.drop.is_empty()) {
+                findings.extend(text::finding(id, problem, &reading, &strictness));
+            }
+        }
         finding::sort(&mut findings);
         Checked {
             sheet,
             reading,
             texture,
-            style: strictness.style,
+            strictness,
             findings,
         }
+    }
+
+    /// The findings that no licence lifts.
+    pub fn open(&self) -> impl Iterator<Item = &Finding> {
+        self.findings
+            .iter()
+            .filter(|finding| finding.licence.is_none())
     }
 }
 
 /// Checks a bare score, which has no text: findings have places in the music only.
 #[must_use]
 pub fn check_score(score: &Score, wishes: &Wishes) -> Vec<Finding> {
-    let named = score.style.as_deref().and_then(Style::named);
     let texture = Texture::of(score);
-    let notes = notes_findings(score, &texture, &wishes.strictness(named));
+    let notes = notes_findings(score, &texture, &wishes.strictness(score.style.as_deref()));
     let mut findings: Vec<Finding> = notes
         .into_iter()
         .map(|f| place::in_score(f, score))
         .collect();
+    licence::apply_house(&wishes.house_licences(), score, &mut findings);
     finding::sort(&mut findings);
     findings
 }

@@ -50,5 +50,6 @@ pub(crate) fn in_score(bare: Bare, score: &Score) -> Finding {
         until: bare.until,
         span: None,
         offers: Vec::new(),
+        licence: None,
     }
 }

@@ -10,15 +10,14 @@ pub fn notes_findings(score: &Score, texture: &Texture, strictness: &Strictness)
     let mut list = Vec::new();
     let (mut pairs, mut sonorities, mut lines) = (Vec::new(), Vec::new(), Vec::new());
     for entry in catalogue() {
-        let id = entry.id.as_str();
-        if !strictness.takes(id, entry.family) {
+        if !strictness.takes(&entry.id, entry.family) {
             continue;
         }
         match entry.rule.looks {
-            Looks::Pairs(check) => pairs.push((id, check)),
-            Looks::Sonorities(check) => sonorities.push((id, check)),
-            Looks::Lines(check) => lines.push((id, check)),
-            Looks::Piece(check) => check(&piece, &mut Found::new(id, strictness, &mut list)),
+            Looks::Pairs(check) => pairs.push((entry, check)),
+            Looks::Sonorities(check) => sonorities.push((entry, check)),
+            Looks::Lines(check) => lines.push((entry, check)),
+            Looks::Piece(check) => check(&piece, &mut Found::new(entry, strictness, &mut list)),
             Looks::Text => {}
         }
     }
@@ -29,18 +28,18 @@ pub fn notes_findings(score: &Score, texture: &Texture, strictness: &Strictness)
             voice,
             moves: &moves,
         };
-        for &(id, check) in &lines {
-            check(&line, &mut Found::new(id, strictness, &mut list));
+        for &(entry, check) in &lines {
+            check(&line, &mut Found::new(entry, strictness, &mut list));
         }
     }
     // One sweep for all the rules that look at single steps, so that a step is fetched once.
     for sounding in piece.soundings() {
-        for &(id, check) in &sonorities {
-            check(&sounding, &mut Found::new(id, strictness, &mut list));
+        for &(entry, check) in &sonorities {
+            check(&sounding, &mut Found::new(entry, strictness, &mut list));
         }
-        for step in sounding.moves() {
-            for &(id, check) in &pairs {
-                check(&step, &mut Found::new(id, strictness, &mut list));
+        for step in sounding.moves(strictness.across_phrases) {
+            for &(entry, check) in &pairs {
+                check(&step, &mut Found::new(entry, strictness, &mut list));
             }
         }
     }

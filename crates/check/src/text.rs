@@ -3,35 +3,43 @@
 use partwright_rules::{Strictness, Style, entry};
 use partwright_sheet::{Edit, Offer, Problem, ProblemKind, Reading};
 
+use crate::Wishes;
 use crate::finding::Finding;
 
-/// The findings of the `writing` family.
-pub(crate) fn findings(reading: &Reading, strictness: &Strictness) -> Vec<Finding> {
-    let mut problems = reading.problems.clone();
-    problems.extend(unknown_style(reading));
-    problems
-        .into_iter()
-        .filter_map(|problem| finding(problem, reading, strictness))
+/// The findings about the text that reading it gave.
+pub(crate) fn findings(
+    reading: &Reading,
+    wishes: &Wishes,
+    strictness: &Strictness,
+) -> Vec<Finding> {
+    let told = reading.problems.iter().cloned().map(|problem| {
+        let id = match problem.kind {
+            ProblemKind::Reading => "reading",
+            ProblemKind::OctaveDoubt => "octave-doubt",
+            ProblemKind::Unwritten => "unwritten",
+            ProblemKind::VoiceSilent => "voice-silent",
+        };
+        (id, problem)
+    });
+    let style = unknown_style(reading, wishes).map(|problem| ("reading", problem));
+    told.chain(style)
+        .filter_map(|(id, problem)| finding(id, problem, reading, strictness))
         .collect()
 }
 
-fn finding(problem: Problem, reading: &Reading, strictness: &Strictness) -> Option<Finding> {
-    let id = match problem.kind {
-        ProblemKind::Reading => "reading",
-        ProblemKind::OctaveDoubt => "octave-doubt",
-        ProblemKind::Unwritten => "unwritten",
-        ProblemKind::VoiceSilent => "voice-silent",
-    };
+/// A problem as a finding of a rule of the `writing` family.
+pub(crate) fn finding(
+    id: &str,
+    problem: Problem,
+    reading: &Reading,
+    strictness: &Strictness,
+) -> Option<Finding> {
     let entry = entry(id)?;
     if !strictness.takes(&entry.id, entry.family) {
         return None;
     }
-    let severity = entry
-        .rule
-        .cases
-        .first()?
-        .setting(strictness.style)?
-        .severity?;
+    let case = entry.rule.cases.first()?;
+    let severity = strictness.severity(&entry.id, entry.family, case)?;
     Some(Finding {
         rule: &entry.id,
         severity,
@@ -43,16 +51,25 @@ fn finding(problem: Problem, reading: &Reading, strictness: &Strictness) -> Opti
         span: Some(problem.span),
         related: Vec::new(),
         offers: problem.offers,
+        licence: None,
     })
 }
 
 /// The sheet knows no styles; the catalogue does.
-fn unknown_style(reading: &Reading) -> Option<Problem> {
+fn unknown_style(reading: &Reading, wishes: &Wishes) -> Option<Problem> {
     let named = reading.head.style.as_ref()?;
-    if Style::named(&named.value).is_some() {
+    if Style::named(&named.value).is_some() || wishes.house_is_called(&named.value) {
         return None;
     }
-    let names: Vec<&str> = partwright_rules::STYLES.iter().map(|s| s.name()).collect();
+    let house = wishes
+        .house
+        .as_ref()
+        .and_then(|house| house.name.as_deref());
+    let names: Vec<&str> = partwright_rules::STYLES
+        .iter()
+        .map(|s| s.name())
+        .chain(house)
+        .collect();
     let near = names
         .iter()
         .find(|name| strsim::damerau_levenshtein(name, &named.value) <= 2);

@@ -2,7 +2,7 @@
 
 use std::collections::BTreeSet;
 
-use partwright_check::{Checked, Filter, Finding, Severity, Wishes};
+use partwright_check::{Checked, Choice, Filter, Finding, Severity, Wishes};
 
 use crate::arguments::{Check, Report};
 use crate::files::{self, Trouble};
@@ -18,9 +18,10 @@ pub(crate) fn run(wanted: &Check, stage: &mut Stage<'_>) -> Outcome {
     let mut work = Work {
         wanted,
         wishes: Wishes {
-            style: wanted.style,
+            style: wanted.style.map(Choice::Style),
             pick: wanted.pick.clone(),
             drop: wanted.drop.clone(),
+            ..Wishes::default()
         },
         filter: Filter {
             bars: wanted.bars,

@@ -2,14 +2,16 @@
 
 use partwright_score::Time;
 
+use crate::catalogue::Entry;
 use crate::finding::{Finding, Role, Spot};
-use crate::rule::{Case, Severity};
+use crate::rule::{Case, NumberOf, Severity};
 use crate::style::{Strictness, Style};
 use crate::view::{Line, LineMove, PairMove};
 
 /// Collects the findings of one rule under one style.
 pub struct Found<'a> {
     rule: &'static str,
+    family: &'static str,
     strictness: &'a Strictness,
     list: &'a mut Vec<Finding>,
 }
@@ -17,12 +19,13 @@ pub struct Found<'a> {
 impl<'a> Found<'a> {
     /// A collector for a rule.
     pub fn new(
-        rule: &'static str,
+        entry: &'static Entry,
         strictness: &'a Strictness,
         list: &'a mut Vec<Finding>,
     ) -> Found<'a> {
         Found {
-            rule,
+            rule: &entry.id,
+            family: entry.family,
             strictness,
             list,
         }
@@ -37,7 +40,13 @@ impl<'a> Found<'a> {
     /// How much the style minds a case; `None` where it allows it.
     #[must_use]
     pub fn severity(&self, case: &'static Case) -> Option<Severity> {
-        case.setting(self.strictness.style)?.severity
+        self.strictness.severity(self.rule, self.family, case)
+    }
+
+    /// The value of one of the rule's numbers.
+    #[must_use]
+    pub fn number(&self, number: &NumberOf) -> i32 {
+        self.strictness.number(self.rule, number)
     }
 
     /// A finding about a pair's step: it stands at the arrival and names the notes it left.

@@ -17,9 +17,9 @@ pub use catalogue::{Entry, catalogue, entry, family_of, is_family};
 pub use finding::{Finding, Role, Spot};
 pub use found::Found;
 pub use page::{Example, Page};
-pub use rule::{Case, FAMILIES, Looks, Rule, Severity};
+pub use rule::{Case, FAMILIES, Looks, NumberOf, Rule, Severity};
 pub use source::Source;
-pub use style::{STYLES, Setting, Strictness, Style};
+pub use style::{Number, Override, STYLES, Setting, Strictness, Style};
 pub use view::{
     Crossing, Direct, Line, LineMove, NotesOver, PairMove, Passage, Piece, Run, Sounding,
 };
@@ -31,7 +31,7 @@ pub mod prelude {
 
     pub use crate::finding::{Role, Spot};
     pub use crate::found::Found;
-    pub use crate::rule::{Case, Looks, Rule, Severity};
+    pub use crate::rule::{Case, Looks, NumberOf, Rule, Severity};
     pub use crate::source::{self, Source};
     pub use crate::style::{Setting, Style, allow, fault, remark, weakness};
     pub use crate::view::{Direct, Line, LineMove, NotesOver, PairMove, Passage, Piece, Sounding};

@@ -32,6 +32,8 @@ pub mod leap_beyond_octave;
 pub mod leap_unrecovered;
 #[path = "rules/line/leaps_one_way.rs"]
 pub mod leaps_one_way;
+#[path = "rules/writing/licence_idle.rs"]
+pub mod licence_idle;
 #[path = "rules/writing/octave_doubt.rs"]
 pub mod octave_doubt;
 #[path = "rules/sonority/opening_interval.rs"]
@@ -227,6 +229,12 @@ pub(crate) static FILES: &[File] = &[
         stem: "species_rhythm",
         rule: &species_rhythm::RULE,
         text: include_str!("rules/species/species_rhythm.rs"),
+    },
+    File {
+        family: "writing",
+        stem: "licence_idle",
+        rule: &licence_idle::RULE,
+        text: include_str!("rules/writing/licence_idle.rs"),
     },
     File {
         family: "writing",

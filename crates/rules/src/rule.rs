@@ -72,8 +72,23 @@ pub struct Rule {
     pub looks: Looks,
     /// Its cases; the first is the ordinary one.
     pub cases: &'static [&'static Case],
+    /// The numbers in its conditions that a house style may set anew.
+    pub numbers: &'static [&'static NumberOf],
     /// Who says so.
     pub sources: &'static [Source],
+}
+
+/// A number in a rule's conditions.
+#[derive(Debug)]
+pub struct NumberOf {
+    /// Its name in a house style.
+    pub name: &'static str,
+    /// What it means, in words, with its unit.
+    pub means: &'static str,
+    /// Its ordinary value.
+    pub value: i32,
+    /// The least and the most it may be.
+    pub bounds: (i32, i32),
 }
 
 /// A case of a rule, with its severity by style.

@@ -5,7 +5,7 @@
 
 use std::iter::successors;
 
-use crate::rule::Severity;
+use crate::rule::{Case, NumberOf, Severity};
 
 /// Which rules apply, and how strictly. The order is the order of every list.
 #[derive(Clone, Copy, Debug, PartialEq, Eq, Hash, PartialOrd, Ord)]
@@ -160,11 +160,39 @@ pub const fn allow(style: Style, because: &'static str) -> Setting {
     setting(style, None, because)
 }
 
-/// How strictly a check is done: a style, and which rules take part.
+/// A change of severity that a house style makes.
+#[derive(Clone, Debug, PartialEq, Eq)]
+pub struct Override {
+    /// A rule's id or a family's name.
+    pub rule: String,
+    /// The case it is about, by name; all cases where it is `None`.
+    pub case: Option<String>,
+    /// The severity; `None` switches the rule off.
+    pub severity: Option<Severity>,
+}
+
+/// A number of a rule that a house style sets anew.
+#[derive(Clone, Debug, PartialEq, Eq)]
+pub struct Number {
+    /// The rule's id.
+    pub rule: String,
+    /// The number's name.
+    pub name: String,
+    /// Its value.
+    pub value: i32,
+}
+
+/// How strictly a check is done: a style, what a house changes in it, and which rules take part.
 #[derive(Clone, Debug, PartialEq, Eq)]
 pub struct Strictness {
     /// The style.
     pub style: Style,
+    /// Changes of severity; a later one goes before an earlier one.
+    pub overrides: Vec<Override>,
+    /// Numbers set anew; a later one goes before an earlier one.
+    pub numbers: Vec<Number>,
+    /// Pair rules look across the ends of phrases too.
+    pub across_phrases: bool,
     /// Only these rules and families; empty for all.
     pub pick: Vec<String>,
     /// Not these rules and families.
@@ -177,8 +205,21 @@ impl Strictness {
     pub const fn plain(style: Style) -> Strictness {
         Strictness {
             style,
+            overrides: Vec::new(),
+            numbers: Vec::new(),
+            across_phrases: false,
             pick: Vec::new(),
             drop: Vec::new(),
+        }
+    }
+
+    /// The same with every rule taking part.
+    #[must_use]
+    pub fn with_all_rules(&self) -> Strictness {
+        Strictness {
+            pick: Vec::new(),
+            drop: Vec::new(),
+            ..self.clone()
         }
     }
 
@@ -187,5 +228,29 @@ impl Strictness {
     pub fn takes(&self, id: &str, family: &str) -> bool {
         let named = |list: &[String]| list.iter().any(|name| name == id || name == family);
         (self.pick.is_empty() || named(&self.pick)) && !named(&self.drop)
+    }
+
+    /// How much a case of a rule is minded: the house's word, else the style's. `None` allows.
+    #[must_use]
+    pub fn severity(&self, id: &str, family: &str, case: &Case) -> Option<Severity> {
+        let about = |o: &&Override| {
+            (o.rule == id || o.rule == family)
+                && o.case.as_deref().is_none_or(|name| name == case.name)
+        };
+        match self.overrides.iter().rev().find(about) {
+            Some(change) => change.severity,
+            None => case.setting(self.style)?.severity,
+        }
+    }
+
+    /// The value of a rule's number: the house's, else the rule's own.
+    #[must_use]
+    pub fn number(&self, id: &str, number: &NumberOf) -> i32 {
+        let set = self
+            .numbers
+            .iter()
+            .rev()
+            .find(|n| n.rule == id && n.name == number.name);
+        set.map_or(number.value, |n| n.value)
     }
 }

@@ -80,6 +80,20 @@ impl Interval {
         self.quality() == (-1, false)
     }
 
+    /// A size by its name, with its article: `an octave`, `a twelfth`, `two octaves` for 14 steps.
+    #[must_use]
+    pub fn noun(steps: i32) -> String {
+        if steps == 14 {
+            return "two octaves".to_owned();
+        }
+        let noun = usize::try_from(steps).ok().and_then(|size| SIZES.get(size));
+        match noun {
+            Some(noun) if noun.starts_with(['o', 'e']) => format!("an {noun}"),
+            Some(noun) => format!("a {noun}"),
+            None => format!("a {}th", steps + 1),
+        }
+    }
+
     /// In full: `perfect fifth`, `minor tenth`, `octave`, `augmented fourth`.
     #[must_use]
     pub fn name(self) -> String {

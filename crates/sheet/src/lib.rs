@@ -11,6 +11,7 @@
 mod chars;
 mod describe;
 mod drawn;
+mod edit;
 mod explain;
 mod footnotes;
 mod harmony;
@@ -32,6 +33,7 @@ mod under;
 mod voices;
 
 pub use drawn::{DrawnMark, drawn_marks};
+pub use edit::{apply, note_edits};
 pub use harmony::{Chord, Figure, Numeral};
 pub use position::{Lines, line_column};
 pub use problem::{Edit, Offer, Problem, ProblemKind};

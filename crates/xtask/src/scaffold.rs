@@ -40,6 +40,7 @@ use crate::prelude::*;
 pub const RULE: Rule = Rule {
     looks: Looks::Pairs(check),
     cases: &[&ORDINARY],
+    numbers: &[],
     sources: &[source::COMMON_PRACTICE],
 };
 

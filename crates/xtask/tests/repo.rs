@@ -21,10 +21,16 @@ const MAY_IMPORT: &[(&str, &[&str])] = &[
     ("sheet", &["score"]),
     ("rules", &["score", "space"]),
     ("check", &["sheet", "score", "rules"]),
-    ("server", &["check", "rules", "score", "sheet", "space"]),
+    ("mend", &["check", "rules", "score", "space", "sheet"]),
+    (
+        "server",
+        &["mend", "check", "rules", "score", "sheet", "space"],
+    ),
     (
         "partwright",
-        &["server", "check", "rules", "score", "sheet", "space"],
+        &[
+            "server", "mend", "check", "rules", "score", "sheet", "space",
+        ],
     ),
     ("xtask", &[]),
 ];

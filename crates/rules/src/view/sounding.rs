@@ -22,13 +22,15 @@ impl<'a> Sounding<'a> {
     }
 
     /// The steps of all pairs into it that pair rules look at: both voices sound on both sides,
-    /// are two voices, and end no phrase between.
-    pub fn moves(self) -> impl Iterator<Item = PairMove<'a>> {
+    /// are two voices, and end no phrase between, unless a house style looks across phrases.
+    pub fn moves(self, across_phrases: bool) -> impl Iterator<Item = PairMove<'a>> {
         self.piece
             .texture
             .steps(self.index)
-            .filter(|(_, step)| {
-                step.motion().is_some() && !step.is_one_voice() && !step.across_phrase()
+            .filter(move |(_, step)| {
+                step.motion().is_some()
+                    && !step.is_one_voice()
+                    && (across_phrases || !step.across_phrase())
             })
             .map(move |(pair, step)| PairMove {
                 sounding: self,

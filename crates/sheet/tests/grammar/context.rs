@@ -1,6 +1,8 @@
 //! What a grammar cannot say: which problems depend on what stands elsewhere. The numbers are those
 //! in the head of the grammar.
 
+use crate::steer::descending;
+
 /// Problems of the cases that the grammar cannot see.
 pub(crate) struct Kind {
     /// Why not.
@@ -74,6 +76,8 @@ pub(crate) const KINDS: [Kind; 9] = [
             "does not double itself",
             "double each other in a ring",
             "A second row of this name",
+            // Of a licence whose only word names a voice.
+            "The rule is missing",
         ],
     },
     Kind {
@@ -130,8 +134,10 @@ pub(crate) const KINDS: [Kind; 9] = [
     },
 ];
 
-/// Whether what the reader of sheets says depends on what stands elsewhere.
-pub(crate) fn is_context(message: &str) -> bool {
+/// Whether what the reader of sheets says of a place depends on what stands elsewhere.
+pub(crate) fn is_context(message: &str, place: &str) -> bool {
     let all = KINDS.iter().flat_map(|kind| kind.messages);
-    all.into_iter().any(|words| message.contains(words))
+    // A figure written twice cannot be put in order, and is told as any other bad figure.
+    let twice = message.contains("is no figure") && place.contains('/') && !descending(place);
+    twice || all.into_iter().any(|words| message.contains(words))
 }

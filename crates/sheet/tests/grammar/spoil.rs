@@ -9,8 +9,9 @@ use crate::ebnf::BLANKS;
 /// What a hand strikes by mistake.
 const STRUCK: &str = "  \t\n\n||//..--__??^,*a1b#=:+\\~SG4x890rvV";
 
-/// A text with one or two slips in it.
-pub(crate) fn spoil(text: &str, random: &mut Random) -> String {
+/// A text with one or two slips in it: characters struck, left out and turned round, and words that
+/// belong elsewhere.
+pub(crate) fn spoil(text: &str, words: &[&str], random: &mut Random) -> String {
     let struck: Vec<char> = STRUCK.chars().collect();
     let mut all: Vec<char> = text.chars().collect();
     for _ in 0..=random.below(2) {
@@ -19,7 +20,7 @@ pub(crate) fn spoil(text: &str, random: &mut Random) -> String {
         }
         let at = random.below(all.len());
         let c = *random.one(&struck).unwrap_or(&' ');
-        match random.below(6) {
+        match random.below(8) {
             0 => drop(all.remove(at)),
             1 => all.insert(at, c),
             2 => all[at] = c,
@@ -31,9 +32,22 @@ pub(crate) fn spoil(text: &str, random: &mut Random) -> String {
                 let next = (at + 1) % all.len();
                 all.swap(at, next);
             }
-            _ => {
+            5 => {
                 let end = (at + random.below(6)).min(all.len());
                 all.drain(at..end);
+            }
+            _ => {
+                let parts = |c: &char| c.is_whitespace();
+                let start = all[..at]
+                    .iter()
+                    .rposition(parts)
+                    .map_or(0, |before| before + 1);
+                let end = all[at..]
+                    .iter()
+                    .position(parts)
+                    .map_or(all.len(), |after| at + after);
+                let word = random.one(words).unwrap_or(&"");
+                all.splice(start..end, word.chars());
             }
         }
     }
@@ -52,13 +66,34 @@ pub(crate) fn is_blank_made_plain(text: &str, problem: &Problem) -> bool {
 }
 
 /// What the grammar refuses and the reader lets pass: a lone carriage return (a blank to it), a
-/// words row without any bar line, and a join of words with nothing to join.
+/// words row without any bar line, a join of words with nothing to join, more than 64 parts in a
+/// cell of harmony or figures, and a licence that names voices before rules.
 pub(crate) fn is_left_open(text: &str) -> bool {
     let lone_return = text.replace("\r\n", "\n").contains('\r');
+    let blank = |c| BLANKS.contains(&c) || c == '\u{feff}';
     lone_return
         || text
             .lines()
-            .any(|line| is_words_left_open(line.trim_start()))
+            .map(|line| line.trim_start_matches(blank))
+            .any(|line| {
+                is_words_left_open(line) || is_long_cell(line) || is_licence_left_open(line)
+            })
+}
+
+fn is_long_cell(line: &str) -> bool {
+    let under = line.starts_with("harmony") || line.starts_with("figures");
+    under
+        && line
+            .split(|c| c == '|' || BLANKS.contains(&c))
+            .any(|cell| cell.matches('.').count() > 63)
+}
+
+fn is_licence_left_open(line: &str) -> bool {
+    let names = line.split(':').next().unwrap_or_default();
+    let mut names = names.split_whitespace();
+    let is_rule = |name: &str| name.chars().all(|c| c.is_ascii_lowercase() || c == '-');
+    matches!(names.next(), Some("licence" | "license"))
+        && names.skip_while(|name| is_rule(name)).any(is_rule)
 }
 
 fn is_words_left_open(line: &str) -> bool {

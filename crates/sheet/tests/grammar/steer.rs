@@ -353,7 +353,7 @@ fn semitone(pitch: &str) -> i32 {
 }
 
 /// Whether figures stand highest first; a sign alone stands for the third.
-fn descending(stack: &str) -> bool {
+pub(crate) fn descending(stack: &str) -> bool {
     let height = |figure: &str| figure.chars().find_map(|c| c.to_digit(10)).unwrap_or(3);
     stack.split('/').map(height).is_sorted_by(|a, b| a > b)
 }

@@ -60,6 +60,7 @@ use crate::prelude::*;
 pub const RULE: Rule = Rule {
     looks: Looks::Piece(check),
     cases: &[&TWO_PARTS, &MORE_PARTS, &LOWEST],
+    numbers: &[],
     sources: &[
         source::FUX,
         source::FUX_FIGURES.at("two parts: 43 of 43; three parts: 20 unisons and octaves, 17 with a major third, 4 with a fifth"),

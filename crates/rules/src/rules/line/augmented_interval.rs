@@ -49,6 +49,7 @@ use crate::prelude::*;
 pub const RULE: Rule = Rule {
     looks: Looks::Lines(check),
     cases: &[&ORDINARY],
+    numbers: &[],
     sources: &[
         source::LEHMANN.at("lesson I"),
         source::OPEN_MUSIC_THEORY,

@@ -38,6 +38,7 @@ use crate::prelude::*;
 pub const RULE: Rule = Rule {
     looks: Looks::Lines(check),
     cases: &[&ORDINARY, &MANY_PARTS],
+    numbers: &[],
     sources: &[
         source::LEHMANN.at("lesson I"),
         source::GROVE.at("Strict Counterpoint"),

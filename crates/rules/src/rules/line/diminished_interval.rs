@@ -47,6 +47,7 @@ use crate::prelude::*;
 pub const RULE: Rule = Rule {
     looks: Looks::Lines(check),
     cases: &[&ORDINARY],
+    numbers: &[],
     sources: &[
         source::LEHMANN
             .at("lesson I")

@@ -41,6 +41,7 @@ use crate::prelude::*;
 pub const RULE: Rule = Rule {
     looks: Looks::Lines(check),
     cases: &[&ORDINARY, &BROAD],
+    numbers: &[],
     sources: &[source::OPEN_MUSIC_THEORY, source::LEHMANN.at("lesson I")],
 };
 

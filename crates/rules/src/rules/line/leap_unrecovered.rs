@@ -65,6 +65,7 @@ use crate::prelude::*;
 pub const RULE: Rule = Rule {
     looks: Looks::Lines(check),
     cases: &[&LARGE, &OCTAVE, &SMALL],
+    numbers: &[],
     sources: &[
         source::OPEN_MUSIC_THEORY,
         source::JEPPESEN,

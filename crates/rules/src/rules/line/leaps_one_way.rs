@@ -54,6 +54,7 @@ use crate::prelude::*;
 pub const RULE: Rule = Rule {
     looks: Looks::Lines(check),
     cases: &[&DISSONANT, &NO_CHORD, &THREE],
+    numbers: &[],
     sources: &[
         source::LEHMANN
             .at("lesson I, Fig. 9")

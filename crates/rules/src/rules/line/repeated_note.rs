@@ -44,6 +44,7 @@ use crate::prelude::*;
 pub const RULE: Rule = Rule {
     looks: Looks::Lines(check),
     cases: &[&THIRD, &QUICK, &FLORID],
+    numbers: &[],
     sources: &[
         source::LEHMANN.at("lessons I and II"),
         source::OPEN_MUSIC_THEORY.stricter("one repetition in first species"),

@@ -42,6 +42,7 @@ use crate::prelude::*;
 pub const RULE: Rule = Rule {
     looks: Looks::Lines(check),
     cases: &[&ORDINARY, &BASS],
+    numbers: &[],
     sources: &[
         source::LEHMANN.at("lesson I"),
         source::BACH_CHORALES

@@ -42,6 +42,7 @@ use crate::prelude::*;
 pub const RULE: Rule = Rule {
     looks: Looks::Lines(check),
     cases: &[&MAJOR_UP, &MAJOR_DOWN, &MINOR_DOWN, &MANY_PARTS],
+    numbers: &[],
     sources: &[
         source::FUX.at("Book II: only the minor sixth, and only upward"),
         source::GROVE.at("Strict Counterpoint, second order"),

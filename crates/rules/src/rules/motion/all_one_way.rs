@@ -53,6 +53,7 @@ use crate::prelude::*;
 pub const RULE: Rule = Rule {
     looks: Looks::Sonorities(check),
     cases: &[&ORDINARY],
+    numbers: &[],
     sources: &[source::KOSTKA_PAYNE, source::PROUT_HARMONY],
 };
 

@@ -55,6 +55,7 @@ use crate::prelude::*;
 pub const RULE: Rule = Rule {
     looks: Looks::Pairs(check),
     cases: &[&OUTER, &INNER, &CLOSE],
+    numbers: &[],
     sources: &[
         source::LEHMANN.at("lesson I, Fig. 12"),
         source::OPEN_MUSIC_THEORY.looser("only between the outer voices"),

@@ -69,6 +69,7 @@ use crate::prelude::*;
 pub const RULE: Rule = Rule {
     looks: Looks::Piece(check),
     cases: &[&ORDINARY, &BASS],
+    numbers: &[],
     sources: &[
         source::JEPPESEN.looser("there is no real polyphony without crossing"),
         source::LEHMANN

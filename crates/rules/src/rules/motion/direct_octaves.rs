@@ -63,6 +63,7 @@ pub const RULE: Rule = Rule {
         &THREE_OUTER,
         &THREE_INNER,
     ],
+    numbers: &[],
     sources: &[
         source::FUX.at("Book II, the four rules of motion"),
         source::GROVE.at("Hidden Fifths and Octaves"),

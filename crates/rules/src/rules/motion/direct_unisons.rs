@@ -46,6 +46,7 @@ use crate::prelude::*;
 pub const RULE: Rule = Rule {
     looks: Looks::Pairs(check),
     cases: &[&TWO_PARTS, &THREE_PARTS, &MORE_PARTS],
+    numbers: &[],
     sources: &[
         source::FUX.at("Book II, the four rules of motion"),
         source::GROVE.at("Hidden Fifths and Octaves"),

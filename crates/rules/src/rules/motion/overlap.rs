@@ -45,6 +45,7 @@ use crate::prelude::*;
 pub const RULE: Rule = Rule {
     looks: Looks::Pairs(check),
     cases: &[&ORDINARY],
+    numbers: &[],
     sources: &[
         source::OPEN_MUSIC_THEORY,
         source::KOSTKA_PAYNE.at("ch. 5"),

@@ -68,6 +68,7 @@ use crate::prelude::*;
 pub const RULE: Rule = Rule {
     looks: Looks::Pairs(check),
     cases: &[&ORDINARY, &OFF_BEAT],
+    numbers: &[],
     sources: &[
         source::FUX.at("Book II, the four rules of motion"),
         source::LEHMANN.at("lesson I"),

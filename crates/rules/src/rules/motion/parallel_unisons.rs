@@ -38,6 +38,7 @@ use crate::prelude::*;
 pub const RULE: Rule = Rule {
     looks: Looks::Pairs(check),
     cases: &[&ORDINARY],
+    numbers: &[],
     sources: &[
         source::FUX.at("Book II, the four rules of motion"),
         source::LEHMANN.at("lesson I"),

@@ -51,6 +51,7 @@ use crate::prelude::*;
 pub const RULE: Rule = Rule {
     looks: Looks::Pairs(check),
     cases: &[&ORDINARY],
+    numbers: &[],
     sources: &[source::OPEN_MUSIC_THEORY, source::SALZER_SCHACHTER],
 };
 

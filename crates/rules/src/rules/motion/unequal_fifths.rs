@@ -64,6 +64,7 @@ use crate::prelude::*;
 pub const RULE: Rule = Rule {
     looks: Looks::Pairs(check),
     cases: &[&INTO_WITH_BASS, &INTO_PERFECT, &OUT_OF_PERFECT],
+    numbers: &[],
     sources: &[
         source::LEHMANN.at("lesson XI, Fig. 92c"),
         source::BUTTERFIELD.at("ch. 10"),

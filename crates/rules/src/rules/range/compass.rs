@@ -63,6 +63,7 @@ use partwright_score::Compass;
 pub const RULE: Rule = Rule {
     looks: Looks::Lines(check),
     cases: &[&EXTREME, &ORDINARY, &LIMIT, &EASY],
+    numbers: &[],
     sources: &[
         source::CHORAL_HANDBOOKS,
         source::BACH_CHORALES.at("extremes: A3-A5, E3-D5, C3-A4, C2-E4"),

@@ -61,6 +61,7 @@ use crate::prelude::*;
 pub const RULE: Rule = Rule {
     looks: Looks::Piece(check),
     cases: &[&TWO_PARTS, &LOWEST],
+    numbers: &[],
     sources: &[
         source::FUX,
         source::GROVE.at("Strict Counterpoint"),

@@ -72,12 +72,44 @@ use crate::prelude::*;
 pub const RULE: Rule = Rule {
     looks: Looks::Piece(check),
     cases: &[&UPPER, &UPPER_LONG, &TWO_PARTS, &TWO_PARTS_LONG, &BASS, &SOPRANO_TENOR],
+    numbers: &[&NEIGHBOURS, &CHORDS, &BASS_GAP, &FIRST_AND_THIRD, &TWO_PARTS_GAP],
     sources: &[
         source::OPEN_MUSIC_THEORY,
         source::LEHMANN.at("lesson XI"),
         source::BACH_CHORALES.at("soprano and alto 143, alto and tenor 334, of 30,038 sonorities; the bass beyond a twelfth 312"),
         source::FUX_FIGURES.at("at most a twelfth and a semitone in two parts"),
     ],
+};
+
+static NEIGHBOURS: NumberOf = NumberOf {
+    name: "neighbours",
+    means: "the widest interval between neighbouring upper voices, as its number (8 is an octave)",
+    value: 8,
+    bounds: (3, 22),
+};
+static CHORDS: NumberOf = NumberOf {
+    name: "chords",
+    means: "how many successive chords may be wider before it counts as long",
+    value: 2,
+    bounds: (0, 64),
+};
+static BASS_GAP: NumberOf = NumberOf {
+    name: "bass",
+    means: "the widest interval between the bass and its neighbour, as its number",
+    value: 15,
+    bounds: (8, 36),
+};
+static FIRST_AND_THIRD: NumberOf = NumberOf {
+    name: "first-and-third",
+    means: "the widest interval between the first and the third of four voices, as its number",
+    value: 12,
+    bounds: (8, 36),
+};
+static TWO_PARTS_GAP: NumberOf = NumberOf {
+    name: "two-parts",
+    means: "the widest interval between two voices in two parts, as its number",
+    value: 12,
+    bounds: (8, 36),
 };
 
 static UPPER: Case = Case {
@@ -145,38 +177,60 @@ fn check(piece: &Piece<'_>, found: &mut Found<'_>) {
         .iter()
         .filter(|pair| sung(pair.upper) && sung(pair.lower))
     {
-        // What is not even an octave apart is no matter: most sonorities end here.
-        let wide = piece.passages(|s| s.is_wider_than(pair, 7));
-        let report =
-            |found: &mut Found<'_>, test: Test<'_>, short, long: Option<&'static Case>, limit| {
-                for run in piece.within(&wide, |s| test(&s)) {
-                    let case = long.filter(|_| run.chords > 2).unwrap_or(short);
+        let steps = |number| found.number(number) - 1;
+        let (neighbours, bass, third, two) = (
+            steps(&NEIGHBOURS),
+            steps(&BASS_GAP),
+            steps(&FIRST_AND_THIRD),
+            steps(&TWO_PARTS_GAP),
+        );
+        let long = usize::try_from(found.number(&CHORDS)).unwrap_or(0);
+        // What is not wide by any measure is no matter: most sonorities end here.
+        let least = [neighbours, bass, third, two, LONG_TENTH]
+            .into_iter()
+            .min()
+            .unwrap_or(0);
+        let wide = piece.passages(|s| s.is_wider_than(pair, least));
+        let mut report =
+            |test: &dyn Fn(&Sounding<'_>) -> bool, limit, case, longer: Option<&'static Case>| {
+                for run in piece.within(&wide, |s| s.is_wider_than(pair, limit) && test(&s)) {
+                    let case = longer.filter(|_| run.chords > long).unwrap_or(case);
                     tell(piece, found, pair, &run, case, limit);
                 }
             };
         let beside = |s: &Sounding<'_>| s.parts() >= 3 && s.are_neighbours(pair);
-        let upper = |s: &Sounding<'_>| beside(s) && !s.is_lowest_present(pair.lower);
-        report(found, &upper, &UPPER, Some(&UPPER_LONG), "an octave");
-        let bass = |s: &Sounding<'_>| {
-            s.is_wider_than(pair, 14) && beside(s) && s.is_lowest_present(pair.lower)
-        };
-        report(found, &bass, &BASS, None, "two octaves");
-        let third = |s: &Sounding<'_>| {
-            s.is_wider_than(pair, 11) && s.parts() == 4 && s.are_first_and_third(pair)
-        };
-        report(found, &third, &SOPRANO_TENOR, None, "a twelfth");
-        let two = |s: &Sounding<'_>| s.is_wider_than(pair, 11) && s.parts() == 2;
-        report(found, &two, &TWO_PARTS, None, "a twelfth");
-        for run in piece.within(&wide, |s| s.is_wider_than(pair, 9) && s.parts() == 2) {
-            let wider = (run.first..run.end).any(|k| piece.sounding(k).is_wider_than(pair, 11));
-            if run.chords > 2 && !wider {
-                tell(piece, found, pair, &run, &TWO_PARTS_LONG, "a tenth");
+        report(
+            &|s| beside(s) && !s.is_lowest_present(pair.lower),
+            neighbours,
+            &UPPER,
+            Some(&UPPER_LONG),
+        );
+        report(
+            &|s| beside(s) && s.is_lowest_present(pair.lower),
+            bass,
+            &BASS,
+            None,
+        );
+        report(
+            &|s| s.parts() == 4 && s.are_first_and_third(pair),
+            third,
+            &SOPRANO_TENOR,
+            None,
+        );
+        report(&|s| s.parts() == 2, two, &TWO_PARTS, None);
+        for run in piece.within(&wide, |s| {
+            s.is_wider_than(pair, LONG_TENTH) && s.parts() == 2
+        }) {
+            let wider = (run.first..run.end).any(|k| piece.sounding(k).is_wider_than(pair, two));
+            if run.chords > long && !wider {
+                tell(piece, found, pair, &run, &TWO_PARTS_LONG, LONG_TENTH);
             }
         }
     }
 }
 
-type Test<'a> = &'a dyn Fn(&Sounding<'_>) -> bool;
+/// A tenth, in scale steps: what two voices in two parts do not exceed for long.
+const LONG_TENTH: i32 = 9;
 
 fn tell(
     piece: &Piece<'_>,
@@ -184,7 +238,7 @@ fn tell(
     pair: Pair,
     run: &Passage,
     case: &'static Case,
-    limit: &str,
+    limit: i32,
 ) {
     found.passage(
         case,
@@ -192,9 +246,10 @@ fn tell(
         (run.from, run.until),
         || {
             format!(
-                "Spacing: {} and {} are more than {limit} apart {}. Bring them closer.",
+                "Spacing: {} and {} are more than {} apart {}. Bring them closer.",
                 piece.name(pair.upper),
                 piece.name(pair.lower),
+                Interval::noun(limit),
                 piece.extent_text(run.from, run.until)
             )
         },

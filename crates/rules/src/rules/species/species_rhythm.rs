@@ -58,6 +58,7 @@ use crate::prelude::*;
 pub const RULE: Rule = Rule {
     looks: Looks::Piece(check),
     cases: &[&ORDINARY],
+    numbers: &[],
     sources: &[
         source::FUX,
         source::LEHMANN.at("lessons I and II"),

@@ -42,6 +42,7 @@ use crate::prelude::*;
 pub const RULE: Rule = Rule {
     looks: Looks::Text,
     cases: &[&ORDINARY],
+    numbers: &[],
     sources: &[source::NOTATION],
 };
 

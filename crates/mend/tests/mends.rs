@@ -1,0 +1,113 @@
+//! Every mend that is offered, applied to the text, removes its finding and brings none.
+
+use std::collections::BTreeMap;
+use std::fs;
+use std::path::PathBuf;
+
+use partwright_check::{Checked, Finding, Severity, Wishes};
+use partwright_mend::{MOST, mends};
+use partwright_rules::catalogue;
+use partwright_sheet::apply;
+
+/// What makes a finding the same in two runs, counted.
+fn counted<'a>(findings: impl Iterator<Item = &'a Finding>) -> BTreeMap<String, usize> {
+    let mut counts = BTreeMap::new();
+    for f in findings.filter(|f| f.severity >= Severity::Weakness) {
+        *counts
+            .entry(format!("{} {:?} {:?}", f.rule, f.voices, f.at))
+            .or_default() += 1;
+    }
+    counts
+}
+
+/// Applies every mend of every finding of a sheet; tells how many findings had one.
+fn hold(name: &str, text: &str) -> (usize, usize) {
+    let wishes = Wishes::default();
+    let checked = Checked::text(text, &wishes);
+    let before = counted(checked.findings.iter());
+    let (mut with, mut all) = (0, 0);
+    for finding in &checked.findings {
+        let offered = mends(&checked, finding, &|_, _| false);
+        assert!(offered.len() <= MOST);
+        all += 1;
+        with += usize::from(!offered.is_empty());
+        for mend in &offered {
+            let mended = apply(text, &mend.edits(&checked, text));
+            let after = Checked::text(&mended, &wishes);
+            let here = format!(
+                "{name}: {} at {:?}: {}\n{mended}",
+                finding.rule, finding.place, mend.title
+            );
+            let gone = !after.findings.iter().any(|f| {
+                f.rule == finding.rule && f.voices == finding.voices && f.at == finding.at
+            });
+            assert!(gone, "it stays: {here}");
+            for (key, count) in counted(after.findings.iter()) {
+                assert!(
+                    before.get(&key).copied().unwrap_or(0) >= count,
+                    "it brings {key}: {here}"
+                );
+            }
+            let problems = |c: &Checked| c.reading.problems.len();
+            assert!(problems(&after) <= problems(&checked), "the text says something else: {here}");
+        }
+    }
+    (with, all)
+}
+
+#[test]
+fn mends_of_the_demo_scores_hold() {
+    let folder = PathBuf::from(env!("CARGO_MANIFEST_DIR")).join("../../demo-scores");
+    let mut paths: Vec<PathBuf> = fs::read_dir(folder)
+        .unwrap()
+        .map(|e| e.unwrap().path())
+        .collect();
+    paths.sort();
+    let mut sum = (0, 0);
+    for path in paths {
+        let (with, all) = hold(
+            &path.display().to_string(),
+            &fs::read_to_string(&path).unwrap(),
+        );
+        sum = (sum.0 + with, sum.1 + all);
+    }
+    println!("{} of {} findings have a mend", sum.0, sum.1);
+    assert!(
+        sum.0 * 2 > sum.1,
+        "most findings in real music have a mend: {sum:?}"
+    );
+}
+
+#[test]
+fn mends_of_the_pages_examples_hold() {
+    let mut sum = (0, 0);
+    for entry in catalogue() {
+        for example in &entry.page.examples {
+            let (with, all) = hold(&entry.id, &example.sheet);
+            sum = (sum.0 + with, sum.1 + all);
+        }
+    }
+    println!("{} of {} findings have a mend", sum.0, sum.1);
+    assert!(sum.0 > 20);
+}
+
+#[test]
+fn what_may_not_move_does_not() {
+    let text = "style species-1\nvoice S\nvoice C cantus\n\nS | D5 E |\nC | G3 A |\n";
+    let checked = Checked::text(text, &Wishes::default());
+    let finding = checked
+        .findings
+        .iter()
+        .find(|f| f.rule == "parallel-fifths")
+        .unwrap();
+    let offered = mends(&checked, finding, &|_, _| false);
+    assert!(!offered.is_empty());
+    assert!(
+        offered.iter().all(|mend| mend.voice == 0),
+        "the cantus stays"
+    );
+    assert!(
+        mends(&checked, finding, &|_, _| true).is_empty(),
+        "locked notes stay"
+    );
+}
