@@ -1,5 +1,7 @@
 //! Finding the mends of a finding.
 
+use std::collections::BTreeSet;
+
 use partwright_check::{Checked, Finding, Severity, notes_findings};
 use partwright_rules::{Finding as Bare, Strictness};
 use partwright_score::{Pitch, Score, Sound, Texture, Time};
@@ -40,18 +42,17 @@ struct Movable {
 }
 
 /// The mends of a finding, the best first: the least movement in scale steps, then inner voices
-/// before outer ones. Empty where no change of one note helps, and for findings about the text.
-///
-/// `locked` tells of notes that may not move for reasons of the text (licensed ones).
+/// before outer ones. Empty where no change of one note helps, for licensed findings, and for
+/// findings about the text.
 #[must_use]
-pub fn mends(
-    checked: &Checked,
-    finding: &Finding,
-    locked: &dyn Fn(usize, Time) -> bool,
-) -> Vec<Mend> {
+pub fn mends(checked: &Checked, finding: &Finding) -> Vec<Mend> {
     let (Some(at), Some(bare)) = (finding.at, Target::of(finding)) else {
         return Vec::new();
     };
+    if finding.licence.is_some() {
+        return Vec::new();
+    }
+    let licensed = licensed_notes(checked);
     let score = &checked.reading.score;
     let window = Window::around(score, &checked.texture, at, finding.until.unwrap_or(at));
     let strictness = checked.strictness.with_all_rules();
@@ -63,7 +64,7 @@ pub fn mends(
     let mut trials: Vec<(i16, usize, Movable, Pitch)> = Vec::new();
     for movable in movables(checked, finding)
         .into_iter()
-        .filter(|m| !locked(m.voice, m.at))
+        .filter(|m| !licensed.contains(&(m.voice, m.note)))
     {
         let Some(voice) = score.voices.get(movable.voice) else {
             continue;
@@ -137,6 +138,31 @@ impl Mend {
     pub fn edits(&self, checked: &Checked, text: &str) -> Vec<Edit> {
         partwright_sheet::note_edits(&checked.reading, text, self.voice, self.note, self.to)
     }
+}
+
+/// The notes (voice and index) that a licence speaks of: they carry its mark, or a licensed
+/// finding names them.
+fn licensed_notes(checked: &Checked) -> BTreeSet<(usize, usize)> {
+    let score = &checked.reading.score;
+    let marked = checked
+        .reading
+        .marks
+        .iter()
+        .map(|mark| (mark.voice, mark.at));
+    let lifted = checked
+        .findings
+        .iter()
+        .filter(|f| f.licence.is_some())
+        .flat_map(|f| {
+            let here =
+                f.at.into_iter()
+                    .flat_map(|at| f.voices.iter().map(move |&v| (v, at)));
+            here.chain(f.related.iter().map(|r| (r.voice, r.at)))
+        });
+    marked
+        .chain(lifted)
+        .filter_map(|(voice, at)| Some((voice, score.note_at(voice, at)?)))
+        .collect()
 }
 
 /// What makes a finding the same finding in another run.
