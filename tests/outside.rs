@@ -7,6 +7,8 @@
 mod consecutives;
 #[path = "outside/judged.rs"]
 mod judged;
+#[path = "outside/rewrite.rs"]
+mod rewrite;
 #[path = "outside/scores.rs"]
 mod scores;
 #[path = "outside/treatise.rs"]

@@ -123,28 +123,36 @@ fn bars(score: &mut Score, about: &Value) {
     score.metres = metres.iter().map(|m| m.1.clone()).collect();
     let mut metre = 0;
     let mut number = 0;
+    // What of its full length the first half of a split bar has taken.
+    let mut taken = ZERO;
     for (i, (label, onset)) in stated.iter().enumerate() {
         if let Some(change) = metres
             .iter()
             .position(|(from, _)| from.as_deref() == Some(label))
         {
             metre = change;
+            taken = ZERO;
         }
-        let next = stated.get(i + 1).map_or(end, |bar| bar.1);
-        let length = next - onset;
+        let end_of = |i: usize| stated.get(i + 1).map_or(end, |bar| bar.1);
+        let length = end_of(i) - onset;
         let full = score.metres[metre].bar_length().unwrap();
         // A first bar short of its metre is a pickup: it takes the last beats of bar 0.
         let pickup = i == 0 && length < full && stated.len() > 1;
-        number =
-            label
-                .trim_start_matches('X')
-                .parse()
-                .unwrap_or(if pickup { 0 } else { number + 1 });
+        let second = taken > ZERO;
+        // The collections name a second half in several ways; a conductor does not count it.
+        number += u32::from(!pickup && !second);
+        let lead = if pickup { full - length } else { taken };
+        let halved = !pickup && !second && length < full && i + 1 < stated.len();
+        taken = if halved && end_of(i + 1) - onset == full {
+            length
+        } else {
+            ZERO
+        };
         score.bars.push(Bar {
             number,
             onset: *onset,
             length,
-            lead: if pickup { full - length } else { ZERO },
+            lead,
             metre: u32::try_from(metre).unwrap(),
             section_end: i + 1 == stated.len(),
         });

@@ -32,13 +32,40 @@ pub struct LineMove {
     pub interval: Interval,
     /// Nothing of the line comes right before: it starts with the note left.
     pub starts: bool,
+    size: i32,
+    quality: Quality,
+}
+
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+enum Quality {
+    Plain,
+    Augmented,
+    Diminished,
 }
 
 impl LineMove {
     /// Scale steps, without direction: 0 a repetition or a chromatic semitone, 1 a step.
     #[must_use]
     pub fn size(&self) -> i32 {
-        self.interval.size()
+        self.size
+    }
+
+    /// By an augmented interval.
+    #[must_use]
+    pub fn is_augmented(&self) -> bool {
+        self.quality == Quality::Augmented
+    }
+
+    /// By a diminished interval.
+    #[must_use]
+    pub fn is_diminished(&self) -> bool {
+        self.quality == Quality::Diminished
+    }
+
+    /// By a perfect, major or minor interval.
+    #[must_use]
+    pub fn is_plain(&self) -> bool {
+        self.quality == Quality::Plain
     }
 
     /// Upward.
@@ -97,11 +124,18 @@ impl<'a> Piece<'a> {
                 continue;
             }
             let interval = Interval(left.place().up_to(reached.place()));
+            let quality = match interval {
+                i if i.is_augmented() => Quality::Augmented,
+                i if i.is_diminished() => Quality::Diminished,
+                _ => Quality::Plain,
+            };
             moves.push(LineMove {
                 from,
                 to,
                 interval,
                 starts: !joined,
+                size: interval.size(),
+                quality,
             });
             joined = true;
         }

@@ -85,7 +85,7 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
                     .sounding_at(step)
                     .is_some_and(|s| s.parts() >= 3 && s.may_keep_chord())
         };
-        if line.is_given() || step.size() == 0 || !step.interval.is_augmented() || one_chord() {
+        if line.is_given() || step.size() == 0 || !step.is_augmented() || one_chord() {
             continue;
         }
         found.line(&ORDINARY, line, step, || {

@@ -77,10 +77,7 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
             line.after(i)
                 .is_none_or(|next| next.size() == 1 && next.rises() != step.rises())
         };
-        if line.is_given()
-            || step.size() == 0
-            || !step.interval.is_diminished()
-            || (!strict && turns_back())
+        if line.is_given() || step.size() == 0 || !step.is_diminished() || (!strict && turns_back())
         {
             continue;
         }

@@ -76,7 +76,7 @@ static BROAD: Case = Case {
 fn check(line: &Line<'_>, found: &mut Found<'_>) {
     let broad = line.is_bass() || line.declared().is_some_and(|v| !v.kind.is_sung());
     let case = if broad { &BROAD } else { &ORDINARY };
-    let plain = |step: &&LineMove| !step.interval.is_augmented() && !step.interval.is_diminished();
+    let plain = |step: &&LineMove| step.is_plain();
     for step in line.moves.iter().filter(plain) {
         if line.is_given() || step.size() <= 7 {
             continue;

@@ -86,7 +86,7 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
                     .sounding_at(step)
                     .is_some_and(|s| s.parts() >= 3 && s.may_keep_chord())
         };
-        let plain = !step.interval.is_augmented() && !step.interval.is_diminished();
+        let plain = step.is_plain();
         if line.is_given() || step.size() != 6 || !plain || one_chord() {
             continue;
         }

@@ -102,7 +102,7 @@ static MANY_PARTS: Case = Case {
 
 fn check(line: &Line<'_>, found: &mut Found<'_>) {
     for step in line.moves {
-        let plain = !step.interval.is_augmented() && !step.interval.is_diminished();
+        let plain = step.is_plain();
         if line.is_given() || step.size() != 5 || !plain {
             continue;
         }

@@ -1,0 +1,107 @@
+//! `textDocument/publishDiagnostics`: findings.
+
+use partwright_check::{Checked, Finding, Related, Role};
+use partwright_score::Score;
+use partwright_sheet::Span;
+use tower_lsp::lsp_types::{
+    Diagnostic, DiagnosticRelatedInformation, DiagnosticSeverity, Location, NumberOrString,
+    PublishDiagnosticsParams, Url, notification::PublishDiagnostics,
+};
+
+use crate::convert;
+use crate::documents::{Outcome, Snapshot, Verdict};
+use crate::session::{Agreed, notification};
+
+/// Whose findings they are.
+const SOURCE: &str = "partwright";
+
+/// The notification with an outcome's findings.
+pub(crate) fn message(outcome: &Outcome, agreed: Agreed) -> Vec<u8> {
+    let Snapshot { uri, version, .. } = &outcome.snapshot;
+    publish(uri, diagnostics(outcome, agreed), Some(*version))
+}
+
+/// The notification that takes all findings back.
+pub(crate) fn clear(uri: &Url) -> Vec<u8> {
+    publish(uri, Vec::new(), None)
+}
+
+fn publish(uri: &Url, diagnostics: Vec<Diagnostic>, version: Option<i32>) -> Vec<u8> {
+    notification::<PublishDiagnostics>(PublishDiagnosticsParams {
+        uri: uri.clone(),
+        diagnostics,
+        version,
+    })
+}
+
+/// The findings of an outcome.
+pub(crate) fn diagnostics(outcome: &Outcome, agreed: Agreed) -> Vec<Diagnostic> {
+    match &outcome.verdict {
+        Verdict::Done(checked) => {
+            let one = |finding| diagnostic(finding, checked, &outcome.snapshot, agreed);
+            checked.findings.iter().map(one).collect()
+        }
+        Verdict::BrokeOff => vec![Diagnostic {
+            range: convert::range(&outcome.snapshot.text, Span::new(0, 0), agreed.columns),
+            severity: Some(DiagnosticSeverity::ERROR),
+            source: Some(SOURCE.to_owned()),
+            message: "The check of this sheet broke off, so its findings are not known. It is \
+                      tried again at the next change. Please report the sheet as it is now."
+                .to_owned(),
+            ..Diagnostic::default()
+        }],
+    }
+}
+
+fn diagnostic(
+    finding: &Finding,
+    checked: &Checked,
+    snapshot: &Snapshot,
+    agreed: Agreed,
+) -> Diagnostic {
+    let range = |span| convert::range(&snapshot.text, span, agreed.columns);
+    // What has no written part of its own stands at the label of its voice.
+    let label = || {
+        checked
+            .reading
+            .label_span(*finding.voices.first()?, finding.at?)
+    };
+    let span = finding.span.or_else(label).unwrap_or(Span::new(0, 0));
+    let related = finding.related.iter().filter_map(|related| {
+        Some(DiagnosticRelatedInformation {
+            location: Location {
+                uri: snapshot.uri.clone(),
+                range: range(related.span?),
+            },
+            message: role(related, &checked.reading.score),
+        })
+    });
+    let related: Option<Vec<_>> = agreed.related.then(|| related.collect());
+    Diagnostic {
+        range: range(span),
+        severity: Some(convert::severity(finding.severity)),
+        code: Some(NumberOrString::String(finding.rule.to_owned())),
+        source: Some(SOURCE.to_owned()),
+        message: finding.message.clone(),
+        related_information: related.filter(|list| !list.is_empty()),
+        ..Diagnostic::default()
+    }
+}
+
+/// What a related place has to do with the finding: `from here: soprano D5`.
+fn role(related: &Related, score: &Score) -> String {
+    let word = match related.role {
+        Role::From => "from here",
+        Role::With => "with",
+        Role::Resolves => "resolves here",
+        Role::Struck => "struck here",
+    };
+    let note = score.note_at(related.voice, related.at);
+    let voice = score.voices.get(related.voice);
+    let pitch = voice.and_then(|v| v.notes.get(note?)?.sound.pitch());
+    let name = score.voice_name(related.voice);
+    pitch.map_or_else(
+        || format!("{word}: {name}"),
+        |pitch| format!("{word}: {name} {pitch}"),
+    )
+}
