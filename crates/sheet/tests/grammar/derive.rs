@@ -135,6 +135,8 @@ pub(crate) struct Deriver<'a> {
     /// From so many characters on, nothing is repeated that need not be.
     size: usize,
     pub(crate) random: Random,
+    /// This `n * [ a ]` is taken once too often.
+    pub(crate) beyond: Option<Id>,
 }
 
 impl<'a> Deriver<'a> {
@@ -150,6 +152,7 @@ impl<'a> Deriver<'a> {
             used: HashMap::new(),
             size,
             random: Random::new(1),
+            beyond: None,
         }
     }
 
@@ -295,13 +298,14 @@ impl<'a> Deriver<'a> {
                 }
             }
             Node::Repeated(a) | Node::UpTo(_, a) => {
+                let beyond = self.beyond == Some(id);
                 let most = match grammar.nodes[id] {
-                    Node::UpTo(most, _) => most,
+                    Node::UpTo(most, _) => most + usize::from(beyond),
                     _ => usize::MAX,
                 };
                 let mut taken = 0;
                 // All of `n * [ a ]` is a way that chance would hardly find.
-                let fill = most < usize::MAX && self.random.below(12) == 0;
+                let fill = most < usize::MAX && (beyond || self.random.below(12) == 0);
                 while taken < most {
                     let wish = match guide.wish(name, At::Again(&self.heads[*a], taken)) {
                         Wish::Weigh(1..) if fill => Wish::Must,

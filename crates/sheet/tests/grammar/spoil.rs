@@ -7,7 +7,38 @@ use crate::derive::Random;
 use crate::ebnf::BLANKS;
 
 /// What a hand strikes by mistake.
-const STRUCK: &str = "  \t\n\n||//..--__??^,*a1b#=:+\\~SG4x890rvV";
+pub(crate) const STRUCK: &str = "  \t\n\n||//..--__??^,*a1b#=:+\\~SG4x890rvVinoø♮";
+
+/// Lines with a gap: what may stand there is judged word by word.
+pub(crate) const GAPS: [&str; 27] = [
+    "{}",
+    "sheet {}",
+    "title {}",
+    "style {}",
+    "key {} major",
+    "key D {}",
+    "key D dorian {}",
+    "key D dorian signature {}",
+    "metre {}",
+    "metre 6/8 {}",
+    "metre 6/8 by {}",
+    "tempo {}",
+    "tempo {} 72",
+    "licence {}: lamps",
+    "licence spacing {}",
+    "voice {}",
+    "voice S {}",
+    "voice S clef {}",
+    "voice S written {}",
+    "voice S species {}",
+    "voice S easy {}",
+    "S | {} |",
+    "S | G4{} |",
+    "S | G4 {}",
+    "S | G4 |\nwords S | {} |",
+    "S | G4 |\nharmony | {} |",
+    "S | G4 |\nfigures | {} |",
+];
 
 /// A text with one or two slips in it: characters struck, left out and turned round, and words that
 /// belong elsewhere.
