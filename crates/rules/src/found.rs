@@ -62,7 +62,6 @@ impl<'a> Found<'a> {
         };
         let (upper, lower) = (step.pair.upper, step.pair.lower);
         let spot = |voice, at| Spot { voice, at };
-        let from = step.departure();
         self.list.push(Finding {
             rule: self.rule,
             severity,
@@ -71,8 +70,8 @@ impl<'a> Found<'a> {
             spot: spot(upper, step.arrival()),
             until: None,
             related: vec![
-                (Role::From, spot(upper, from)),
-                (Role::From, spot(lower, from)),
+                (Role::From, spot(upper, step.left_at(upper))),
+                (Role::From, spot(lower, step.left_at(lower))),
                 (Role::With, spot(lower, step.arrival())),
             ],
         });

@@ -7,6 +7,8 @@ use std::fmt;
 pub enum Known {
     /// The passage was read.
     Read,
+    /// Known as another text gives it.
+    AsGivenIn(&'static str),
     /// Quoted from memory.
     FromMemory,
     /// Counted in the music itself.
@@ -90,6 +92,7 @@ impl fmt::Display for Source {
         }
         match self.known {
             Known::Read => {}
+            Known::AsGivenIn(text) => write!(f, " [as given in {text}]")?,
             Known::FromMemory => f.write_str(" [from memory]")?,
             Known::Counted => f.write_str(" [counted]")?,
         }
@@ -102,7 +105,12 @@ impl fmt::Display for Source {
 }
 
 /// Fux's treatise, Book II.
-pub const FUX: Source = source("J. J. Fux", "Gradus ad Parnassum", 1725, Known::Read);
+pub const FUX: Source = source(
+    "J. J. Fux",
+    "Gradus ad Parnassum",
+    1725,
+    Known::AsGivenIn("a workbook after A. Mann's translation, and in Grove"),
+);
 /// Counts in the figures of Fux's treatise.
 pub const FUX_FIGURES: Source = source(
     "",
@@ -168,7 +176,7 @@ pub const JEPPESEN: Source = source(
     1931,
     Known::FromMemory,
 );
-/// An English translation of the same passage of an old rule list.
+/// A listening study of direct octaves.
 pub const ARTHUR_HURON: Source = source(
     "C. Arthur, D. Huron",
     "The direct octaves rule, Musicae Scientiae (abstract)",

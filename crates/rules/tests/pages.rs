@@ -19,6 +19,11 @@ fn examples_do_what_their_headings_say() {
             for difference in unlike_drawn(&example.sheet, &checked, Some(&entry.id)) {
                 wrong.push(format!("{here}: {difference}"));
             }
+            // What is held up as good is good by every other rule as well.
+            let faults = checked.open().filter(|f| f.severity == Severity::Fault);
+            for finding in faults.filter(|_| example.heading != "Fails") {
+                wrong.push(format!("{here}: {}", finding.message));
+            }
             let drawn = !drawn_marks(&example.sheet).is_empty();
             if drawn != (example.heading == "Fails") {
                 wrong.push(format!("{here}: marks belong under Fails, and only there"));

@@ -80,6 +80,18 @@ impl Interval {
         self.quality() == (-1, false)
     }
 
+    /// In full, with its article: `a perfect fifth`, `an octave`, `an augmented fourth`.
+    #[must_use]
+    pub fn with_article(self) -> String {
+        let name = self.name();
+        let article = if name.starts_with(['a', 'e', 'o']) {
+            "an"
+        } else {
+            "a"
+        };
+        format!("{article} {name}")
+    }
+
     /// A size by its name, with its article: `an octave`, `a twelfth`, `two octaves` for 14 steps.
     #[must_use]
     pub fn noun(steps: i32) -> String {

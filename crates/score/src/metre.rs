@@ -140,7 +140,7 @@ impl Metre {
     /// are the beats (a dotted crotchet in 6/8), else the cells are. See [`Metre::level`].
     #[must_use]
     pub fn beat_level(&self) -> u8 {
-        let by_threes = matches!(self.count, 6 | 9 | 12) && self.groups.is_empty();
+        let by_threes = matches!(self.count, 6 | 9 | 12) && self.groups.iter().all(|&g| g == 3);
         if by_threes && self.unit >= 8 && self.cell == self.unit() {
             1
         } else {

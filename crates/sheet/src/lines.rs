@@ -167,7 +167,9 @@ const RESERVED: [&str; 14] = [
     "words", "harmony", "figures", "easy", "cantus", "species", "clef", "written", "doubles",
     "line", "motion", "sonority", "cadence", "range",
 ];
-const RESERVED_RULES: [&str; 3] = ["writing", "reading", "spacing"];
+const RESERVED_RULES: [&str; 6] = [
+    "writing", "reading", "spacing", "crossing", "overlap", "compass",
+];
 
 /// Whether a word is shaped like a label: a letter and at most seven more letters or digits.
 pub(crate) fn is_label(word: &str) -> bool {

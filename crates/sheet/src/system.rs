@@ -46,6 +46,9 @@ pub(crate) enum Cell {
 
 /// Reads one cell from an offset of a row; `first` tells that it is the first of its bar.
 pub(crate) trait Cells {
+    /// What an unclosed last bar is: a mistake, or in music, where every row goes through it while
+    /// it is typed, only unfinished.
+    const UNCLOSED: ProblemKind = ProblemKind::Reading;
     /// Reads the cell.
     fn cell(&mut self, reader: &mut Reader<'_>, row: &[u8], at: usize) -> Cell;
     /// A bar line was reached: the cells from `first` on make a bar. Returns its flags.
@@ -146,15 +149,19 @@ impl Reader<'_> {
     }
 
     /// The row ended without a bar line behind its last cells.
-    fn unclosed(&mut self, row: &[u8], first: usize, cells: &mut impl Cells) {
+    fn unclosed<C: Cells>(&mut self, row: &[u8], first: usize, cells: &mut C) {
         let start = self.system.parts.last().map_or(0, |p| p.start as usize);
         let span = Span::new(start, part_end(row, start));
         self.close(first, start, OPEN, cells);
         let text = self.source.get(span.range()).unwrap_or_default().to_owned();
         let instead = format!("{text} |");
-        let message = "A row ends with a bar line: |.".to_owned();
+        let message = "This bar is not closed yet: a row ends with a bar line, |.".to_owned();
         let last = self.system.parts.len().saturating_sub(1);
-        self.slip_at(last, problem(span, message, &[&instead]));
+        let unfinished = Problem {
+            kind: C::UNCLOSED,
+            ..problem(span, message, &[&instead])
+        };
+        self.slip_at(last, unfinished);
     }
 
     /// A colon at a bar line is a repeat sign: it is reported and passed over.
@@ -230,6 +237,10 @@ impl Cells for Syllables {
             b"_" => PartKind::Rest,
             _ => PartKind::Text,
         };
+        if joins_nothing(text) {
+            let message = "~ joins two words on one note, as in of~the; a word is missing here.";
+            reader.slip(Span::new(at, end), message.to_owned());
+        }
         if text.ends_with(b"\\") && crate::chars::plain(crate::parts::text(text)).1 {
             let message = "A backslash (\\) makes the next character plain; none follows it.";
             reader.slip(Span::new(end - 1, end), message.to_owned());
@@ -237,6 +248,24 @@ impl Cells for Syllables {
         reader.push(at, kind);
         Cell::Timed(end)
     }
+}
+
+/// A `~` at an end of a syllable or beside another; behind a backslash it is a plain character.
+fn joins_nothing(syllable: &[u8]) -> bool {
+    let mut bytes = syllable.iter();
+    let mut open = true;
+    while let Some(byte) = bytes.next() {
+        match byte {
+            b'~' if open => return true,
+            b'~' => open = true,
+            b'\\' => {
+                bytes.next();
+                open = false;
+            }
+            _ => open = false,
+        }
+    }
+    open
 }
 
 /// Whether a bar is a copy of another voice's.

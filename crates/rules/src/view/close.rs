@@ -23,8 +23,8 @@ pub struct NotesOver {
     pub is_tied_in: bool,
     /// A rest stands among them.
     pub rests: bool,
-    /// Half of it is a rest, then one note fills the other half.
-    pub starts_with_half_a_rest: bool,
+    /// It starts with a rest as long as each of the notes after it.
+    pub starts_with_a_rest: bool,
     /// The cantus's note fills a bar in triple time.
     pub is_triple: bool,
     /// Something of it is not written yet, or not readable.
@@ -70,20 +70,9 @@ impl<'a> Piece<'a> {
     /// a fragment.
     #[must_use]
     pub fn close(self) -> Option<Sounding<'a>> {
-        let last = self
-            .texture
-            .sonorities()
-            .iter()
-            .rposition(|s| s.sounding != 0)?;
-        let there = self.sounding(last);
-        let known = self
-            .texture
-            .sonorities()
-            .iter()
-            .skip(last)
-            .all(|s| s.unknown == 0);
-        let closed = self.score.bars.last().is_some_and(|bar| bar.section_end);
-        (closed && known && last >= 2).then_some(there)
+        let mut sonorities = self.texture.sonorities().iter();
+        let last = sonorities.rposition(|s| s.sounding != 0)?;
+        (self.closes() && last >= 2).then_some(self.sounding(last))
     }
 
     /// Whether a voice is the cantus.
@@ -128,23 +117,45 @@ impl<'a> Piece<'a> {
         Some(if accompanies { 1 } else { species })
     }
 
-    /// Whether a voice has the final at a sonority: the last note of the cantus, else the tonic
-    /// of the first key stated. `None` where neither is known.
+    /// Whether a voice has the final at a sonority: the last note of a cantus that is whole, else
+    /// the tonic of the key stated there. `None` where neither is known.
     #[must_use]
     pub fn has_final(self, there: Sounding<'_>, voice: usize) -> Option<bool> {
-        let cantus = self.score.voices.iter().find(|v| v.cantus);
+        let whole = self.closes();
+        let cantus = self.score.voices.iter().find(|v| v.cantus && whole);
         let last = cantus.and_then(|v| v.notes.iter().rev().find_map(|n| n.sound.pitch()));
-        let tonic = self
+        let stated = self
             .score
             .keys
-            .first()
-            .and_then(|change| match change.value {
-                Key::Of { tonic, .. } => Some(tonic),
-                Key::None => None,
-            });
+            .iter()
+            .rev()
+            .find(|change| change.from <= there.onset());
+        let tonic = stated.and_then(|change| match change.value {
+            Key::Of { tonic, .. } => Some(tonic),
+            Key::None => None,
+        });
         let last = last.or(tonic)?;
         let pitch = there.pitch(voice)?;
         Some(pitch.letter() == last.letter() && pitch.sign == last.sign)
+    }
+
+    /// The piece ends with `||`, and everything up to there is known.
+    #[must_use]
+    pub fn closes(self) -> bool {
+        let closed = self.score.bars.last().is_some_and(|bar| bar.section_end);
+        let last = self
+            .texture
+            .sonorities()
+            .iter()
+            .rposition(|s| s.sounding != 0)
+            .unwrap_or(0);
+        closed
+            && self
+                .texture
+                .sonorities()
+                .iter()
+                .skip(last)
+                .all(|s| s.unknown == 0)
     }
 
     /// A voice's notes over each note of the cantus, in order.
@@ -189,10 +200,9 @@ impl<'a> Piece<'a> {
             is_tied_out: above.last().is_some_and(|note| note.end() > under.end()),
             is_tied_in: above.first().is_some_and(|note| note.onset < under.onset),
             rests: above.iter().any(|note| note.sound == Sound::Rest),
-            starts_with_half_a_rest: above.len() == 2
-                && above.iter().all(within)
+            starts_with_a_rest: above.iter().all(within)
                 && above.first().is_some_and(|note| note.sound == Sound::Rest)
-                && notes == 1,
+                && notes + 1 == above.len(),
             is_triple: metre
                 .is_some_and(|m| m.cells() == Some(3) && m.bar_length() == Some(under.length)),
             is_unknown: above.iter().any(|note| note.sound.is_unknown()),

@@ -1,9 +1,9 @@
 //! One pair of voices and its step.
 
 use partwright_score::{Interval, Time, ZERO};
-use partwright_space::{Consecutive, Motion};
+use partwright_space::{Consecutive, Family, Motion, Way};
 
-use super::{PairMove, Sounding};
+use super::PairMove;
 use crate::rule::Case;
 
 /// How a perfect interval reached in similar motion stands in the texture.
@@ -54,10 +54,20 @@ impl<'a> PairMove<'a> {
         self.sounding.onset()
     }
 
-    /// When the sonority it leaves began.
+    /// When a voice struck the note it leaves; of a repeated note, its first stroke.
     #[must_use]
-    pub fn departure(&self) -> Time {
-        self.sounding.neighbour(-1).map_or(ZERO, Sounding::onset)
+    pub fn left_at(&self, voice: usize) -> Time {
+        let piece = self.sounding.piece;
+        let before = self.sounding.index.checked_sub(1);
+        let mut note = before
+            .and_then(|k| piece.texture.note(k, voice))
+            .unwrap_or(0);
+        let notes = piece.score.voices.get(voice).map_or(&[][..], |v| &v.notes);
+        let sound = |i: usize| notes.get(i).map(|n| n.sound);
+        while note > 0 && sound(note - 1) == sound(note) {
+            note -= 1;
+        }
+        notes.get(note).map_or(ZERO, |n| n.onset)
     }
 
     /// The voice that sounds higher at the arrival; on a unison, the upper in the score.
@@ -176,14 +186,42 @@ impl<'a> PairMove<'a> {
         before.map(|p| p.to_string()).unwrap_or_default()
     }
 
-    /// Either of the two sonorities begins between beats.
+    /// An ornament may make one of the two intervals: it begins between beats, and a voice steps
+    /// into or out of a note there.
     #[must_use]
-    pub fn is_off_beat(&self) -> bool {
-        self.sounding.is_off_beat()
-            || self
-                .sounding
-                .neighbour(-1)
-                .is_some_and(Sounding::is_off_beat)
+    pub fn may_be_ornament(&self) -> bool {
+        let piece = self.sounding.piece;
+        let voices = [self.pair.upper, self.pair.lower];
+        let left = voices.map(|v| self.left_at(v));
+        let left_off = piece.is_off_beat(left[0].max(left[1]));
+        let steps_here = voices.iter().any(|&v| self.steps(v));
+        let stepped_before = voices.iter().zip(left).any(|(&v, at)| {
+            let came = piece
+                .texture
+                .at(at)
+                .and_then(|k| piece.texture.displacement(piece.score, k, v));
+            came.is_some_and(|gap| Interval(gap).size() == 1)
+        });
+        let steps_next = || {
+            self.next()
+                .is_some_and(|next| voices.iter().any(|&v| next.steps(v)))
+        };
+        (left_off && (steps_here || stepped_before))
+            || (self.sounding.is_off_beat() && (steps_here || steps_next()))
+    }
+
+    /// The piece closes, and neither voice strikes another note.
+    #[must_use]
+    pub fn is_close(&self) -> bool {
+        let piece = self.sounding.piece;
+        let closed = piece.score.bars.last().is_some_and(|bar| bar.section_end);
+        let both = 1 << self.pair.upper | 1 << self.pair.lower;
+        let mut later = piece
+            .texture
+            .sonorities()
+            .iter()
+            .skip(self.sounding.index + 1);
+        closed && !later.any(|s| s.struck & both != 0)
     }
 
     /// The two arrive on the same pitch.
@@ -196,7 +234,7 @@ impl<'a> PairMove<'a> {
     /// with an inner voice.
     #[must_use]
     pub fn close_outer_or_inner(&self, [close, outer, inner]: [&'static Case; 3]) -> &'static Case {
-        if self.sounding.is_close() {
+        if self.is_close() {
             close
         } else if self.is_outer() {
             outer
@@ -222,17 +260,34 @@ impl<'a> PairMove<'a> {
         }
     }
 
-    /// What a direct perfect interval does and what helps: the end of its message.
+    /// What a direct perfect interval does and what helps: the end of its message. A step in the
+    /// upper voice helps, but not in two strict parts.
     #[must_use]
-    pub fn direct_story(&self) -> String {
+    pub fn direct_story(&self, a_step_helps: bool) -> String {
         let top = self.top();
         let way = if self.rises(top) { "up" } else { "down" };
-        let help = if self.leaps(top) && self.direct() != Direct::TwoParts {
+        let help = if a_step_helps && self.leaps(top) {
             "Let the upper one step, or move one of them the other way."
         } else {
             "Move one of them the other way, or let it stay."
         };
         format!("{}, both {way}. {help}", self.story())
+    }
+
+    /// Arrival on a perfect interval of a family in similar motion from one that was neither of
+    /// the family nor, for fifths, a diminished fifth.
+    #[must_use]
+    pub fn is_direct(&self, family: Family) -> bool {
+        match self.consecutive() {
+            Some(Consecutive::Direct(reached)) => reached == family,
+            Some(Consecutive::Unequal(reached, Way::IntoPerfect)) => {
+                reached == family
+                    && !self
+                        .before()
+                        .is_some_and(|i| family == Family::Fifth && i.is_diminished())
+            }
+            _ => false,
+        }
     }
 
     /// The fifth of a pair of horns: from a sixth or third by a step in the upper voice, and on
@@ -261,18 +316,26 @@ impl<'a> PairMove<'a> {
     }
 
     /// `D5 over G3`, at the departure and at the arrival: the upper voice in the score first, as
-    /// its name comes first.
+    /// its name comes first; `under` where it sounds below the other.
     #[must_use]
     pub fn ends(&self) -> (String, String) {
         let (upper, lower) = (self.pair.upper, self.pair.lower);
+        let word = |gap: Option<Interval>| {
+            if gap.is_some_and(|i| i.0.semitones < 0) {
+                "under"
+            } else {
+                "over"
+            }
+        };
+        let (from, to) = (word(self.before()), word(self.after()));
         (
             format!(
-                "{} over {}",
+                "{} {from} {}",
                 self.pitch_before(upper),
                 self.pitch_before(lower)
             ),
             format!(
-                "{} over {}",
+                "{} {to} {}",
                 self.pitch_after(upper),
                 self.pitch_after(lower)
             ),

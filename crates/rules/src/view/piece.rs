@@ -17,6 +17,8 @@ pub struct Crossing {
     pub notes: usize,
     /// They part again while both sound.
     pub returns: bool,
+    /// It is the lower voice in the score that went beyond the other.
+    pub lower_moved: bool,
 }
 
 /// A run of sonorities of which the same can be said.
@@ -26,7 +28,8 @@ pub struct Passage {
     pub first: usize,
     /// One past its last sonority.
     pub end: usize,
-    /// How many chords it holds: sonorities that begin on a beat, at least one.
+    /// How many chords it holds: sonorities in which one of the voices strikes on a beat, at
+    /// least one.
     pub chords: usize,
     /// Where it begins.
     pub from: Time,
@@ -43,14 +46,15 @@ impl<'a> Piece<'a> {
 
     /// The longest runs of sonorities of which `holds` is true.
     #[must_use]
-    pub fn passages(self, holds: impl Fn(Sounding<'a>) -> bool) -> Vec<Passage> {
-        self.runs(self.soundings().filter(|&there| holds(there)))
+    pub fn passages(self, pair: Pair, holds: impl Fn(Sounding<'a>) -> bool) -> Vec<Passage> {
+        self.runs(pair, self.soundings().filter(|&there| holds(there)))
     }
 
     /// The same, looking only inside passages known already.
     #[must_use]
     pub fn within(
         self,
+        pair: Pair,
         passages: &[Passage],
         holds: impl Fn(Sounding<'a>) -> bool,
     ) -> Vec<Passage> {
@@ -58,23 +62,26 @@ impl<'a> Piece<'a> {
             .iter()
             .flat_map(|p| p.first..p.end)
             .map(|k| self.sounding(k));
-        self.runs(inside.filter(|&there| holds(there)))
+        self.runs(pair, inside.filter(|&there| holds(there)))
     }
 
-    fn runs(self, soundings: impl Iterator<Item = Sounding<'a>>) -> Vec<Passage> {
+    fn runs(self, pair: Pair, soundings: impl Iterator<Item = Sounding<'a>>) -> Vec<Passage> {
         let mut passages: Vec<Passage> = Vec::new();
         for there in soundings {
             let (index, until) = (there.index, self.end_of(there.index));
+            let struck = there.sonority().map_or(0, |s| s.struck);
+            let is_chord =
+                struck & (1 << pair.upper | 1 << pair.lower) != 0 && !there.is_off_beat();
             match passages.last_mut() {
                 Some(last) if last.end == index => {
                     last.end = index + 1;
-                    last.chords += usize::from(!there.is_off_beat());
+                    last.chords += usize::from(is_chord);
                     last.until = until;
                 }
                 _ => passages.push(Passage {
                     first: index,
                     end: index + 1,
-                    chords: 1,
+                    chords: usize::from(is_chord),
                     from: there.onset(),
                     until,
                 }),
@@ -99,11 +106,31 @@ impl<'a> Piece<'a> {
         }
     }
 
-    /// Two voices of one kind, which may share a register.
+    /// A moment lies between beats.
+    #[must_use]
+    pub fn is_off_beat(self, at: Time) -> bool {
+        let bar = self.score.bar_at(at).and_then(|i| self.score.bars.get(i));
+        let metre = bar.and_then(|bar| self.score.metres.get(bar.metre as usize));
+        metre.is_some_and(|metre| self.score.level(at) > metre.beat_level())
+    }
+
+    /// Independent voices of the piece: those that only double another do not count.
+    #[must_use]
+    pub fn voices(self) -> usize {
+        self.score
+            .voices
+            .iter()
+            .filter(|v| v.doubles.is_none())
+            .count()
+    }
+
+    /// Two voices of one declared kind, which may share a register; never with the bass.
     #[must_use]
     pub fn are_alike(self, pair: Pair) -> bool {
         let kind = |v: usize| self.score.voices.get(v).map(|voice| voice.kind.name);
         kind(pair.upper) == kind(pair.lower)
+            && kind(pair.upper) != Some("voice")
+            && pair.lower + 1 != self.score.voices.len()
     }
 
     /// A moment in words: `bar 3, beat 2`.
@@ -141,8 +168,8 @@ impl<'a> Piece<'a> {
             let step = self.texture.step(k, pair.upper, pair.lower);
             let sounds = step.is_some_and(|s| s.after().is_some());
             let crossed = sounds && step.is_some_and(|s| s.is_crossed() && !s.is_one_voice());
-            let struck =
-                sonority.struck >> pair.upper & 1 == 1 || sonority.struck >> pair.lower & 1 == 1;
+            let struck_by = |voice: usize| sonority.struck >> voice & 1 == 1;
+            let struck = struck_by(pair.upper) || struck_by(pair.lower);
             match &mut open {
                 Some(passage) if crossed => {
                     passage.notes += usize::from(struck);
@@ -154,7 +181,9 @@ impl<'a> Piece<'a> {
                 }
                 None if crossed => {
                     let (from, until) = (sonority.onset, self.end_of(k));
+                    let lower_moved = struck_by(pair.lower) && !struck_by(pair.upper);
                     open = Some(Crossing {
+                        lower_moved,
                         from,
                         until,
                         notes: 1,

@@ -22,13 +22,17 @@ impl<'a> Sounding<'a> {
     }
 
     /// The steps of all pairs into it that pair rules look at: both voices sound on both sides,
-    /// are two voices, and end no phrase between, unless a house style looks across phrases.
+    /// are two voices of which none only doubles another, and end no phrase between, unless a
+    /// house style looks across phrases.
     pub fn moves(self, across_phrases: bool) -> impl Iterator<Item = PairMove<'a>> {
+        let followers = self.sonority().map_or(0, |s| s.followers);
         self.piece
             .texture
             .steps(self.index)
-            .filter(move |(_, step)| {
-                step.motion().is_some()
+            .filter(move |(pair, step)| {
+                followers >> pair.upper & 1 == 0
+                    && followers >> pair.lower & 1 == 0
+                    && step.motion().is_some()
                     && !step.is_one_voice()
                     && (across_phrases || !step.across_phrase())
             })
@@ -42,7 +46,8 @@ impl<'a> Sounding<'a> {
     /// The voices that sound or of which nothing is known, a bit each: a voice not written yet
     /// may turn out to sound.
     fn present(self) -> u64 {
-        self.sonority().map_or(0, |s| s.sounding | s.unknown)
+        self.sonority()
+            .map_or(0, |s| (s.sounding | s.unknown) & !s.followers)
     }
 
     /// The number of independent voices: doublings count once, voices not written yet count.
@@ -137,26 +142,30 @@ impl<'a> Sounding<'a> {
         self.piece.texture.bass(self.index)
     }
 
-    /// At least three voices sound, all of them in unisons and octaves.
+    /// So many voices sound at least, all of them in unisons and octaves.
     #[must_use]
-    pub fn is_all_in_octaves(self) -> bool {
+    pub fn is_all_in_octaves(self, voices: usize) -> bool {
         let texture = self.piece.texture;
-        let voices: Vec<usize> = texture.sounding(self.index).collect();
-        let Some((&first, others)) = voices.split_first() else {
+        let sounding: Vec<usize> = texture.sounding(self.index).collect();
+        let Some((&first, others)) = sounding.split_first() else {
             return false;
         };
         let octave = |&v: &usize| {
             let gap = texture.gap(self.index, first, v);
             gap.and_then(|g| g.family()) == Some(Family::Octave)
         };
-        others.len() >= 2 && others.iter().all(octave)
+        sounding.len() >= voices && others.iter().all(octave)
     }
 
-    /// It belongs to a passage of at least three sonorities that are all in octaves.
+    /// It belongs to a passage of at least three sonorities in which all that sound, so many
+    /// voices at least, go in octaves.
     #[must_use]
-    pub fn is_in_octave_passage(self) -> bool {
-        let octaves = |by| self.neighbour(by).is_some_and(Sounding::is_all_in_octaves);
-        self.is_all_in_octaves() && octaves(-1) && (octaves(-2) || octaves(1))
+    pub fn is_in_octave_passage(self, voices: usize) -> bool {
+        let octaves = |by| {
+            self.neighbour(by)
+                .is_some_and(|there| there.is_all_in_octaves(voices))
+        };
+        self.is_all_in_octaves(voices) && octaves(-1) && (octaves(-2) || octaves(1))
     }
 
     /// A voice goes in parallel thirds or sixths (or tenths, thirteenths) with the bass.
@@ -181,57 +190,62 @@ impl<'a> Sounding<'a> {
         there.sonority().map(|_| there)
     }
 
-    /// It is the last new sonority before a final `||`.
-    #[must_use]
-    pub fn is_close(self) -> bool {
-        let closed = self
-            .piece
-            .score
-            .bars
-            .last()
-            .is_some_and(|bar| bar.section_end);
-        let strikes_later = || {
-            let later = self.piece.texture.sonorities().iter().skip(self.index + 1);
-            later.into_iter().any(|s| s.struck != 0)
-        };
-        closed && !strikes_later()
-    }
-
     /// The letters and signs of this sonority and of the one before fit into one chord, so that
     /// the chord may be the same: a seventh chord in three parts and more, a triad in two. One
     /// voice alone makes none. (Without the harmony no more can be said.)
     #[must_use]
     pub fn may_keep_chord(self) -> bool {
+        match self.parts() {
+            ..=1 => false,
+            2 => self.fits_one_chord(3),
+            _ => self.fits_one_chord(4),
+        }
+    }
+
+    /// This sonority and the one before fit into one chord of so many notes, a third apart; two
+    /// whole major or minor triads on different roots never do.
+    #[must_use]
+    pub fn fits_one_chord(self, notes: usize) -> bool {
         let Some(before) = self.neighbour(-1) else {
             return false;
         };
-        let thirds = match self.parts() {
-            ..=1 => return false,
-            2 => 3,
-            _ => 4,
-        };
-        let mut signs: [Option<i8>; 7] = [None; 7];
-        for there in [before, self] {
+        let (mut signs, mut letters) = ([None; 7], [0_u8; 2]);
+        for (there, letters) in [before, self].into_iter().zip(&mut letters) {
             for voice in there.piece.texture.sounding(there.index) {
                 let Some(pitch) = there.pitch(voice) else {
                     continue;
                 };
+                *letters |= 1 << pitch.letter();
                 let Some(slot) = signs.get_mut(usize::from(pitch.letter())) else {
                     continue;
                 };
                 if slot
                     .replace(pitch.sign)
-                    .is_some_and(|sign| sign != pitch.sign)
+                    .is_some_and(|sign: i8| sign != pitch.sign)
                 {
                     return false;
                 }
             }
         }
-        let used = |letter: usize| signs.get(letter % 7).is_some_and(Option::is_some);
-        (0..7).any(|root| {
-            let of_chord = |letter| (0..thirds).any(|third| (root + 2 * third) % 7 == letter);
-            (0..7).all(|letter| !used(letter) || of_chord(letter))
-        })
+        let chord = |root: usize, notes: usize| -> u8 {
+            (0..notes).map(|third| 1 << ((root + 2 * third) % 7)).sum()
+        };
+        // A diminished triad may be the upper part of a dominant seventh: it tells nothing.
+        let is_diminished = |root: usize| {
+            let class = |letter: usize| {
+                let sign = signs.get(letter % 7).copied().flatten().unwrap_or(0);
+                let step = i16::try_from(letter).unwrap_or(0);
+                Pitch { step, sign }.place().semitone
+            };
+            (class((root + 4) % 7) - class(root)).rem_euclid(12) == 6
+        };
+        let triad_of =
+            |letters: u8| (0..7).find(|&root| chord(root, 3) == letters && !is_diminished(root));
+        let [left, reached] = letters;
+        if let (Some(a), Some(b)) = (triad_of(left), triad_of(reached)) {
+            return a == b;
+        }
+        (0..7).any(|root| (left | reached) & !chord(root, notes) == 0)
     }
 
     /// The pitch a voice sounds here.
@@ -251,14 +265,6 @@ impl<'a> Sounding<'a> {
     /// It begins between beats.
     #[must_use]
     pub fn is_off_beat(self) -> bool {
-        let score = self.piece.score;
-        let beat = |s: &Sonority| {
-            let metre = score
-                .metres
-                .get(score.bars.get(s.bar as usize)?.metre as usize)?;
-            Some(metre.beat_level())
-        };
-        self.sonority()
-            .is_some_and(|s| beat(s).is_some_and(|level| s.level > level))
+        self.piece.is_off_beat(self.onset())
     }
 }

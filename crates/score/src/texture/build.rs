@@ -123,6 +123,7 @@ fn sonority(score: &Score, cursors: &[Cursor<'_>], onset: Time, bar: &mut usize)
         new_section: before.is_some_and(|b| b.section_end)
             && this.is_some_and(|b| b.onset == onset),
         parts: 0,
+        followers: 0,
         bass: bass(score, cursors, unknown),
     }
 }
@@ -176,8 +177,11 @@ fn push(table: &mut Texture, mut sonority: Sonority, cursors: &[Cursor<'_>], lea
         };
         if leaders[upper] == leaders[lower] || copied(u, lower) || copied(l, upper) {
             step = step.as_one_voice();
+            // The leader of a doubling speaks for both, the source for its copy; otherwise the
+            // upper one does.
             if step.after().is_some() {
-                doubled |= 1 << lower;
+                let upper_follows = leaders[upper] == lower || copied(u, lower);
+                doubled |= 1 << if upper_follows { upper } else { lower };
             }
         }
         table.steps.push(step);
@@ -188,6 +192,7 @@ fn push(table: &mut Texture, mut sonority: Sonority, cursors: &[Cursor<'_>], lea
             .map(|c| u32::try_from(c.index).unwrap_or(u32::MAX)),
     );
     let present = (sonority.sounding | sonority.unknown) & !doubled;
+    sonority.followers = doubled;
     sonority.parts = u8::try_from(present.count_ones()).unwrap_or(u8::MAX);
     table.sonorities.push(sonority);
 }

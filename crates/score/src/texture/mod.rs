@@ -32,6 +32,9 @@ pub struct Sonority {
     pub new_section: bool,
     /// Independent voices that sound or may: doublings count once, voices not known count.
     pub parts: u8,
+    /// Voices that only double or copy another one that sounds: what is said of that one is said
+    /// of them.
+    pub followers: u64,
     bass: u8,
 }
 

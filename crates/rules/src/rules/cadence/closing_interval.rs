@@ -33,8 +33,8 @@
 //! voice S
 //! voice C cantus
 //!
-//! S | A4 E4 F4 C#4 D4 ||
-//! C | D4 A3 D4 E4  D4 ||
+//! S | A4 A4 C#5 D5 ||
+//! C | D4 F4 E4  D4 ||
 //! ```
 //!
 //! # Does not apply
@@ -46,8 +46,8 @@
 //! voice S
 //! voice C cantus
 //!
-//! S | A4 E4 F4 C#4 A4 |
-//! C | D4 A3 D4 E4  D4 |
+//! S | A4 A4 G4 F4 |
+//! C | D4 F4 E4 D4 |
 //! ```
 //!
 //! # What to do
@@ -72,7 +72,11 @@ static TWO_PARTS: Case = Case {
     name: "",
     when: "in two parts, not a unison or octave",
     settings: &[
-        weakness(Style::Free, "an open ending may be meant"),
+        allow(Style::Free, "the tonic in the lower voice is enough"),
+        weakness(
+            Style::Motet,
+            "unison and octave close (Jeppesen, from memory)",
+        ),
         fault(Style::Species1, "no exception in 43 figures of Fux"),
     ],
 };
@@ -140,7 +144,8 @@ fn check(piece: &Piece<'_>, found: &mut Found<'_>) {
         let (Some(interval), family) = (there.interval_of(pair), there.family_of(pair)) else {
             continue;
         };
-        let third = interval.size() % 7 == 2 && !(strict && interval.is_minor());
+        let third_size = interval.size() % 7 == 2;
+        let third = third_size && !(strict && interval.is_minor());
         let rests = family == Some(Family::Octave)
             || (voices.len() >= 3 && (third || family == Some(Family::Fifth)));
         if rests {
@@ -151,12 +156,17 @@ fn check(piece: &Piece<'_>, found: &mut Found<'_>) {
         } else {
             &MORE_PARTS
         };
+        let help = match voices.len() {
+            2 => "Close in unison or octave.",
+            _ if third_size => "Raise the third, or leave it out.",
+            _ => "Close with octave, fifth and third over the final.",
+        };
         found.sonority(case, &[pair.upper, pair.lower], at, || {
             format!(
-                "Closing interval: {} and {} close with a {}. Close on the final.",
+                "Closing interval: {} and {} close with {}. {help}",
                 piece.name(pair.upper),
                 piece.name(pair.lower),
-                interval.name()
+                interval.with_article()
             )
         });
         return;

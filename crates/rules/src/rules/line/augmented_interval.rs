@@ -80,19 +80,21 @@ static ORDINARY: Case = Case {
 fn check(line: &Line<'_>, found: &mut Found<'_>) {
     for step in line.moves {
         let one_chord = || {
-            !found.style().is_species()
-                && line
-                    .sounding_at(step)
-                    .is_some_and(|s| s.parts() >= 3 && s.may_keep_chord())
+            let there = line.sounding_at(step);
+            match found.style() {
+                Style::Free => there.is_some_and(|s| s.parts() >= 2 && s.fits_one_chord(4)),
+                Style::Chorale => there.is_some_and(|s| s.parts() >= 3 && s.fits_one_chord(4)),
+                _ => false,
+            }
         };
         if line.is_given() || step.size() == 0 || !step.is_augmented() || one_chord() {
             continue;
         }
         found.line(&ORDINARY, line, step, || {
             let (from, to) = step.ends();
-            let name = step.interval.name();
+            let name = step.interval.with_article();
             format!(
-                "Augmented interval: {} goes from {from} to {to}, an {name}. Fill it or change a sign.",
+                "Augmented interval: {} goes from {from} to {to}, {name}. Fill it or change a sign.",
                 line.piece.name(line.voice)
             )
         });

@@ -66,7 +66,10 @@ static ORDINARY: Case = Case {
             "lawful when turned back inside; 125 in the basses of 370 chorales",
         ),
         fault(Style::Motet, "not among the intervals of the style"),
-        fault(Style::Species1, "not among the permitted intervals (Fux)"),
+        fault(
+            Style::Species1,
+            "not among the permitted intervals (Lehmann allows it)",
+        ),
     ],
 };
 
@@ -77,16 +80,19 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
             line.after(i)
                 .is_none_or(|next| next.size() == 1 && next.rises() != step.rises())
         };
-        if line.is_given() || step.size() == 0 || !step.is_diminished() || (!strict && turns_back())
+        if line.is_given()
+            || (step.size() == 0 || !(strict || matches!(step.size(), 2 | 3 | 4 | 6)))
+            || !step.is_diminished()
+            || (!strict && turns_back())
         {
             continue;
         }
         found.line(&ORDINARY, line, step, || {
             let (from, to) = step.ends();
             format!(
-                "Diminished interval: {} goes from {from} to {to}, a {}. Turn back inside it by step, or take another.",
+                "Diminished interval: {} goes from {from} to {to}, {}. Turn back inside it by step, or take another.",
                 line.piece.name(line.voice),
-                step.interval.name()
+                step.interval.with_article()
             )
         });
     }

@@ -27,8 +27,8 @@
 //! voice V violin
 //! voice C cello
 //!
-//! V | G3 E5 D5 |
-//! C | C2 E3 D3 |
+//! V | G3 D5 E5 |
+//! C | C3 B2 C3 |
 //! ```
 //!
 //! # What to do
@@ -55,7 +55,10 @@ static ORDINARY: Case = Case {
             "beyond what a choir sings (common practice)",
         ),
         fault(Style::Motet, "not among the intervals of the style"),
-        fault(Style::Species1, "not among the permitted intervals (Fux)"),
+        fault(
+            Style::Species1,
+            "not among the permitted intervals (Lehmann, lesson I)",
+        ),
     ],
 };
 
@@ -69,7 +72,10 @@ static BROAD: Case = Case {
             "beyond what a choir sings (common practice)",
         ),
         fault(Style::Motet, "not among the intervals of the style"),
-        fault(Style::Species1, "not among the permitted intervals (Fux)"),
+        fault(
+            Style::Species1,
+            "not among the permitted intervals (Lehmann, lesson I)",
+        ),
     ],
 };
 
@@ -84,9 +90,9 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
         found.line(case, line, step, || {
             let (from, to) = step.ends();
             format!(
-                "Leap beyond an octave: {} goes from {from} to {to}, a {}. Bring one of the notes into the octave.",
+                "Leap beyond an octave: {} goes from {from} to {to}, {}. Bring one of the notes into the octave.",
                 line.piece.name(line.voice),
-                step.interval.name()
+                step.interval.with_article()
             )
         });
     }

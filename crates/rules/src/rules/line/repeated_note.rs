@@ -75,7 +75,7 @@ static QUICK: Case = Case {
 
 static FLORID: Case = Case {
     name: "fifth-species",
-    when: "in fifth species in two parts, the second time",
+    when: "in fifth species in two parts, the second time, unless the second note is tied on",
     settings: &[
         allow(Style::Free, "common everywhere else"),
         weakness(Style::Species1, "only as an anticipation (Fux has five)"),
@@ -97,6 +97,7 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
             (1, _) | (2, 1) | (_, 4) => continue,
             (_, 1) => &THIRD,
             _ if line.parts_at(step) >= 3 => &THIRD,
+            (_, 5) if step.to.length > step.from.length => continue,
             (_, 5) => &FLORID,
             _ => &QUICK,
         };

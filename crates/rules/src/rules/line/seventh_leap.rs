@@ -60,7 +60,10 @@ static ORDINARY: Case = Case {
         ),
         fault(Style::Chorale, "3 or 4 in each upper voice of 370 chorales"),
         fault(Style::Motet, "not among the intervals of the style"),
-        fault(Style::Species1, "not among the permitted intervals (Fux)"),
+        fault(
+            Style::Species1,
+            "not among the permitted intervals (Lehmann, lesson I)",
+        ),
     ],
 };
 
@@ -74,17 +77,22 @@ static BASS: Case = Case {
         ),
         weakness(Style::Chorale, "43 in the basses of 370 chorales"),
         fault(Style::Motet, "not among the intervals of the style"),
-        fault(Style::Species1, "not among the permitted intervals (Fux)"),
+        fault(
+            Style::Species1,
+            "not among the permitted intervals (Lehmann, lesson I)",
+        ),
     ],
 };
 
 fn check(line: &Line<'_>, found: &mut Found<'_>) {
     for step in line.moves {
         let one_chord = || {
-            !found.style().is_species()
-                && line
-                    .sounding_at(step)
-                    .is_some_and(|s| s.parts() >= 3 && s.may_keep_chord())
+            let there = line.sounding_at(step);
+            match found.style() {
+                Style::Free => there.is_some_and(|s| s.parts() >= 2 && s.fits_one_chord(4)),
+                Style::Chorale => there.is_some_and(|s| s.parts() >= 3 && s.fits_one_chord(4)),
+                _ => false,
+            }
         };
         let plain = step.is_plain();
         if line.is_given() || step.size() != 6 || !plain || one_chord() {

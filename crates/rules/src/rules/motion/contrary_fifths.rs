@@ -38,11 +38,11 @@
 //! In five or more parts:
 //!
 //! ```voices
-//! S | E5 D5 |
-//! A | C5 B4 |
-//! Q | G4 D5 |
-//! T | E4 D4 |
-//! B | C4 G3 |
+//! S | C5 B4 |
+//! A | E4 G4 |
+//! Q | C4 D4 |
+//! T | G3 D4 |
+//! B | C3 G2 |
 //! ```
 //!
 //! # What to do
@@ -66,18 +66,10 @@ pub const RULE: Rule = Rule {
 static OUTER: Case = Case {
     name: "",
     when: "between the outer voices, in up to four parts",
-    settings: &[
-        weakness(
-            Style::Free,
-            "open score writing tolerates it (Prout, from memory)",
-        ),
-        fault(Style::Chorale, "two in 370 chorales"),
-        fault(Style::Motet, "as in strict counterpoint"),
-        fault(
-            Style::Species1,
-            "the treatises forbid it (Lehmann, lesson I)",
-        ),
-    ],
+    settings: &[fault(
+        Style::Free,
+        "forbidden between the outer voices (Lehmann, lesson I; two in 370 chorales)",
+    )],
 };
 
 static INNER: Case = Case {

@@ -72,18 +72,10 @@ pub const RULE: Rule = Rule {
 static OUTER: Case = Case {
     name: "",
     when: "between the outer voices, in up to four parts",
-    settings: &[
-        weakness(
-            Style::Free,
-            "open score writing tolerates it (Prout, from memory)",
-        ),
-        fault(Style::Chorale, "none in 370 chorales"),
-        fault(Style::Motet, "as in strict counterpoint"),
-        fault(
-            Style::Species1,
-            "the treatises forbid it (Lehmann, lesson I)",
-        ),
-    ],
+    settings: &[fault(
+        Style::Free,
+        "forbidden between the outer voices (Lehmann, lesson I; none in 370 chorales)",
+    )],
 };
 
 static INNER: Case = Case {

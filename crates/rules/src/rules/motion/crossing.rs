@@ -141,7 +141,12 @@ fn check(piece: &Piece<'_>, found: &mut Found<'_>) {
                         "Exchange their notes, or move one of them"
                     };
                     let extent = piece.extent_text(passage.from, passage.until);
-                    format!("Crossing: {upper} goes below {lower} {extent}. {help}.")
+                    let what = if passage.lower_moved {
+                        format!("{lower} goes above {upper}")
+                    } else {
+                        format!("{upper} goes below {lower}")
+                    };
+                    format!("Crossing: {what} {extent}. {help}.")
                 },
             );
         }

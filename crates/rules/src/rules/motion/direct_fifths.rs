@@ -52,10 +52,10 @@
 //! ```voices
 //! style chorale
 //!
-//! S | C5 D5 |
+//! S | C5 F5 |
 //! A | E4 A4 |
 //! T | C4 D4 |
-//! B | A3 F3 |
+//! B | F3 D3 |
 //! ```
 //!
 //! # What to do
@@ -162,9 +162,15 @@ static THREE_INNER: Case = Case {
 };
 
 fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
-    if step.consecutive() != Some(Consecutive::Direct(Family::Fifth)) {
+    if !step.is_direct(Family::Fifth) {
         return;
     }
+    let strict = found.style().is_species() || found.style() == Style::Motet;
+    // A change of position in one chord is no arrival.
+    if !strict && step.sounding.parts() >= 3 && step.sounding.may_keep_chord() {
+        return;
+    }
+    let helps = !(strict && step.sounding.parts() <= 2);
     let case = match step.direct() {
         Direct::TwoParts => &TWO_PARTS,
         Direct::TwoPartsStep if found.style() == Style::Motet && step.is_horn_fifth() => return,
@@ -175,6 +181,6 @@ fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
         Direct::Covered => return,
     };
     found.pair(case, step, || {
-        format!("Direct fifths: {}", step.direct_story())
+        format!("Direct fifths: {}", step.direct_story(helps))
     });
 }

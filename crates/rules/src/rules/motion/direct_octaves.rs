@@ -41,10 +41,10 @@
 //! ```voices
 //! style chorale
 //!
-//! S | C5 B4 |
-//! A | F4 D4 |
-//! T | D4 G4 |
-//! B | D3 G3 |
+//! S | D5 G5 |
+//! A | A4 E5 |
+//! T | F4 C4 |
+//! B | D3 C3 |
 //! ```
 //!
 //! # What to do
@@ -147,10 +147,15 @@ static THREE_INNER: Case = Case {
 };
 
 fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
-    if step.consecutive() != Some(Consecutive::Direct(Family::Octave)) || step.is_in_unison_after()
-    {
+    if !step.is_direct(Family::Octave) || step.is_in_unison_after() {
         return;
     }
+    let strict = found.style().is_species() || found.style() == Style::Motet;
+    // A change of position in one chord is no arrival.
+    if !strict && step.sounding.parts() >= 3 && step.sounding.may_keep_chord() {
+        return;
+    }
+    let helps = !(strict && step.sounding.parts() <= 2);
     let case = match step.direct() {
         Direct::TwoParts => &TWO_PARTS,
         Direct::TwoPartsStep => &TWO_PARTS_STEP,
@@ -160,6 +165,6 @@ fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
         Direct::Covered => return,
     };
     found.pair(case, step, || {
-        format!("Direct octaves: {}", step.direct_story())
+        format!("Direct octaves: {}", step.direct_story(helps))
     });
 }

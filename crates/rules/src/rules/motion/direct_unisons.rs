@@ -97,8 +97,7 @@ static MORE_PARTS: Case = Case {
 };
 
 fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
-    if step.consecutive() != Some(Consecutive::Direct(Family::Octave)) || !step.is_in_unison_after()
-    {
+    if !step.is_direct(Family::Octave) || !step.is_in_unison_after() {
         return;
     }
     let case = match step.direct() {

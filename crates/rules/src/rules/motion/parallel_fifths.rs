@@ -87,7 +87,7 @@ static ORDINARY: Case = Case {
 
 static OFF_BEAT: Case = Case {
     name: "off-beat",
-    when: "either fifth begins between beats, where an ornament may make it",
+    when: "a fifth begins between beats, and a voice steps into or out of it: an ornament may make it",
     settings: &[
         weakness(
             Style::Free,
@@ -108,7 +108,7 @@ fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
     if step.consecutive() != Some(Consecutive::Same(Family::Fifth)) || step.step.keeps_classes() {
         return;
     }
-    let case = if step.is_off_beat() {
+    let case = if step.may_be_ornament() {
         &OFF_BEAT
     } else {
         &ORDINARY

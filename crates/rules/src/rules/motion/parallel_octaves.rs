@@ -70,7 +70,9 @@ fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
     if step.consecutive() != Some(Consecutive::Same(Family::Octave))
         || step.step.keeps_classes()
         || step.is_in_unison_after()
-        || step.sounding.is_in_octave_passage()
+        || step
+            .sounding
+            .is_in_octave_passage(if found.style() == Style::Free { 2 } else { 3 })
     {
         return;
     }

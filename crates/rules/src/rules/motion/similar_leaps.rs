@@ -8,7 +8,7 @@
 //! style species-1
 //!
 //! S | C5 F5 |
-//! B | E4 A4 |
+//! B | E4 G4 |
 //! //     ^^ similar leaps (weakness): S and B
 //! ```
 //!
@@ -23,7 +23,7 @@
 //!
 //! # Does not apply
 //!
-//! The bass leaps a fourth or a fifth in three parts or more, or the chord may be the same:
+//! The bass leaps a fourth or a fifth, or the chord may be the same:
 //!
 //! ```voices
 //! style chorale
@@ -57,7 +57,7 @@ pub const RULE: Rule = Rule {
 
 static ORDINARY: Case = Case {
     name: "",
-    when: "both a third or more, outside one chord; in three parts and more not where the bass leaps a fourth or fifth",
+    when: "both a third or more, outside one chord; not where the bass leaps a fourth or fifth",
     settings: &[
         allow(Style::Free, "a matter of taste"),
         weakness(Style::Chorale, "handbooks warn of it"),
@@ -74,7 +74,7 @@ fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
     }
     let root_moves =
         matches!(step.size_of_move(foot), Some(3 | 4)) && step.is_with_bass() != Some(false);
-    if root_moves && step.sounding.parts() >= 3 {
+    if root_moves {
         return;
     }
     found.pair(&ORDINARY, step, || {

@@ -34,8 +34,8 @@
 //! voice S
 //! voice C cantus
 //!
-//! S | A4 E4 F4 C#4 D4 |
-//! C | D4 A3 D4 E4 D4 |
+//! S | A4 A4 C#5 D5 |
+//! C | D4 F4 E4  D4 |
 //! ```
 //!
 //! # Does not apply
@@ -47,8 +47,8 @@
 //! voice S
 //! voice C cantus
 //!
-//! S | F4 E4 |
-//! C | D4 A3 |
+//! S | F4 G4 |
+//! C | D4 E4 |
 //! ```
 //!
 //! # What to do
@@ -109,10 +109,10 @@ fn check(piece: &Piece<'_>, found: &mut Found<'_>) {
         };
         found.sonority(&TWO_PARTS, &voices, at, || {
             format!(
-                "Opening interval: {} and {} open with a {}. Open with a unison or octave, or above the cantus with a fifth.",
+                "Opening interval: {} and {} open with {}. Open with a unison or octave, or above the cantus with a fifth.",
                 piece.name(upper),
                 piece.name(lower),
-                interval.name()
+                interval.with_article()
             )
         });
     } else if let Some(bass) = there

@@ -59,7 +59,7 @@
 //!
 //! V | E6 F6 |
 //! A | C4 D4 |
-//! C | C3 D3 |
+//! C | C3 B2 |
 //! ```
 //!
 //! # What to do
@@ -190,10 +190,10 @@ fn check(piece: &Piece<'_>, found: &mut Found<'_>) {
             .into_iter()
             .min()
             .unwrap_or(0);
-        let wide = piece.passages(|s| s.is_wider_than(pair, least));
+        let wide = piece.passages(pair, |s| s.is_wider_than(pair, least));
         let mut report =
             |test: &dyn Fn(&Sounding<'_>) -> bool, limit, case, longer: Option<&'static Case>| {
-                for run in piece.within(&wide, |s| s.is_wider_than(pair, limit) && test(&s)) {
+                for run in piece.within(pair, &wide, |s| s.is_wider_than(pair, limit) && test(&s)) {
                     let case = longer.filter(|_| run.chords > long).unwrap_or(case);
                     tell(piece, found, pair, &run, case, limit);
                 }
@@ -217,9 +217,14 @@ fn check(piece: &Piece<'_>, found: &mut Found<'_>) {
             &SOPRANO_TENOR,
             None,
         );
-        report(&|s| s.parts() == 2, two, &TWO_PARTS, None);
-        for run in piece.within(&wide, |s| {
-            s.is_wider_than(pair, LONG_TENTH) && s.parts() == 2
+        report(
+            &|s| piece.voices() == 2 && s.parts() == 2,
+            two,
+            &TWO_PARTS,
+            None,
+        );
+        for run in piece.within(pair, &wide, |s| {
+            piece.voices() == 2 && s.is_wider_than(pair, LONG_TENTH) && s.parts() == 2
         }) {
             let wider = (run.first..run.end).any(|k| piece.sounding(k).is_wider_than(pair, two));
             if run.chords > long && !wider {

@@ -35,8 +35,8 @@
 //! voice S
 //! voice C cantus
 //!
-//! S | _ A4 | C5 A4 | G4 B4 | C#5 - | D5 - ||
-//! C | D4 - | F4 -  | E4 -  | E4  - | D4 - ||
+//! S | _ A4 | D5 A4 | B4 C#5 | D5 - ||
+//! C | D4 - | F4 -  | E4 -   | D4 - ||
 //! ```
 //!
 //! # Does not apply
@@ -44,8 +44,8 @@
 //! ```voices
 //! style chorale
 //!
-//! S | A4 - E4 F4 |
-//! B | D4 - A3 -  |
+//! S | A4 - G4  F4 |
+//! B | D4 - Bb3 -  |
 //! ```
 //!
 //! # What to do
@@ -91,7 +91,12 @@ fn check(piece: &Piece<'_>, found: &mut Found<'_>) {
         };
         let groups = piece.notes_over(cantus, voice);
         for (i, group) in groups.iter().enumerate() {
-            let to_end = groups.len() - i;
+            // Endings are asked for only where the piece ends.
+            let to_end = if piece.closes() {
+                groups.len() - i
+            } else {
+                usize::MAX
+            };
             let keeps = match species {
                 1 => group.is_one_whole(),
                 _ => keeps_second(group, i == 0, to_end, voices >= 3),
@@ -102,6 +107,7 @@ fn check(piece: &Piece<'_>, found: &mut Found<'_>) {
             let wants = match (species, to_end == 1) {
                 (1, _) => "one note, as long",
                 (_, true) => "one note to close with",
+                _ if group.is_triple => "two or three equal notes, struck anew",
                 _ => "two equal notes, struck anew",
             };
             found.passage(&ORDINARY, &[voice], (group.from, group.until), || {
@@ -128,6 +134,9 @@ fn keeps_second(group: &NotesOver, first: bool, to_end: usize, many_parts: bool)
         && (!group.is_tied_in || may_tie_in)
         && (!group.is_tied_out || may_tie_out);
     lawful
-        || (first && group.starts_with_half_a_rest && !group.is_tied_out)
+        || (first
+            && group.starts_with_a_rest
+            && (group.notes == 1 || (group.notes == 2 && group.is_triple))
+            && !group.is_tied_out)
         || (to_end == 2 && group.is_one_whole())
 }
