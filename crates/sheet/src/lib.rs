@@ -8,6 +8,7 @@
 //! and their cells (`system`, `music`, `under`) into the tree (`tree`); the values of headers and
 //! voice lines (`headers`, `voices`, `footnotes`); and from the tree to the score (`lower`).
 
+mod align;
 mod chars;
 mod describe;
 mod drawn;
@@ -31,7 +32,9 @@ mod system;
 mod tree;
 mod under;
 mod voices;
+mod write;
 
+pub use align::{align, align_edits};
 pub use drawn::{DrawnMark, drawn_marks};
 pub use edit::{apply, note_edits};
 pub use harmony::{Chord, Figure, Numeral};
@@ -43,6 +46,7 @@ pub use reading::{
 };
 pub use sheet::Sheet;
 pub use span::Span;
+pub use write::{Heading, Sung, Written, write};
 
 /// The largest sheet that is read, in bytes; a larger one is refused with that reason.
 pub const LARGEST: usize = 8 << 20;

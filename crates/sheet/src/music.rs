@@ -41,6 +41,8 @@ pub(crate) struct Music {
 }
 
 impl Cells for Music {
+    const UNCLOSED: ProblemKind = ProblemKind::Unwritten;
+
     fn cell(&mut self, reader: &mut Reader<'_>, row: &[u8], start: usize) -> Cell {
         let first = reader.system.parts.len();
         let slips = reader.system.slips.len();

@@ -80,6 +80,11 @@ impl Sheet {
         }
     }
 
+    /// What it was taken apart into.
+    pub(crate) fn tree(&self) -> &Tree {
+        &self.tree
+    }
+
     /// Bytes of memory the tree takes, the text it keeps included.
     #[must_use]
     pub fn bytes(&self) -> usize {

@@ -154,6 +154,7 @@ impl<'a> Pass<'_, 'a> {
             }
         }
         let told = !system.doubtful && !system.rows.is_empty();
+        let mut silent: Vec<usize> = Vec::new();
         for (voice, flow) in self.flows.iter_mut().enumerate() {
             if present.get(voice) == Some(&true) || system.bars == 0 && !told {
                 continue;
@@ -164,25 +165,37 @@ impl<'a> Pass<'_, 'a> {
                 Sound::Rest
             };
             flow.turn(start, sound, None);
-            let first = system.placed.system.rows.first();
-            let (true, Some(first)) = (told, first) else {
-                continue;
-            };
-            self.silent += 1;
-            if self.silent <= MOST_SILENT {
-                let span = first.label.moved(system.placed.span.start);
-                let name = self.lowering.called(voice);
-                let message = format!(
-                    "{name} is silent in this system: it has no row here. If it only rests, a row \
-                     of _ says so."
-                );
-                self.lowering.reading.problems.push(Problem {
-                    voice: Some(voice),
-                    at: Some(start.time()),
-                    ..remark(ProblemKind::VoiceSilent, span, &message)
-                });
-            }
+            silent.push(voice);
         }
+        let first = system.placed.system.rows.first();
+        let (true, Some(first), Some(&voice)) = (told, first, silent.first()) else {
+            return;
+        };
+        self.silent += 1;
+        if self.silent > MOST_SILENT {
+            return;
+        }
+        // One word for all of them: a system begun with its first row is not three mistakes.
+        let names: Vec<String> = silent.iter().map(|&v| self.lowering.called(v)).collect();
+        let message = match names.as_slice() {
+            [name] => format!(
+                "{name} is silent in this system: it has no row here. If it only rests, a row of _ \
+                 says so."
+            ),
+            [others @ .., last] => format!(
+                "{} and {} are silent in this system: they have no rows here. If they only rest, \
+                 rows of _ say so.",
+                others.join(", "),
+                last.replacen("The ", "the ", 1)
+            ),
+            [] => return,
+        };
+        let span = first.label.moved(system.placed.span.start);
+        self.lowering.reading.problems.push(Problem {
+            voice: Some(voice),
+            at: Some(start.time()),
+            ..remark(ProblemKind::VoiceSilent, span, &message)
+        });
     }
 
     /// The bars a row does not have.
@@ -335,7 +348,7 @@ impl<'a> Pass<'_, 'a> {
             if let Some((system, row)) = first {
                 let span = row.label.moved(system.placed.span.start);
                 let message =
-                    format!("In {untold} more places a voice is silent for want of a row.");
+                    format!("In {untold} more systems voices are silent for want of a row.");
                 let found = remark(ProblemKind::VoiceSilent, span, &message);
                 self.lowering.reading.problems.push(found);
             }

@@ -17,14 +17,16 @@ pub(super) fn choose(
     music: &mut Music,
     left: &mut Left<'_>,
 ) {
-    let usual: Vec<Time> = metres
-        .iter()
-        .enumerate()
-        .map(|(index, metre)| {
-            let own = measures.iter().zip(of).filter(|(_, of)| **of == index);
-            beat(metre, own.map(|(measure, _)| measure), music)
-        })
-        .collect();
+    let beat = beat(measures, music);
+    let usual = |metre: &Metre| {
+        let settled = metre.is_free() || metre.cell() != metre.unit() || grouped(metre);
+        if settled || metre.unit() < Time::new(1, 2) {
+            metre.cell()
+        } else {
+            metre.unit().min(beat)
+        }
+    };
+    let usual: Vec<Time> = metres.iter().map(usual).collect();
     for (measure, of) in measures.iter_mut().zip(of) {
         let wished = usual.get(*of).copied().unwrap_or(ZERO);
         let cell = fitting(measure, wished, music);
@@ -36,30 +38,25 @@ pub(super) fn choose(
         if let Some([first, second]) = measures.get_mut(i - 1..=i)
             && second.shape == Shape::SecondHalf
         {
-            let cell = first.metre.cell().min(second.metre.cell());
+            let cell = shared(first.metre.cell(), second.metre.cell());
             first.metre = told_in(&first.metre, cell);
             second.metre = told_in(&second.metre, cell);
         }
     }
 }
 
-/// The beat of a metre: its unit, or, where that is a minim or longer and fewer than three notes in
-/// four begin on it, its half or quarter, down to a crotchet.
-fn beat<'m>(metre: &Metre, own: impl Iterator<Item = &'m Measure>, music: &Music) -> Time {
-    let unit = metre.unit();
-    if metre.is_free() || metre.cell() != unit || grouped(metre) || unit < Time::new(1, 2) {
-        return metre.cell();
-    }
-    let halvings = [unit, unit / 2, unit / 4];
-    let beats = halvings.into_iter().filter(|beat| *beat >= Time::new(1, 4));
-    let mut counted: Vec<(Time, usize)> = beats.map(|beat| (beat, 0)).collect();
+/// The beat in which metres of minims and longer are told: the semibreve, the minim or the
+/// crotchet, the longest on which at least two notes in three begin.
+fn beat(measures: &[Measure], music: &Music) -> Time {
+    let mut counted = [1, 2, 4].map(|parts| (Time::new(1, parts), 0));
     let mut struck = 0;
-    for measure in own {
+    for measure in measures {
         for notes in &music.voices {
             let own = notes.get(during(notes, measure.from, measure.to));
-            let begun = own.into_iter().flatten().filter(|note| {
-                note.sound.pitch().is_some() && note.onset >= measure.from && note.length > ZERO
-            });
+            let begun = own
+                .into_iter()
+                .flatten()
+                .filter(|note| note.sound.pitch().is_some() && note.onset >= measure.from);
             for note in begun {
                 struck += 1;
                 for (beat, on) in &mut counted {
@@ -69,29 +66,26 @@ fn beat<'m>(metre: &Metre, own: impl Iterator<Item = &'m Measure>, music: &Music
             }
         }
     }
-    let enough = counted.iter().find(|(_, on)| on * 4 >= struck * 3);
-    enough.or(counted.last()).map_or(unit, |(beat, _)| *beat)
+    let enough = counted.iter().find(|(_, on)| on * 3 >= struck * 2);
+    enough.map_or(Time::new(1, 4), |(beat, _)| *beat)
 }
 
 /// Whether the metre states its groups.
 fn grouped(metre: &Metre) -> bool {
-    told_in(metre, metre.unit()) != *metre && metre.cell() == metre.unit()
+    figures(metre, metre.cell()).is_some_and(|plain| plain != *metre)
 }
 
-/// The same figures with another cell; groups are given up for a cell that is not the unit.
+/// The same upper and lower figure told in that cell, without groups.
+fn figures(metre: &Metre, cell: Time) -> Option<Metre> {
+    let count = (metre.bar_length()? / metre.unit()).to_integer();
+    let unit = u16::try_from(*metre.unit().denom()).ok()?;
+    Metre::new(u16::try_from(count).ok()?, unit, Some(cell), &[]).ok()
+}
+
+/// The same metre told in another cell; groups are given up for one that is not the unit.
 fn told_in(metre: &Metre, cell: Time) -> Metre {
-    let figures = metre.bar_length().and_then(|bar| {
-        let unit = metre.unit();
-        let count = u16::try_from((bar / unit).to_integer()).ok()?;
-        Some((count, u16::try_from(*unit.denom()).ok()?))
-    });
-    match figures {
-        Some((count, unit)) if metre.cell() != cell || cell == metre.unit() => {
-            let other = Metre::new(count, unit, Some(cell), &[]);
-            other.unwrap_or_else(|_| metre.clone())
-        }
-        _ => metre.clone(),
-    }
+    let other = figures(metre, cell).filter(|_| metre.cell() != cell);
+    other.unwrap_or_else(|| metre.clone())
 }
 
 /// The cells that divide a bar and its metre: the one wished for, the metre's own, their halves,
@@ -101,7 +95,8 @@ fn candidates(measure: &Measure, wished: Time) -> impl Iterator<Item = Time> + u
     let full = measure.metre.bar_length();
     let free = measure.metre.is_free();
     let own = measure.metre.cell();
-    [wished, own].into_iter().flat_map(move |cell| {
+    let unit = measure.metre.unit();
+    [wished, unit].into_iter().flat_map(move |cell| {
         let cells = (0..=6).map(move |i| cell / (1_i64 << i));
         cells.filter(move |cell| {
             let divides = |time: Time| (time / *cell).is_integer();
@@ -146,11 +141,22 @@ fn crowded(notes: &[Note], measure: &Measure, cell: Time) -> Vec<i64> {
 
 /// The least number that both divide.
 fn common(a: i64, b: i64) -> i64 {
+    (a / divisor(a, b)).saturating_mul(b)
+}
+
+/// The greatest number that divides both.
+fn divisor(a: i64, b: i64) -> i64 {
     let (mut x, mut y) = (a, b);
     while y != 0 {
         (x, y) = (y, x % y);
     }
-    (a / x.max(1)).saturating_mul(b)
+    x.max(1)
+}
+
+/// The longest cell that divides two cells.
+fn shared(a: Time, b: Time) -> Time {
+    let fine = |cell: Time| (cell * 64).to_integer();
+    Time::new(divisor(fine(a), fine(b)), 64)
 }
 
 /// The fewest parts into which a cell divides so that each of these notes begins on one.

@@ -4,7 +4,7 @@ use partwright_score::{Metre, Score, Time, ZERO};
 
 use super::beats;
 use super::left::Left;
-use super::music::{Music, tame};
+use super::music::Music;
 
 /// A bar of the sheet.
 #[derive(Clone, Debug)]
@@ -98,11 +98,10 @@ pub(super) fn measures(score: &Score, music: &mut Music, left: &mut Left<'_>) ->
 fn stated(score: &Score, metres: &[Metre], end: Time) -> Vec<Raw> {
     let mut raws: Vec<Raw> = Vec::with_capacity(score.bars.len());
     for bar in &score.bars {
-        let (onset, _) = tame(bar.onset);
         let raw = Raw {
-            from: onset,
-            to: onset + tame(bar.length).0,
-            lead: tame(bar.lead).0,
+            from: bar.onset,
+            to: bar.onset + bar.length,
+            lead: bar.lead,
             metre: (bar.metre as usize).min(metres.len() - 1),
             number: Some(bar.number),
             closes: bar.section_end,
@@ -326,8 +325,8 @@ fn numbers(raws: &[Raw], measures: &[Measure], left: &mut Left<'_>) {
         number += u32::from(counts);
         if let Some(was) = raw.number.filter(|was| *was != number) {
             left.tell(format!(
-                "Bars are counted from the first full one: from bar {was} on, which is {number} \
-                 here, the numbers are others."
+                "Bars are numbered as a conductor counts them, a pickup as 0: bar {was} is bar \
+                 {number} here."
             ));
             return;
         }

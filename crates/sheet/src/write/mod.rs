@@ -15,6 +15,8 @@ mod names;
 mod systems;
 mod words;
 
+use std::borrow::Cow;
+
 use partwright_score::{Change, MOST_VOICES, Score, Time};
 
 use crate::reading::Tempo;
@@ -61,7 +63,12 @@ pub struct Written {
 /// metre of their own. What a sheet has no place for is listed.
 #[must_use]
 pub fn write(score: &Score, heading: &Heading) -> Written {
+    let tamed = music::tamed(score);
+    let score = tamed.as_ref();
     let mut left = Left::of(score);
+    if matches!(tamed, Cow::Owned(_)) {
+        left.tell("Moments beyond all measure are rounded.".to_owned());
+    }
     if score.voices.len() > MOST_VOICES {
         left.tell(format!(
             "A sheet has at most {MOST_VOICES} voices: those from {} on are left out.",
@@ -71,7 +78,7 @@ pub fn write(score: &Score, heading: &Heading) -> Written {
     let mut music = music::music(score, &mut left);
     let measures = measures::measures(score, &mut music, &mut left);
     let labels = names::labels(&score.voices);
-    let words = words::words(&heading.words, &music, &labels, &mut left);
+    let words = words::words(&heading.words, &music, &measures, &labels, &mut left);
     let changes = heading::changes(score, heading, &measures, &mut left);
     let mut text = heading::headers(score, heading, &labels, &changes, &mut left);
     systems::systems(&mut text, &labels, &music, &measures, &changes, &words);

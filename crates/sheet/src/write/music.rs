@@ -1,8 +1,9 @@
 //! The voices, each without gaps and overlaps from the beginning to the end.
 
+use std::borrow::Cow;
 use std::ops::Range;
 
-use partwright_score::{MOST_VOICES, Note, Score, Sound, Time, ZERO};
+use partwright_score::{Bar, Change, Key, MOST_VOICES, Note, Score, Sound, Time, ZERO};
 
 use super::left::Left;
 
@@ -17,27 +18,56 @@ pub(super) struct Music {
     pub(super) end: Time,
 }
 
-/// A moment that can be reckoned with, and whether it had to be changed for that.
-pub(super) fn tame(time: Time) -> (Time, bool) {
+/// A moment that can be reckoned with.
+pub(super) fn tame(time: Time) -> Time {
     let (n, d) = (*time.numer(), *time.denom());
     if d <= 0 {
-        return (ZERO, true);
+        return ZERO;
     }
     let most = i128::from(d) * i128::from(LONGEST);
     if d <= FINEST && i128::from(n).abs() <= most {
         // Sums and comparisons want lowest terms.
-        return (Time::new(n, d), false);
+        return Time::new(n, d);
     }
     let fine = i128::from(n) * i128::from(FINEST) / i128::from(d);
     let most = LONGEST * FINEST;
-    let fine = i64::try_from(fine).map_or(most, |fine| fine.clamp(-most, most));
-    (Time::new(fine, FINEST), true)
+    let fine = i64::try_from(fine).unwrap_or(if n < 0 { -most } else { most });
+    Time::new(fine.clamp(-most, most), FINEST)
+}
+
+/// A score whose moments can all be reckoned with: nearly always the same.
+pub(super) fn tamed(score: &Score) -> Cow<'_, Score> {
+    let bad = |time: Time| {
+        let tame = tame(time);
+        (tame.numer(), tame.denom()) != (time.numer(), time.denom())
+    };
+    let bars = |bar: &Bar| bad(bar.onset) || bad(bar.length) || bad(bar.lead);
+    let notes = |note: &Note| bad(note.onset) || bad(note.length);
+    let all = score.voices.iter().flat_map(|voice| &voice.notes);
+    let keys = |key: &Change<Key>| bad(key.from);
+    if !score.bars.iter().any(bars) && !all.into_iter().any(notes) && !score.keys.iter().any(keys) {
+        return Cow::Borrowed(score);
+    }
+    let mut score = score.clone();
+    for bar in &mut score.bars {
+        bar.onset = tame(bar.onset);
+        bar.length = tame(bar.length);
+        bar.lead = tame(bar.lead);
+    }
+    for note in score.voices.iter_mut().flat_map(|v| &mut v.notes) {
+        note.onset = tame(note.onset);
+        note.length = tame(note.length);
+    }
+    for key in &mut score.keys {
+        key.from = tame(key.from);
+    }
+    Cow::Owned(score)
 }
 
 /// The voices that a sheet has room for.
 pub(super) fn music(score: &Score, left: &mut Left<'_>) -> Music {
     let mut voices = Vec::new();
-    let mut end = tame(score.end()).0.max(ZERO);
+    let mut end = score.end().max(ZERO);
     for (voice, declared) in score.voices.iter().take(MOST_VOICES).enumerate() {
         let notes = line(voice, &declared.notes, left);
         end = notes.last().map_or(end, |note| note.end().max(end));
@@ -53,23 +83,18 @@ fn line(voice: usize, notes: &[Note], left: &mut Left<'_>) -> Vec<Note> {
     let mut out: Vec<Note> = Vec::with_capacity(notes.len());
     let mut at = ZERO;
     for given in notes {
-        let (onset, moved) = tame(given.onset);
-        let (length, cut) = tame(given.length);
-        if moved || cut {
-            left.at("Moments are rounded", Some(voice), given.onset);
-        }
         let mut note = Note {
-            onset: onset.max(at),
+            onset: given.onset.max(at),
             ..*given
         };
-        note.length = onset + length - note.onset;
+        note.length = given.end() - note.onset;
         if note.length <= ZERO {
             let what = "Notes without a length, or sounding while the voice sounds another, are \
                         left out";
             left.at(what, Some(voice), given.onset);
             continue;
         }
-        if onset < at {
+        if given.onset < at {
             let what = "A voice sounds one note at a time: notes begin where the one before ends";
             left.at(what, Some(voice), given.onset);
         }

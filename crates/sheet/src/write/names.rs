@@ -37,7 +37,13 @@ const OTHER: [(&str, &str); 8] = [
 
 /// Lawful labels, each another, in the order of the voices.
 pub(super) fn labels(voices: &[Voice]) -> Vec<Label> {
-    let proposals: Vec<Proposal> = voices.iter().map(proposal).collect();
+    // Where one of them is a name and no label, so are the other long ones.
+    let named = voices.iter().any(|voice| {
+        let plain = voice.kind == Kind::plain();
+        !is_lawful(&voice.label) || (plain && kind_named(&voice.label).is_some())
+    });
+    let proposals = voices.iter().map(|voice| proposal(voice, named));
+    let proposals: Vec<Proposal> = proposals.collect();
     let mut taken: HashSet<String> = HashSet::new();
     let mut labels: Vec<Option<String>> = vec![None; voices.len()];
     // Labels that can stay as they are come first.
@@ -49,7 +55,11 @@ pub(super) fn labels(voices: &[Voice]) -> Vec<Label> {
         }
     }
     let said = |label: &str, kind: &Kind, name: &str| {
-        name.is_empty() || name == label || name.eq_ignore_ascii_case(kind.name)
+        let by_kind = kind_named(name).is_some_and(|(named, short, number)| {
+            let same = number.is_empty() || label == format!("{short}{number}");
+            named.name == kind.name && label.starts_with(short) && same
+        });
+        by_kind || words(name).concat() == label || name.is_empty()
     };
     let all = voices.iter().zip(proposals).zip(labels);
     all.map(|((voice, proposal), label)| {
@@ -71,25 +81,26 @@ struct Proposal {
     stays: bool,
 }
 
-fn proposal(voice: &Voice) -> Proposal {
-    let lawful = is_label(&voice.label) && !is_reserved(&voice.label);
+fn is_lawful(label: &str) -> bool {
+    is_label(label) && !is_reserved(label)
+}
+
+fn proposal(voice: &Voice, named: bool) -> Proposal {
     let plain = voice.kind == Kind::plain();
-    let named = kind_named(&voice.label).filter(|_| plain || !lawful);
-    if let Some((kind, short, number)) = named {
-        return Proposal {
-            label: format!("{short}{number}"),
-            kind: if plain { kind } else { voice.kind },
-            stays: false,
-        };
-    }
+    let stays = is_lawful(&voice.label) && !(named && plain && voice.label.len() > 3);
+    let kind = kind_named(&voice.label).filter(|_| !stays);
+    let label = match &kind {
+        _ if stays => voice.label.clone(),
+        Some((_, short, number)) => format!("{short}{number}"),
+        None => initials(&voice.label),
+    };
     Proposal {
-        label: if lawful {
-            voice.label.clone()
-        } else {
-            initials(&voice.label)
+        label,
+        kind: match kind {
+            Some((kind, ..)) if plain => kind,
+            _ => voice.kind,
         },
-        kind: voice.kind,
-        stays: lawful,
+        stays,
     }
 }
 
@@ -147,21 +158,13 @@ fn kind_named(name: &str) -> Option<(&'static Kind, &'static str, String)> {
 /// A label from the first letters of a name and its number: `counterpoint 1` gives `C1`.
 fn initials(name: &str) -> String {
     let words = words(name);
-    let mut label: String = words
-        .iter()
-        .enumerate()
-        .filter_map(|(i, word)| match number(word).filter(|_| i > 0) {
-            Some(number) => Some(number),
-            None => Some(word.get(..1)?.to_uppercase()),
-        })
-        .collect();
-    if let [word] = words.as_slice()
-        && is_label(word)
-    {
-        label.clone_from(word);
-    }
+    let initial = |(i, word): (usize, &String)| match number(word).filter(|_| i > 0) {
+        Some(number) => Some(number),
+        None => Some(word.get(..1)?.to_uppercase()),
+    };
+    let mut label: String = words.iter().enumerate().filter_map(initial).collect();
     label.truncate(8);
-    if is_label(&label) && !is_reserved(&label) {
+    if is_lawful(&label) {
         label
     } else {
         "V".to_owned()
@@ -209,13 +212,13 @@ mod tests {
         );
         assert_eq!(
             named(&["Violin I", "Violin II", "Double Bass", "Mezzo-soprano 2"]),
-            "Vn1 violin (Violin I), Vn2 violin (Violin II), Db doublebass (Double Bass), \
-             M2 mezzo (Mezzo-soprano 2)"
+            "Vn1 violin, Vn2 violin, Db doublebass, \
+             M2 mezzo"
         );
         assert_eq!(
             named(&["Baſsus II.", "[Cantus.]", "Bass clarinet", "S", "cantus"]),
-            "B2 voice (Baſsus II.), Cantus voice ([Cantus.]), BC voice (Bass clarinet), S voice, \
-             C voice (cantus)"
+            "B2 voice (Baſsus II.), C voice ([Cantus.]), BC voice (Bass clarinet), S voice, \
+             C2 voice (cantus)"
         );
     }
 
@@ -226,8 +229,12 @@ mod tests {
             "S2 soprano, S3 soprano, S voice, V voice, V2 voice (Ж), V3 voice (1), L voice (line)"
         );
         assert_eq!(
-            named(&["Lamplighter", "Lampmen1", "Lampmen1"]),
-            "L voice (Lamplighter), Lampmen1 voice, Lampmen2 voice (Lampmen1)"
+            named(&["Lampmen1", "Lampmen1", "Quay"]),
+            "Lampmen1 voice, Lampmen2 voice (Lampmen1), Quay voice"
+        );
+        assert_eq!(
+            named(&["CANTVS", "ALTVS", "TENOR", "BASSVS"]),
+            "C voice (CANTVS), A voice (ALTVS), T tenor, B voice (BASSVS)"
         );
     }
 

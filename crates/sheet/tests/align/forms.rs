@@ -54,7 +54,10 @@ fn the_example_of_the_notation_comes_back_from_any_blanks() {
     becomes(&wild, EVENSONG);
     let mut close = EVENSONG.to_owned();
     for _ in 0..4 {
-        close = close.replace("  ", " ").replace(" |", "|").replace("| ", "|");
+        close = close
+            .replace("  ", " ")
+            .replace(" |", "|")
+            .replace("| ", "|");
     }
     becomes(&close, EVENSONG);
 }
@@ -228,7 +231,7 @@ S | D5 E F | G♯5 |
 //         ^^^ wide
 //           ^^ at the line
 A|D4 F𝄪4.A4*a F|
-    //  ^   ^^^ ^ indented
+    //  ^   ^^^ ^ behind everything
 //^ close to the line
 // ^^
 B | _ |
@@ -244,11 +247,11 @@ S | D5 E         F | G#5 |
 //                 ^^^ wide
 //                   ^^ at the line
 A | D4 F##4.A4*a F |
-    //     ^   ^^^     ^ indented
+    //     ^   ^^^  ^ behind everything
 //  ^ close to the line
 //   ^^
 B | _              |
-//     ^^ under the voice above
+//       ^^ under the voice above
 // no ^ mark
 
 //     ^ in no system
@@ -271,11 +274,14 @@ fn line_ends_marks_of_order_and_missing_ends_stay() {
         "\u{feff}title   Quay\r\n \t \r\n\r\nS | G4   |\r\n// a \r\nB | G3 A |",
     );
     becomes("\u{feff}S|g4|\n", "\u{feff}S | G4 |\n");
+    stays(" \u{feff}S|g4|\n");
     stays("");
     stays("\r\n \n");
 }
 
 #[test]
 fn no_figure_is_added_and_none_is_taken() {
-    stays("S | G4 A4 A  B4 | C | C5 B5 | =A | A4 A4 |\nA | B4 C  D4 -  | _ | G4 -  | G4 | _     |\n");
+    stays(
+        "S | G4 A4 A  B4 | C | C5 B5 | =A | A4 A4 |\nA | B4 C  D4 -  | _ | G4 -  | G4 | _     |\n",
+    );
 }

@@ -28,7 +28,6 @@ fn frame(line: &str) -> (&str, &str) {
 
 /// The comment of a line that holds nothing else.
 fn comment(body: &str) -> Option<&str> {
-    let body = body.trim_start_matches('\u{feff}');
     let start = body.trim_start_matches([' ', '\t', '\u{a0}', '\u{3000}', '\r']);
     start.starts_with("//").then_some(start)
 }
@@ -59,8 +58,17 @@ pub(crate) fn aligned(text: &str) -> String {
         troubles(&after),
         "other problems:\n{text}\n{aligned}"
     );
-    let lines = |text: &str| text.split_inclusive('\n').map(String::from).collect::<Vec<_>>();
-    let (old, new) = (lines(text), lines(&aligned));
+    let lines = |text: &str| {
+        text.split_inclusive('\n')
+            .map(String::from)
+            .collect::<Vec<_>>()
+    };
+    let unmarked = |text: &str| lines(text.strip_prefix('\u{feff}').unwrap_or(text));
+    assert_eq!(
+        text.starts_with('\u{feff}'),
+        aligned.starts_with('\u{feff}')
+    );
+    let (old, new) = (unmarked(text), unmarked(&aligned));
     assert_eq!(old.len(), new.len());
     for (old, new) in old.iter().zip(&new) {
         let ((old, end), (new, new_end)) = (frame(old), frame(new));
@@ -68,9 +76,12 @@ pub(crate) fn aligned(text: &str) -> String {
         if old.trim().is_empty() {
             assert_eq!(old, new, "a blank line");
         } else if let Some(words) = comment(old) {
-            let bare = |text: &str| text.replace([' ', '\u{a0}', '\u{3000}', '\t'], "");
-            let drawn = words.trim_start_matches(['/', ' ', '\t']).starts_with('^');
-            assert!(old == new || drawn && bare(old) == bare(new), "{old}\n{new}");
+            let bare = |text: &str| text.replace(char::is_whitespace, "");
+            let drawn = bare(words).starts_with("//^");
+            assert!(
+                old == new || drawn && bare(old) == bare(new),
+                "{old}\n{new}"
+            );
         }
     }
     aligned
