@@ -112,7 +112,8 @@ impl Folder {
 }
 
 impl Ran {
-    fn of(output: Output) -> Ran {
+    /// What a run of the program came to.
+    pub(crate) fn of(output: Output) -> Ran {
         Ran {
             status: output.status.code().unwrap_or(-1),
             out: String::from_utf8(output.stdout).unwrap(),

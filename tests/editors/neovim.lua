@@ -45,13 +45,25 @@ local function wait(what, ready)
   return coroutine.yield()
 end
 
--- The server's word on a version of the buffer is its last.
+-- The server's word on a version of the buffer: the answer to the editor's question, its last. One
+-- that is pushed as well would show every finding twice.
 local heard = {}
-local publish = vim.lsp.handlers['textDocument/publishDiagnostics']
-vim.lsp.handlers['textDocument/publishDiagnostics'] = function(err, result, ctx)
-  publish(err, result, ctx)
-  heard[result.version or 'no version'] = (heard[result.version or 'no version'] or 0) + 1
+local pushed = 0
+local function listen(method, note)
+  local usual = vim.lsp.handlers[method]
+  vim.lsp.handlers[method] = function(err, result, ctx)
+    usual(err, result, ctx)
+    note(err, result, ctx)
+  end
 end
+listen('textDocument/publishDiagnostics', function()
+  pushed = pushed + 1
+end)
+listen('textDocument/diagnostic', function(err, _, ctx)
+  if not err then
+    heard[ctx.version] = (heard[ctx.version] or 0) + 1
+  end
+end)
 
 local ended = {}
 vim.lsp.config('partwright', {
@@ -127,6 +139,49 @@ local function tell_float(name, keys)
   vim.api.nvim_input('l')
 end
 
+-- The menu is the editor's own. What it lists is told, and the number typed ahead.
+local pick
+local choose = vim.ui.select
+vim.ui.select = function(items, options, done)
+  for number, item in ipairs(items) do
+    local line = options.format_item(item)
+    tell('choice %s', line)
+    if pick and vim.startswith(line, pick) then
+      vim.api.nvim_input(number .. '<CR>')
+      pick = nil
+    end
+  end
+  choose(items, options, done)
+end
+
+local function lines()
+  return vim.api.nvim_buf_get_lines(0, 0, -1, true)
+end
+
+-- Presses keys, waits for the text to change and for the server's word on it; the new lines.
+local function change(keys)
+  local before, tick = lines(), vim.b.changedtick
+  vim.api.nvim_input(keys)
+  wait('the text to change', function()
+    return vim.b.changedtick > tick and not vim.deep_equal(lines(), before)
+  end)
+  wait('the word on it', function()
+    return heard[vim.b.changedtick]
+  end)
+  for _, line in ipairs(lines()) do
+    if not vim.list_contains(before, line) then
+      tell('changed %s', line)
+    end
+  end
+end
+
+-- At the finding: opens the menu, and takes the first in it that starts so.
+local function take(start)
+  pick = start
+  tell('typed gg]dgra, took %s', start)
+  change('gg]dgra')
+end
+
 local function attached()
   return vim.lsp.get_clients({ bufnr = 0, name = 'partwright' })[1]
 end
@@ -165,6 +220,21 @@ local function composer()
   tell_float('shown', '<C-W>d')
   tell_float('hover', 'K')
 
+  take('Move')
+  tell_findings()
+  type_keys('u', faulty)
+  tell_findings()
+  take('Grant')
+  tell_findings()
+  local reason = wait('the cursor at the reason', function()
+    local at = vim.api.nvim_win_get_cursor(0)
+    return at[1] ~= FAULTY_ROW and row(at[1]):sub(at[2] + 1)
+  end)
+  tell('cursor at %s', reason)
+  type_keys('u', faulty)
+  tell_findings()
+  vim.api.nvim_input('gg]d')
+
   type_keys('cwG<Esc>', mended)
   tell_findings()
   type_keys('u', faulty)
@@ -174,16 +244,21 @@ local function composer()
   type_keys('ucwG<Esc>', mended)
   tell_findings()
 
+  tell('typed gggqG')
+  change('gggqG')
+  tell_findings()
+
   tell('typed :write')
   vim.api.nvim_input(':write<CR>')
   wait('the file to be written', function()
     return not vim.bo.modified
   end)
   for version, times in pairs(heard) do
-    if version == 'no version' or times > 1 then
+    if times > 1 then
       tell('%s was spoken of %d times', version, times)
     end
   end
+  tell('pushed %d', pushed)
 
   attached():stop()
   wait('the server to end', function()

@@ -43,6 +43,8 @@ pub(crate) struct Client {
     pub(crate) published: Vec<Publication>,
     /// Log messages.
     pub(crate) logged: Vec<String>,
+    /// Messages shown to the user.
+    pub(crate) shown: Vec<String>,
     /// Requests of the server, which this client does not answer by itself.
     pub(crate) asked: Vec<Value>,
 }
@@ -60,6 +62,22 @@ pub(crate) fn capabilities(encodings: &[&str]) -> Value {
             "hover": { "contentFormat": ["markdown", "plaintext"] },
         },
     })
+}
+
+/// Capabilities with some of their places filled otherwise: `/textDocument/diagnostic`.
+pub(crate) fn capabilities_and(more: &[(&str, Value)]) -> Value {
+    let mut all = capabilities(&["utf-16"]);
+    for (path, value) in more {
+        let mut at = &mut all;
+        for step in path.split('/').skip(1) {
+            if at.get(step).is_none() {
+                at[step] = json!({});
+            }
+            at = &mut at[step];
+        }
+        *at = value.clone();
+    }
+    all
 }
 
 impl Client {
@@ -83,6 +101,7 @@ impl Client {
     }
 
     /// A server started by another program.
+    #[cfg(target_os = "linux")]
     pub(crate) fn started_by(script: &str) -> Client {
         let mut command = Command::new("sh");
         command
@@ -120,10 +139,12 @@ impl Client {
             answers: VecDeque::new(),
             published: Vec::new(),
             logged: Vec::new(),
+            shown: Vec::new(),
             asked: Vec::new(),
         }
     }
 
+    #[cfg(target_os = "linux")]
     pub(crate) fn process_id(&self) -> u32 {
         self.child.lock().unwrap().id()
     }
@@ -206,6 +227,10 @@ impl Client {
                 self.logged
                     .push(message["params"]["message"].as_str().unwrap().to_owned());
             }
+            (Some("window/showMessage"), None) => {
+                self.shown
+                    .push(message["params"]["message"].as_str().unwrap().to_owned());
+            }
             (Some(_), Some(_)) => self.asked.push(message),
             (Some(other), None) => panic!("{other} came unasked"),
         }
@@ -254,6 +279,15 @@ impl Client {
             .unwrap()
             .diagnostics
             .clone()
+    }
+
+    /// The next request of the server of that kind, answered with `result`.
+    pub(crate) fn reply(&mut self, method: &str, result: Value) -> Value {
+        self.until(|client| client.asked.iter().any(|a| a["method"] == method));
+        let at = self.asked.iter().position(|a| a["method"] == method);
+        let question = self.asked.remove(at.unwrap());
+        self.send(&json!({ "jsonrpc": "2.0", "id": question["id"], "result": result }));
+        question["params"].clone()
     }
 
     /// Asks something trivial: its answer shows that the server is there, and that whatever was

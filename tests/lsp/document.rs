@@ -154,6 +154,99 @@ impl Document {
             .collect()
     }
 
+    /// A request about this document: its result.
+    pub(crate) fn ask(&self, client: &mut Client, method: &str, more: Value) -> Value {
+        let answer = client.request(&format!("textDocument/{method}"), self.about(more));
+        assert!(answer.get("error").is_none(), "{method}: {answer}");
+        answer["result"].clone()
+    }
+
+    /// The parameters of a request about this document.
+    pub(crate) fn about(&self, mut more: Value) -> Value {
+        more["textDocument"] = json!({ "uri": self.uri });
+        more
+    }
+
+    /// The byte offset of a position of the server's, which must be one of this text.
+    pub(crate) fn offset(&self, position: &Value) -> usize {
+        let mut places = self.text.char_indices().map(|(at, _)| at);
+        let end = self.text.len();
+        places
+            .find(|&at| self.position(at) == *position)
+            .or_else(|| (self.position(end) == *position).then_some(end))
+            .unwrap_or_else(|| panic!("{position} in {:?}", self.text))
+    }
+
+    /// What stands in a range of the server's.
+    pub(crate) fn words(&self, range: &Value) -> &str {
+        &self.text[self.offset(&range["start"])..self.offset(&range["end"])]
+    }
+
+    /// The text with edits of the server's made.
+    pub(crate) fn with(&self, edits: &[Value]) -> String {
+        let mut edits: Vec<(usize, usize, &str)> = edits
+            .iter()
+            .map(|edit| {
+                let range = &edit["range"];
+                let (start, end) = (self.offset(&range["start"]), self.offset(&range["end"]));
+                (start, end, edit["newText"].as_str().unwrap())
+            })
+            .collect();
+        edits.sort_by_key(|edit| (edit.0, edit.1));
+        let ends = edits.iter().skip(1).map(|edit| edit.0);
+        assert!(
+            edits.iter().zip(ends).all(|(edit, next)| edit.1 <= next),
+            "edits overlap"
+        );
+        let mut text = self.text.clone();
+        for (start, end, new) in edits.into_iter().rev() {
+            text.replace_range(start..end, new);
+        }
+        text
+    }
+
+    /// The text with a workspace edit made, which must be about this document alone.
+    pub(crate) fn with_workspace(&self, edit: &Value) -> String {
+        let edits = match edit["documentChanges"].as_array() {
+            Some(changes) => {
+                assert_eq!(changes.len(), 1);
+                let of = json!({ "uri": self.uri, "version": self.version });
+                assert_eq!(changes[0]["textDocument"], of);
+                &changes[0]["edits"]
+            }
+            None => {
+                assert_eq!(edit["changes"].as_object().unwrap().len(), 1);
+                &edit["changes"][&self.uri]
+            }
+        };
+        self.with(edits.as_array().unwrap())
+    }
+
+    /// Becomes another text, here and there.
+    pub(crate) fn become_text(&mut self, client: &mut Client, text: &str) {
+        let all = 0..self.text.len();
+        self.edit(client, all, text);
+    }
+
+    /// The code actions at the first place where some words stand.
+    pub(crate) fn actions(&self, client: &mut Client, words: &str, context: Value) -> Vec<Value> {
+        let at = self.text.find(words).unwrap();
+        self.actions_in(client, at..at, context)
+    }
+
+    /// The code actions in a range.
+    pub(crate) fn actions_in(
+        &self,
+        client: &mut Client,
+        range: Range<usize>,
+        mut context: Value,
+    ) -> Vec<Value> {
+        context["diagnostics"] = json!([]);
+        let params = json!({ "range": self.range(range), "context": context });
+        let result = self.ask(client, "codeAction", params);
+        result.as_array().unwrap().clone()
+    }
+
     pub(crate) fn hover(&self, client: &mut Client, position: &Value) -> Value {
         let params = json!({ "textDocument": { "uri": self.uri }, "position": position });
         client.request("textDocument/hover", params)

@@ -3,7 +3,7 @@
 use serde_json::{Value, json};
 
 use crate::client::{Client, capabilities};
-use crate::document::{Document, FIFTHS};
+use crate::document::{Document, FIFTHS, long_sheet};
 
 #[test]
 fn the_server_says_what_it_is_and_offers() {
@@ -164,7 +164,9 @@ fn the_end_of_the_input_ends_the_process() {
 #[test]
 fn what_was_asked_before_the_end_of_the_input_is_answered() {
     let mut client = Client::ready();
-    let document = Document::open(&mut client, "file:///a.voices", FIFTHS);
+    // Long enough for its check to take longer than the rest of the input.
+    let text = format!("{FIFTHS}\n{}", long_sheet(3000));
+    let document = Document::open(&mut client, "file:///a.voices", &text);
     let params = json!({ "textDocument": { "uri": document.uri }, "position": document.at("E") });
     let ids: Vec<i64> = (0..20)
         .map(|_| client.ask("textDocument/hover", params.clone()))

@@ -82,7 +82,7 @@ fn bad_ranges_leave_the_text_as_it_was() {
     let mut document = Document::open(&mut client, "file:///a.voices", &format!("// 𝄪\n{FIFTHS}"));
     document.findings(&mut client);
     let end = document.text.len();
-    let good = json!({ "range": document.range(end..end), "text": "// more\n" });
+    let good = json!({ "range": document.range(end..end), "text": "wibble\n" });
     let range = |a: [u32; 2], b: [u32; 2]| {
         let place = |[line, character]: [u32; 2]| json!({ "line": line, "character": character });
         json!({ "range": { "start": place(a), "end": place(b) }, "text": "H" })
@@ -129,12 +129,12 @@ fn bad_ranges_leave_the_text_as_it_was() {
 #[test]
 fn places_past_the_end_of_a_line_or_just_past_the_text_are_those_ends() {
     let mut client = Client::ready();
-    let mut document = Document::open(&mut client, "file:///a.voices", "S | D5 E |\nB | G3 A |");
+    let mut document = Document::open(&mut client, "file:///a.voices", "S | D5 E |\r\nB | G3 A |");
     let far = json!({ "line": 0, "character": 4_000_000_000_u32 });
-    let change = json!({ "range": { "start": far, "end": far }, "text": " // here" });
+    let change = json!({ "range": { "start": far, "end": far }, "text": " H4 |" });
     let message = document.message(&[change]);
     client.send(&message);
-    document.text.insert_str(10, " // here");
+    document.text.insert_str(10, " H4 |");
     let past = json!({ "line": 2, "character": 0 });
     let change = json!({ "range": { "start": past, "end": past }, "text": " H4" });
     let message = document.message(&[change]);

@@ -1,11 +1,17 @@
 //! What may stand on the command line. Help, usage and messages all come from here.
 
-use std::path::PathBuf;
+mod align;
+mod check;
+mod mend;
 
-use clap::builder::{NonEmptyStringValueParser, PossibleValuesParser, TypedValueParser};
+pub(crate) use align::Align;
+pub(crate) use check::Check;
+pub(crate) use mend::Mend;
+
+use clap::builder::NonEmptyStringValueParser;
 use clap::{Args, Parser, Subcommand, ValueEnum};
-use partwright_check::BarRange;
-use partwright_rules::{STYLES, Severity, Style};
+use partwright_check::{BarRange, Filter};
+use partwright_rules::Severity;
 
 use crate::names::rule_or_family;
 
@@ -30,45 +36,22 @@ pub(crate) struct Arguments {
 pub(crate) enum Command {
     /// Report what the style forbids or discourages, in sheets and folders of them
     Check(Check),
+    /// Show repairs as a diff, or write them
+    Mend(Mend),
+    /// Set the beats of sheets in columns
+    Align(Align),
     /// List the rules, or explain one of them
     Rules(Rules),
     /// Run the language server, which shows findings in a text editor as you write
     Serve(Serve),
 }
 
-/// Report what the style forbids or discourages, in sheets and folders of them.
-///
-/// Each finding is a fault (the style forbids it), a weakness (the style discourages it) or a
-/// remark (worth knowing). It is shown with its bar and beat, and with the notes marked: a thick
-/// line under the note where it happens, thin ones under the notes it comes from and those of
-/// other voices.
+/// Which findings are meant: options that several commands share.
 #[derive(Args, Debug)]
-#[command(after_help = "\
-Which style: the one named with --style, else the one the sheet names, else free.
-
-Folders: every file below that ends in .voices, in order of their names. Hidden files and those \
-that git ignores are left out, and links are not followed.
-
-Exit status:
-  0  nothing at or above the level of --fail-on
-  1  something at or above it
-  2  a path that could not be read or is no score, or a wrong call;
-     whatever else was found is still reported
-
-Findings go to standard output, everything else to standard error.
-
-Examples:
-  partwright check evensong.voices
-  partwright check --style chorale --drop range,octave-doubt hymns
-  partwright check --bars 12..20 --voices S,B evensong.voices
-  partwright check --report json --fail-on weakness hymns > findings.jsonl")]
-pub(crate) struct Check {
-    /// A voice sheet, a folder of them, or - for standard input
-    #[arg(required = true, value_name = "PATH")]
-    pub(crate) paths: Vec<PathBuf>,
-    /// Judge by this style, whatever the sheet says
-    #[arg(long, value_name = "NAME", value_parser = styles())]
-    pub(crate) style: Option<Style>,
+pub(crate) struct Scope {
+    /// Judge by this style, whatever the sheet says: one of ours, or the name of the house style
+    #[arg(long, value_name = "NAME", value_parser = NonEmptyStringValueParser::new())]
+    pub(crate) style: Option<String>,
     /// Only these rules or families of rules; several with commas between, or repeated
     #[arg(long, value_name = "RULE", value_delimiter = ',', value_parser = rule_or_family)]
     pub(crate) pick: Vec<String>,
@@ -81,21 +64,16 @@ pub(crate) struct Check {
     /// Only findings in which one of these voices takes part, by the labels of their rows: S,B
     #[arg(long, value_name = "LABEL", value_delimiter = ',', value_parser = NonEmptyStringValueParser::new())]
     pub(crate) voices: Vec<String>,
-    /// How findings are reported: plain for reading, json for programs (JSON Lines, one object a
-    /// finding)
-    #[arg(long, value_name = "FORM", default_value = "plain")]
-    pub(crate) report: Report,
-    /// The level that makes the exit status 1
-    #[arg(long, value_name = "LEVEL", default_value = "fault")]
-    pub(crate) fail_on: FailOn,
-    /// Name standard input, for reports and to tell what it holds
-    #[arg(long = "as", value_name = "PATH")]
-    pub(crate) named: Option<PathBuf>,
-    /// Findings only: no summary, no words about empty sheets or about the work's progress
-    #[arg(long)]
-    pub(crate) quiet: bool,
-    #[command(flatten)]
-    pub(crate) colour: ColourChoice,
+}
+
+impl Scope {
+    /// Which findings are shown.
+    pub(crate) fn filter(&self) -> Filter {
+        Filter {
+            bars: self.bars,
+            voices: self.voices.clone(),
+        }
+    }
 }
 
 /// List the rules, or explain one of them.
@@ -109,14 +87,17 @@ Examples:
   partwright rules
   partwright rules --style chorale
   partwright rules motion
-  partwright rules parallel-fifths")]
+  partwright rules parallel-fifths
+
+Below the table stands what the house style of this folder changes (partwright.toml, found from \
+here upwards), and why.")]
 pub(crate) struct Rules {
     /// A rule or a family of rules
     #[arg(value_name = "NAME", value_parser = rule_or_family)]
     pub(crate) name: Option<String>,
-    /// Only what holds in this style
-    #[arg(long, value_name = "NAME", value_parser = styles())]
-    pub(crate) style: Option<Style>,
+    /// Only what holds in this style: one of ours, or the name of the house style
+    #[arg(long, value_name = "NAME", value_parser = NonEmptyStringValueParser::new())]
+    pub(crate) style: Option<String>,
     #[command(flatten)]
     pub(crate) colour: ColourChoice,
 }
@@ -158,6 +139,7 @@ pub(crate) enum Colour {
 pub(crate) enum Report {
     Plain,
     Json,
+    Sarif,
 }
 
 /// The level that makes the exit status 1.
@@ -191,12 +173,6 @@ impl ColourChoice {
             Colour::Auto => terminal.out && !terminal.colourless,
         }
     }
-}
-
-/// Reads the name of a style; a wrong one is answered with the list and the nearest.
-fn styles() -> impl TypedValueParser<Value = Style> {
-    PossibleValuesParser::new(STYLES.iter().map(|style| style.name()))
-        .map(|name| Style::named(&name).unwrap_or(Style::Free))
 }
 
 #[cfg(test)]

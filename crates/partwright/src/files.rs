@@ -18,14 +18,38 @@ pub(crate) struct Sheet {
     /// What reports call it.
     pub(crate) name: String,
     /// Its file; `None` for standard input.
-    file: Option<PathBuf>,
+    pub(crate) file: Option<PathBuf>,
+    /// The file it is taken for: its own, or the one standard input is named after.
+    pub(crate) place: Option<PathBuf>,
 }
+
+impl Sheet {
+    /// The folder from which its house style is looked for.
+    pub(crate) fn folder(&self) -> &Path {
+        let folder = self.place.as_deref().and_then(Path::parent);
+        folder.unwrap_or(Path::new(""))
+    }
+}
+
+/// What is said of a file that does not hold any more what was read from it.
+pub(crate) const CHANGED: &str =
+    "another program saved it meanwhile; nothing was written, run this again";
 
 /// A path that gives no score, and why not.
 #[derive(Clone, Debug, PartialEq, Eq)]
 pub(crate) struct Trouble {
     path: String,
     reason: String,
+}
+
+impl Trouble {
+    /// What a sheet is in trouble for.
+    pub(crate) fn of(sheet: &Sheet, reason: impl Into<String>) -> Trouble {
+        Trouble {
+            path: sheet.name.clone(),
+            reason: reason.into(),
+        }
+    }
 }
 
 impl fmt::Display for Trouble {
@@ -127,6 +151,7 @@ impl Findings {
         self.sheets.push(Sheet {
             name: path.display().to_string(),
             file: Some(path.to_owned()),
+            place: Some(path.to_owned()),
         });
     }
 
@@ -137,6 +162,7 @@ impl Findings {
             None => self.sheets.push(Sheet {
                 name: name.display().to_string(),
                 file: None,
+                place: (!is_input(name)).then(|| name.to_owned()),
             }),
         }
     }

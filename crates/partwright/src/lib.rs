@@ -3,16 +3,25 @@
 //! Results go to standard output, everything else to standard error; both are passed in as a
 //! [`Stage`], so that a test can stand in for a terminal.
 
+mod align;
 mod arguments;
 mod check;
 mod files;
+mod houses;
+mod in_order;
+mod judge;
+mod known;
+mod mend;
+mod met;
 mod names;
 mod outcome;
 mod progress;
 mod prose;
 mod report;
 mod rules;
+mod save;
 mod stage;
+mod styles;
 
 pub use outcome::Outcome;
 pub use stage::{Output, Stage, Terminal};
@@ -40,6 +49,8 @@ pub fn run(arguments: impl IntoIterator<Item = OsString>, stage: &mut Stage<'_>)
     let outcome = match Arguments::try_parse_from(arguments) {
         Ok(arguments) => match arguments.command {
             Command::Check(wanted) => check::run(&wanted, stage),
+            Command::Mend(wanted) => mend::run(&wanted, stage),
+            Command::Align(wanted) => align::run(&wanted, stage),
             Command::Rules(wanted) => rules::run(&wanted, stage),
             Command::Serve(_) => return partwright_server::serve(),
         },

@@ -1,12 +1,15 @@
 //! Between our types and those of the protocol: the only place that does.
 
 use partwright_check::Severity;
-use partwright_sheet::Span;
+use partwright_sheet::{Edit, Span};
 use tower_lsp::lsp_types::{
-    DiagnosticSeverity, Position, PositionEncodingKind, Range, TextDocumentContentChangeEvent,
+    DiagnosticSeverity, DocumentChanges, OneOf, OptionalVersionedTextDocumentIdentifier, Position,
+    PositionEncodingKind, Range, TextDocumentContentChangeEvent, TextDocumentEdit, TextEdit,
+    WorkspaceEdit,
 };
 
-use crate::documents::Change;
+use crate::documents::{Change, Snapshot};
+use crate::session::Agreed;
 use crate::text::{Columns, Place, Text};
 
 fn wide(figure: u32) -> usize {
@@ -40,6 +43,45 @@ pub(crate) fn range(text: &Text, span: Span, columns: Columns) -> Range {
         start: at(span.start),
         end: at(span.end),
     }
+}
+
+/// Edits of a document as the protocol says them.
+pub(crate) fn edits(text: &Text, edits: &[Edit], columns: Columns) -> Vec<TextEdit> {
+    let one = |edit: &Edit| TextEdit {
+        range: range(text, edit.span, columns),
+        new_text: edit.text.clone(),
+    };
+    edits.iter().map(one).collect()
+}
+
+/// Edits of one document as a change of the workspace, with its version where the client takes
+/// that: it can refuse what comes too late then.
+pub(crate) fn workspace_edit(of: &Snapshot, changes: &[Edit], agreed: Agreed) -> WorkspaceEdit {
+    let edits = edits(&of.text, changes, agreed.columns);
+    if agreed.versioned_edits {
+        let edits = edits.into_iter().map(OneOf::Left).collect();
+        let text_document = OptionalVersionedTextDocumentIdentifier {
+            uri: of.uri.clone(),
+            version: Some(of.version),
+        };
+        WorkspaceEdit {
+            document_changes: Some(DocumentChanges::Edits(vec![TextDocumentEdit {
+                text_document,
+                edits,
+            }])),
+            ..WorkspaceEdit::default()
+        }
+    } else {
+        WorkspaceEdit {
+            changes: Some([(of.uri.clone(), edits)].into()),
+            ..WorkspaceEdit::default()
+        }
+    }
+}
+
+/// The byte offset of a position the client names, as near as can be.
+pub(crate) fn offset(text: &Text, at: Position, columns: Columns) -> usize {
+    text.offset_near(place(at), columns)
 }
 
 /// A change of a document.

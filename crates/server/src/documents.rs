@@ -9,6 +9,8 @@ use std::fmt;
 use std::sync::{Arc, Condvar, Mutex, MutexGuard, PoisonError};
 
 use partwright_check::Checked;
+use partwright_check::house::HouseError;
+use partwright_mend::Mend;
 use tokio::sync::watch;
 use tower_lsp::lsp_types::Url;
 
@@ -23,6 +25,8 @@ pub(crate) struct Snapshot {
     pub(crate) version: i32,
     /// Its state, as the server counts: every opening and every change is a new one.
     pub(crate) generation: u64,
+    /// The generation of its text: it stays when only a house style changed.
+    pub(crate) edited: u64,
     /// Its text.
     pub(crate) text: Arc<Text>,
 }
@@ -34,6 +38,8 @@ pub(crate) struct Outcome {
     pub(crate) snapshot: Snapshot,
     /// What was found.
     pub(crate) verdict: Verdict,
+    /// The mends found so far, by the index of their finding.
+    pub(crate) mends: Mutex<HashMap<usize, Arc<[Mend]>>>,
 }
 
 /// How a check ended.
@@ -41,16 +47,27 @@ pub(crate) struct Outcome {
 pub(crate) enum Verdict {
     /// It was done.
     Done(Box<Checked>),
+    /// It is no sheet but a house style, with what is wrong with it.
+    House(Option<HouseError>),
     /// The checker itself broke off.
     BrokeOff,
 }
 
 impl Outcome {
+    /// What was made of a snapshot.
+    pub(crate) fn new(snapshot: Snapshot, verdict: Verdict) -> Outcome {
+        Outcome {
+            snapshot,
+            verdict,
+            mends: Mutex::default(),
+        }
+    }
+
     /// The checked sheet, where there is one.
     pub(crate) fn checked(&self) -> Option<&Checked> {
         match &self.verdict {
             Verdict::Done(checked) => Some(checked),
-            Verdict::BrokeOff => None,
+            Verdict::House(_) | Verdict::BrokeOff => None,
         }
     }
 }
@@ -127,6 +144,7 @@ impl Documents {
             uri: uri.clone(),
             version,
             generation,
+            edited: generation,
             text,
         };
         let outcome = watch::Sender::new(None);
@@ -181,9 +199,30 @@ impl Documents {
         let generation = state.touched(uri);
         if let Some(document) = state.open.get_mut(uri) {
             document.snapshot.generation = generation;
+            document.snapshot.edited = generation;
         }
         self.work.notify_one();
         Ok(())
+    }
+
+    /// Has every open document but one checked again, though its text is the same.
+    pub(crate) fn check_again(&self, but: Option<&Url>) {
+        let mut state = self.lock();
+        let uris: Vec<Url> = state.open.keys().cloned().collect();
+        for uri in uris.iter().filter(|uri| Some(*uri) != but) {
+            let generation = state.touched(uri);
+            if let Some(document) = state.open.get_mut(uri) {
+                document.snapshot.generation = generation;
+            }
+        }
+        self.work.notify_one();
+    }
+
+    /// What was made of a document, if it still is as it was then.
+    pub(crate) fn settled(&self, uri: &Url, generation: u64) -> Option<Arc<Outcome>> {
+        let state = self.lock();
+        let outcome = state.open.get(uri)?.outcome.borrow().clone();
+        outcome.filter(|o| o.snapshot.generation == generation)
     }
 
     /// Closes a document, and tells whether it was open. `after` runs before anybody can publish
@@ -199,7 +238,6 @@ impl Documents {
     }
 
     /// A document as it is now.
-    #[cfg(test)]
     pub(crate) fn snapshot(&self, uri: &Url) -> Option<Snapshot> {
         Some(self.lock().open.get(uri)?.snapshot.clone())
     }
@@ -215,19 +253,17 @@ impl Documents {
     /// What the checker makes of a document as it is when this is called; `None` where it is not
     /// open, or changes or is closed before it is checked.
     pub(crate) async fn outcome(&self, uri: &Url) -> Option<Arc<Outcome>> {
-        let (generation, mut outcomes) = {
+        let (generation, edited, mut outcomes) = {
             let state = self.lock();
-            let document = state.open.get(uri)?;
-            (document.snapshot.generation, document.outcome.subscribe())
+            let Document { snapshot, outcome } = state.open.get(uri)?;
+            (snapshot.generation, snapshot.edited, outcome.subscribe())
         };
         let of = |outcome: &Option<Arc<Outcome>>| outcome.as_ref().map(|o| o.snapshot.generation);
         let outcome = outcomes
             .wait_for(|o| of(o).is_some_and(|g| g >= generation))
             .await
             .ok()?;
-        outcome
-            .clone()
-            .filter(|o| o.snapshot.generation == generation)
+        outcome.clone().filter(|o| o.snapshot.edited == edited)
     }
 
     /// Waits for a document to check, and returns it with what was made of it before.
@@ -360,10 +396,7 @@ mod tests {
         documents
             .change(&uri(), 2, &[change(None, "b")], Columns::Utf8)
             .unwrap();
-        let outcome = |snapshot| Outcome {
-            snapshot,
-            verdict: Verdict::BrokeOff,
-        };
+        let outcome = |snapshot| Outcome::new(snapshot, Verdict::BrokeOff);
         let mut published = Vec::new();
         documents.settle(outcome(old.clone()), |o| published.push(o.snapshot.version));
         let (new, _) = documents.next_to_check();
@@ -378,13 +411,7 @@ mod tests {
         let (documents, uri) = (Documents::default(), uri());
         let settle = || {
             let (snapshot, _) = documents.next_to_check();
-            documents.settle(
-                Outcome {
-                    snapshot,
-                    verdict: Verdict::BrokeOff,
-                },
-                |_| (),
-            );
+            documents.settle(Outcome::new(snapshot, Verdict::BrokeOff), |_| ());
         };
         let now = |waiting: &mut _| futures::FutureExt::now_or_never(waiting);
         documents.open(&uri, 1, "a".to_owned());

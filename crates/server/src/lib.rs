@@ -12,12 +12,16 @@ mod documents;
 mod features;
 mod frames;
 mod hooks;
+mod houses;
 mod lifecycle;
+mod lines;
+mod names;
 mod outbox;
 mod parent;
 mod serve;
 mod server;
 mod session;
+mod systems;
 mod text;
 mod wire;
 

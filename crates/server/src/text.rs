@@ -85,7 +85,7 @@ impl Text {
     }
 
     /// The bytes of a line without its end; empty past the last line.
-    fn line(&self, line: usize) -> Range<usize> {
+    pub(crate) fn line(&self, line: usize) -> Range<usize> {
         let len = self.string.len();
         let start = self.starts.get(line).copied().unwrap_or(len);
         let end = self.starts.get(line + 1).copied().unwrap_or(len);
@@ -102,6 +102,14 @@ impl Text {
             .partition_point(|&start| start <= offset)
             .saturating_sub(1);
         offset..self.line(line).end.max(offset)
+    }
+
+    /// The bytes from a column of a line, in characters from 0, to the end of that line.
+    pub(crate) fn line_from_column(&self, line: usize, column: usize) -> Range<usize> {
+        let line = self.line(line);
+        let content = self.string.get(line.clone()).unwrap_or_default();
+        let into = content.char_indices().nth(column);
+        line.start + into.map_or(content.len(), |(at, _)| at)..line.end
     }
 
     /// The byte offset of a place. A column past the end of its line counts as that end, and the

@@ -5,6 +5,7 @@
 
 use std::panic::{AssertUnwindSafe, catch_unwind};
 use std::sync::Arc;
+use std::sync::atomic::Ordering;
 use std::task::{Context, Poll};
 
 use futures::FutureExt;
@@ -19,7 +20,8 @@ use tower_lsp::lsp_types::{
 };
 
 use crate::convert;
-use crate::features::publish_diagnostics;
+use crate::features::{did_change_watched_files, publish_diagnostics};
+use crate::houses;
 use crate::lifecycle::State;
 use crate::server::Server;
 use crate::session::Session;
@@ -91,6 +93,13 @@ impl Wire {
         let begins = method == "initialize";
         let ends = method == "shutdown";
         // Some clients send null, some an empty object: `shutdown` has no parameters.
+        if begins && let Some(params) = &params {
+            // The library's type calls it by another name.
+            let refresh = "/capabilities/workspace/diagnostics/refreshSupport";
+            let refresh = params.pointer(refresh).and_then(Value::as_bool);
+            let keep = &session.refresh_findings;
+            keep.store(refresh == Some(true), Ordering::SeqCst);
+        }
         let request = Request::build(method).id(id.clone());
         let request = match params.filter(|_| !ends) {
             Some(params) => request.params(params),
@@ -138,6 +147,7 @@ impl Wire {
             self.session
                 .documents
                 .open(&document.uri, document.version, document.text);
+            did_change_watched_files::look(&self.session);
         }
     }
 
@@ -161,6 +171,8 @@ impl Wire {
             self.warn(format!(
                 "Version {version} of {uri} was not taken over, its text stays as it was: {why}."
             ));
+        } else if houses::is_house(&uri) {
+            did_change_watched_files::look(&self.session);
         }
     }
 
@@ -171,12 +183,15 @@ impl Wire {
         let uri = params.text_document.uri;
         let session = &self.session;
         let clear = || {
-            session
-                .outbox
-                .findings(&uri, None, publish_diagnostics::clear(&uri))
+            if !session.agreed().pull {
+                let none = publish_diagnostics::clear(&uri);
+                session.outbox.findings(&uri, None, none);
+            }
         };
         if !session.documents.close(&uri, clear) {
             self.warn(format!("{uri} cannot be closed: it is not open."));
+        } else if houses::is_house(&uri) {
+            did_change_watched_files::look(session);
         }
     }
 

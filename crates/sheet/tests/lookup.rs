@@ -197,10 +197,6 @@ fn one_trouble_is_told_once() {
             "cannot be a label",
         ),
         (
-            "metre 2/4\nS | G4 A | B\nB | G3 F | G - ||\n",
-            "ends with a bar line",
-        ),
-        (
             "voice S soprano\nvoice B bass\n\nS | G4 |\n| C3 |\n",
             "label is missing",
         ),

@@ -13,6 +13,7 @@ const OUTSIDE: &[(&str, usize)] = &[
     ("contrary consecutives in 231 pieces", 30),
     ("consecutives in 545 pieces", 1042),
     ("judged passages", 26),
+    ("scores written and read back", 545),
 ];
 
 pub(crate) fn run() -> Result<(), String> {

@@ -1,9 +1,10 @@
 //! JSON Lines: one object a finding, for programs.
 
-use partwright_check::{Finding, Related};
+use partwright_check::{Finding, Lifted, Related};
 use partwright_score::{BarPlace, show_time};
 use partwright_sheet::Span;
 use serde::Serialize;
+use serde_json::json;
 
 use super::Page;
 
@@ -22,8 +23,7 @@ struct Line<'a> {
     start: Option<Position>,
     end: Option<Position>,
     related: Vec<Other<'a>>,
-    /// Nothing is licensed yet.
-    licence: Option<()>,
+    licence: Option<Licence<'a>>,
 }
 
 /// A place in the text.
@@ -44,8 +44,24 @@ struct Other<'a> {
     end: Option<Position>,
 }
 
+/// The licence that lifts it; the mark is null for one of the whole sheet or of the house.
+#[derive(Serialize)]
+struct Licence<'a> {
+    mark: Option<&'a str>,
+    reason: &'a str,
+}
+
+impl<'a> Licence<'a> {
+    fn of(lifted: &'a Lifted) -> Licence<'a> {
+        Licence {
+            mark: lifted.mark.as_deref(),
+            reason: &lifted.reason,
+        }
+    }
+}
+
 /// A finding as one line of JSON, with its line end.
-pub(crate) fn json(page: &Page<'_>, finding: &Finding) -> Result<String, serde_json::Error> {
+pub(crate) fn line(page: &Page<'_>, finding: &Finding) -> String {
     let (start, end) = positions(page, finding.span);
     let line = Line {
         path: page.name,
@@ -54,11 +70,7 @@ pub(crate) fn json(page: &Page<'_>, finding: &Finding) -> Result<String, serde_j
         bar: finding.place.map(bar),
         beat: finding.place.map(|place| place.beat_text()),
         onset: finding.at.map(show_time),
-        voices: finding
-            .voices
-            .iter()
-            .map(|&voice| label(page, voice))
-            .collect(),
+        voices: finding.voices.iter().map(|&v| page.label(v)).collect(),
         message: &finding.message,
         start,
         end,
@@ -67,16 +79,19 @@ pub(crate) fn json(page: &Page<'_>, finding: &Finding) -> Result<String, serde_j
             .iter()
             .map(|related| other(page, related))
             .collect(),
-        licence: None,
+        licence: finding.licence.as_ref().map(Licence::of),
     };
-    serde_json::to_string(&line).map(|text| text + "\n")
+    // Nothing in it can fail; should it, the program that reads must see it.
+    serde_json::to_string(&line)
+        .unwrap_or_else(|error| json!({"path": page.name, "error": error.to_string()}).to_string())
+        + "\n"
 }
 
 fn other<'a>(page: &Page<'a>, related: &Related) -> Other<'a> {
     let (start, end) = positions(page, related.span);
     Other {
         role: related.role.word(),
-        voice: label(page, related.voice),
+        voice: page.label(related.voice),
         bar: bar(related.place),
         beat: related.place.beat_text(),
         start,
@@ -86,15 +101,6 @@ fn other<'a>(page: &Page<'a>, related: &Related) -> Other<'a> {
 
 fn bar(place: BarPlace) -> String {
     place.bar.to_string()
-}
-
-fn label<'a>(page: &Page<'a>, voice: usize) -> &'a str {
-    page.checked
-        .reading
-        .score
-        .voices
-        .get(voice)
-        .map_or("", |voice| &voice.label)
 }
 
 fn positions(page: &Page<'_>, span: Option<Span>) -> (Option<Position>, Option<Position>) {

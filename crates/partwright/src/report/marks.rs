@@ -84,7 +84,7 @@ fn primary_label(score: &Score, finding: &Finding) -> String {
     })
 }
 
-fn related_label(score: &Score, finding: &Finding, related: &Related) -> String {
+pub(super) fn related_label(score: &Score, finding: &Finding, related: &Related) -> String {
     let name = score.voice_name(related.voice);
     match related.role {
         Role::With => match sounding(score, finding, related.voice, related.at) {

@@ -45,11 +45,11 @@ impl Plain {
         self,
         page: &Page<'_>,
         findings: &[&Finding],
-        mut print: impl FnMut(&str),
+        mut print: impl FnMut(String),
     ) {
         let mut cutter = Cutter::new(page, self.width);
         for finding in findings {
-            print(&self.finding(page, &mut cutter, finding));
+            print(self.finding(page, &mut cutter, finding));
         }
     }
 
@@ -65,6 +65,13 @@ impl Plain {
     fn finding(self, page: &Page<'_>, cutter: &mut Cutter<'_>, finding: &Finding) -> String {
         let mut text = self.heading(page, finding);
         text.push_str(&block(&harmless(&finding.message), self.width, 2));
+        if let Some(lifted) = &finding.licence {
+            let licence = match &lifted.mark {
+                Some(mark) => format!("Licence *{mark}: {}", lifted.reason),
+                None => format!("Licence: {}", lifted.reason),
+            };
+            text.push_str(&block(&harmless(&licence), self.width, 2));
+        }
         let position = finding
             .span
             .map(|span| page.lines.position(span.start as usize));
@@ -86,10 +93,15 @@ impl Plain {
     /// `fault: parallel-fifths · bar 3, beat 2½ · soprano and bass`, on two lines where one is
     /// too short.
     fn heading(self, page: &Page<'_>, finding: &Finding) -> String {
-        let word = finding.severity.word();
+        let severity = finding.severity.word();
+        let (word, style) = match finding.licence {
+            // It is lawful here: no colour of warning.
+            Some(_) => (format!("licensed {severity}"), QUIET),
+            None => (severity.to_owned(), severity_style(finding.severity)),
+        };
         let painted = format!(
             "{}: {}",
-            self.paint(severity_style(finding.severity), word),
+            self.paint(style, &word),
             self.paint(heading(), finding.rule)
         );
         let mut place = Vec::new();

@@ -88,6 +88,11 @@ pub(crate) fn rows(text: &str, span: Range<usize>, first: usize) -> Vec<Row> {
         .collect()
 }
 
+/// Whether the line around an offset is a row of notes by its look: one word, then a bar line.
+pub(crate) fn is_music_row(text: &str, offset: usize) -> bool {
+    Row::of(text, 1, line_around(text, offset)).music
+}
+
 /// The line around an offset, without its end.
 pub(crate) fn line_around(text: &str, offset: usize) -> Range<usize> {
     let offset = offset.min(text.len());

@@ -1,14 +1,14 @@
 //! One rule whole: what it is, why, when, examples, what to do, and who says so.
 
 use partwright_rules::source::{Known, Stand};
-use partwright_rules::{Case, Entry, STYLES, Source, Style};
+use partwright_rules::{Case, Entry, STYLES, Severity, Source, Style};
 
-use super::severity;
+use super::{View, severity};
 use crate::prose::{block, list, wrap};
 use crate::report::{Plain, heading, severity_style};
 
 /// A rule's page, in every style or in one.
-pub(super) fn page(entry: &Entry, style: Option<Style>, look: Plain) -> String {
+pub(super) fn page(entry: &Entry, view: View<'_>, look: Plain) -> String {
     let mut text = format!("{} · {}\n", look.paint(heading(), &entry.id), entry.family);
     text.push_str(&block(&entry.page.title, look.width, 0));
     for paragraph in paragraphs(&entry.page.section("").unwrap_or_default()) {
@@ -20,7 +20,11 @@ pub(super) fn page(entry: &Entry, style: Option<Style>, look: Plain) -> String {
         if i > 0 {
             text.push('\n');
         }
-        text.push_str(&case_text(case, style, look));
+        text.push_str(&case_text(entry, case, view, look));
+    }
+    if let Some(house) = view.house() {
+        text.push('\n');
+        text.push_str(&house.changes(&[entry], false, look));
     }
     text.push_str(&sections(&entry.page.text, look));
     text.push_str(&title("Sources", look));
@@ -35,45 +39,47 @@ fn title(words: &str, look: Plain) -> String {
 }
 
 /// A case: when it applies, and what each style says to it. Styles that say the same share a line.
-fn case_text(case: &Case, style: Option<Style>, look: Plain) -> String {
+fn case_text(entry: &Entry, case: &Case, view: View<'_>, look: Plain) -> String {
     let mut text = block(&sentence(case.when), look.width, 2);
-    let mut said: Vec<(Option<_>, &str, Vec<Style>)> = Vec::new();
-    for style in STYLES
-        .into_iter()
-        .filter(|s| style.is_none_or(|wanted| wanted == *s))
-    {
+    if let View::House(house) = view {
+        let severity = house.severity(entry, case);
+        text.push_str(&said(severity, "", house.name(), look));
+    }
+    let mut all: Vec<(Option<_>, &str, Vec<Style>)> = Vec::new();
+    for style in STYLES.into_iter().filter(|style| view.shows(*style)) {
         let because = case.setting(style).map_or("", |setting| setting.because);
         let severity = severity(case, style);
-        match said
+        match all
             .iter_mut()
             .find(|(s, b, _)| (*s, *b) == (severity, because))
         {
             Some((.., styles)) => styles.push(style),
-            None => said.push((severity, because, vec![style])),
+            None => all.push((severity, because, vec![style])),
         }
     }
-    for (severity, because, styles) in said {
-        let word = severity.map_or("allowed", |severity| severity.word());
-        let painted = severity.map_or(word.to_owned(), |severity| {
-            look.paint(severity_style(severity), word)
-        });
-        let reason = if because.is_empty() {
-            String::new()
-        } else {
-            format!(": {because}")
-        };
-        let lines = wrap(
-            &format!("{} in {}{reason}", word, styles_text(&styles)),
-            look.width,
-            6,
-        );
-        let lines = lines.join("\n      ");
-        text.push_str(&format!(
-            "    - {painted}{}\n",
-            lines.strip_prefix(word).unwrap_or(&lines)
-        ));
+    for (severity, because, styles) in all {
+        text.push_str(&said(severity, because, &styles_text(&styles), look));
     }
     text
+}
+
+/// `weakness in motet: lighter in many voices`.
+fn said(severity: Option<Severity>, because: &str, styles: &str, look: Plain) -> String {
+    let word = severity.map_or("allowed", |severity| severity.word());
+    let painted = severity.map_or(word.to_owned(), |severity| {
+        look.paint(severity_style(severity), word)
+    });
+    let reason = if because.is_empty() {
+        String::new()
+    } else {
+        format!(": {because}")
+    };
+    let lines = wrap(&format!("{word} in {styles}{reason}"), look.width, 6);
+    let lines = lines.join("\n      ");
+    format!(
+        "    - {painted}{}\n",
+        lines.strip_prefix(word).unwrap_or(&lines)
+    )
 }
 
 /// The styles by name; all of them, and all the species, in a word.
@@ -175,9 +181,10 @@ fn source_text(source: &Source, width: usize) -> String {
         ..*source
     };
     let known = match source.known {
-        Known::Read => "read",
-        Known::FromMemory => "from memory",
-        Known::Counted => "counted in the music",
+        Known::Read => "read".to_owned(),
+        Known::AsGivenIn(text) => format!("as given in {text}"),
+        Known::FromMemory => "from memory".to_owned(),
+        Known::Counted => "counted in the music".to_owned(),
     };
     let stand = match (source.known, source.stand) {
         // A count is evidence, and says nothing.

@@ -1,8 +1,8 @@
 //! The catalogue as a table, by family.
 
-use partwright_rules::{Entry, STYLES, Severity, Style};
+use partwright_rules::{Entry, STYLES, Severity, catalogue};
 
-use super::strictest;
+use super::{View, strictest};
 use crate::prose::wrap;
 use crate::report::{Plain, heading, severity_style};
 
@@ -13,8 +13,8 @@ const MORE: &str =
     "A rule of several cases stands as its strictest. `partwright rules NAME` tells a rule whole.";
 
 /// The rules with how strictly each style takes them, or one style does: then only those that
-/// hold in it.
-pub(super) fn table(entries: &[&Entry], style: Option<Style>, look: Plain) -> String {
+/// hold in it. What the house style changes stands below.
+pub(super) fn table(entries: &[&Entry], view: View<'_>, look: Plain) -> String {
     let name = entries
         .iter()
         .map(|entry| entry.id.len())
@@ -22,13 +22,17 @@ pub(super) fn table(entries: &[&Entry], style: Option<Style>, look: Plain) -> St
         .unwrap_or(0)
         + 4;
     let mut text = String::new();
-    match style {
-        Some(style) => text.push_str(&format!(
+    match view {
+        View::Style(style) => text.push_str(&format!(
             "In the style {}: {}.\n",
             style.name(),
             style.summary()
         )),
-        None => {
+        View::House(house) => {
+            let words = format!("In the house style {}.", house.title());
+            text.push_str(&crate::prose::block(&words, look.width, 0));
+        }
+        View::All | View::AllAnd(_) => {
             text.push_str(LEGEND);
             text.push('\n');
             text.push_str(&headings(name, look));
@@ -37,12 +41,15 @@ pub(super) fn table(entries: &[&Entry], style: Option<Style>, look: Plain) -> St
     let mut family = "";
     let mut rules = 0;
     for entry in entries {
-        let row = match style {
+        let severity = match view {
+            View::All | View::AllAnd(_) => None,
+            View::Style(style) => Some(strictest(entry, style)),
+            View::House(house) => Some(house.strictest(entry)),
+        };
+        let row = match severity {
             None => letters(entry, name, look),
-            Some(style) => match strictest(entry, style) {
-                Some(severity) => one_style(entry, severity, name, look),
-                None => continue,
-            },
+            Some(Some(severity)) => one_style(entry, severity, name, look),
+            Some(None) => continue,
         };
         rules += 1;
         if entry.family != family {
@@ -55,6 +62,11 @@ pub(super) fn table(entries: &[&Entry], style: Option<Style>, look: Plain) -> St
         text.push_str("\nNo rule here yet.\n");
     }
     text.push('\n');
+    if let Some(house) = view.house() {
+        let all = entries.len() == catalogue().len();
+        text.push_str(&house.changes(entries, all, look));
+        text.push('\n');
+    }
     text.push_str(&crate::prose::block(MORE, look.width, 0));
     text
 }

@@ -1,5 +1,6 @@
 //! `textDocument/publishDiagnostics`: findings.
 
+use partwright_check::house::HouseError;
 use partwright_check::{Checked, Finding, Related, Role};
 use partwright_score::Score;
 use partwright_sheet::Span;
@@ -10,6 +11,7 @@ use tower_lsp::lsp_types::{
 
 use crate::convert;
 use crate::documents::{Outcome, Snapshot, Verdict};
+use crate::houses;
 use crate::session::{Agreed, notification};
 
 /// Whose findings they are.
@@ -39,8 +41,12 @@ pub(crate) fn diagnostics(outcome: &Outcome, agreed: Agreed) -> Vec<Diagnostic> 
     match &outcome.verdict {
         Verdict::Done(checked) => {
             let one = |finding| diagnostic(finding, checked, &outcome.snapshot, agreed);
-            checked.findings.iter().map(one).collect()
+            checked.open().map(one).collect()
         }
+        Verdict::House(trouble) => trouble
+            .iter()
+            .map(|trouble| house(trouble, &outcome.snapshot, agreed))
+            .collect(),
         Verdict::BrokeOff => vec![Diagnostic {
             range: convert::range(&outcome.snapshot.text, Span::new(0, 0), agreed.columns),
             severity: Some(DiagnosticSeverity::ERROR),
@@ -53,20 +59,45 @@ pub(crate) fn diagnostics(outcome: &Outcome, agreed: Agreed) -> Vec<Diagnostic> 
     }
 }
 
-fn diagnostic(
+/// What is wrong with a house style: from where it stands to the end of that line.
+fn house(trouble: &HouseError, snapshot: &Snapshot, agreed: Agreed) -> Diagnostic {
+    let text = &snapshot.text;
+    let elsewhere = houses::path(&snapshot.uri).is_none_or(|path| path != trouble.file);
+    let at = trouble.at.filter(|_| !elsewhere);
+    let span = at.map_or(Span::new(0, 0), |(line, column)| {
+        let rest = text.line_from_column(line.saturating_sub(1), column.saturating_sub(1));
+        Span::new(rest.start, rest.end)
+    });
+    Diagnostic {
+        range: convert::range(text, span, agreed.columns),
+        severity: Some(DiagnosticSeverity::ERROR),
+        source: Some(SOURCE.to_owned()),
+        message: if elsewhere {
+            trouble.to_string()
+        } else {
+            trouble.message.clone()
+        },
+        ..Diagnostic::default()
+    }
+}
+
+/// Where a finding is shown. What has no written part of its own stands at the label of its voice.
+pub(crate) fn span(finding: &Finding, checked: &Checked) -> Span {
+    let label = || {
+        let voice = *finding.voices.first()?;
+        checked.reading.label_span(voice, finding.at?)
+    };
+    finding.span.or_else(label).unwrap_or(Span::new(0, 0))
+}
+
+/// A finding.
+pub(crate) fn diagnostic(
     finding: &Finding,
     checked: &Checked,
     snapshot: &Snapshot,
     agreed: Agreed,
 ) -> Diagnostic {
     let range = |span| convert::range(&snapshot.text, span, agreed.columns);
-    // What has no written part of its own stands at the label of its voice.
-    let label = || {
-        checked
-            .reading
-            .label_span(*finding.voices.first()?, finding.at?)
-    };
-    let span = finding.span.or_else(label).unwrap_or(Span::new(0, 0));
     let related = finding.related.iter().filter_map(|related| {
         Some(DiagnosticRelatedInformation {
             location: Location {
@@ -78,7 +109,7 @@ fn diagnostic(
     });
     let related: Option<Vec<_>> = agreed.related.then(|| related.collect());
     Diagnostic {
-        range: range(span),
+        range: range(span(finding, checked)),
         severity: Some(convert::severity(finding.severity)),
         code: Some(NumberOrString::String(finding.rule.to_owned())),
         source: Some(SOURCE.to_owned()),

@@ -3,7 +3,7 @@
 use partwright_score::{Metre, Note, Time, ZERO};
 
 use super::left::Left;
-use super::measures::{Measure, Shape};
+use super::measures::{Measure, Shape, own};
 use super::music::{Music, during};
 
 /// The most parts of a cell.
@@ -17,19 +17,34 @@ pub(super) fn choose(
     music: &mut Music,
     left: &mut Left<'_>,
 ) {
-    let beat = beat(measures, music);
+    let long = |metre: &Metre| metre.unit() >= Time::new(1, 2);
+    // A beat that the score states for one such metre is the beat of the others too.
+    let stated = metres
+        .iter()
+        .filter(|metre| long(metre) && metre.cell() < metre.unit())
+        .map(Metre::cell)
+        .filter(|cell| *cell >= Time::new(1, 4));
+    let beat = stated.max().unwrap_or_else(|| beat(measures, music));
     let usual = |metre: &Metre| {
-        let settled = metre.is_free() || metre.cell() != metre.unit() || grouped(metre);
-        if settled || metre.unit() < Time::new(1, 2) {
-            metre.cell()
-        } else {
+        if long(metre) && metre.cell() == metre.unit() && !grouped(metre) {
             metre.unit().min(beat)
+        } else {
+            metre.cell()
         }
     };
     let usual: Vec<Time> = metres.iter().map(usual).collect();
     for (measure, of) in measures.iter_mut().zip(of) {
         let wished = usual.get(*of).copied().unwrap_or(ZERO);
-        let cell = fitting(measure, wished, music);
+        let mut cell = fitting(measure, wished, music);
+        // The cells of a free metre are crotchets: finer ones need a metre with figures.
+        if cell.is_none()
+            && measure.shape == Shape::Free
+            && let Some(metre) = own(measure.length(), &measure.metre)
+        {
+            measure.metre = metre;
+            measure.shape = Shape::Full;
+            cell = fitting(measure, wished, music);
+        }
         let cell = cell.unwrap_or_else(|| settle(measure, wished, music, left));
         measure.metre = told_in(&measure.metre, cell);
     }

@@ -98,9 +98,10 @@ pub(super) fn measures(score: &Score, music: &mut Music, left: &mut Left<'_>) ->
 fn stated(score: &Score, metres: &[Metre], end: Time) -> Vec<Raw> {
     let mut raws: Vec<Raw> = Vec::with_capacity(score.bars.len());
     for bar in &score.bars {
+        let from = bar.onset.max(ZERO);
         let raw = Raw {
-            from: bar.onset,
-            to: bar.onset + bar.length,
+            from,
+            to: from + bar.length,
             lead: bar.lead,
             metre: (bar.metre as usize).min(metres.len() - 1),
             number: Some(bar.number),
@@ -191,7 +192,7 @@ fn sayable(raws: Vec<Raw>, metres: &[Metre], left: &mut Left<'_>) -> Vec<Raw> {
             continue;
         };
         let free = |raw: &Raw| metre.is_free() && (raw.length() * 4).is_integer();
-        while !free(&raw) && own(raw.length(), metre).is_none() {
+        while raw.to > raw.from && !free(&raw) && own(raw.length(), metre).is_none() {
             left.at(
                 "Bars too long for a metre have more bar lines",
                 None,
@@ -219,7 +220,7 @@ fn sayable(raws: Vec<Raw>, metres: &[Metre], left: &mut Left<'_>) -> Vec<Raw> {
 }
 
 /// The metre of a bar of that length which is nearest to another metre, if there is one.
-fn own(length: Time, near: &Metre) -> Option<Metre> {
+pub(super) fn own(length: Time, near: &Metre) -> Option<Metre> {
     let unit = *near.unit().denom();
     let finer = (0..7)
         .map(|i| unit << i)
@@ -259,7 +260,6 @@ fn shaped(raws: &[Raw], metres: &[Metre]) -> Vec<Measure> {
                 short(shape)
                     && shape != Shape::FirstHalf
                     && before.closes
-                    && before.metre == raw.metre
                     && Some(before.length() + raw.length()) == base.bar_length()
             });
         out.push(Measure {

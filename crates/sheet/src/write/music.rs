@@ -10,7 +10,7 @@ use super::left::Left;
 /// The finest division of a whole note that is told apart, and the longest score in whole notes:
 /// far beyond any music, and small enough that sums of moments stay exact.
 const FINEST: i64 = 1 << 20;
-const LONGEST: i64 = 1 << 16;
+const LONGEST: i64 = 1 << 13;
 
 /// What every voice does, and where the last ends.
 pub(super) struct Music {
