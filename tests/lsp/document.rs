@@ -169,12 +169,23 @@ impl Document {
 
     /// The byte offset of a position of the server's, which must be one of this text.
     pub(crate) fn offset(&self, position: &Value) -> usize {
-        let mut places = self.text.char_indices().map(|(at, _)| at);
-        let end = self.text.len();
-        places
-            .find(|&at| self.position(at) == *position)
-            .or_else(|| (self.position(end) == *position).then_some(end))
-            .unwrap_or_else(|| panic!("{position} in {:?}", self.text))
+        let (line, column) = (position["line"].as_u64(), position["character"].as_u64());
+        let bytes = self.text.as_bytes();
+        let ends = (0..bytes.len()).filter(|&at| {
+            bytes[at] == b'\n' || (bytes[at] == b'\r' && bytes.get(at + 1) != Some(&b'\n'))
+        });
+        let mut starts = std::iter::once(0).chain(ends.map(|at| at + 1));
+        let start = starts.nth(usize::try_from(line.unwrap()).unwrap());
+        let start = start.unwrap_or_else(|| panic!("{position} in {:?}", self.text));
+        let rest = &self.text[start..];
+        let length = rest.find(['\r', '\n']).unwrap_or(rest.len());
+        let mut places = rest[..length]
+            .char_indices()
+            .map(|(at, _)| at)
+            .chain([length]);
+        let column = usize::try_from(column.unwrap()).unwrap();
+        let at = places.find(|&at| self.columns.count(&rest[..at]) == column);
+        start + at.unwrap_or_else(|| panic!("{position} in {:?}", self.text))
     }
 
     /// What stands in a range of the server's.

@@ -11,6 +11,7 @@ equal S A
 licence spacing S: S sings far out
 voice S soprano
 voice A alto doubles S
+voice B bass
 
 S | D5 E*horn | D5 |
 A | =S-8      | D4 |

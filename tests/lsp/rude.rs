@@ -2,7 +2,7 @@
 
 use serde_json::{Value, json};
 
-use crate::client::{Client, capabilities_and};
+use crate::client::Client;
 use crate::document::{Columns, Document, FIFTHS};
 
 /// Every request about a document and a place in it.
@@ -30,7 +30,7 @@ fn everything(uri: &str, position: Value) -> Value {
         "position": position,
         "positions": [position],
         "range": { "start": position, "end": position },
-        "context": { "diagnostics": [], "includeDeclaration": true },
+        "context": { "diagnostics": [], "includeDeclaration": true, "triggerKind": 1 },
         "newName": "X",
         "ch": "|",
         "options": { "tabSize": 4, "insertSpaces": true },
@@ -58,10 +58,7 @@ fn every_request_is_answered_about_a_document_that_is_not_open() {
 
 #[test]
 fn every_request_is_answered_wherever_it_points() {
-    let mut client = Client::start().introduced(capabilities_and(&[(
-        "/textDocument/codeAction/codeActionLiteralSupport",
-        json!({}),
-    )]));
+    let mut client = crate::actions::client(&[]);
     let texts = [
         "",
         "\n",

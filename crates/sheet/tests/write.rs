@@ -2,6 +2,8 @@
 
 #![allow(clippy::unwrap_used, clippy::panic)]
 
+#[path = "write/forms.rs"]
+mod forms;
 #[path = "write/made.rs"]
 mod made;
 
@@ -51,10 +53,13 @@ fn notes(notes: &[Note], end: Time) -> Vec<Note> {
 
 fn tempos(reading: &Reading) -> Vec<(Time, Tempo)> {
     let first = reading.head.tempo.iter().map(|tempo| (ZERO, tempo.value));
-    let later = reading.changes.iter().filter_map(|change| match change.what {
-        Changed::Tempo(tempo) => Some((change.at, tempo)),
-        _ => None,
-    });
+    let later = reading
+        .changes
+        .iter()
+        .filter_map(|change| match change.what {
+            Changed::Tempo(tempo) => Some((change.at, tempo)),
+            _ => None,
+        });
     first.chain(later).collect()
 }
 
@@ -113,7 +118,12 @@ fn check(made: &Made) -> Result<(), TestCaseError> {
     let title = reading.head.title.as_ref().map(|title| title.value.clone());
     prop_assert_eq!(title, heading.title.clone());
     let asked_tempos = heading.tempos.iter().map(|tempo| (tempo.from, tempo.value));
-    prop_assert_eq!(tempos(&reading), asked_tempos.collect::<Vec<_>>(), "{}", text);
+    prop_assert_eq!(
+        tempos(&reading),
+        asked_tempos.collect::<Vec<_>>(),
+        "{}",
+        text
+    );
     prop_assert_eq!(sung(&reading), asked(heading), "{}", text);
     // What was read is written again without loss.
     let again = write(found, heading);

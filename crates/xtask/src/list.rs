@@ -32,7 +32,10 @@ fn text(files: &[(String, String)]) -> String {
     let mut text = String::from(
         "//! The rule files. Written by `cargo xtask list`; do not edit.\n\nuse crate::catalogue::File;\n\n",
     );
-    for (family, stem) in files {
+    // The modules by name, as the formatter would have them; the table by family.
+    let mut by_name: Vec<_> = files.iter().collect();
+    by_name.sort_by(|a, b| a.1.cmp(&b.1));
+    for (family, stem) in by_name {
         let _ = writeln!(
             text,
             "#[path = \"rules/{family}/{stem}.rs\"]\npub mod {stem};"

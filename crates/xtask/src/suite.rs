@@ -62,10 +62,12 @@ pub(crate) fn run() -> Result<(), String> {
             "demo-scores",
         ]),
     )?;
-    let nvim = tools::neovim()?;
     step(
-        "Neovim shows the findings",
-        cargo(&["test", "--test", "editors", "--", "--nocapture"]).env("PARTWRIGHT_NVIM", &nvim),
+        "real editors show the findings, mend and grant licences",
+        cargo(&["test", "--test", "editors", "--", "--nocapture"])
+            .env("PARTWRIGHT_NVIM", tools::neovim()?)
+            .env("PARTWRIGHT_EMACS", tools::emacs()?)
+            .env("PARTWRIGHT_NPM", tools::vscode_extension()?),
     )?;
     if std::env::var_os("CI").is_some() {
         step(

@@ -77,7 +77,9 @@ pub(super) fn changes(
         let Some(index) = place(change, "Tempos", measures, left) else {
             continue;
         };
-        let cell = score.bar_at(tame(change.from)).and_then(|i| score.bars.get(i));
+        let cell = score
+            .bar_at(tame(change.from))
+            .and_then(|i| score.bars.get(i));
         let cell = cell.and_then(|bar| score.metres.get(bar.metre as usize));
         let unit = change.value.unit;
         let unit = unit.or_else(|| cell.filter(|_| cells).map(|metre| metre.cell()));

@@ -92,9 +92,7 @@ fn sings(notes: &[Note], measures: &[Measure], at: Time) -> bool {
     let from = bar.map_or(ZERO, |bar| bar.from);
     let before = during(notes, from, at).start.min(index)..index;
     let mut before = notes.get(before).unwrap_or_default().iter();
-    let struck = notes
-        .get(index)
-        .is_some_and(|n| n.sound.pitch().is_some());
+    let struck = notes.get(index).is_some_and(|n| n.sound.pitch().is_some());
     struck && before.all(|note| !note.sound.is_unknown())
 }
 

@@ -354,18 +354,32 @@ pub(crate) fn wild() -> impl Strategy<Value = Made> {
         1 => Just(Sound::Unwritten),
         1 => Just(Sound::Spoilt),
     ];
-    let note = (any_time(), any_time(), sound, any::<(bool, bool, Option<u8>)>()).prop_map(
-        |(onset, length, sound, (fermata, breath, copies))| Note {
+    let note = (
+        any_time(),
+        any_time(),
+        sound,
+        any::<(bool, bool, Option<u8>)>(),
+    )
+        .prop_map(|(onset, length, sound, (fermata, breath, copies))| Note {
             onset,
             length,
             sound,
             fermata,
             breath,
             copies: copies.filter(|n| *n < 20),
-        },
-    );
+        });
     let name = select(vec![
-        "", "S", "S", "Soprano", "words", "Ж", "two\nlines", "// x", "1", "Violin II", "a|b",
+        "",
+        "S",
+        "S",
+        "Soprano",
+        "words",
+        "Ж",
+        "two\nlines",
+        "// x",
+        "1",
+        "Violin II",
+        "a|b",
     ]);
     let voice = (name, vec(note, 0..8), 0_usize..6).prop_map(|(name, notes, doubles)| {
         let mut voice = Voice::new(name, &KINDS[doubles]);
@@ -375,7 +389,14 @@ pub(crate) fn wild() -> impl Strategy<Value = Made> {
         voice.clef = Some(name.to_owned());
         voice
     });
-    let bar = (any::<u32>(), any_time(), any_time(), any_time(), 0_u32..4, any::<bool>());
+    let bar = (
+        any::<u32>(),
+        any_time(),
+        any_time(),
+        any_time(),
+        0_u32..4,
+        any::<bool>(),
+    );
     let bar = bar.prop_map(|(number, onset, length, lead, metre, section_end)| Bar {
         number: number % 9,
         onset,
