@@ -74,13 +74,13 @@ fn lines_and_bars_may_move_and_notes_may_not() {
     assert_eq!(ran.said(&["; 4 known."]), 0);
     // The same fault twice where one was known: one is new.
     let twice = FLAWED
-        .replace("| D5 E |", "| D5 E | D5 E |")
-        .replace("| G3 A |", "| G3 A | G3 A |");
+        .replace("| D5 E |", "| D5 E | C5 C | D5 E |")
+        .replace("| G3 A |", "| G3 A | E3 E | G3 A |");
     folder.write("hymns/a.voices", twice.as_bytes());
     let ran = check(&folder);
     assert_eq!(ran.said(&["1 fault in 1 of 2 sheets; 4 known."]), 1);
     assert!(
-        ran.out.contains("bar 2, beat 2"),
+        ran.out.contains("bar 3, beat 2"),
         "the bar that is right goes first: {}",
         ran.out
     );

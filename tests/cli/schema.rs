@@ -18,8 +18,11 @@ fn file(name: &str) -> PathBuf {
 fn the_committed_schema_is_the_one_of_the_code() {
     let path = file("partwright.schema.json");
     let wanted = format!("{:#}\n", schema());
-    let there = fs::read_to_string(&path).unwrap_or_default();
-    if there.replace('\r', "") != wanted {
+    // The order of keys is no part of a schema, and hangs on what else is built.
+    let there = fs::read_to_string(&path)
+        .ok()
+        .and_then(|text| serde_json::from_str(&text).ok());
+    if there != Some(schema()) {
         fs::write(&path, wanted).unwrap();
         panic!("the schema was stale and is rewritten: look at it and commit it");
     }

@@ -88,6 +88,9 @@ fn only_the_kinds_asked_for() {
         ["quickfix", "source.fixAll"]
     );
     assert_eq!(kinds(&mut client, json!(["refactor", "quick"])), [""; 0]);
+    // Fixing all is about the whole sheet: it is there only where it is asked for.
+    let unasked = document.actions_in(&mut client, whole.clone(), json!({}));
+    assert!(unasked.len() > 1 && unasked.iter().all(|a| a["kind"] == "quickfix"));
     client.goodbye();
 }
 

@@ -41,7 +41,7 @@ fn a_label_leads_to_its_declaration() {
         "S A\n",
         "S: S",
         "S soprano",
-        "S\n\n",
+        "S\nvoice B",
         "S | D5",
         "S-8",
         "S 1",

@@ -1,7 +1,7 @@
 //! After any edits the server knows the text the client has: what it finds and shows is what it
 //! finds and shows in the same text opened afresh.
 
-use serde_json::Value;
+use serde_json::{Value, json};
 
 use crate::client::{Client, capabilities};
 use crate::document::{Columns, Document};
@@ -55,6 +55,8 @@ const PIECES: &[&str] = &[
     "=S",
     "*a",
     "*a licence parallel-fifths: so\n",
+    "\u{feff}",
+    "B4 C\r\n",
     "5",
     "G",
 ];
@@ -102,10 +104,50 @@ fn seen(findings: &[Value], uri: &str) -> Vec<String> {
         .collect()
 }
 
+/// The two documents are the same to every feature that tells of a whole document, and every edit
+/// that is offered can be made.
+fn same_in_all(client: &mut Client, edited: &Document, fresh: &Document, seed: u64) {
+    let text = &edited.text;
+    let more = json!({
+        "range": edited.range(0..text.len()),
+        "options": { "tabSize": 4, "insertSpaces": true },
+        "context": { "diagnostics": [] },
+    });
+    let methods = [
+        "documentSymbol",
+        "foldingRange",
+        "semanticTokens/full",
+        "inlayHint",
+        "formatting",
+        "codeAction",
+    ];
+    for method in methods {
+        let mut ask = |document: &Document| {
+            let result = document.ask(client, method, more.clone());
+            // Edits are taken apart here, where their document is known.
+            for action in result
+                .as_array()
+                .filter(|_| method == "codeAction")
+                .unwrap_or(&vec![])
+            {
+                assert_ne!(&document.with_workspace(&action["edit"]), text, "{action}");
+            }
+            result.to_string().replace(&document.uri, "")
+        };
+        assert_eq!(ask(edited), ask(fresh), "{method} {seed} {text:?}");
+    }
+    let edits = edited.ask(client, "formatting", more.clone());
+    let aligned = edited.with(edits.as_array().unwrap());
+    assert_eq!(aligned, partwright_sheet::align(text), "{seed} {text:?}");
+}
+
 #[test]
 fn after_any_edits_all_is_as_in_the_text_opened_afresh() {
     for columns in [Columns::Utf16, Columns::Utf8] {
-        let mut client = Client::start().introduced(capabilities(&[columns.name()]));
+        let mut all = capabilities(&[columns.name()]);
+        let kinds = json!({ "codeActionKind": { "valueSet": ["quickfix"] } });
+        all["textDocument"]["codeAction"] = json!({ "codeActionLiteralSupport": kinds });
+        let mut client = Client::start().introduced(all);
         for seed in 0..40 {
             let mut random = Random(seed);
             let uri = format!("file:///edited-{seed}.voices");
@@ -146,6 +188,7 @@ fn after_any_edits_all_is_as_in_the_text_opened_afresh() {
                     "{columns:?} {seed} {at} {text:?}"
                 );
             }
+            same_in_all(&mut client, &document, &fresh, seed);
             document.close(&mut client);
             fresh.close(&mut client);
         }

@@ -99,12 +99,9 @@ pub(crate) fn declared(text: &str) -> Vec<&str> {
                 in_system = true;
                 found.push(word);
             }
-            Kind::Header | Kind::Empty if in_system && line.word.is_empty() => {
-                // A comment goes on, a blank line ends the system.
-                if line.span.len() == line.comment - line.span.start {
-                    break;
-                }
-            }
+            Kind::Header if in_system => break,
+            // A comment goes on, a blank line ends the system.
+            Kind::Empty if in_system && line.comment == line.span.end => break,
             _ => {}
         }
     }

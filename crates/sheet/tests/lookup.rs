@@ -185,10 +185,6 @@ fn one_trouble_is_told_once() {
             "no marks",
         ),
         (
-            "S | G4 A5*a\n*a licence line: the bell\n",
-            "ends with a bar line",
-        ),
-        (
             "metre 2/4\nS | G4 A B*a ||\n*a licence line: the bell\n",
             "too long",
         ),

@@ -11,7 +11,9 @@ use std::collections::BTreeMap;
 
 use made::{Made, made, wild};
 use partwright_score::{Bar, Note, Score, Sound, Time, ZERO};
-use partwright_sheet::{Changed, Heading, ProblemKind, Reading, Sheet, Tempo, Written, write};
+use partwright_sheet::{
+    Changed, Heading, ProblemKind, Reading, Sheet, Tempo, Written, align, write,
+};
 use proptest::prelude::*;
 
 fn read(text: &str) -> Reading {
@@ -90,6 +92,7 @@ fn check(made: &Made) -> Result<(), TestCaseError> {
     let Made { score, heading } = made;
     let Written { text, left_behind } = write(score, heading);
     prop_assert_eq!(left_behind, Vec::<String>::new(), "{}", text);
+    prop_assert_eq!(&align(&text), &text);
     let reading = read(&text);
     prop_assert_eq!(wrong(&reading), Vec::<String>::new(), "{}", text);
     let found = &reading.score;
@@ -137,8 +140,8 @@ fn check(made: &Made) -> Result<(), TestCaseError> {
 proptest! {
     #![proptest_config(ProptestConfig {
         failure_persistence: None,
-        max_shrink_iters: 60,
-        ..ProptestConfig::with_cases(400)
+        max_shrink_iters: 1000,
+        ..ProptestConfig::with_cases(250)
     })]
 
     #[test]

@@ -69,6 +69,12 @@ pub(crate) fn run() -> Result<(), String> {
             .env("PARTWRIGHT_EMACS", tools::emacs()?)
             .env("PARTWRIGHT_NPM", tools::vscode_extension()?),
     )?;
+    let pre_commit = tools::pre_commit()?;
+    step(
+        "git hooks refuse, align and mend under pre-commit",
+        cargo(&["test", "--test", "precommit", "--", "--nocapture"])
+            .env("PARTWRIGHT_PRE_COMMIT", &pre_commit),
+    )?;
     if std::env::var_os("CI").is_some() {
         step(
             "nothing generated was stale",

@@ -7,7 +7,7 @@ use std::collections::BTreeMap;
 
 use partwright_check::{Checked, Filter, Finding, Severity, Wishes};
 use partwright_score::{Score, Time};
-use partwright_sheet::{Edit, align, apply};
+use partwright_sheet::{Edit, Span, apply};
 
 use super::writing::{self, Mend};
 use crate::arguments::Scope;
@@ -55,8 +55,8 @@ pub(crate) fn settle(text: &str, wishes: &Wishes, wanted: &Wanted<'_>) -> Settle
             break;
         }
     }
-    if !state.done.is_empty() && align(text) == text {
-        state.columns();
+    if !state.done.is_empty() {
+        state.columns(&before, text);
     }
     Settled {
         text: state.text,
@@ -192,9 +192,21 @@ impl State<'_> {
         is.total() < was.total() && is.nowhere_above(was) && !new
     }
 
-    /// Sets the sheet in columns, as it stood before.
-    fn columns(&mut self) {
-        let text = align(&self.text);
+    /// Sets in columns what stood in columns before: systems, or the whole sheet.
+    fn columns(&mut self, before: &Checked, text: &str) {
+        let mut edits = self.checked.sheet.align_edits();
+        let edits_before = before.sheet.align_edits();
+        if !edits_before.is_empty() {
+            let (were, are) = (systems(before, text), systems(&self.checked, &self.text));
+            // Where there are other systems than before, nobody can say which is which.
+            let pairs = were.iter().zip(&are).filter(|_| were.len() == are.len());
+            let kept: Vec<Span> = pairs
+                .filter(|(was, _)| !edits_before.iter().any(|edit| within(edit.span, **was)))
+                .map(|(_, is)| *is)
+                .collect();
+            edits.retain(|edit| kept.iter().any(|system| within(edit.span, *system)));
+        }
+        let text = apply(&self.text, &edits);
         let checked = Checked::text(&text, self.wishes);
         let alike = checked.reading.score == self.checked.reading.score;
         if alike && Weight::of(&checked).nowhere_above(Weight::of(&self.checked)) {
@@ -231,6 +243,32 @@ impl State<'_> {
         let (line, _) = partwright_sheet::line_column(&self.text, at as usize);
         format!("line {line}: {}", mend.title)
     }
+}
+
+/// The systems of a sheet with the comments behind them, in order.
+fn systems(checked: &Checked, text: &str) -> Vec<Span> {
+    let mut systems: Vec<Span> = Vec::new();
+    let mut offset = 0;
+    for line in text.split_inclusive('\n') {
+        let end = offset + line.len();
+        match (checked.reading.system_at(offset), systems.last_mut()) {
+            (Some(system), Some(last)) if system.start <= last.end => {
+                last.end = last.end.max(system.end);
+            }
+            (Some(system), _) => systems.push(system),
+            // Marks drawn under the last row.
+            (None, Some(last)) if line.starts_with("//") && last.end as usize + 2 >= offset => {
+                last.end = Span::new(end, end).start;
+            }
+            (None, _) => {}
+        }
+        offset = end;
+    }
+    systems
+}
+
+fn within(span: Span, system: Span) -> bool {
+    system.start <= span.start && span.end <= system.end
 }
 
 /// What makes a finding the same in two states of a sheet: one without a place in the music is

@@ -6,6 +6,8 @@
 
 mod licence;
 
+use std::cell::OnceCell;
+use std::collections::BTreeMap;
 use std::ops::Range;
 use std::sync::{Arc, PoisonError};
 
@@ -123,6 +125,7 @@ pub(crate) fn actions(
     let mut maker = Maker {
         offered: Vec::new(),
         licensed: Vec::new(),
+        mark: OnceCell::new(),
         outcome,
         checked,
         agreed,
@@ -140,7 +143,9 @@ pub(crate) fn actions(
             maker.licences(index, &mut made);
         }
     }
-    if wants(&question.context, &CodeActionKind::SOURCE_FIX_ALL) {
+    // Only where it is asked for: it is about the whole sheet, and no part of a menu on a note.
+    let fix_all_wanted = question.context.only.is_some();
+    if fix_all_wanted && wants(&question.context, &CodeActionKind::SOURCE_FIX_ALL) {
         let edits = fix_all(checked, outcome.snapshot.text.as_str());
         if !edits.is_empty() {
             made.push(CodeAction {
@@ -164,6 +169,8 @@ struct Maker<'a> {
     offered: Vec<(usize, usize, Pitch, usize)>,
     /// The parts and rules for which a licence is offered already.
     licensed: Vec<(Option<Span>, &'static str)>,
+    /// A mark that is free.
+    mark: OnceCell<String>,
 }
 
 impl Maker<'_> {
@@ -253,7 +260,10 @@ impl Maker<'_> {
             }
             return;
         }
-        if let Some(grant) = licence::grant(self.checked, text, finding) {
+        if let Some(grant) = licence::grant(self.checked, text, finding, || {
+            let mark = self.mark.get_or_init(|| licence::fresh_mark(text));
+            mark.clone()
+        }) {
             // Several findings of one rule on one part need one licence only.
             let place = (finding.span, finding.rule);
             if self.licensed.contains(&place) {
@@ -289,7 +299,8 @@ impl Maker<'_> {
 /// The edits of writing that need no choice: octave figures as they are read now, idle licences,
 /// and headers whose right form is beyond doubt.
 fn fix_all(checked: &Checked, text: &str) -> Vec<Edit> {
-    let mut edits: Vec<Edit> = Vec::new();
+    // By where they begin; none touches another.
+    let mut edits: BTreeMap<u32, Edit> = BTreeMap::new();
     for finding in checked.open() {
         let wanted: Option<Vec<Edit>> = match (finding.rule, &finding.offers[..]) {
             ("octave-doubt", offers) => as_read(checked, finding, offers),
@@ -305,16 +316,16 @@ fn fix_all(checked: &Checked, text: &str) -> Vec<Edit> {
         };
         let Some(wanted) = wanted else { continue };
         let free = |new: &Edit| {
-            !edits
-                .iter()
-                .any(|old| old.span.start <= new.span.end && new.span.start <= old.span.end)
+            let mut before = edits.range(..=new.span.end);
+            before
+                .next_back()
+                .is_none_or(|(_, old)| old.span.end < new.span.start)
         };
         if wanted.iter().all(free) {
-            edits.extend(wanted);
+            edits.extend(wanted.into_iter().map(|edit| (edit.span.start, edit)));
         }
     }
-    edits.sort_by_key(|edit| edit.span.start);
-    edits
+    edits.into_values().collect()
 }
 
 /// The offer that writes down what is read anyway.

@@ -6,6 +6,7 @@
 use std::cell::OnceCell;
 
 use super::Room;
+use super::display::blanks;
 use crate::chars::is_blank;
 
 /// The most rows above a comment in which the note of a mark is looked for.
@@ -81,7 +82,7 @@ impl<'a> Drawn<'a> {
         out.push_str("//");
         column += 2;
         for (start, group) in starts.into_iter().zip(groups) {
-            out.extend(std::iter::repeat_n(' ', start - column));
+            blanks(&mut out, start - column);
             out.extend(std::iter::repeat_n('^', group.width));
             column = start + group.width;
         }

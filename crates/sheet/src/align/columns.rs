@@ -3,9 +3,8 @@
 use std::borrow::Cow;
 use std::ops::Range;
 
-use unicode_width::UnicodeWidthStr;
-
 use super::SetLine;
+use super::display::{blanks, width};
 use crate::Span;
 
 /// A cell, a bar line or what else stands in a column of its own.
@@ -57,7 +56,7 @@ impl<'a> Columns<'a> {
         self.items.push(Item {
             slot,
             row: crate::system::small(self.rows.len()),
-            width: text.width(),
+            width: width(&text),
             text,
             reaches,
             at: 0,
@@ -75,44 +74,41 @@ impl<'a> Columns<'a> {
             let own = item.text.to_mut();
             own.push(' ');
             own.push_str(text);
-            item.width += 1 + text.width();
+            item.width += 1 + width(text);
         }
     }
 
     /// The lines of the rows; nothing if together they would take more than `most` bytes.
     pub(super) fn lines(mut self, most: usize) -> Option<Vec<SetLine>> {
-        let labels = self.rows.iter().map(|row| row.label.width());
+        let labels = self.rows.iter().map(|row| width(&row.label));
         let labels = labels.max().unwrap_or(0);
         place(&mut self.items, self.rows.len(), labels);
-        let mut size = 0;
+        let mut left = most;
+        let mut lines = Vec::with_capacity(self.rows.len());
         for row in &self.rows {
             let items = self.items.get(row.items.clone()).unwrap_or_default();
-            // In columns, and the bytes that are more than columns.
-            let columns = items.last().map_or(0, |item| item.at + item.width);
-            let more = items.iter().map(|item| item.text.len());
-            size += columns + more.sum::<usize>() + row.label.len();
-            if size > 2 * most {
-                return None;
-            }
-        }
-        let lines = self.rows.iter().map(|row| {
-            let items = self.items.get(row.items.clone()).unwrap_or_default();
-            let columns = items.last().map_or(0, |item| item.at + item.width);
-            let mut text = String::with_capacity(columns + columns / 8);
+            let ends = items.iter().map(|item| item.at + item.width);
+            let ends = std::iter::once(width(&row.label)).chain(ends);
+            let gaps = items
+                .iter()
+                .zip(ends)
+                .map(|(item, end)| item.at.saturating_sub(end));
+            let words = items.iter().map(|item| item.text.len());
+            let length = row.label.len() + gaps.clone().sum::<usize>() + words.sum::<usize>();
+            left = left.checked_sub(length)?;
+            let mut text = String::with_capacity(length);
             text.push_str(&row.label);
-            let mut end = row.label.width();
-            for item in items {
-                text.extend(std::iter::repeat_n(' ', item.at.saturating_sub(end)));
+            for (item, gap) in items.iter().zip(gaps) {
+                blanks(&mut text, gap);
                 text.push_str(&item.text);
-                end = item.at + item.width;
             }
-            SetLine {
+            lines.push(SetLine {
                 line: row.line,
                 text,
                 comment: row.comment,
-            }
-        });
-        Some(lines.collect())
+            });
+        }
+        Some(lines)
     }
 }
 

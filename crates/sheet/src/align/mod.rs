@@ -16,12 +16,13 @@
 
 mod carets;
 mod columns;
+mod display;
 mod rows;
 mod spelling;
 mod strikes;
 mod values;
 
-use unicode_width::UnicodeWidthStr;
+use display::{blanks, width};
 
 use crate::lines::{LineKind, lines};
 use crate::sheet::{Block, Placed, Tree};
@@ -148,16 +149,17 @@ fn comments(set: &mut [SetLine], text: &str, room: &mut Room) -> Option<()> {
         a.comment.is_some() && b.comment.is_some() && matches!(between, Some("\n" | "\r\n"))
     };
     for group in set.chunk_by_mut(neighbours) {
-        let width = group.iter().map(|line| line.text.width()).max();
+        let commented = group.iter().filter(|line| line.comment.is_some());
+        let column = 1 + commented.map(|line| width(&line.text)).max().unwrap_or(0);
         for line in group {
             let old = line.line.range().len();
             let Some(comment) = line.comment else {
                 room.change(old, line.text.len())?;
                 continue;
             };
-            let blanks = 1 + width.unwrap_or(0) - line.text.width();
-            room.change(old, line.text.len() + blanks + comment.range().len())?;
-            line.text.extend(std::iter::repeat_n(' ', blanks));
+            let gap = column - width(&line.text);
+            room.change(old, line.text.len() + gap + comment.range().len())?;
+            blanks(&mut line.text, gap);
             line.text
                 .push_str(text.get(comment.range()).unwrap_or_default());
         }

@@ -3,9 +3,9 @@
 use std::borrow::Cow;
 
 use partwright_score::Kind;
-use unicode_width::UnicodeWidthStr;
 
 use super::SetLine;
+use super::display::{blanks, width};
 use super::spelling::{ascii_signs, spelt};
 use crate::Span;
 use crate::chars::{Word, after_blanks, comment_at, free_text, plain};
@@ -74,7 +74,7 @@ impl Columns {
                     kind,
                     options,
                 } => {
-                    labels = labels.max(label.width());
+                    labels = labels.max(width(label));
                     // Options stand behind the kinds that have some.
                     let kind = kind.filter(|_| !options.is_empty());
                     kinds = kinds.max(kind.map_or(0, str::len));
@@ -93,8 +93,8 @@ impl Columns {
     fn set(&self, text: &str, found: &Found<'_>) -> SetLine {
         let mut out = String::new();
         let to = |out: &mut String, column: usize| {
-            let blanks = column.saturating_sub(out.width());
-            out.extend(std::iter::repeat_n(' ', blanks));
+            let end = width(out);
+            blanks(out, column.saturating_sub(end));
         };
         match &found.line {
             Line::Header(name, value) => {

@@ -271,14 +271,11 @@ fn declarations(out: &mut String, score: &Score, labels: &[Label], left: &mut Le
         out.push('\n');
     }
     let labels = labels.get(..MOST_VOICES).unwrap_or(labels);
-    let width = labels.iter().map(|l| l.label.len()).max().unwrap_or(0);
-    let kinds = labels.iter().map(|l| l.kind.name.len());
-    let kind_width = kinds.max().unwrap_or(0);
     let mut doubled = vec![None; labels.len()];
     for (index, (voice, label)) in score.voices.iter().zip(labels).enumerate() {
-        let mut declared = format!("voice {:<width$}", label.label);
+        let mut declared = format!("voice {}", label.label);
         if label.kind.ordinary.is_some() {
-            let _ = write!(declared, " {:<kind_width$}", label.kind.name);
+            let _ = write!(declared, " {}", label.kind.name);
         }
         for option in options(voice) {
             let line = format!("{} {option}", label.label);
@@ -302,7 +299,7 @@ fn declarations(out: &mut String, score: &Score, labels: &[Label], left: &mut Le
         if let Some(name) = &label.name {
             let _ = write!(declared, " // {name}");
         }
-        let _ = writeln!(out, "{}", declared.trim_end());
+        let _ = writeln!(out, "{declared}");
     }
 }
 

@@ -2,8 +2,8 @@
 //!
 //! In order: the voices without gaps or overlaps (`music`), the bars as a sheet can say them
 //! (`measures`) and the cells they are told in (`beats`), then the text: headers and voices
-//! (`names`, `heading`), and the systems (`cells`, `words`, `systems`). What finds no place in a
-//! sheet is gathered on the way (`left`).
+//! (`names`, `heading`), and the systems (`cells`, `words`, `systems`). It comes out aligned. What
+//! finds no place in a sheet is gathered on the way (`left`).
 
 mod beats;
 mod cells;
@@ -89,7 +89,7 @@ pub fn write(score: &Score, heading: &Heading) -> Written {
         ));
     }
     Written {
-        text,
+        text: crate::align(&text),
         left_behind: left.sentences(),
     }
 }

@@ -1,4 +1,4 @@
-//! The systems: as many bars in a row as fit, beats in columns.
+//! The systems: as many bars in a row as fit once beats stand in columns.
 
 use unicode_width::UnicodeWidthStr;
 
@@ -40,20 +40,11 @@ impl Column {
         self.widths.iter().sum::<usize>() + gaps
     }
 
-    /// The cells of a row in their columns.
+    /// The cells of a row.
     fn row(&self, row: usize) -> String {
-        let mut out = String::new();
         let cells = self.rows.get(row).map_or(&[][..], Vec::as_slice);
-        for (i, width) in self.widths.iter().enumerate() {
-            let cell = cells.get(i).map_or("", String::as_str);
-            if i > 0 {
-                out.push(' ');
-            }
-            out.push_str(cell);
-            let pad = width.saturating_sub(cell.width());
-            out.extend(std::iter::repeat_n(' ', pad));
-        }
-        out
+        let cells = cells.iter().filter(|cell| !cell.is_empty());
+        cells.map(String::as_str).collect::<Vec<_>>().join(" ")
     }
 }
 
@@ -115,7 +106,6 @@ impl Rows<'_> {
 
     /// Writes a system.
     fn system(&self, out: &mut String, columns: &[Column]) {
-        let width = self.label_width();
         for (index, (row, head)) in self.order.iter().zip(&self.heads).enumerate() {
             let text = |column: &Column| {
                 let cells = column.rows.get(index);
@@ -125,7 +115,6 @@ impl Rows<'_> {
                 continue;
             }
             out.push_str(head);
-            out.extend(std::iter::repeat_n(' ', width.saturating_sub(head.len())));
             out.push_str(" |");
             for column in columns {
                 out.push(' ');

@@ -258,8 +258,8 @@ fn words_stand_under_their_cells() {
          \n\
          voice S soprano\n\
          \n\
-         S         | D4   G.A    B    - ||\n\
-         words S 2 | Har- bour - lamp   ||\n"
+         S         | D4   G.A    B -  ||\n\
+         words S 2 | Har- bour - lamp ||\n"
     );
 }
 
@@ -391,5 +391,44 @@ fn what_is_left_behind_is_told() {
     assert_eq!(
         many,
         whole("A sheet has at most 64 voices: those from Tenor on are left out.")
+    );
+}
+
+#[test]
+fn halves_are_told_in_the_same_cells() {
+    // Five and seven in one crotchet would be seventy parts: the second half wants quavers.
+    let mut notes = vec![("G4", time(3, 4))];
+    notes.extend([("A4", time(1, 40)); 5]);
+    notes.extend([("B4", time(1, 56)); 7]);
+    let parted = [(-1, 6, 0), (1, 2, 6)];
+    let text = sheet(&score(metre(4, 4), &parted, vec![voice("V", &notes)]));
+    assert!(text.starts_with("metre   4/4 by 1/8\n"), "{text}");
+    assert!(
+        text.ends_with("\nV | G4 - - - - - || A.A.A.A.A B.B.B.B.B.B.B ||\n"),
+        "{text}"
+    );
+}
+
+#[test]
+fn a_bar_line_between_beats_is_left_out() {
+    let line = voice("V", &[("G4", time(1, 3)), ("A4", time(2, 3))]);
+    let mut one = score(metre(4, 4), &[(1, 8, 0)], vec![line]);
+    let first = one.bars[0].clone();
+    one.bars[0].length = time(1, 3);
+    one.bars.push(Bar {
+        onset: time(1, 3),
+        length: time(2, 3),
+        number: 2,
+        section_end: true,
+        ..first
+    });
+    let written = write(&one, &Heading::default());
+    assert_eq!(
+        written.left_behind,
+        ["Bar lines between beats are left out: bar 2."]
+    );
+    assert_eq!(
+        written.text,
+        "metre   4/4\n\nvoice V\n\nV | G4 -.A.- - - ||\n"
     );
 }

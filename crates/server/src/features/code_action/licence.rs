@@ -1,10 +1,12 @@
 //! Licences as edits: one granted, one removed.
 
+use std::collections::HashSet;
+
 use partwright_check::{Checked, Finding};
 use partwright_rules::family_of;
 use partwright_sheet::{Edit, Span};
 
-use crate::lines::{Kind, line_at, lines};
+use crate::lines::{Kind, line_at};
 
 /// What stands for the reason until the user has typed one.
 pub(crate) const WHY: &str = "why";
@@ -19,7 +21,12 @@ pub(crate) struct Grant {
 
 /// The edits that license a finding: a fresh mark on its part, and a footnote under its system.
 /// `None` where there is no part to mark, and for what is written badly.
-pub(crate) fn grant(checked: &Checked, text: &str, finding: &Finding) -> Option<Grant> {
+pub(crate) fn grant(
+    checked: &Checked,
+    text: &str,
+    finding: &Finding,
+    mark: impl FnOnce() -> String,
+) -> Option<Grant> {
     let part = finding.span?;
     let system = checked.reading.system_at(part.start as usize)?;
     let written = text
@@ -28,7 +35,7 @@ pub(crate) fn grant(checked: &Checked, text: &str, finding: &Finding) -> Option<
     if family_of(finding.rule) == Some("writing") || written.contains(char::is_whitespace) {
         return None;
     }
-    let mark = fresh_mark(checked, text);
+    let mark = mark();
     let (at, before, after) = footnote_place(text, system.end as usize);
     let line = format!("*{mark} licence {}: ", finding.rule);
     let on_part = format!("*{mark}");
@@ -46,17 +53,18 @@ pub(crate) fn grant(checked: &Checked, text: &str, finding: &Finding) -> Option<
     })
 }
 
-/// The first of `a`, `b`, … `z`, `aa`, … that no part and no footnote has.
-fn fresh_mark(checked: &Checked, text: &str) -> String {
-    let footnotes = lines(text).filter(|line| line.kind == Kind::Footnote);
-    let mut taken: Vec<&str> = footnotes
-        .filter_map(|line| text.get(line.word.start + 1..line.word.end))
-        .collect();
-    taken.extend(checked.reading.marks.iter().map(|mark| mark.name.as_str()));
+/// The first of `a`, `b`, … `z`, `aa`, … that stands behind no asterisk in the text.
+pub(crate) fn fresh_mark(text: &str) -> String {
+    let behind = text.match_indices('*').filter_map(|(at, _)| {
+        let rest = text.get(at + 1..)?;
+        let end = rest.find(|c: char| !c.is_ascii_alphabetic());
+        rest.get(..end.unwrap_or(rest.len()))
+    });
+    let taken: HashSet<&str> = behind.collect();
     // One of so many is free.
     (0..=taken.len())
         .map(letters)
-        .find(|mark| !taken.contains(&mark.as_str()))
+        .find(|mark| !taken.contains(mark.as_str()))
         .unwrap_or_default()
 }
 
@@ -159,7 +167,7 @@ mod tests {
         let checked = Checked::text(text, &Wishes::default());
         let mut open = checked.open();
         let finding = open.find(|f| f.rule == "parallel-fifths").unwrap();
-        let grant = grant(&checked, text, finding).unwrap();
+        let grant = grant(&checked, text, finding, || fresh_mark(text)).unwrap();
         let new = apply(text, &grant.edits);
         assert_eq!(&new[grant.reason.range()], WHY);
         new
