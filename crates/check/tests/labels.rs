@@ -14,6 +14,9 @@ fn words_of_the_catalogue_are_no_labels() {
     for word in short {
         let text = format!("voice {word} soprano\n\n{word} | G4 A |\n");
         let checked = Checked::text(&text, &Wishes::default());
-        assert!(checked.findings.iter().any(|f| f.rule == "reading"), "{word} passes for a label");
+        assert!(
+            checked.findings.iter().any(|f| f.rule == "reading"),
+            "{word} passes for a label"
+        );
     }
 }

@@ -1,6 +1,8 @@
 //! Sheets for measuring: four voices, seeded, never periodic, with a finding in about one step
 //! of twenty. They are no music to show.
 
+#![allow(clippy::unwrap_used, clippy::nonminimal_bool)]
+
 use std::fmt::Write as _;
 
 use partwright_score::Pitch;

@@ -2,6 +2,8 @@
 //!
 //! `cargo bench --bench whole`. Bytes a second are of sheet text.
 
+#![allow(clippy::print_stdout)]
+
 #[path = "generated.rs"]
 mod generated;
 
