@@ -3,6 +3,8 @@
 //! The data stands in a folder of its own beside the repository (or where `PARTWRIGHT_SHARED`
 //! points) and is no part of it; where it is absent these tests say so and are left out.
 
+#![allow(clippy::unwrap_used, clippy::panic, clippy::print_stdout)]
+
 #[path = "outside/consecutives.rs"]
 mod consecutives;
 #[path = "outside/judged.rs"]

@@ -1,5 +1,7 @@
 //! No label is a word of the catalogue: `licence crossing: …` would be read two ways.
 
+#![allow(clippy::unwrap_used, clippy::panic, clippy::print_stdout)]
+
 use partwright_check::{Checked, Wishes};
 use partwright_rules::{FAMILIES, catalogue};
 

@@ -1,5 +1,7 @@
 //! Every rule's page is its test: the examples run, and every claim about form is checked.
 
+#![allow(clippy::unwrap_used, clippy::panic, clippy::print_stdout)]
+
 use partwright_check::{Checked, Wishes, unlike_drawn};
 use partwright_rules::{FAMILIES, Looks, STYLES, Severity, Style, catalogue};
 use partwright_sheet::drawn_marks;
