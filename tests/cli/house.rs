@@ -158,6 +158,7 @@ fn a_broken_house_style_is_told_once_and_spoils_what_would_take_its_style() {
 #[test]
 fn what_is_wrong_with_a_house_style_is_said_with_its_file_and_what_is_allowed() {
     let rule = "[[rule]]\nrule = \"overlap\"\n";
+    #[allow(clippy::type_complexity)]
     let wrong: &[(&[(&str, &str)], &[&str])] = &[
         (
             &[("partwright.toml", "bass = \"chorale\"\n")],
