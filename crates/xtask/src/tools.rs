@@ -69,6 +69,98 @@ pub(crate) fn pre_commit() -> Result<PathBuf, String> {
     }
 }
 
+/// The real Emacs, with eglot and a terminal to drive it through; installs what is not there yet.
+///
+/// # Errors
+///
+/// Says what could not be installed and what to install by hand.
+pub(crate) fn emacs() -> Result<PathBuf, String> {
+    const BY_HAND: &str =
+        "Install tmux and Emacs with eglot (on Debian: emacs-nox elpa-eglot tmux).";
+    const PACKAGES: [&str; 3] = ["emacs-nox", "elpa-eglot", "tmux"];
+    let emacs = PathBuf::from("emacs");
+    let all_there = || {
+        answers(Command::new(&emacs).args(["-q", "--batch", "--eval", "(require 'eglot)"]))
+            && answers(Command::new("tmux").arg("-V"))
+    };
+    if all_there() {
+        return Ok(emacs);
+    }
+    let program = if !answers(Command::new("apt-get").arg("--version")) {
+        return Err(format!("The tests drive Emacs. {BY_HAND}"));
+    } else if answers(Command::new("sudo").args(["-n", "true"])) {
+        &["sudo", "-n", "apt-get"][..]
+    } else {
+        &["apt-get"][..]
+    };
+    say(&format!(
+        "Installing {} on this system by {}: the tests of the editor drive the real one, in a \
+         terminal.",
+        PACKAGES.join(", "),
+        program.join(" "),
+    ));
+    let apt = |words: &[&str]| {
+        let mut command = Command::new(program[0]);
+        command
+            .args(&program[1..])
+            .args(words)
+            .env("DEBIAN_FRONTEND", "noninteractive");
+        run(&mut command)
+    };
+    let install = || {
+        let words = ["install", "--quiet", "--yes", "--no-install-recommends"];
+        apt(&[&words[..], &PACKAGES].concat())
+    };
+    // The lists of packages may be missing, or old.
+    install()
+        .or_else(|_| apt(&["update", "--quiet"]).and_then(|()| install()))
+        .map_err(|error| format!("{error} {BY_HAND}"))?;
+    if all_there() {
+        Ok(emacs)
+    } else {
+        Err(format!("Emacs does not run with eglot. {BY_HAND}"))
+    }
+}
+
+/// The npm that packages the extension for VS Code; installs what the extension is built with,
+/// under `editors/vscode/node_modules`, where that is not what the lock file says.
+///
+/// # Errors
+///
+/// Says what failed and what to do: npm is missing or too old, or the installation did not work.
+pub(crate) fn vscode_extension() -> Result<PathBuf, String> {
+    let npm = PathBuf::from(if cfg!(windows) { "npm.cmd" } else { "npm" });
+    if !answers(Command::new(&npm).arg("--version")) {
+        return Err(
+            "Packaging the extension for VS Code needs Node.js 20 or newer, with npm, on the PATH."
+                .to_owned(),
+        );
+    }
+    let folder = root().join("editors/vscode");
+    let when = |name: &str| std::fs::metadata(folder.join(name)).and_then(|file| file.modified());
+    // npm writes this one last.
+    let installed = when("node_modules/.package-lock.json");
+    let fresh = ["package-lock.json", "package.json"]
+        .iter()
+        .all(|name| matches!((&installed, when(name)), (Ok(then), Ok(now)) if *then >= now));
+    if !fresh {
+        say(&format!(
+            "Installing the packages that the extension for VS Code is built with into {}.",
+            folder.join("node_modules").display()
+        ));
+        run(Command::new(&npm)
+            .args(["ci", "--no-audit", "--no-fund"])
+            .current_dir(&folder))?;
+    }
+    Ok(npm)
+}
+
+/// Whether a program is there and does this.
+fn answers(command: &mut Command) -> bool {
+    let said = command.stdin(Stdio::null()).output();
+    said.is_ok_and(|said| said.status.success())
+}
+
 /// Where a tool is installed.
 fn folder(name: &str) -> PathBuf {
     let root = root().canonicalize().unwrap_or_else(|_| root());
