@@ -10,7 +10,7 @@ mod desk;
 use desk::{Desk, pre_commit};
 
 /// Parallel fifths.
-const FLAWED: &str = "metre 2/4\n\nS | D5 E | F E ||\nB | G3 A | A C ||\n";
+const FLAWED: &str = "metre 2/4\n\nS | D5 E | F E ||\nB | G3 A | A B ||\n";
 /// None, and in columns.
 const CLEAN: &str = "metre   2/4\n\nS | D5 C | D - ||\nB | G3 A | G - ||\n";
 /// Out of columns.

@@ -10,6 +10,7 @@ use std::process::ExitCode;
 
 const HELP: &str = "\
 cargo xtask test          every check and test there is; installs what they need
+cargo xtask hooks         the git hooks under the real pre-commit framework
 cargo xtask list          write the generated list of rules anew
 cargo xtask rule NAME     start a rule: NAME is FAMILY/ID, as in motion/parallel-fifths
 ";
@@ -19,6 +20,7 @@ fn main() -> ExitCode {
     let words: Vec<&str> = arguments.iter().map(String::as_str).collect();
     let done = match words.as_slice() {
         ["test"] => suite::run(),
+        ["hooks"] => suite::hooks(),
         ["list"] => list::write().map(|_| ()),
         ["rule", name] => scaffold::rule(name),
         _ => Err(HELP.to_owned()),
