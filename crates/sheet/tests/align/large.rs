@@ -1,6 +1,6 @@
 //! A sheet too large to be aligned. How fast aligning is stands in no test: the machine is shared.
 
-use partwright_sheet::{LARGEST, Sheet, align};
+use partwright_sheet::{LARGEST, align};
 
 #[test]
 fn a_sheet_that_would_grow_beyond_the_largest_stays_as_it_is() {
