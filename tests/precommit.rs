@@ -100,6 +100,7 @@ fn the_hooks_can_be_tried_without_configuration() {
 #[test]
 fn the_program_is_built_by_the_hook_itself() {
     let desk = Desk::new(framework!());
+    desk::forget_earlier_builds();
     desk.hooks(&["partwright-check"]);
     desk.write("evensong.voices", FLAWED);
     let (status, said) = desk.run_without_program(&["run", "--all-files"]);

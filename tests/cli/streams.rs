@@ -43,6 +43,30 @@ fn two_runs_give_the_same_bytes() {
 }
 
 #[test]
+fn many_sheets_at_once_are_reported_as_one_by_one() {
+    let folder = Folder::new();
+    // The long ones first, so that the short ones are done before them.
+    let sheets = (0..24).map(|i| match i % 6 {
+        0 => (format!("{i:02}.voices"), ten_thousand()),
+        1 => (format!("{i:02}.voices"), CLEAN.to_owned()),
+        _ => (format!("{i:02}.voices"), format!("// {i}\n{FLAWED}")),
+    });
+    let sheets: Vec<(String, String)> = sheets.collect();
+    for (name, text) in &sheets {
+        folder.write(name, text.as_bytes());
+    }
+    for form in ["plain", "json"] {
+        let arguments = ["--quiet", "--drop", "reading", "--report", form];
+        let all = folder.check(&[&arguments[..], &["."]].concat());
+        let names = sheets.iter().map(|(name, _)| name.as_str());
+        let single = |name| folder.check(&[&arguments[..], &[name]].concat()).out;
+        let singles: Vec<String> = names.map(single).collect();
+        assert!(all.out == singles.concat(), "{form}");
+        assert_eq!(singles.iter().filter(|out| !out.is_empty()).count(), 16);
+    }
+}
+
+#[test]
 fn a_reader_that_goes_away_ends_nothing_but_the_report() {
     let folder = Folder::with(&[("a.voices", &ten_thousand())]);
     for form in ["plain", "json"] {

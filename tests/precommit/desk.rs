@@ -9,7 +9,8 @@ use tempfile::TempDir;
 
 /// The framework, where it is installed.
 pub(crate) fn pre_commit() -> Option<PathBuf> {
-    std::env::var_os("PARTWRIGHT_PRE_COMMIT").map(PathBuf::from)
+    let path = std::env::var_os("PARTWRIGHT_PRE_COMMIT")?;
+    Some(std::path::absolute(path).unwrap())
 }
 
 /// A desk of its own for each test.
@@ -81,12 +82,11 @@ impl Desk {
 
     /// The same where no `partwright` is installed, and the framework must build its own.
     pub(crate) fn run_without_program(&self, arguments: &[&str]) -> (i32, String) {
-        // Built once for all runs of this test, and quickly: it is not measured.
-        let target = Path::new(env!("CARGO_MANIFEST_DIR")).join("target/pre-commit");
+        // The libraries are built once for all runs of this test, and quickly: it is not measured.
         let mut command = self.command(&self.framework, &self.sheets(), false);
         command
             .args(arguments)
-            .env("CARGO_TARGET_DIR", target)
+            .env("CARGO_TARGET_DIR", built())
             .env("CARGO_PROFILE_RELEASE_OPT_LEVEL", "0")
             .env("CARGO_PROFILE_RELEASE_DEBUG", "0")
             .env("CARGO_PROFILE_RELEASE_LTO", "off")
@@ -146,6 +146,26 @@ impl Desk {
                 .env(format!("GIT_{who}_EMAIL"), "lamplighter@harbour.example");
         }
         command
+    }
+}
+
+/// Where the framework builds.
+fn built() -> PathBuf {
+    Path::new(env!("CARGO_MANIFEST_DIR")).join("target/pre-commit")
+}
+
+/// Removes what earlier runs built of our own: each run clones to another folder, and nothing of
+/// theirs is used again.
+pub(crate) fn forget_earlier_builds() {
+    for folder in ["deps", ".fingerprint", "build"] {
+        let entries = fs::read_dir(built().join("release").join(folder));
+        for entry in entries.into_iter().flatten().flatten() {
+            if entry.file_name().to_string_lossy().contains("partwright") {
+                let path = entry.path();
+                let gone = fs::remove_file(&path).or_else(|_| fs::remove_dir_all(&path));
+                gone.unwrap();
+            }
+        }
     }
 }
 

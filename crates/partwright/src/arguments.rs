@@ -49,7 +49,8 @@ pub(crate) enum Command {
 /// Which findings are meant: options that several commands share.
 #[derive(Args, Debug)]
 pub(crate) struct Scope {
-    /// Judge by this style, whatever the sheet says: one of ours, or the name of the house style
+    /// Judge by this style, whatever the sheet says: free, chorale, motet, species-1 to
+    /// species-5, or the name of the house style
     #[arg(long, value_name = "NAME", value_parser = NonEmptyStringValueParser::new())]
     pub(crate) style: Option<String>,
     /// Only these rules or families of rules; several with commas between, or repeated
@@ -95,7 +96,8 @@ pub(crate) struct Rules {
     /// A rule or a family of rules
     #[arg(value_name = "NAME", value_parser = rule_or_family)]
     pub(crate) name: Option<String>,
-    /// Only what holds in this style: one of ours, or the name of the house style
+    /// Only what holds in this style: free, chorale, motet, species-1 to species-5, or the name of
+    /// the house style
     #[arg(long, value_name = "NAME", value_parser = NonEmptyStringValueParser::new())]
     pub(crate) style: Option<String>,
     #[command(flatten)]

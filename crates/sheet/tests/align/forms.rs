@@ -138,6 +138,15 @@ harmony   I  |  V |
 }
 
 #[test]
+fn a_backslash_that_makes_nothing_plain_makes_no_blank_plain() {
+    stays("S | G4 A |\nwords S | la\\\r  lu |\n");
+    becomes(
+        "S | G4  A |\nwords S |la\\ \\|  lu\\\\|\n",
+        "S       | G4     A    |\nwords S | la\\ \\| lu\\\\ |\n",
+    );
+}
+
+#[test]
 fn a_spoilt_part_is_set_as_it_is_written() {
     becomes(
         "S | g4 H4 a | mf b4 | c5 p |\nB | g3 - f♯.x | G3 A | C |\n",
