@@ -7,6 +7,8 @@
 
 #[path = "outside/consecutives.rs"]
 mod consecutives;
+#[path = "outside/figures.rs"]
+mod figures;
 #[path = "outside/judged.rs"]
 mod judged;
 #[path = "outside/rewrite.rs"]

@@ -13,6 +13,7 @@ pub use drawn::unlike_drawn;
 pub use filter::{BarRange, Filter, FilterError};
 pub use finding::{Finding, Lifted, Related};
 pub use house::House;
+pub use partwright_analysis::{Analysis, figures::tried};
 pub use partwright_rules::{Role, STYLES, Severity, Style};
 pub use run::notes_findings;
 
@@ -20,7 +21,7 @@ use std::path::PathBuf;
 use std::sync::Arc;
 
 use house::HouseLicence;
-use partwright_rules::Strictness;
+use partwright_rules::{Piece, Strictness};
 use partwright_score::{Score, Texture};
 use partwright_sheet::{Reading, Sheet};
 
@@ -111,6 +112,8 @@ pub struct Checked {
     pub reading: Reading,
     /// The sonorities and steps.
     pub texture: Texture,
+    /// Dissonances and their figures.
+    pub analysis: Analysis,
     /// The style in force, and what the house changes in it.
     pub strictness: Strictness,
     /// The findings, by place in the score, then by rule.
@@ -136,7 +139,13 @@ impl Checked {
         let texture = Texture::of(&reading.score);
         let strictness = wishes.strictness(reading.score.style.as_deref());
         let mut findings = text::findings(&reading, wishes, &strictness);
-        let notes = notes_findings(&reading.score, &texture, &strictness);
+        let analysis = Analysis::of(&reading.score, &texture);
+        let piece = Piece {
+            score: &reading.score,
+            texture: &texture,
+            analysis: &analysis,
+        };
+        let notes = notes_findings(&piece, &strictness);
         findings.extend(notes.into_iter().map(|f| place::in_text(f, &reading)));
         licence::apply_house(&wishes.house_licences(), &reading.score, &mut findings);
         for (id, problem) in licence::apply(&reading, &mut findings) {
@@ -150,8 +159,19 @@ impl Checked {
             sheet,
             reading,
             texture,
+            analysis,
             strictness,
             findings,
+        }
+    }
+
+    /// The score as rules see it.
+    #[must_use]
+    pub fn piece(&self) -> Piece<'_> {
+        Piece {
+            score: &self.reading.score,
+            texture: &self.texture,
+            analysis: &self.analysis,
         }
     }
 
@@ -167,7 +187,13 @@ impl Checked {
 #[must_use]
 pub fn check_score(score: &Score, wishes: &Wishes) -> Vec<Finding> {
     let texture = Texture::of(score);
-    let notes = notes_findings(score, &texture, &wishes.strictness(score.style.as_deref()));
+    let analysis = Analysis::of(score, &texture);
+    let piece = Piece {
+        score,
+        texture: &texture,
+        analysis: &analysis,
+    };
+    let notes = notes_findings(&piece, &wishes.strictness(score.style.as_deref()));
     let mut findings: Vec<Finding> = notes
         .into_iter()
         .map(|f| place::in_score(f, score))

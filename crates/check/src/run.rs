@@ -1,12 +1,12 @@
 //! Running the rules over a score.
 
 use partwright_rules::{Finding, Found, Line, Looks, Piece, Strictness, catalogue};
-use partwright_score::{Score, Texture};
 
 /// The findings of all the rules that take part, in terms of voices and moments, in no order.
 #[must_use]
-pub fn notes_findings(score: &Score, texture: &Texture, strictness: &Strictness) -> Vec<Finding> {
-    let piece = Piece { score, texture };
+pub fn notes_findings(piece: &Piece<'_>, strictness: &Strictness) -> Vec<Finding> {
+    let piece = *piece;
+    let score = piece.score;
     let mut list = Vec::new();
     let (mut pairs, mut sonorities, mut lines) = (Vec::new(), Vec::new(), Vec::new());
     for entry in catalogue() {
@@ -17,7 +17,9 @@ pub fn notes_findings(score: &Score, texture: &Texture, strictness: &Strictness)
             Looks::Pairs(check) => pairs.push((entry, check)),
             Looks::Sonorities(check) => sonorities.push((entry, check)),
             Looks::Lines(check) => lines.push((entry, check)),
-            Looks::Piece(check) => check(&piece, &mut Found::new(entry, strictness, &mut list)),
+            Looks::Piece(check) => {
+                check(&piece, &mut Found::new(entry, strictness, score, &mut list))
+            }
             Looks::Text => {}
         }
     }
@@ -29,17 +31,20 @@ pub fn notes_findings(score: &Score, texture: &Texture, strictness: &Strictness)
             moves: &moves,
         };
         for &(entry, check) in &lines {
-            check(&line, &mut Found::new(entry, strictness, &mut list));
+            check(&line, &mut Found::new(entry, strictness, score, &mut list));
         }
     }
     // One sweep for all the rules that look at single steps, so that a step is fetched once.
     for sounding in piece.soundings() {
         for &(entry, check) in &sonorities {
-            check(&sounding, &mut Found::new(entry, strictness, &mut list));
+            check(
+                &sounding,
+                &mut Found::new(entry, strictness, score, &mut list),
+            );
         }
         for step in sounding.moves(strictness.across_phrases) {
             for &(entry, check) in &pairs {
-                check(&step, &mut Found::new(entry, strictness, &mut list));
+                check(&step, &mut Found::new(entry, strictness, score, &mut list));
             }
         }
     }

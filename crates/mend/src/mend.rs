@@ -2,8 +2,8 @@
 
 use std::collections::BTreeSet;
 
-use partwright_check::{Checked, Finding, Severity, notes_findings};
-use partwright_rules::{Finding as Bare, Strictness};
+use partwright_check::{Analysis, Checked, Finding, Severity, notes_findings};
+use partwright_rules::{Finding as Bare, Piece, Strictness};
 use partwright_score::{Pitch, Score, Sound, Texture, Time};
 use partwright_sheet::Edit;
 use partwright_space::Motion;
@@ -198,7 +198,13 @@ fn findings(
     window: &Window,
 ) -> Vec<Bare> {
     let (first, last) = window.inner;
-    let mut list = notes_findings(score, texture, strictness);
+    let analysis = Analysis::of(score, texture);
+    let piece = Piece {
+        score,
+        texture,
+        analysis: &analysis,
+    };
+    let mut list = notes_findings(&piece, strictness);
     list.retain(|f| (first..=last).contains(&f.spot.at));
     list
 }

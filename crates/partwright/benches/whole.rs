@@ -9,7 +9,7 @@ mod generated;
 
 use divan::Bencher;
 use divan::counter::BytesCount;
-use partwright_check::{Checked, Wishes};
+use partwright_check::{Analysis, Checked, Wishes};
 use partwright_rules::{Strictness, Style};
 use partwright_score::Texture;
 use partwright_sheet::Sheet;
@@ -60,14 +60,23 @@ fn score(bencher: Bencher<'_, '_>, bars: usize) {
 }
 
 #[divan::bench(args = BARS)]
+fn analysis(bencher: Bencher<'_, '_>, bars: usize) {
+    let text = generated::sheet(bars, 1);
+    let checked = Checked::text(&text, &Wishes::default());
+    let (score, texture) = (&checked.reading.score, &checked.texture);
+    bencher
+        .counter(BytesCount::of_str(&text))
+        .bench(|| Analysis::of(score, texture));
+}
+
+#[divan::bench(args = BARS)]
 fn rules(bencher: Bencher<'_, '_>, bars: usize) {
     let text = generated::sheet(bars, 1);
-    let reading = Sheet::read(&text).lower(&text);
-    let texture = Texture::of(&reading.score);
+    let checked = Checked::text(&text, &Wishes::default());
     let strictness = Strictness::plain(Style::Chorale);
     bencher
         .counter(BytesCount::of_str(&text))
-        .bench(|| partwright_check::notes_findings(&reading.score, &texture, &strictness));
+        .bench(|| partwright_check::notes_findings(&checked.piece(), &strictness));
 }
 
 #[divan::bench(args = BARS)]

@@ -1,6 +1,6 @@
 //! The list a rule writes its findings to.
 
-use partwright_score::Time;
+use partwright_score::{Score, Time};
 
 use crate::catalogue::Entry;
 use crate::finding::{Finding, Role, Spot};
@@ -13,6 +13,7 @@ pub struct Found<'a> {
     rule: &'static str,
     family: &'static str,
     strictness: &'a Strictness,
+    score: &'a Score,
     list: &'a mut Vec<Finding>,
 }
 
@@ -21,12 +22,14 @@ impl<'a> Found<'a> {
     pub fn new(
         entry: &'static Entry,
         strictness: &'a Strictness,
+        score: &'a Score,
         list: &'a mut Vec<Finding>,
     ) -> Found<'a> {
         Found {
             rule: &entry.id,
             family: entry.family,
             strictness,
+            score,
             list,
         }
     }
@@ -35,6 +38,27 @@ impl<'a> Found<'a> {
     #[must_use]
     pub fn style(&self) -> Style {
         self.strictness.style
+    }
+
+    /// The style in force for some voices: in species counterpoint a voice may be in a species of
+    /// its own, and of several the freest speaks.
+    #[must_use]
+    pub fn style_of(&self, voices: &[usize]) -> Style {
+        let style = self.strictness.style;
+        let own = voices
+            .iter()
+            .filter_map(|&v| self.score.voices.get(v)?.species)
+            .max();
+        match own.and_then(Style::of_species) {
+            Some(own) if style.is_species() => own,
+            _ => style,
+        }
+    }
+
+    fn severity_of(&self, case: &'static Case, voices: &[usize]) -> Option<Severity> {
+        let style = self.style_of(voices);
+        self.strictness
+            .severity_in(style, self.rule, self.family, case)
     }
 
     /// How much the style minds a case; `None` where it allows it.
@@ -57,7 +81,7 @@ impl<'a> Found<'a> {
         step: &PairMove<'_>,
         message: impl FnOnce() -> String,
     ) {
-        let Some(severity) = self.severity(case) else {
+        let Some(severity) = self.severity_of(case, &[step.pair.upper, step.pair.lower]) else {
             return;
         };
         let (upper, lower) = (step.pair.upper, step.pair.lower);
@@ -85,7 +109,7 @@ impl<'a> Found<'a> {
         step: &LineMove,
         message: impl FnOnce() -> String,
     ) {
-        let Some(severity) = self.severity(case) else {
+        let Some(severity) = self.severity_of(case, &[line.voice]) else {
             return;
         };
         let spot = |at| Spot {
@@ -126,7 +150,7 @@ impl<'a> Found<'a> {
         (at, until): (Time, Time),
         message: impl FnOnce() -> String,
     ) {
-        let Some(severity) = self.severity(case) else {
+        let Some(severity) = self.severity_of(case, voices) else {
             return;
         };
         let Some((&first, others)) = voices.split_first() else {

@@ -107,6 +107,14 @@ impl Style {
         }
     }
 
+    /// The style of a species, 1 to 5.
+    #[must_use]
+    pub fn of_species(species: u8) -> Option<Style> {
+        STYLES
+            .into_iter()
+            .find(|style| style.species() == Some(species))
+    }
+
     /// Whether it is one of the five species.
     #[must_use]
     pub const fn is_species(self) -> bool {
@@ -233,13 +241,25 @@ impl Strictness {
     /// How much a case of a rule is minded: the house's word, else the style's. `None` allows.
     #[must_use]
     pub fn severity(&self, id: &str, family: &str, case: &Case) -> Option<Severity> {
+        self.severity_in(self.style, id, family, case)
+    }
+
+    /// The same for a voice in a species of its own.
+    #[must_use]
+    pub fn severity_in(
+        &self,
+        style: Style,
+        id: &str,
+        family: &str,
+        case: &Case,
+    ) -> Option<Severity> {
         let about = |o: &&Override| {
             (o.rule == id || o.rule == family)
                 && o.case.as_deref().is_none_or(|name| name == case.name)
         };
         match self.overrides.iter().rev().find(about) {
             Some(change) => change.severity,
-            None => case.setting(self.style)?.severity,
+            None => case.setting(style)?.severity,
         }
     }
 

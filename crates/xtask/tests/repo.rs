@@ -19,8 +19,9 @@ const MAY_IMPORT: &[(&str, &[&str])] = &[
     ("space", &[]),
     ("score", &["space"]),
     ("sheet", &["score"]),
-    ("rules", &["score", "space"]),
-    ("check", &["sheet", "score", "rules"]),
+    ("analysis", &["score", "space"]),
+    ("rules", &["analysis", "score", "space"]),
+    ("check", &["analysis", "sheet", "score", "rules"]),
     ("mend", &["check", "rules", "score", "space", "sheet"]),
     (
         "server",

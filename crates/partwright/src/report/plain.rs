@@ -3,7 +3,6 @@
 use annotate_snippets::renderer::{AnsiColor, DecorStyle, Effects, Style};
 use annotate_snippets::{AnnotationKind, Group, Level, Renderer, Snippet};
 use partwright_check::{Finding, Severity};
-use partwright_rules::Piece;
 use unicode_width::UnicodeWidthStr;
 
 use super::Page;
@@ -106,10 +105,7 @@ impl Plain {
         );
         let mut place = Vec::new();
         if let Some(at) = finding.at {
-            let piece = Piece {
-                score: &page.checked.reading.score,
-                texture: &page.checked.texture,
-            };
+            let piece = page.checked.piece();
             place.push(piece.place_text(at));
         }
         if !finding.voices.is_empty() {

@@ -8,6 +8,7 @@ mod pair;
 mod piece;
 mod sounding;
 
+use partwright_analysis::Analysis;
 use partwright_score::{Pair, PairStep, Score, Texture};
 
 pub use close::NotesOver;
@@ -15,13 +16,15 @@ pub use line::{LineMove, Run};
 pub use pair::Direct;
 pub use piece::{Crossing, Passage};
 
-/// A score with its texture.
+/// A score with its texture, and what was read in it.
 #[derive(Clone, Copy)]
 pub struct Piece<'a> {
     /// The score.
     pub score: &'a Score,
     /// Its sonorities and steps.
     pub texture: &'a Texture,
+    /// Dissonances and their figures.
+    pub analysis: &'a Analysis,
 }
 
 /// One sonority, and the step into it.

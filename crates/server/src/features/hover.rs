@@ -3,7 +3,7 @@
 use std::fmt::Write;
 
 use partwright_check::{Checked, Finding};
-use partwright_rules::{PairMove, Piece, Sounding, entry};
+use partwright_rules::{PairMove, Sounding, entry};
 use partwright_score::{Interval, Score, Sound, Time, Voice};
 use partwright_sheet::Span;
 use partwright_space::Motion;
@@ -182,10 +182,7 @@ fn on_part(checked: &Checked, offset: usize, page: &Page) -> Option<(Span, Strin
     let span = checked.reading.span_at(voice, at)?;
     let mut page = page.clone();
     let score = &checked.reading.score;
-    let piece = Piece {
-        score,
-        texture: &checked.texture,
-    };
+    let piece = checked.piece();
     let note = score
         .note_at(voice, at)
         .and_then(|n| score.voices.get(voice)?.notes.get(n))?;

@@ -1,0 +1,40 @@
+//! The consonant fourth: over a held bass, reached by step on a weak moment and held into a strong
+//! one, on which it is dissonant and then resolves (Jeppesen, from memory).
+
+use super::{Figure, Place};
+use crate::consonance;
+
+pub(super) fn ask(place: &Place<'_>) -> Result<Figure, &'static str> {
+    if !place.is_struck() {
+        return Err("it was there before");
+    }
+    if !place.over_bass || !consonance::is_fourth(place.gap) {
+        return Err("it is no fourth over the lowest voice");
+    }
+    let bass = place
+        .score
+        .note_at(place.against, place.at)
+        .and_then(|n| place.score.voices.get(place.against)?.notes.get(n));
+    if bass.is_none_or(|note| note.onset >= place.at) {
+        return Err("the lowest voice does not hold its note");
+    }
+    if place.into().is_none_or(|into| into.steps.abs() != 1) {
+        return Err("it is not reached by step");
+    }
+    let this = place.this().ok_or("it was there before")?;
+    let held_into_stronger = place
+        .texture
+        .sonorities()
+        .get(place.sonority + 1..)
+        .unwrap_or_default()
+        .iter()
+        .take_while(|s| s.onset < this.end())
+        .any(|s| s.level < place.score.level(place.at));
+    if !held_into_stronger {
+        return Err("it is not held into a stronger moment");
+    }
+    if place.out_of().is_none_or(|out| out.steps != -1) {
+        return Err("it does not go down by step");
+    }
+    Ok(Figure::ConsonantFourth)
+}

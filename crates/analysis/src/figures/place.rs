@@ -1,0 +1,139 @@
+//! A dissonant note and what surrounds it.
+
+use std::cmp::Ordering;
+
+use partwright_score::{Note, Score, Texture, Time};
+use partwright_space::Gap;
+
+use super::Dissonance;
+use crate::consonance;
+
+/// One of the two notes of a dissonance.
+#[derive(Clone, Copy)]
+pub struct Place<'a> {
+    /// The score.
+    pub score: &'a Score,
+    /// Its sonorities.
+    pub texture: &'a Texture,
+    /// The sonority in which the dissonance begins.
+    pub sonority: usize,
+    /// When that is.
+    pub at: Time,
+    /// The note's voice.
+    pub voice: usize,
+    /// The note, by index in its voice.
+    pub note: usize,
+    /// The voice it disagrees with.
+    pub against: usize,
+    /// The note disagreed with is the lowest, or the lowest above a pedal.
+    pub over_bass: bool,
+    /// The interval between the two.
+    pub gap: Gap,
+}
+
+impl<'a> Place<'a> {
+    /// Both notes of a dissonance: one struck at its moment first.
+    pub(super) fn both(score: &'a Score, texture: &'a Texture, of: &Dissonance) -> [Place<'a>; 2] {
+        let place = |(voice, note): (usize, usize), against: usize| Place {
+            score,
+            texture,
+            sonority: of.sonority,
+            at: of.at,
+            voice,
+            note,
+            against,
+            over_bass: of.over_bass,
+            gap: of.gap,
+        };
+        let mut both = [place(of.upper, of.lower.0), place(of.lower, of.upper.0)];
+        if both.first().is_some_and(|p| !p.is_struck()) {
+            both.reverse();
+        }
+        both
+    }
+
+    /// A note of the voice, so many further on.
+    pub(super) fn neighbour(&self, by: isize) -> Option<&'a Note> {
+        let notes = &self.score.voices.get(self.voice)?.notes;
+        notes.get(self.note.checked_add_signed(by)?)
+    }
+
+    /// The note itself.
+    pub(super) fn this(&self) -> Option<&'a Note> {
+        self.neighbour(0)
+    }
+
+    /// The note is struck where the dissonance begins.
+    pub(super) fn is_struck(&self) -> bool {
+        self.this().is_some_and(|note| note.onset == self.at)
+    }
+
+    /// The move of the voice from one neighbour to the next; `None` at a rest or an end.
+    pub(super) fn step(&self, from: isize) -> Option<Gap> {
+        let left = self.neighbour(from)?.sound.pitch()?;
+        let reached = self.neighbour(from + 1)?.sound.pitch()?;
+        Some(left.place().up_to(reached.place()))
+    }
+
+    /// The move into the note.
+    pub(super) fn into(&self) -> Option<Gap> {
+        self.step(-1)
+    }
+
+    /// The move out of it.
+    pub(super) fn out_of(&self) -> Option<Gap> {
+        self.step(0)
+    }
+
+    /// How strong the onset of a neighbour is: 0 strongest.
+    pub(super) fn level(&self, by: isize) -> Option<u8> {
+        self.neighbour(by).map(|note| self.score.level(note.onset))
+    }
+
+    /// The note stands on a weaker moment than a note beside it, and on a stronger than none.
+    pub(super) fn is_weak(&self) -> bool {
+        let here = self.score.level(self.at);
+        let compare = |by| self.level(by).map(|there| here.cmp(&there));
+        let both = [compare(-1), compare(1)];
+        both.contains(&Some(Ordering::Greater)) && !both.contains(&Some(Ordering::Less))
+    }
+
+    /// At a moment, the voice agrees with the lowest voice and with every other; `None` in silence
+    /// and where something is not known.
+    pub(super) fn agrees_at(&self, at: Time) -> Option<bool> {
+        let sonority = self.texture.sounding_at(at)?;
+        agrees(self.texture, sonority, self.voice)
+    }
+}
+
+/// The gap of a voice over another, measured from the latter up.
+pub(super) fn over(texture: &Texture, sonority: usize, voice: usize, low: usize) -> Option<Gap> {
+    let gap = texture.gap(sonority, voice, low)?;
+    // The table measures from the voice lower in the score.
+    Some(if low > voice {
+        gap
+    } else {
+        Gap {
+            steps: -gap.steps,
+            semitones: -gap.semitones,
+        }
+    })
+}
+
+/// A voice agrees with the lowest one, and with every upper one that does.
+pub(super) fn agrees(texture: &Texture, sonority: usize, voice: usize) -> Option<bool> {
+    let bass = texture.bass(sonority)?;
+    let good =
+        |v: usize| v == bass || over(texture, sonority, v, bass).is_some_and(consonance::over_bass);
+    let among = |v: usize| {
+        texture
+            .gap(sonority, voice, v)
+            .is_some_and(consonance::among_upper)
+    };
+    let mut others = texture.sounding(sonority).filter(|&v| v != voice);
+    Some(if voice == bass {
+        others.all(good)
+    } else {
+        good(voice) && others.all(|v| v == bass || !good(v) || among(v))
+    })
+}

@@ -1,0 +1,115 @@
+//! The suspension and its rarer twin that rises.
+//!
+//! Preparation, dissonance, resolution: the note is there before, agreeing; another voice moves
+//! against it on a stronger moment; it goes on by step on a weaker one. The resolution may be
+//! decorated: a leap to an agreeing note and back, or the note of resolution early, once or with
+//! its lower neighbour (Lehmann, A Treatise on Simple Counterpoint, lesson IX).
+
+use partwright_score::{Note, Time};
+use partwright_space::Gap;
+
+use super::place::agrees;
+use super::{Figure, Place};
+
+/// The parts of a suspension.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub struct Held {
+    /// When the note was struck.
+    pub struck: Time,
+    /// When it becomes dissonant.
+    pub at: Time,
+    /// When the note of resolution comes.
+    pub resolved: Time,
+    /// Scale steps and semitones of the dissonance, from the lower voice up.
+    pub gap: Gap,
+    /// A decorating note stands between.
+    pub ornamented: bool,
+}
+
+impl Held {
+    /// How long the preparation is, in whole notes.
+    #[must_use]
+    pub fn preparation(&self) -> Time {
+        self.at - self.struck
+    }
+}
+
+/// Downward.
+pub(super) fn ask(place: &Place<'_>) -> Result<Figure, &'static str> {
+    held(place, -1).map(Figure::Suspension)
+}
+
+/// Upward.
+pub(super) fn ask_upward(place: &Place<'_>) -> Result<Figure, &'static str> {
+    held(place, 1).map(Figure::Retardation)
+}
+
+fn held(place: &Place<'_>, way: i32) -> Result<Held, &'static str> {
+    if place.is_struck() {
+        return Err("it is struck, not held");
+    }
+    let this = place.this().ok_or("it is struck, not held")?;
+    // A passing note under its end does not spoil a preparation.
+    let before = place
+        .sonority
+        .checked_sub(1)
+        .ok_or("it is struck, not held")?;
+    let prepared = place.agrees_at(this.onset) != Some(false)
+        || agrees(place.texture, before, place.voice) != Some(false);
+    if !prepared {
+        return Err("its preparation is dissonant");
+    }
+    let (resolved, ornamented) = resolution(place, way)?;
+    // In groups of three the second and third beats are equally weak.
+    if place.score.level(place.at) > place.score.level(resolved) {
+        return Err("it becomes dissonant on a weaker moment than it resolves");
+    }
+    Ok(Held {
+        struck: this.onset,
+        at: place.at,
+        resolved,
+        gap: place.gap,
+        ornamented,
+    })
+}
+
+/// When the note a step beside comes, and whether another note stands between.
+fn resolution(place: &Place<'_>, way: i32) -> Result<(Time, bool), &'static str> {
+    let from = place.this().and_then(|n| n.sound.pitch());
+    let reaches = |by: isize| -> Option<(&Note, i32)> {
+        let note = place.neighbour(by)?;
+        let gap = from?.place().up_to(note.sound.pitch()?.place());
+        Some((note, gap.steps))
+    };
+    match reaches(1) {
+        Some((note, steps)) if steps == way => return Ok((note.onset, false)),
+        Some(_) => {}
+        None => return Err("nothing follows it"),
+    }
+    // One decorating note, or two, that agree; then the resolution.
+    for by in 2..=3 {
+        let between = (1..by).all(|b| {
+            place.neighbour(b).is_some_and(|note| {
+                place.agrees_at(note.onset) != Some(false) && note.length <= place.at_most()
+            })
+        });
+        if let (true, Some((note, steps))) = (between, reaches(by))
+            && steps == way
+        {
+            return Ok((note.onset, true));
+        }
+    }
+    Err(if way < 0 {
+        "it does not go down by step"
+    } else {
+        "it does not go up by step"
+    })
+}
+
+impl Place<'_> {
+    /// The longest a decorating note may be: as long as the dissonance holds.
+    fn at_most(&self) -> Time {
+        self.this()
+            .map_or_else(|| Time::from_integer(0), |n| n.end() - self.at)
+    }
+}
