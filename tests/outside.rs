@@ -15,5 +15,7 @@ mod judged;
 mod rewrite;
 #[path = "outside/scores.rs"]
 mod scores;
+#[path = "outside/table.rs"]
+mod table;
 #[path = "outside/treatise.rs"]
 mod treatise;

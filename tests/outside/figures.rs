@@ -38,9 +38,9 @@ fn every_dissonance_of_the_treatise_is_a_figure() {
         [
             // A fourth over a held bass, tied into a suspension.
             ("fux-141", 3, "consonant fourth"),
-            // The leading note of the close, and the note under it while the tie resolves.
-            ("fux-144", 10, "lower neighbour"),
-            ("fux-151", 11, "lower neighbour"),
+            // The leading note of the close under a fifth that closes with it.
+            ("fux-144", 10, "diminished fifth that closes"),
+            ("fux-151", 11, "diminished fifth that closes"),
         ]
     );
     let total: usize = counts.values().sum();

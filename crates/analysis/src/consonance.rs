@@ -29,6 +29,12 @@ pub fn is_fourth(gap: Gap) -> bool {
     class(gap) == (3, 5)
 }
 
+/// A diminished fifth within the octave.
+#[must_use]
+pub fn is_diminished_fifth(gap: Gap) -> bool {
+    class(gap) == (4, 6)
+}
+
 /// A tritone written as a diminished fifth or an augmented fourth.
 #[must_use]
 pub fn is_tritone(gap: Gap) -> bool {

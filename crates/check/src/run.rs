@@ -1,6 +1,6 @@
 //! Running the rules over a score.
 
-use partwright_rules::{Finding, Found, Line, Looks, Piece, Strictness, catalogue};
+use partwright_rules::{Discord, Finding, Found, Line, Looks, Piece, Strictness, catalogue};
 
 /// The findings of all the rules that take part, in terms of voices and moments, in no order.
 #[must_use]
@@ -19,6 +19,12 @@ pub fn notes_findings(piece: &Piece<'_>, strictness: &Strictness) -> Vec<Finding
             Looks::Lines(check) => lines.push((entry, check)),
             Looks::Piece(check) => {
                 check(&piece, &mut Found::new(entry, strictness, score, &mut list))
+            }
+            Looks::Dissonances(check) => {
+                let mut found = Found::new(entry, strictness, score, &mut list);
+                for dissonance in piece.analysis.dissonances() {
+                    check(&Discord { piece, dissonance }, &mut found);
+                }
             }
             Looks::Text => {}
         }

@@ -6,7 +6,7 @@ use crate::catalogue::Entry;
 use crate::finding::{Finding, Role, Spot};
 use crate::rule::{Case, NumberOf, Severity};
 use crate::style::{Strictness, Style};
-use crate::view::{Line, LineMove, PairMove};
+use crate::view::{Discord, Line, LineMove, PairMove};
 
 /// Collects the findings of one rule under one style.
 pub struct Found<'a> {
@@ -124,6 +124,40 @@ impl<'a> Found<'a> {
             spot: spot(step.to.onset),
             until: None,
             related: vec![(Role::From, spot(step.from.onset))],
+        });
+    }
+
+    /// A finding about a dissonance: it stands at the dissonant note where that begins to disagree.
+    pub fn dissonance(
+        &mut self,
+        case: &'static Case,
+        discord: &Discord<'_>,
+        message: impl FnOnce() -> String,
+    ) {
+        let (voice, other) = (discord.dissonant().0, discord.other().0);
+        let Some(severity) = self.severity_of(case, &[voice]) else {
+            return;
+        };
+        let at = discord.dissonance.at;
+        let mut related = vec![(Role::With, Spot { voice: other, at })];
+        let note = discord.note(discord.dissonant());
+        if let Some(note) = note.filter(|note| note.onset < at) {
+            related.push((
+                Role::Struck,
+                Spot {
+                    voice,
+                    at: note.onset,
+                },
+            ));
+        }
+        self.list.push(Finding {
+            rule: self.rule,
+            severity,
+            message: message(),
+            voices: vec![voice.min(other), voice.max(other)],
+            spot: Spot { voice, at },
+            until: None,
+            related,
         });
     }
 

@@ -21,11 +21,13 @@ pub use rule::{Case, FAMILIES, Looks, NumberOf, Rule, Severity};
 pub use source::Source;
 pub use style::{Number, Override, STYLES, Setting, Strictness, Style};
 pub use view::{
-    Crossing, Direct, Line, LineMove, NotesOver, PairMove, Passage, Piece, Run, Sounding,
+    Crossing, Direct, Discord, Line, LineMove, NotesOver, PairMove, Passage, Piece, Run, Sounding,
 };
 
 /// What every rule file needs.
 pub mod prelude {
+    pub use partwright_analysis::Figure;
+    pub use partwright_analysis::figures::Near;
     pub use partwright_score::{Interval, Pair};
     pub use partwright_space::{Consecutive, Family, Motion, Way};
 
@@ -34,5 +36,7 @@ pub mod prelude {
     pub use crate::rule::{Case, Looks, NumberOf, Rule, Severity};
     pub use crate::source::{self, Source};
     pub use crate::style::{Setting, Style, allow, fault, remark, weakness};
-    pub use crate::view::{Direct, Line, LineMove, NotesOver, PairMove, Passage, Piece, Sounding};
+    pub use crate::view::{
+        Direct, Discord, Line, LineMove, NotesOver, PairMove, Passage, Piece, Sounding,
+    };
 }

@@ -4,20 +4,30 @@ use crate::catalogue::File;
 
 #[path = "rules/motion/all_one_way.rs"]
 pub mod all_one_way;
+#[path = "rules/dissonance/anticipation.rs"]
+pub mod anticipation;
+#[path = "rules/dissonance/appoggiatura.rs"]
+pub mod appoggiatura;
 #[path = "rules/line/augmented_interval.rs"]
 pub mod augmented_interval;
+#[path = "rules/dissonance/cambiata.rs"]
+pub mod cambiata;
 #[path = "rules/line/chromatic_semitone.rs"]
 pub mod chromatic_semitone;
 #[path = "rules/cadence/closing_interval.rs"]
 pub mod closing_interval;
 #[path = "rules/range/compass.rs"]
 pub mod compass;
+#[path = "rules/dissonance/consonant_fourth.rs"]
+pub mod consonant_fourth;
 #[path = "rules/motion/contrary_fifths.rs"]
 pub mod contrary_fifths;
 #[path = "rules/motion/contrary_octaves.rs"]
 pub mod contrary_octaves;
 #[path = "rules/motion/crossing.rs"]
 pub mod crossing;
+#[path = "rules/dissonance/diminished_fifth.rs"]
+pub mod diminished_fifth;
 #[path = "rules/line/diminished_interval.rs"]
 pub mod diminished_interval;
 #[path = "rules/motion/direct_fifths.rs"]
@@ -26,6 +36,12 @@ pub mod direct_fifths;
 pub mod direct_octaves;
 #[path = "rules/motion/direct_unisons.rs"]
 pub mod direct_unisons;
+#[path = "rules/dissonance/double_neighbour.rs"]
+pub mod double_neighbour;
+#[path = "rules/dissonance/escape_note.rs"]
+pub mod escape_note;
+#[path = "rules/dissonance/free_dissonance.rs"]
+pub mod free_dissonance;
 #[path = "rules/line/leap_beyond_octave.rs"]
 pub mod leap_beyond_octave;
 #[path = "rules/line/leap_unrecovered.rs"]
@@ -34,6 +50,8 @@ pub mod leap_unrecovered;
 pub mod leaps_one_way;
 #[path = "rules/writing/licence_idle.rs"]
 pub mod licence_idle;
+#[path = "rules/dissonance/neighbour_note.rs"]
+pub mod neighbour_note;
 #[path = "rules/writing/octave_doubt.rs"]
 pub mod octave_doubt;
 #[path = "rules/sonority/opening_interval.rs"]
@@ -46,10 +64,16 @@ pub mod parallel_fifths;
 pub mod parallel_octaves;
 #[path = "rules/motion/parallel_unisons.rs"]
 pub mod parallel_unisons;
+#[path = "rules/dissonance/passing_note.rs"]
+pub mod passing_note;
+#[path = "rules/dissonance/pedal.rs"]
+pub mod pedal;
 #[path = "rules/writing/reading.rs"]
 pub mod reading;
 #[path = "rules/line/repeated_note.rs"]
 pub mod repeated_note;
+#[path = "rules/dissonance/retardation.rs"]
+pub mod retardation;
 #[path = "rules/line/seventh_leap.rs"]
 pub mod seventh_leap;
 #[path = "rules/motion/similar_leaps.rs"]
@@ -60,6 +84,12 @@ pub mod sixth_leap;
 pub mod spacing;
 #[path = "rules/species/species_rhythm.rs"]
 pub mod species_rhythm;
+#[path = "rules/dissonance/suspension_position.rs"]
+pub mod suspension_position;
+#[path = "rules/dissonance/suspension_preparation.rs"]
+pub mod suspension_preparation;
+#[path = "rules/dissonance/suspension_resolution.rs"]
+pub mod suspension_resolution;
 #[path = "rules/motion/unequal_fifths.rs"]
 pub mod unequal_fifths;
 #[path = "rules/writing/unwritten.rs"]
@@ -73,6 +103,96 @@ pub(crate) static FILES: &[File] = &[
         stem: "closing_interval",
         rule: &closing_interval::RULE,
         text: include_str!("rules/cadence/closing_interval.rs"),
+    },
+    File {
+        family: "dissonance",
+        stem: "anticipation",
+        rule: &anticipation::RULE,
+        text: include_str!("rules/dissonance/anticipation.rs"),
+    },
+    File {
+        family: "dissonance",
+        stem: "appoggiatura",
+        rule: &appoggiatura::RULE,
+        text: include_str!("rules/dissonance/appoggiatura.rs"),
+    },
+    File {
+        family: "dissonance",
+        stem: "cambiata",
+        rule: &cambiata::RULE,
+        text: include_str!("rules/dissonance/cambiata.rs"),
+    },
+    File {
+        family: "dissonance",
+        stem: "consonant_fourth",
+        rule: &consonant_fourth::RULE,
+        text: include_str!("rules/dissonance/consonant_fourth.rs"),
+    },
+    File {
+        family: "dissonance",
+        stem: "diminished_fifth",
+        rule: &diminished_fifth::RULE,
+        text: include_str!("rules/dissonance/diminished_fifth.rs"),
+    },
+    File {
+        family: "dissonance",
+        stem: "double_neighbour",
+        rule: &double_neighbour::RULE,
+        text: include_str!("rules/dissonance/double_neighbour.rs"),
+    },
+    File {
+        family: "dissonance",
+        stem: "escape_note",
+        rule: &escape_note::RULE,
+        text: include_str!("rules/dissonance/escape_note.rs"),
+    },
+    File {
+        family: "dissonance",
+        stem: "free_dissonance",
+        rule: &free_dissonance::RULE,
+        text: include_str!("rules/dissonance/free_dissonance.rs"),
+    },
+    File {
+        family: "dissonance",
+        stem: "neighbour_note",
+        rule: &neighbour_note::RULE,
+        text: include_str!("rules/dissonance/neighbour_note.rs"),
+    },
+    File {
+        family: "dissonance",
+        stem: "passing_note",
+        rule: &passing_note::RULE,
+        text: include_str!("rules/dissonance/passing_note.rs"),
+    },
+    File {
+        family: "dissonance",
+        stem: "pedal",
+        rule: &pedal::RULE,
+        text: include_str!("rules/dissonance/pedal.rs"),
+    },
+    File {
+        family: "dissonance",
+        stem: "retardation",
+        rule: &retardation::RULE,
+        text: include_str!("rules/dissonance/retardation.rs"),
+    },
+    File {
+        family: "dissonance",
+        stem: "suspension_position",
+        rule: &suspension_position::RULE,
+        text: include_str!("rules/dissonance/suspension_position.rs"),
+    },
+    File {
+        family: "dissonance",
+        stem: "suspension_preparation",
+        rule: &suspension_preparation::RULE,
+        text: include_str!("rules/dissonance/suspension_preparation.rs"),
+    },
+    File {
+        family: "dissonance",
+        stem: "suspension_resolution",
+        rule: &suspension_resolution::RULE,
+        text: include_str!("rules/dissonance/suspension_resolution.rs"),
     },
     File {
         family: "line",

@@ -5,7 +5,7 @@ use std::fmt;
 use crate::found::Found;
 use crate::source::Source;
 use crate::style::{Setting, Style};
-use crate::view::{Line, PairMove, Piece, Sounding};
+use crate::view::{Discord, Line, PairMove, Piece, Sounding};
 
 /// How much a style minds.
 #[derive(Clone, Copy, Debug, PartialEq, Eq, Hash, PartialOrd, Ord)]
@@ -57,6 +57,8 @@ pub enum Looks {
     Pairs(fn(&PairMove<'_>, &mut Found<'_>)),
     /// Every sonority.
     Sonorities(fn(&Sounding<'_>, &mut Found<'_>)),
+    /// Every dissonance.
+    Dissonances(fn(&Discord<'_>, &mut Found<'_>)),
     /// Every voice as a line.
     Lines(fn(&Line<'_>, &mut Found<'_>)),
     /// The piece as a whole: passages.

@@ -16,5 +16,8 @@ pub(super) fn ask(place: &Place<'_>) -> Result<Figure, &'static str> {
     if place.is_weak() {
         return Err("it stands on a weak moment");
     }
+    if place.is_outlasted() {
+        return Err("the other note goes on first");
+    }
     Ok(Figure::Appoggiatura)
 }

@@ -7,22 +7,18 @@ pub(super) fn ask(place: &Place<'_>) -> Result<Figure, &'static str> {
         return Err("it was there before");
     }
     // The dissonant note is the first or the second of the two.
-    let turns = [0, -1].into_iter().any(|first| {
+    let turns = |first: isize| {
         let moves = [first - 1, first, first + 1].map(|from| place.step(from));
         let [Some(away), Some(across), Some(back)] = moves else {
             return false;
         };
-        away.steps.abs() == 1
-            && across.steps == -2 * away.steps
-            && back.steps == away.steps
-            && away.semitones + across.semitones + back.semitones == 0
-    });
-    if !turns {
+        away.steps.abs() == 1 && across.steps == -2 * away.steps && back.steps == away.steps
+    };
+    let Some(first) = [0, -1].into_iter().find(|&first| turns(first)) else {
         return Err("the line does not go round a note and back to it");
-    }
-    if place.level(0) == Some(0)
-        || (!place.is_weak() && place.level(0) <= place.level(-1).min(place.level(-2)))
-    {
+    };
+    // The second of the two may be stronger than the first, never than the main note.
+    if place.level(first) <= place.level(first - 1) || place.level(0) <= place.level(first - 1) {
         return Err("it stands on a strong moment");
     }
     Ok(Figure::DoubleNeighbour)

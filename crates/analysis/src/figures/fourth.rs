@@ -11,11 +11,7 @@ pub(super) fn ask(place: &Place<'_>) -> Result<Figure, &'static str> {
     if !place.over_bass || !consonance::is_fourth(place.gap) {
         return Err("it is no fourth over the lowest voice");
     }
-    let bass = place
-        .score
-        .note_at(place.against, place.at)
-        .and_then(|n| place.score.voices.get(place.against)?.notes.get(n));
-    if bass.is_none_or(|note| note.onset >= place.at) {
+    if place.other().is_none_or(|note| note.onset >= place.at) {
         return Err("the lowest voice does not hold its note");
     }
     if place.into().is_none_or(|into| into.steps.abs() != 1) {

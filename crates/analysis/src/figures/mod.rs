@@ -8,6 +8,7 @@
 mod anticipation;
 mod appoggiatura;
 mod cambiata;
+mod diminished_fifth;
 mod double_neighbour;
 mod escape;
 mod fourth;
@@ -22,7 +23,7 @@ use partwright_score::{Score, Texture, Time};
 use partwright_space::Gap;
 
 pub use place::Place;
-pub use suspension::Held;
+pub use suspension::{Held, Near, near_suspension};
 pub(crate) use sweep::dissonances;
 
 /// What a dissonant note is.
@@ -61,6 +62,8 @@ pub enum Figure {
     Appoggiatura,
     /// A fourth over a held bass that is held in its turn and then resolves down.
     ConsonantFourth,
+    /// A diminished fifth over the lowest voice that closes to a third.
+    DiminishedFifth,
     /// The lowest voice holds its note while the others change.
     Pedal,
 }
@@ -83,6 +86,7 @@ impl Figure {
             Figure::Retardation(_) => "retardation",
             Figure::Appoggiatura => "appoggiatura",
             Figure::ConsonantFourth => "consonant fourth",
+            Figure::DiminishedFifth => "diminished fifth that closes",
             Figure::Pedal => "pedal",
         }
     }
@@ -142,15 +146,17 @@ type Question = fn(&Place<'_>) -> Result<Figure, &'static str>;
 /// The figures in the order they are asked, with their names. The struck ones of weak moments
 /// come first; a held note is asked for its resolution before the note struck against it is
 /// taken for an accented ornament.
-const QUESTIONS: [(&str, Question); 13] = [
+const QUESTIONS: [(&str, Question); 15] = [
+    ("diminished fifth that closes", diminished_fifth::together),
     ("passing note", passing::unaccented),
+    ("consonant fourth", fourth::ask),
+    ("diminished fifth that closes", diminished_fifth::ask),
     ("neighbour", neighbour::unaccented),
     ("double neighbour", double_neighbour::ask),
     ("cambiata", cambiata::ask),
     ("anticipation", anticipation::ask),
     ("suspension", suspension::ask),
     ("retardation", suspension::ask_upward),
-    ("consonant fourth", fourth::ask),
     ("pedal", pedal::ask),
     ("accented passing note", passing::accented),
     ("accented neighbour", neighbour::accented),

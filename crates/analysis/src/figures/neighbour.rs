@@ -16,6 +16,9 @@ pub(super) fn unaccented(place: &Place<'_>) -> Result<Figure, &'static str> {
 
 /// On a strong one.
 pub(super) fn accented(place: &Place<'_>) -> Result<Figure, &'static str> {
+    if place.is_outlasted() {
+        return Err("the other note goes on first");
+    }
     returns(place).map(|upper| Figure::Neighbour {
         upper,
         accented: true,
@@ -32,7 +35,8 @@ fn returns(place: &Place<'_>) -> Result<bool, &'static str> {
     if into.steps.abs() != 1 || out_of.steps.abs() != 1 {
         return Err("it is not reached and left by step");
     }
-    if into.steps == out_of.steps || into.semitones != -out_of.semitones {
+    // The main note may come back with another sign.
+    if into.steps == out_of.steps {
         return Err("it does not return to the note before");
     }
     Ok(into.steps > 0)

@@ -13,6 +13,9 @@ pub(super) fn unaccented(place: &Place<'_>) -> Result<Figure, &'static str> {
 
 /// On a strong one.
 pub(super) fn accented(place: &Place<'_>) -> Result<Figure, &'static str> {
+    if place.is_outlasted() {
+        return Err("the other note goes on first");
+    }
     passes(place)?;
     Ok(Figure::Passing { accented: true })
 }

@@ -68,6 +68,17 @@ impl<'a> Place<'a> {
         self.this().is_some_and(|note| note.onset == self.at)
     }
 
+    /// When the pitch that sounds was first struck: before the dissonance where it is held over
+    /// it, or struck again (a new syllable); `None` where it is new.
+    pub(super) fn held_from(&self) -> Option<Time> {
+        let this = self.this()?;
+        if this.onset < self.at {
+            return Some(this.onset);
+        }
+        let before = self.neighbour(-1)?;
+        (before.sound == this.sound).then_some(before.onset)
+    }
+
     /// The move of the voice from one neighbour to the next; `None` at a rest or an end.
     pub(super) fn step(&self, from: isize) -> Option<Gap> {
         let left = self.neighbour(from)?.sound.pitch()?;
@@ -96,6 +107,31 @@ impl<'a> Place<'a> {
         let compare = |by| self.level(by).map(|there| here.cmp(&there));
         let both = [compare(-1), compare(1)];
         both.contains(&Some(Ordering::Greater)) && !both.contains(&Some(Ordering::Less))
+    }
+
+    /// The other note.
+    pub(super) fn other(&self) -> Option<&'a Note> {
+        let note = self.texture.note(self.sonority, self.against)?;
+        self.score.voices.get(self.against)?.notes.get(note)
+    }
+
+    /// The other note goes on while this one stays, and this one then agrees: the other was the
+    /// ornament.
+    pub(super) fn is_relieved(&self) -> bool {
+        match (self.this(), self.other()) {
+            (Some(this), Some(other)) => {
+                other.end() < this.end() && self.agrees_at(other.end()) == Some(true)
+            }
+            _ => false,
+        }
+    }
+
+    /// The other note goes on before this one does: it is the other that resolves.
+    pub(super) fn is_outlasted(&self) -> bool {
+        match (self.this(), self.other()) {
+            (Some(this), Some(other)) => other.end() < this.end(),
+            _ => false,
+        }
     }
 
     /// At a moment, the voice agrees with the lowest voice and with every other; `None` in silence

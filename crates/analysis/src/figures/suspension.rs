@@ -5,11 +5,11 @@
 //! decorated: a leap to an agreeing note and back, or the note of resolution early, once or with
 //! its lower neighbour (Lehmann, A Treatise on Simple Counterpoint, lesson IX).
 
-use partwright_score::{Note, Time};
+use partwright_score::{Note, Score, Texture, Time};
 use partwright_space::Gap;
 
 use super::place::agrees;
-use super::{Figure, Place};
+use super::{Dissonance, Figure, Place};
 
 /// The parts of a suspension.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
@@ -44,20 +44,58 @@ pub(super) fn ask_upward(place: &Place<'_>) -> Result<Figure, &'static str> {
     held(place, 1).map(Figure::Retardation)
 }
 
-fn held(place: &Place<'_>, way: i32) -> Result<Held, &'static str> {
-    if place.is_struck() {
-        return Err("it is struck, not held");
+/// What a held dissonance lacks to be a suspension.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub enum Near {
+    /// The held note was dissonant before.
+    Preparation,
+    /// It becomes dissonant on a weaker moment than it resolves.
+    Position,
+    /// It does not go down by step, or goes nowhere.
+    Resolution,
+}
+
+/// Asks the held note of a dissonance against which the other one is struck what it lacks to be
+/// a suspension; `None` where no note is held, or on a weak moment, where the struck note is the
+/// one to explain.
+#[must_use]
+pub fn near_suspension(score: &Score, texture: &Texture, of: &Dissonance) -> Option<Near> {
+    let [first, second] = Place::both(score, texture, of);
+    let new = |place: &Place<'_>| place.is_struck() && place.held_from().is_none();
+    let (struck, kept) = match (new(&first), new(&second)) {
+        (true, false) => (first, second),
+        (false, true) => (second, first),
+        _ => return None,
+    };
+    let from = kept.held_from()?;
+    if struck.is_weak() || kept.is_outlasted() || kept.is_relieved() {
+        return None;
     }
-    let this = place.this().ok_or("it is struck, not held")?;
+    if !is_prepared(&kept, from) {
+        return Some(Near::Preparation);
+    }
+    Some(match resolution(&kept, -1) {
+        Err(_) => Near::Resolution,
+        Ok(_) => Near::Position,
+    })
+}
+
+fn is_prepared(place: &Place<'_>, from: Time) -> bool {
     // A passing note under its end does not spoil a preparation.
     let before = place
         .sonority
         .checked_sub(1)
-        .ok_or("it is struck, not held")?;
-    let prepared = place.agrees_at(this.onset) != Some(false)
-        || agrees(place.texture, before, place.voice) != Some(false);
-    if !prepared {
+        .is_some_and(|k| agrees(place.texture, k, place.voice) != Some(false));
+    before || place.agrees_at(from) != Some(false)
+}
+
+fn held(place: &Place<'_>, way: i32) -> Result<Held, &'static str> {
+    let from = place.held_from().ok_or("it is struck, not held")?;
+    if !is_prepared(place, from) {
         return Err("its preparation is dissonant");
+    }
+    if place.is_relieved() {
+        return Err("the other note goes on first, to one that agrees");
     }
     let (resolved, ornamented) = resolution(place, way)?;
     // In groups of three the second and third beats are equally weak.
@@ -65,7 +103,7 @@ fn held(place: &Place<'_>, way: i32) -> Result<Held, &'static str> {
         return Err("it becomes dissonant on a weaker moment than it resolves");
     }
     Ok(Held {
-        struck: this.onset,
+        struck: from,
         at: place.at,
         resolved,
         gap: place.gap,

@@ -51,12 +51,14 @@ impl Sweep<'_> {
             .filter(|v| followers >> v & 1 == 0)
             .collect();
         // Above a pedal the next voice up is the lowest for all that follows.
+        let mut under = None;
         while let Some(bass) = self.lowest(k, &here) {
-            if !self.against_bass(k, bass, &here) {
+            if !self.against_bass(k, bass, &here, under) {
                 self.among_upper(k, bass, &here);
                 return;
             }
             here.retain(|&v| v != bass);
+            under = Some(bass);
         }
     }
 
@@ -78,20 +80,37 @@ impl Sweep<'_> {
     }
 
     /// Finds what disagrees with the lowest voice; tells whether that is a pedal.
-    fn against_bass(&mut self, k: usize, bass: usize, here: &[usize]) -> bool {
+    fn against_bass(
+        &mut self,
+        k: usize,
+        bass: usize,
+        here: &[usize],
+        under: Option<usize>,
+    ) -> bool {
         let note = self.texture.note(k, bass).unwrap_or(NONE);
         let is_pedal = |sweep: &Self| sweep.pedal.get(bass) == Some(&note);
         for &voice in here.iter().filter(|&&v| v != bass) {
             if is_pedal(self) {
                 return true;
             }
+            // Above a pedal, voices that agree with it are upper ones.
+            let consonant = match under {
+                Some(pedal) if self.agree_with(k, pedal, [voice, bass]) => consonance::among_upper,
+                _ => consonance::over_bass,
+            };
             if let Some(gap) = over(self.texture, k, voice, bass)
-                && !consonance::over_bass(gap)
+                && !consonant(gap)
             {
                 self.disagree(k, (voice, bass), true, gap);
             }
         }
         is_pedal(self)
+    }
+
+    fn agree_with(&self, k: usize, pedal: usize, voices: [usize; 2]) -> bool {
+        voices
+            .iter()
+            .all(|&v| over(self.texture, k, v, pedal).is_some_and(consonance::over_bass))
     }
 
     /// Finds what disagrees among voices that agree with the lowest.

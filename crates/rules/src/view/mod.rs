@@ -3,12 +3,13 @@
 //! These views only read what `partwright_score` laid out, and put it into a musician's words.
 
 mod close;
+mod discord;
 mod line;
 mod pair;
 mod piece;
 mod sounding;
 
-use partwright_analysis::Analysis;
+use partwright_analysis::{Analysis, Dissonance};
 use partwright_score::{Pair, PairStep, Score, Texture};
 
 pub use close::NotesOver;
@@ -45,6 +46,15 @@ pub struct PairMove<'a> {
     pub pair: Pair,
     /// What they do.
     pub step: &'a PairStep,
+}
+
+/// Two notes that disagree.
+#[derive(Clone, Copy)]
+pub struct Discord<'a> {
+    /// The piece.
+    pub piece: Piece<'a>,
+    /// What was read of it.
+    pub dissonance: &'a Dissonance,
 }
 
 /// One voice as a line.

@@ -106,6 +106,14 @@ impl<'a> Piece<'a> {
         }
     }
 
+    /// The length of a beat's cell where the piece is at a moment, in whole notes.
+    #[must_use]
+    pub fn cell_at(self, at: Time) -> Option<Time> {
+        let bar = self.score.bar_at(at).and_then(|i| self.score.bars.get(i))?;
+        let metre = self.score.metres.get(bar.metre as usize)?;
+        Some(metre.cell())
+    }
+
     /// A moment lies between beats.
     #[must_use]
     pub fn is_off_beat(self, at: Time) -> bool {

@@ -1,0 +1,87 @@
+//! A strong dissonance is reached by leap.
+//!
+//! Why: on a strong moment a dissonance wants to be there before the beat: a leap to it comes unprepared.
+//!
+//! # Fails
+//!
+//! ```voices
+//! style motet
+//! metre 4/2
+//!
+//! S | C5 - - - | F5 - E5 - |
+//! B | A3 - - - | C4 - -  - |
+//! //             ^ appoggiatura: S and B
+//! ```
+//!
+//! ```voices
+//! style chorale
+//!
+//! S | C5 - | F5 E5 |
+//! B | A3 - | C4 -  |
+//! //         ^ appoggiatura (weakness): S and B
+//! ```
+//!
+//! # Passes
+//!
+//! Prepared:
+//!
+//! ```voices
+//! style motet
+//! metre 4/2
+//!
+//! S | A4 - F5 - | - - E5 - |
+//! B | A3 - D4 - | C4 - -  - |
+//! ```
+//!
+//! # Does not apply
+//!
+//! ```voices
+//! style free
+//!
+//! S | C5 - | F5 E5 |
+//! B | A3 - | C4 -  |
+//! ```
+//!
+//! # What to do
+//!
+//! Prepare the note as a suspension, or reach it by step on a weaker moment.
+
+use crate::prelude::*;
+
+/// The rule.
+pub const RULE: Rule = Rule {
+    looks: Looks::Dissonances(check),
+    cases: &[&ORDINARY],
+    numbers: &[],
+    sources: &[source::OPEN_MUSIC_THEORY, source::GROVE, source::JEPPESEN],
+};
+
+static ORDINARY: Case = Case {
+    name: "",
+    when: "a leap to a dissonance on a strong moment, left by step",
+    settings: &[
+        allow(Style::Free, "the strongest of ornaments"),
+        weakness(Style::Chorale, "outside the style of plain chorales"),
+        fault(
+            Style::Motet,
+            "strong dissonances are suspensions (Jeppesen, from memory)",
+        ),
+        fault(
+            Style::Species1,
+            "a dissonance is not reached by leap (Grove; Open Music Theory)",
+        ),
+    ],
+};
+
+fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
+    let Some(Figure::Appoggiatura) = discord.figure() else {
+        return;
+    };
+    let case = &ORDINARY;
+    found.dissonance(case, discord, || {
+        format!(
+            "Appoggiatura: {}. Prepare it, or reach it by step on a weaker moment.",
+            discord.words()
+        )
+    });
+}

@@ -1,0 +1,178 @@
+//! A dissonance that no figure accounts for.
+//!
+//! Why: a dissonance is borne by what leads to it and away from it; without that it is heard as a wrong note.
+//!
+//! # Fails
+//!
+//! ```voices
+//! style species-1
+//! metre 4/4
+//! voice S
+//! voice C cantus
+//!
+//! S | A4 - - - | D5 - - - | G4 - - - |
+//! C | D4 - - - | C4 - - - | E4 - - - |
+//! //             ^ free dissonance: S and C
+//! ```
+//!
+//! A leap into a weak dissonance:
+//!
+//! ```voices
+//! style species-3
+//! metre 4/4
+//! voice S
+//! voice C cantus
+//!
+//! S | A4 F4 A4 C5 | A4 - - - |
+//! C | D4 -  -  -  | F4 - - - |
+//! //           ^ free dissonance: S and C
+//! ```
+//!
+//! A fourth over the bass, left by leap:
+//!
+//! ```voices
+//! style motet
+//! metre 4/2
+//!
+//! S | C5 - F5 - | A4 - - - |
+//! B | A3 - C4 - | F3 - - - |
+//! //       ^ free dissonance: S and B
+//! ```
+//!
+//! # Passes
+//!
+//! ```voices
+//! style species-3
+//! metre 4/4
+//! voice S
+//! voice C cantus
+//!
+//! S | D5 C5 B4 A4 | G4 - - - |
+//! C | D4 -  -  -  | B3 - - - |
+//! ```
+//!
+//! # Does not apply
+//!
+//! ```voices
+//! style free
+//!
+//! S | C5 - F5 - | A4 - - - |
+//! B | A3 - C4 - | F3 - - - |
+//! ```
+//!
+//! # What to do
+//!
+//! Reach the note by step and leave it by step, prepare and resolve it, or make it consonant.
+
+use crate::prelude::*;
+
+/// The rule.
+pub const RULE: Rule = Rule {
+    looks: Looks::Dissonances(check),
+    cases: &[&ORDINARY, &LEAP, &FOURTH],
+    numbers: &[],
+    sources: &[
+        source::FUX,
+        source::GROVE.at("Strict Counterpoint"),
+        source::LEHMANN.at("lesson I"),
+        source::OPEN_MUSIC_THEORY,
+        source::FUX_FIGURES.at("none in 75 figures"),
+    ],
+};
+
+static ORDINARY: Case = Case {
+    name: "",
+    when: "reached and left by step, but on a strong moment, or not at all",
+    settings: &[
+        allow(
+            Style::Free,
+            "a note may belong to the chord: judged with the harmony",
+        ),
+        allow(
+            Style::Chorale,
+            "a note may belong to the chord: judged with the harmony",
+        ),
+        fault(
+            Style::Motet,
+            "every dissonance is passing or suspended (Jeppesen, from memory)",
+        ),
+        fault(
+            Style::Species1,
+            "every dissonance passes or is suspended (Fux; Grove)",
+        ),
+    ],
+};
+
+static LEAP: Case = Case {
+    name: "leap",
+    when: "reached or left by leap",
+    settings: &[
+        allow(
+            Style::Free,
+            "a note may belong to the chord: judged with the harmony",
+        ),
+        allow(
+            Style::Chorale,
+            "a note may belong to the chord: judged with the harmony",
+        ),
+        fault(
+            Style::Motet,
+            "no leap to or from a dissonance (Grove; Open Music Theory)",
+        ),
+        fault(
+            Style::Species1,
+            "no leap to or from a dissonance (Grove; Open Music Theory)",
+        ),
+    ],
+};
+
+static FOURTH: Case = Case {
+    name: "fourth",
+    when: "a fourth over the lowest voice",
+    settings: &[
+        allow(
+            Style::Free,
+            "it may belong to the chord: judged with the harmony",
+        ),
+        allow(
+            Style::Chorale,
+            "it may belong to the chord: judged with the harmony",
+        ),
+        fault(
+            Style::Motet,
+            "the fourth over the lowest voice is dissonant (Fux)",
+        ),
+        fault(
+            Style::Species1,
+            "the fourth over the lowest voice is dissonant (Fux)",
+        ),
+    ],
+};
+
+fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
+    // A held note that lacks something of a suspension is told by the rules of suspensions.
+    if discord.figure().is_some() || discord.near_suspension().is_some() {
+        return;
+    }
+    let leap = |steps: Option<i32>| steps.is_some_and(|steps| steps.abs() >= 2);
+    let (into, out) = (leap(discord.steps_into()), leap(discord.steps_out()));
+    let case = if discord.is_fourth_over_bass() {
+        &FOURTH
+    } else if into || out {
+        &LEAP
+    } else {
+        &ORDINARY
+    };
+    found.dissonance(case, discord, || {
+        let (how, advice) = match (into, out) {
+            (true, true) => (", reached and left by leap", "Reach and leave it by step"),
+            (true, false) => (", reached by leap", "Reach it by step"),
+            (false, true) => (", left by leap", "Leave it by step"),
+            (false, false) => ("", "Move it to a weaker moment"),
+        };
+        format!(
+            "Free dissonance: {}{how}. {advice}, or make it consonant.",
+            discord.words()
+        )
+    });
+}

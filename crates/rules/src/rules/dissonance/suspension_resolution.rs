@@ -1,0 +1,87 @@
+//! A suspended note does not go down by step.
+//!
+//! Why: a held dissonance raises an expectation; the step down answers it.
+//!
+//! # Fails
+//!
+//! ```voices
+//! style species-4
+//! metre 4/4
+//! voice S
+//! voice C cantus
+//!
+//! S | _ _ D5 - | - - A4 - | F4 - - - |
+//! C | D4 - - - | E4 - -  - | D4 - - - |
+//! //             ^ suspension resolution: S and C
+//! ```
+//!
+//! # Passes
+//!
+//! ```voices
+//! style species-4
+//! metre 4/4
+//! voice S
+//! voice C cantus
+//!
+//! S | _ _ D5 - | - - C#5 - | D5 - - - |
+//! C | D4 - - - | E4 - -  - | D4 - - - |
+//! ```
+//!
+//! # Does not apply
+//!
+//! ```voices
+//! style free
+//!
+//! S | D5 - | -  A4 |
+//! B | D4 - | E4 -  |
+//! ```
+//!
+//! # What to do
+//!
+//! Let the held note go down by step while the other voice stays, or moves to a note that agrees.
+
+use crate::prelude::*;
+
+/// The rule.
+pub const RULE: Rule = Rule {
+    looks: Looks::Dissonances(check),
+    cases: &[&ORDINARY],
+    numbers: &[],
+    sources: &[
+        source::FUX_FIGURES.at("166 suspensions, all down by step"),
+        source::GROVE.at("fourth order"),
+        source::OPEN_MUSIC_THEORY,
+    ],
+};
+
+static ORDINARY: Case = Case {
+    name: "",
+    when: "it leaps, goes up otherwise, or stays",
+    settings: &[
+        allow(
+            Style::Free,
+            "a held note may belong to the chord: judged with the harmony",
+        ),
+        allow(
+            Style::Chorale,
+            "a held note may belong to the chord: judged with the harmony",
+        ),
+        fault(Style::Motet, "suspensions go down by step"),
+        fault(
+            Style::Species1,
+            "suspensions go down by step: all 166 in the figures of Fux do",
+        ),
+    ],
+};
+
+fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
+    if discord.near_suspension() != Some(Near::Resolution) {
+        return;
+    }
+    found.dissonance(&ORDINARY, discord, || {
+        format!(
+            "Suspension without resolution: {}. Let it go down by step.",
+            discord.words()
+        )
+    });
+}

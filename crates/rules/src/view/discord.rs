@@ -1,0 +1,129 @@
+//! A dissonance as rules see it.
+
+use partwright_analysis::figures::{Held, Near, near_suspension};
+use partwright_analysis::{Dissonance, Figure};
+use partwright_score::{Interval, Note, ZERO};
+
+use super::{Discord, Sounding};
+
+impl<'a> Discord<'a> {
+    /// What the note is, if a figure explains it.
+    #[must_use]
+    pub fn figure(&self) -> Option<Figure> {
+        self.dissonance.reading.map(|reading| reading.figure)
+    }
+
+    /// The voice and the note that are dissonant: the figure, the held note that lacks something
+    /// of a suspension, the one struck last, or the upper.
+    #[must_use]
+    pub fn dissonant(&self) -> (usize, usize) {
+        if let Some(reading) = self.dissonance.reading {
+            return (reading.voice, reading.note);
+        }
+        let Dissonance {
+            upper, lower, at, ..
+        } = *self.dissonance;
+        let is_struck = |of| self.note(of).is_some_and(|note| note.onset == at);
+        let lower_is = is_struck(lower) && !is_struck(upper);
+        if lower_is != self.near_suspension().is_some() {
+            lower
+        } else {
+            upper
+        }
+    }
+
+    /// The note it disagrees with.
+    #[must_use]
+    pub fn other(&self) -> (usize, usize) {
+        self.dissonance.other(self.dissonant().0)
+    }
+
+    /// A note by voice and index.
+    #[must_use]
+    pub fn note(&self, (voice, note): (usize, usize)) -> Option<&'a Note> {
+        self.piece.score.voices.get(voice)?.notes.get(note)
+    }
+
+    /// The move into the dissonant note, in scale steps; `None` where nothing leads to it.
+    #[must_use]
+    pub fn steps_into(&self) -> Option<i32> {
+        let (voice, note) = self.dissonant();
+        self.steps((voice, note.checked_sub(1)?), (voice, note))
+    }
+
+    /// The move out of it.
+    #[must_use]
+    pub fn steps_out(&self) -> Option<i32> {
+        let (voice, note) = self.dissonant();
+        self.steps((voice, note), (voice, note + 1))
+    }
+
+    fn steps(&self, from: (usize, usize), to: (usize, usize)) -> Option<i32> {
+        let (from, to) = (
+            self.note(from)?.sound.pitch()?,
+            self.note(to)?.sound.pitch()?,
+        );
+        Some(i32::from(to.step - from.step))
+    }
+
+    /// The dissonant note was there before, and its voice is asked for a suspension: what that
+    /// lacks.
+    #[must_use]
+    pub fn near_suspension(&self) -> Option<Near> {
+        if self.dissonance.reading.is_some() {
+            return None;
+        }
+        near_suspension(self.piece.score, self.piece.texture, self.dissonance)
+    }
+
+    /// The parts of the suspension it is.
+    #[must_use]
+    pub fn suspension(&self) -> Option<Held> {
+        match self.figure() {
+            Some(Figure::Suspension(held)) => Some(held),
+            _ => None,
+        }
+    }
+
+    /// The sonority in which it begins.
+    #[must_use]
+    pub fn sounding(&self) -> Sounding<'a> {
+        self.piece.sounding(self.dissonance.sonority)
+    }
+
+    /// It is a fourth over the lowest voice.
+    #[must_use]
+    pub fn is_fourth_over_bass(&self) -> bool {
+        self.dissonance.over_bass && partwright_analysis::consonance::is_fourth(self.dissonance.gap)
+    }
+
+    /// It begins on the first beat of a bar.
+    #[must_use]
+    pub fn is_on_downbeat(&self) -> bool {
+        self.sounding().sonority().is_some_and(|s| s.level == 0)
+    }
+
+    /// The dissonant note is shorter than a beat.
+    #[must_use]
+    pub fn is_shorter_than_beat(&self) -> bool {
+        let length = self.note(self.dissonant()).map_or(ZERO, |note| note.length);
+        let cell = self.piece.cell_at(self.dissonance.at);
+        cell.is_some_and(|cell| length < cell)
+    }
+
+    /// `D5 in soprano makes a major ninth with C4 in bass`.
+    #[must_use]
+    pub fn words(&self) -> String {
+        let text = |of: (usize, usize)| {
+            let pitch = self.note(of).and_then(|note| note.sound.pitch());
+            let pitch = pitch.map(|p| p.to_string()).unwrap_or_default();
+            format!("{pitch} in {}", self.piece.name(of.0))
+        };
+        format!(
+            "{} makes {} with {}",
+            text(self.dissonant()),
+            Interval(self.dissonance.gap).with_article(),
+            text(self.other())
+        )
+    }
+}
