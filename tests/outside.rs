@@ -9,6 +9,10 @@
 mod consecutives;
 #[path = "outside/figures.rs"]
 mod figures;
+#[path = "outside/hurts.rs"]
+mod hurts;
+#[path = "outside/invariance.rs"]
+mod invariance;
 #[path = "outside/judged.rs"]
 mod judged;
 #[path = "outside/rewrite.rs"]

@@ -36,7 +36,7 @@ const REMAIN: [(&str, u32, &str, &str); 10] = [
 ];
 
 /// Figures with few enough species that the rules for them are whole.
-fn figures() -> Option<Vec<(Piece, Style)>> {
+pub(crate) fn figures() -> Option<Vec<(Piece, Style)>> {
     let styled = set("fux")?.into_iter().filter_map(|piece| {
         let style = match piece.about["species"].as_str()? {
             "1" => Style::Species1,
