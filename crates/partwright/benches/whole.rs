@@ -10,7 +10,7 @@ mod generated;
 use divan::Bencher;
 use divan::counter::BytesCount;
 use partwright_check::{Analysis, Checked, Wishes};
-use partwright_rules::{Strictness, Style};
+use partwright_rules::{FAMILIES, Strictness, Style};
 use partwright_score::Texture;
 use partwright_sheet::Sheet;
 
@@ -74,6 +74,18 @@ fn rules(bencher: Bencher<'_, '_>, bars: usize) {
     let text = generated::sheet(bars, 1);
     let checked = Checked::text(&text, &Wishes::default());
     let strictness = Strictness::plain(Style::Chorale);
+    bencher
+        .counter(BytesCount::of_str(&text))
+        .bench(|| partwright_check::notes_findings(&checked.piece(), &strictness));
+}
+
+/// What each family costs by itself, on a thousand bars.
+#[divan::bench(args = FAMILIES)]
+fn family(bencher: Bencher<'_, '_>, family: &str) {
+    let text = generated::sheet(1_000, 1);
+    let checked = Checked::text(&text, &Wishes::default());
+    let mut strictness = Strictness::plain(Style::Chorale);
+    strictness.pick = vec![family.to_owned()];
     bencher
         .counter(BytesCount::of_str(&text))
         .bench(|| partwright_check::notes_findings(&checked.piece(), &strictness));
