@@ -2,6 +2,7 @@
 //!
 //! These views only read what `partwright_score` laid out, and put it into a musician's words.
 
+mod account;
 mod close;
 mod discord;
 mod line;
