@@ -88,12 +88,28 @@ fn sheets_are_aligned_and_mended_and_the_second_time_passes() {
 fn the_hooks_can_be_tried_without_configuration() {
     let desk = Desk::new(framework!());
     desk.write("evensong.voices", FLAWED);
+    desk.write("careless.voices", CARELESS);
     let source = desk.source().to_str().unwrap().to_owned();
-    let try_one = |hook: &str| desk.run(&["try-repo", &source, hook, "--files", "evensong.voices"]);
-    let (status, said) = try_one("partwright-check-system");
+    let try_one = |hook: &str, sheet: &str| {
+        let (status, said) = desk.run(&["try-repo", &source, hook, "--files", sheet]);
+        // What is tried is the commit, not a copy the framework makes of changes beside it.
+        assert!(!said.contains("uncommitted"), "{said}");
+        (status, said)
+    };
+    let (status, said) = try_one("partwright-check-system", "evensong.voices");
     assert!(status == 1 && said.contains("parallel-fifths"), "{said}");
-    let (status, said) = try_one("partwright-mend-system");
-    assert_eq!(status, 0, "the writing needs no mend: {said}");
+    let (status, said) = try_one("partwright-mend-system", "careless.voices");
+    assert!(status == 1 && said.contains("modified"), "{said}");
+    assert!(desk.read("careless.voices").contains("| B4 C4 |"), "{said}");
+    // Where every octave is plain the writing needs no mend, however faulty the music is.
+    let (status, said) = try_one("partwright-mend-system", "evensong.voices");
+    assert!(status == 0 && said.contains("Passed"), "{said}");
+    assert_eq!(desk.read("evensong.voices"), FLAWED);
+    let (status, said) = try_one("partwright-no-such-hook", "evensong.voices");
+    assert!(
+        status != 0 && said.contains("partwright-no-such-hook"),
+        "{said}"
+    );
 }
 
 /// The framework builds the program from the repository, as it would on a musician's machine.
