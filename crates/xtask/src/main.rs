@@ -10,7 +10,7 @@ use std::process::ExitCode;
 
 const HELP: &str = "\
 cargo xtask test          every check and test there is; installs what they need
-cargo xtask hooks         the git hooks under the real pre-commit framework
+cargo xtask hooks         of these, the git hooks under the real pre-commit framework alone
 cargo xtask list          write the generated list of rules anew
 cargo xtask rule NAME     start a rule: NAME is FAMILY/ID, as in motion/parallel-fifths
 ";

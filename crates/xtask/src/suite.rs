@@ -69,6 +69,7 @@ pub(crate) fn run() -> Result<(), String> {
             .env("PARTWRIGHT_EMACS", tools::emacs()?)
             .env("PARTWRIGHT_NPM", tools::vscode_extension()?),
     )?;
+    hooks()?;
     if std::env::var_os("CI").is_some() {
         step(
             "nothing generated was stale",
@@ -81,7 +82,7 @@ pub(crate) fn run() -> Result<(), String> {
     Ok(())
 }
 
-/// The git hooks under the real pre-commit framework: minutes of building, so apart from the rest.
+/// The git hooks under the real pre-commit framework, which builds the program anew.
 pub(crate) fn hooks() -> Result<(), String> {
     let mut command = Command::new(env!("CARGO"));
     command
