@@ -20,9 +20,18 @@ fn the_extension_for_vs_code() {
     said.exactly("packed [Content_Types].xml");
     said.exactly("packed extension.vsixmanifest");
     said.exactly("packed extension/dist/extension.js");
+    said.exactly("packed extension/dist/notices.txt");
     said.exactly("packed extension/language-configuration.json");
     said.exactly("packed extension/package.json");
     said.exactly("packed extension/readme.md");
+    let bundled = said.after("bundled ");
+    assert!(
+        ["vscode-languageclient", "vscode-jsonrpc", "semver"]
+            .iter()
+            .all(|name| bundled.split(' ').any(|word| word == *name)),
+        "{bundled}"
+    );
+    said.exactly("without a notice: none");
     said.exactly("manifest partwright.voicesheet, depends on 0");
     said.exactly("language voicesheet, .voices, comment //");
     said.exactly("words S F♯4 Bb2 C 𝄪");

@@ -3,7 +3,7 @@
 // module, and writes what it does to standard output, a line a fact. `tests/editors/vscode.rs`
 // starts this and judges the lines.
 //
-//   node composer.cjs PACKAGE EMPTY_FOLDER SHEET PATH_TO_PROGRAM NODE_MODULES_WITH_YAUZL
+//   node composer.cjs PACKAGE EMPTY_FOLDER SHEET PATH_TO_PROGRAM NODE_MODULES_OF_THE_EXTENSION
 
 const fs = require('node:fs');
 const path = require('node:path');
@@ -37,6 +37,36 @@ async function unpack() {
   return names.sort();
 }
 
+/** The packages that go into a bundle of the source, and which of them the notices leave out. */
+async function tellNotices(root) {
+  const source = path.join(modules, '..');
+  const { metafile } = await require(path.join(modules, 'esbuild')).build({
+    absWorkingDir: source, entryPoints: ['src/extension.ts'], outfile: 'none.js', write: false,
+    bundle: true, platform: 'node', external: ['vscode'], metafile: true,
+  });
+  const inside = Object.keys(metafile.inputs).filter((file) => file.includes('node_modules/'));
+  const parents = inside.map((file) => {
+    const words = file.split('/');
+    const at = words.lastIndexOf('node_modules') + 1;
+    return words.slice(0, at + (words[at].startsWith('@') ? 2 : 1)).join('/');
+  });
+  const notices = fs.readFileSync(path.join(root, 'dist/notices.txt'), 'utf8');
+  const flat = (text) => text.replace(/\s+/g, ' ').trim();
+  const bundled = [], missing = [];
+  for (const parent of [...new Set(parents)].sort()) {
+    const folder = path.join(source, parent);
+    const { name, version, license } = JSON.parse(fs.readFileSync(path.join(folder, 'package.json'), 'utf8'));
+    bundled.push(name);
+    const terms = fs.readdirSync(folder).filter((file) => file.toLowerCase().startsWith('licen'));
+    const texts = terms.map((file) => flat(fs.readFileSync(path.join(folder, file), 'utf8')));
+    const named = notices.split('\n').includes(`${name} ${version} (${license})`);
+    const whole = texts.length > 0 && texts.every((text) => flat(notices).includes(text));
+    if (!named || !whole) { missing.push(name); }
+  }
+  tell(`bundled ${bundled.join(' ')}`);
+  tell(`without a notice: ${missing.join(' ') || 'none'}`);
+}
+
 /** The programs that were started and still run: how they were called. */
 const children = new Set();
 const spawn = childProcess.spawn;
@@ -62,6 +92,7 @@ function tellFindings(seen) {
 async function main() {
   for (const name of await unpack()) { tell(`packed ${name}`); }
   const root = path.join(folder, 'extension');
+  await tellNotices(root);
   const manifest = JSON.parse(fs.readFileSync(path.join(root, 'package.json'), 'utf8'));
   tell(`manifest ${manifest.publisher}.${manifest.name}, depends on ${Object.keys(manifest.dependencies ?? {}).length}`);
   for (const language of manifest.contributes.languages) {
