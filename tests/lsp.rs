@@ -40,6 +40,8 @@ mod properties;
 mod pull;
 #[path = "lsp/random.rs"]
 mod random;
+#[path = "lsp/registration.rs"]
+mod registration;
 #[path = "lsp/rude.rs"]
 mod rude;
 #[path = "lsp/slow.rs"]

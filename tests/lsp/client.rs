@@ -290,6 +290,12 @@ impl Client {
         question["params"].clone()
     }
 
+    /// Refuses a request of the server.
+    pub(crate) fn refuse(&mut self, question: &Value) {
+        let error = json!({ "code": -32601, "message": "not here" });
+        self.send(&json!({ "jsonrpc": "2.0", "id": question["id"], "error": error }));
+    }
+
     /// Asks something trivial: its answer shows that the server is there, and that whatever was
     /// sent before has been read.
     pub(crate) fn is_there(&mut self) {

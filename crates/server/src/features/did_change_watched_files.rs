@@ -2,34 +2,42 @@
 
 use std::sync::Arc;
 
-use serde_json::json;
+use serde_json::{Value, json};
 use tower_lsp::lsp_types::Registration;
 
 use crate::session::Session;
 
-/// What is asked for once the client is ready: to be told of files, and of settings.
+/// What is asked for once the client is ready: to be told of files, and of settings. Each by itself,
+/// since a client grants or refuses a request whole.
 pub(crate) fn register(session: &Arc<Session>) {
     let agreed = session.agreed();
-    let mut wanted = Vec::new();
     if agreed.watches {
-        wanted.push(Registration {
-            id: "house-styles".to_owned(),
-            method: "workspace/didChangeWatchedFiles".to_owned(),
-            register_options: Some(json!({ "watchers": [{ "globPattern": "**/*.toml" }] })),
-        });
+        ask_for(
+            session,
+            "house-styles",
+            "workspace/didChangeWatchedFiles",
+            json!({ "watchers": [{ "globPattern": "**/*.toml" }] }),
+        );
     }
     if agreed.registers_configuration {
-        wanted.push(Registration {
-            id: "settings".to_owned(),
-            method: "workspace/didChangeConfiguration".to_owned(),
-            register_options: Some(json!({ "section": "partwright" })),
-        });
+        ask_for(
+            session,
+            "settings",
+            "workspace/didChangeConfiguration",
+            json!({ "section": "partwright" }),
+        );
     }
-    if !wanted.is_empty() {
-        session.ask(|client| async move {
-            let _ = client.register_capability(wanted).await;
-        });
-    }
+}
+
+fn ask_for(session: &Arc<Session>, id: &str, method: &str, options: Value) {
+    let wanted = Registration {
+        id: id.to_owned(),
+        method: method.to_owned(),
+        register_options: Some(options),
+    };
+    session.ask(|client| async move {
+        let _ = client.register_capability(vec![wanted]).await;
+    });
 }
 
 /// Looks at the house styles again.
