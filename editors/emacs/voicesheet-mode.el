@@ -26,8 +26,8 @@
 (defconst voicesheet--words
   (list
    (cons (concat "^[[:blank:]]*"
-                 (regexp-opt '("sheet" "title" "subtitle" "by" "style" "key" "metre" "tempo" "equal"
-                               "licence" "voice" "words" "harmony" "figures")
+                 (regexp-opt '("sheet" "title" "subtitle" "by" "style" "key" "metre" "meter" "tempo"
+                               "equal" "licence" "license" "voice" "words" "harmony" "figures")
                              'words))
          'font-lock-keyword-face)
    '("^[[:blank:]]*\\([[:alpha:]][[:alnum:]]*\\)[[:blank:]]*|" 1 font-lock-variable-name-face)

@@ -38,9 +38,10 @@ async function unpack() {
 }
 
 /** The packages that go into a bundle of the source, and which of them the notices leave out. */
-async function tellNotices(root) {
+function tellNotices(root) {
   const source = path.join(modules, '..');
-  const { metafile } = await require(path.join(modules, 'esbuild')).build({
+  // At once: what bundles in the background would be one more program that runs.
+  const { metafile } = require(path.join(modules, 'esbuild')).buildSync({
     absWorkingDir: source, entryPoints: ['src/extension.ts'], outfile: 'none.js', write: false,
     bundle: true, platform: 'node', external: ['vscode'], metafile: true,
   });
@@ -92,7 +93,7 @@ function tellFindings(seen) {
 async function main() {
   for (const name of await unpack()) { tell(`packed ${name}`); }
   const root = path.join(folder, 'extension');
-  await tellNotices(root);
+  tellNotices(root);
   const manifest = JSON.parse(fs.readFileSync(path.join(root, 'package.json'), 'utf8'));
   tell(`manifest ${manifest.publisher}.${manifest.name}, depends on ${Object.keys(manifest.dependencies ?? {}).length}`);
   for (const language of manifest.contributes.languages) {
