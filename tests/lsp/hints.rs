@@ -142,3 +142,33 @@ fn settings_may_come_with_the_first_message() {
     assert_eq!(hints(&mut client, &document), [""; 0]);
     client.goodbye();
 }
+
+#[test]
+fn what_came_with_the_first_message_holds_where_nothing_else_is_set() {
+    let mut client = Client::start();
+    let can = [
+        ("/workspace/configuration", json!(true)),
+        ("/workspace/inlayHint/refreshSupport", json!(true)),
+    ];
+    let params = json!({
+        "processId": null,
+        "capabilities": capabilities_and(&can),
+        "initializationOptions": { "inlayHints": { "barNumbers": false } },
+    });
+    client.request("initialize", params);
+    client.notify("initialized", json!({}));
+    let document = Document::open(&mut client, "file:///a.voices", SHEET);
+    let unset = json!({ "settings": null });
+    // Nothing set, then something, then nothing again; each change is told by the server.
+    client.reply("workspace/configuration", json!([null]));
+    client.notify("workspace/didChangeConfiguration", unset.clone());
+    let other = json!([{ "inlayHints": { "barNumbers": true } }]);
+    client.reply("workspace/configuration", other);
+    client.reply("workspace/inlayHint/refresh", Value::Null);
+    assert_eq!(hints(&mut client, &document), NUMBERS);
+    client.notify("workspace/didChangeConfiguration", unset);
+    client.reply("workspace/configuration", json!([null]));
+    client.reply("workspace/inlayHint/refresh", Value::Null);
+    assert_eq!(hints(&mut client, &document), [""; 0]);
+    client.goodbye();
+}

@@ -71,8 +71,9 @@ impl LanguageServer for Server {
         let agreed = initialize::agree(&params.capabilities);
         self.session.agree(agreed);
         self.session.connect(&self.client, Handle::current());
-        if let Some(options) = &params.initialization_options {
-            did_change_configuration::take(&self.session, options);
+        if let Some(options) = params.initialization_options {
+            did_change_configuration::take(&self.session, &options);
+            let _ = self.session.at_first.set(options);
         }
         if let Some(id) = params.process_id {
             parent::watch(id, &self.session);

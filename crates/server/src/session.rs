@@ -7,6 +7,7 @@ use std::sync::{Mutex, OnceLock, PoisonError};
 use std::time::Duration;
 
 use serde::Serialize;
+use serde_json::Value;
 use tokio::runtime::Handle;
 use tower_lsp::Client;
 use tower_lsp::lsp_types::{
@@ -88,6 +89,8 @@ pub(crate) struct Session {
     pub(crate) lifecycle: Lifecycle,
     agreed: OnceLock<Agreed>,
     settings: Mutex<Settings>,
+    /// What came with the first message: it holds where the client, asked later, has nothing to say.
+    pub(crate) at_first: OnceLock<Value>,
     /// The client asks again for findings when it is told to.
     pub(crate) refresh_findings: AtomicBool,
     /// The line to the client, and what runs tasks that ask it something.

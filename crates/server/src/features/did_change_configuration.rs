@@ -70,7 +70,8 @@ pub(crate) fn fetch(session: &Arc<Session>) {
         if let Some(Ok(values)) = asks::ask(PATIENCE, question).await
             && let Some(value) = values.first()
         {
-            take(&of, value);
+            let set = (!value.is_null()).then_some(value);
+            take(&of, set.or(of.at_first.get()).unwrap_or(value));
         }
     });
 }
