@@ -72,8 +72,7 @@ impl LanguageServer for Server {
         self.session.agree(agreed);
         self.session.connect(&self.client, Handle::current());
         if let Some(options) = params.initialization_options {
-            did_change_configuration::take(&self.session, &options);
-            let _ = self.session.at_first.set(options);
+            did_change_configuration::begin(&self.session, options);
         }
         if let Some(id) = params.process_id {
             parent::watch(id, &self.session);

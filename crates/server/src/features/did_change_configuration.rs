@@ -33,21 +33,18 @@ fn settings(value: &Value) -> Settings {
     }
 }
 
+/// Takes over what came with the first message. Nothing is open yet, so nobody is told.
+pub(crate) fn begin(session: &Session, value: Value) {
+    adopt(session, &value);
+    let _ = session.at_first.set(value);
+}
+
 /// Takes settings over that the client sent along.
 pub(crate) fn take(session: &Session, value: &Value) {
-    let before = session.settings();
-    let now = settings(value.get(SECTION).unwrap_or(value));
-    if !session.set(now.clone()) {
+    let Some(restyled) = adopt(session, value) else {
         return;
-    }
-    if before.style != now.style {
-        if let Some(name) = now.style.as_deref().filter(|n| Style::named(n).is_none()) {
-            let words = format!(
-                "No style of ours is called {name}: it holds for sheets whose house style is \
-                 called so."
-            );
-            session.log(MessageType::INFO, words);
-        }
+    };
+    if restyled {
         session.documents.check_again(None);
         session.findings_may_differ();
     }
@@ -56,6 +53,27 @@ pub(crate) fn take(session: &Session, value: &Value) {
             let _ = client.inlay_hint_refresh().await;
         });
     }
+}
+
+/// Makes them the session's; whether the style is another, and nothing where all is as it was.
+fn adopt(session: &Session, value: &Value) -> Option<bool> {
+    let before = session.settings();
+    let now = settings(value.get(SECTION).unwrap_or(value));
+    if !session.set(now.clone()) {
+        return None;
+    }
+    let restyled = before.style != now.style;
+    if let Some(name) = now.style.as_deref()
+        && restyled
+        && Style::named(name).is_none()
+    {
+        let words = format!(
+            "No style of ours is called {name}: it holds for sheets whose house style is called \
+             so."
+        );
+        session.log(MessageType::INFO, words);
+    }
+    Some(restyled)
 }
 
 /// Asks the client for them, where it can be asked.
