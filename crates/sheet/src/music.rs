@@ -126,7 +126,8 @@ impl Music {
                     let span = Span::new(start, unmarked_end(reader.text, start));
                     let before = Pitch { step: last, sign };
                     let index = parts.len();
-                    reader.slip_at(index, doubt(written.sign, before, step, span));
+                    let own = text(reader.text.get(span.range()).unwrap_or_default());
+                    reader.slip_at(index, doubt(written.sign, before, step, span, own));
                 }
                 (PartKind::Note, step, 0)
             }
@@ -349,7 +350,7 @@ const SIZES: [&str; 7] = [
 ];
 
 /// The carried octave figure makes a sixth or a seventh: both readings are shown.
-fn doubt(sign: i8, before: Pitch, step: i16, span: Span) -> Problem {
+fn doubt(sign: i8, before: Pitch, step: i16, span: Span, own: &str) -> Problem {
     let size = |step: i16| {
         let index = usize::from((step - before.step).unsigned_abs());
         SIZES.get(index).copied().unwrap_or("seventh")
@@ -361,7 +362,10 @@ fn doubt(sign: i8, before: Pitch, step: i16, span: Span) -> Problem {
             "falling"
         }
     };
-    let reading = |step: i16| (Pitch { step, sign }.to_string(), way(step), size(step));
+    let reading = |step: i16| {
+        let pitch = Pitch { step, sign };
+        (pitch, way(step), size(step))
+    };
     let carried = reading(step);
     let mut message = format!(
         "The octave figure carried from {before} makes this {}, a {} {}.",
@@ -378,16 +382,20 @@ fn doubt(sign: i8, before: Pitch, step: i16, span: Span) -> Problem {
         let _ = write!(
             message,
             " Write {} if that is meant, or {} (a {} {}).",
-            readings.first().map_or("", |r| &r.0),
+            carried.0,
             near.0,
             near.1,
             near.2
         );
         readings.push(near);
     }
-    let offer = |(text, way, size): (String, &str, &str)| Offer {
-        title: format!("Write {text} ({way} {size})"),
-        edits: vec![Edit { span, text }],
+    // The note stays as it is written, letter and sign; the figure is added.
+    let offer = |(pitch, way, size): (Pitch, &str, &str)| Offer {
+        title: format!("Write {pitch} ({way} {size})"),
+        edits: vec![Edit {
+            span,
+            text: format!("{own}{}", pitch.octave()),
+        }],
     };
     Problem {
         kind: ProblemKind::OctaveDoubt,

@@ -72,7 +72,8 @@ impl Pass<'_, '_> {
             title: format!("Write {pitch}"),
             edits: vec![Edit {
                 span,
-                text: pitch.to_string(),
+                // Letter and sign stay as they are written.
+                text: format!("{}{}", self.lowering.at(span), pitch.octave()),
             }],
         };
         let found = Problem {
