@@ -293,7 +293,7 @@ fn title(
     pitch: Pitch,
 ) -> String {
     let score = &checked.reading.score;
-    let name = score.voice_name(movable.voice);
+    let name = score.spoken_name(movable.voice);
     let earlier = finding
         .at
         .is_some_and(|at| movable.at < at && finding.until.is_none());
@@ -328,7 +328,7 @@ fn title(
             Motion::Similar => "similar to",
             Motion::Still => return None,
         };
-        Some(format!("{word} {}", score.voice_name(other)))
+        Some(format!("{word} {}", score.spoken_name(other)))
     });
     match motion {
         Some(motion) => format!("{what}: {motion}"),

@@ -160,7 +160,7 @@ fn about_voice(score: &Score, voice: &Voice) -> String {
         lines.push(format!("In species {species}."));
     }
     if let Some(other) = voice.doubles {
-        let other = score.voice_name(other);
+        let other = score.spoken_name(other);
         lines.push(format!(
             "Doubles {other}: for rules about pairs the two are one voice."
         ));
