@@ -89,10 +89,12 @@ impl Signs {
             return Signs::Plain;
         }
         // Labels, rules and words may hold a b, a sign stands behind a letter of a note.
-        let plain = |pair: &[u8]| {
-            matches!(pair, [b'A'..=b'G', b'#' | b'b'] | [b'a'..=b'g', b'#'])
-        };
-        let plain = text.as_bytes().windows(2).filter(|pair| plain(pair)).count();
+        let plain = |pair: &[u8]| matches!(pair, [b'A'..=b'G', b'#' | b'b'] | [b'a'..=b'g', b'#']);
+        let plain = text
+            .as_bytes()
+            .windows(2)
+            .filter(|pair| plain(pair))
+            .count();
         if printed >= plain {
             Signs::Printed
         } else {

@@ -16,7 +16,7 @@ use crate::tree::{
 };
 
 /// The most parts a cell has.
-const MOST_PARTS: usize = 64;
+pub(crate) const MOST_PARTS: usize = 64;
 
 /// What is known of the octave figure along a row.
 #[derive(Clone, Copy, Debug, Default, PartialEq, Eq)]
@@ -72,8 +72,7 @@ impl Cells for Music {
         if parts > MOST_PARTS {
             reader.system.parts.truncate(first);
             reader.system.slips.truncate(slips);
-            let message = format!("A beat has at most {MOST_PARTS} parts; these are {parts}.");
-            reader.slip(Span::new(start, at), message);
+            reader.slip(Span::new(start, at), too_many(parts));
             self.spoil(reader, start, 0);
         } else if let Some(part) = empty {
             reader.slip_at(part, empty_part(row, start, at, parts));
@@ -279,6 +278,11 @@ fn mark_first(whole: &str) -> Option<String> {
     after.is_empty().then(|| format!("{rest}{mark}"))
 }
 
+/// What is said about a cell of so many parts.
+pub(crate) fn too_many(parts: usize) -> String {
+    format!("A beat has at most {MOST_PARTS} parts; these are {parts}.")
+}
+
 /// Where the cell that begins at `start` ends.
 pub(crate) fn cell_end(row: &[u8], start: usize) -> usize {
     let mut at = start;
@@ -382,10 +386,7 @@ fn doubt(sign: i8, before: Pitch, step: i16, span: Span, own: &str) -> Problem {
         let _ = write!(
             message,
             " Write {} if that is meant, or {} (a {} {}).",
-            carried.0,
-            near.0,
-            near.1,
-            near.2
+            carried.0, near.0, near.1, near.2
         );
         readings.push(near);
     }

@@ -12,6 +12,7 @@
 //!   one that could be left out may stand there on purpose.
 //! - What cannot be read stays as it is: a part within its cell, a line as a whole. Comments and
 //!   blank lines stay; only marks drawn under the notes (`// ^^`) move with their notes.
+//! - A carriage return that ends no line goes as other blanks go.
 //! - A sheet that would grow beyond [`LARGEST`] in columns stays as it is.
 
 mod carets;

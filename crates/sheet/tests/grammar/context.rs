@@ -76,6 +76,8 @@ pub(crate) const KINDS: [Kind; 9] = [
             "does not double itself",
             "double each other in a ring",
             "A second row of this name",
+            // Which words of a licence name voices.
+            "The rules come before the voices",
             // Of a licence whose only word names a voice.
             "The rule is missing",
         ],
