@@ -156,7 +156,7 @@ impl<'a> Gather<'a> {
             LineKind::Comment => {}
             LineKind::Row(kind) => self.row(line, kind),
             LineKind::Footnote => self.other(line),
-            LineKind::Word(Header::Unknown) | LineKind::Unlabelled => {
+            LineKind::Word(Header::Unknown) | LineKind::Unlabelled | LineKind::Begun => {
                 // It may have been meant for a row or a comment: the system goes on.
                 if let Some(current) = &mut self.current {
                     current.flawed = true;

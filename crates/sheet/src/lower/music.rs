@@ -15,7 +15,7 @@ use crate::sheet::Placed;
 use crate::span::Span;
 use crate::system::is_copied;
 use crate::tree::{
-    BREATH, FERMATA, MARKED, OPEN, Part, PartKind, Row, RowBar, part_end, unmarked_end,
+    BREATH, DOUBLE, FERMATA, MARKED, OPEN, Part, PartKind, Row, RowBar, part_end, unmarked_end,
 };
 
 /// Hints about silent voices beyond these are summed up in one: a sheet of thousands of systems
@@ -153,7 +153,7 @@ impl<'a> Pass<'_, 'a> {
                 *here = true;
             }
         }
-        let told = !system.doubtful && !system.rows.is_empty();
+        let told = !system.doubtful && !system.rows.is_empty() && !self.is_in_work(system);
         let mut silent: Vec<usize> = Vec::new();
         for (voice, flow) in self.flows.iter_mut().enumerate() {
             if present.get(voice) == Some(&true) || system.bars == 0 && !told {
@@ -182,12 +182,17 @@ impl<'a> Pass<'_, 'a> {
                 "{name} is silent in this system: it has no row here. If it only rests, a row of _ \
                  says so."
             ),
-            [others @ .., last] => format!(
-                "{} and {} are silent in this system: they have no rows here. If they only rest, \
-                 rows of _ say so.",
-                others.join(", "),
-                last.replacen("The ", "the ", 1)
-            ),
+            [first, others @ ..] => {
+                let small = |name: &String| name.replacen("The ", "the ", 1);
+                let mut others: Vec<String> = others.iter().map(small).collect();
+                let last = others.pop().unwrap_or_default();
+                others.insert(0, first.clone());
+                format!(
+                    "{} and {last} are silent in this system: they have no rows here. If they \
+                     only rest, rows of _ say so.",
+                    others.join(", ")
+                )
+            }
             [] => return,
         };
         let span = first.label.moved(system.placed.span.start);
@@ -196,6 +201,15 @@ impl<'a> Pass<'_, 'a> {
             at: Some(start.time()),
             ..remark(ProblemKind::VoiceSilent, span, &message)
         });
+    }
+
+    /// The system stands at the end of the text and closes no section: rows may still come.
+    fn is_in_work(&self, system: &SystemPlan) -> bool {
+        let placed = &system.placed;
+        let behind = self.lowering.text.get(placed.span.end as usize..);
+        let last = behind.is_some_and(|behind| behind.trim().is_empty());
+        let lines = &placed.system.bars;
+        last && !lines.iter().any(|line| line.flags & DOUBLE != 0)
     }
 
     /// The bars a row does not have.
