@@ -48,6 +48,10 @@ pub(crate) fn place(
         return None;
     }
     let nth = (bar - row.bars.start) as usize;
+    // Behind a bar line left out nobody knows.
+    if system.lost_at(index as u32).is_some_and(|lost| nth > lost) {
+        return None;
+    }
     let grid = plan.grid.get(system.first + nth)?;
     if fill(tree, row.kind, bar) == Fill::Whole {
         return Some((voice, grid.moment(0, 0, 1).time()));

@@ -314,7 +314,9 @@ impl<'a> Lowering<'a> {
             let span = row.label.moved(first.span.start);
             let label = self.at(span);
             // A bad label is reported with the row.
-            if label_fault(label).is_none() {
+            // A second row of one name is reported there too.
+            let known = found.iter().any(|d: &Declared<'_>| d.voice.label == label);
+            if label_fault(label).is_none() && !known {
                 found.push(Declared {
                     voice: Voice::new(label, partwright_score::Kind::plain()),
                     label: span,

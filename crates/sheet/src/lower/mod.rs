@@ -7,6 +7,7 @@ pub(crate) mod bars;
 mod copies;
 mod flow;
 mod head;
+mod labels;
 mod lane;
 mod music;
 mod reports;

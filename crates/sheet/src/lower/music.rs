@@ -68,6 +68,8 @@ pub(super) struct Here<'s> {
     pub(super) bar: u32,
     pub(super) line: RowBar,
     pub(super) grid: GridBar,
+    /// A bar line is missing in it.
+    pub(super) lost: bool,
 }
 
 impl GridBar {
@@ -111,10 +113,14 @@ impl<'a> Pass<'_, 'a> {
             let grid = self.grid(system.first + bar);
             let mut copies = false;
             for ((row, voice), dry) in system.rows.iter().zip(&mut dry) {
+                let lost = system.lost_at(*row);
                 let Some(row) = system.placed.system.rows.get(*row as usize) else {
                     continue;
                 };
                 let voice = usize::from(*voice);
+                if lost.is_some_and(|lost| bar > lost) {
+                    continue;
+                }
                 let Some((index, line)) = bar_of(row, bar).and_then(|i| {
                     let line = system.placed.system.bars.get(i as usize)?;
                     Some((i, *line))
@@ -131,12 +137,16 @@ impl<'a> Pass<'_, 'a> {
                     bar: index,
                     line,
                     grid,
+                    lost: lost == Some(bar),
                 };
                 if is_copied(line.flags) {
                     copies = true;
                     *dry = false;
                 } else {
                     self.bar(here, dry);
+                }
+                if lost == Some(bar) {
+                    self.lost(here);
                 }
             }
             if copies {
@@ -245,6 +255,19 @@ impl<'a> Pass<'_, 'a> {
                 at: Some(at.time()),
                 ..remark(ProblemKind::Unwritten, span, message)
             });
+        }
+    }
+
+    /// A bar line is missing in this bar: the rest of the row is unknown, and what is wrong with it
+    /// is not told. Its marks are not idle for that.
+    fn lost(&mut self, here: Here<'_>) {
+        self.flows_turn(here.voice, here.grid.end(), Sound::Spoilt);
+        let system = &here.placed.system;
+        let first = |bar: u32| system.parts_of(system.cells_of(bar).start).start;
+        for part in first(here.bar + 1)..first(here.row.bars.end) {
+            let names = mark_names(self.lowering.text, here.placed, part);
+            let names = names.map(|(name, _)| name.to_owned());
+            self.lowering.stray_marks.extend(names);
         }
     }
 
