@@ -1,5 +1,6 @@
 //! A sheet or a bare score and a style go in; findings come out, with spans where there is text.
 
+mod doubt;
 mod drawn;
 mod filter;
 mod finding;
@@ -145,6 +146,7 @@ impl Checked {
                 findings.extend(text::finding(id, problem, &reading, &strictness));
             }
         }
+        doubt::gather(&mut findings, &reading.score);
         finding::sort(&mut findings);
         Checked {
             sheet,
