@@ -33,6 +33,7 @@ pub(crate) fn gather(findings: &mut Vec<Finding>, score: &Score) {
         };
         if let (Some((_, doubt)), Some(rules)) = (doubts.get_mut(doubt), kept.get_mut(doubt)) {
             doubt.severity = doubt.severity.max(finding.severity);
+            doubt.held.push(finding.severity);
             if !rules.contains(&finding.rule) {
                 rules.push(finding.rule);
             }
