@@ -35,6 +35,14 @@ pub fn align(text: &str) -> String {
     apply(text, &align_edits(text))
 }
 
+/// A sheet in columns; `None` where it would be larger than [`LARGEST`], or is so already.
+#[must_use]
+pub fn try_align(text: &str) -> Option<String> {
+    let sheet = Sheet::read(text);
+    let edits = edits(sheet.tree(), |_| true).filter(|_| !sheet.tree().too_large)?;
+    Some(apply(text, &edits))
+}
+
 /// The edits that set a sheet in columns: at most one a line, within the line, in the order of the
 /// text.
 #[must_use]
