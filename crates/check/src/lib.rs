@@ -146,7 +146,7 @@ impl Checked {
                 findings.extend(text::finding(id, problem, &reading, &strictness));
             }
         }
-        doubt::gather(&mut findings, &reading.score);
+        doubt::gather(&mut findings, &reading, text);
         finding::sort(&mut findings);
         Checked {
             sheet,

@@ -19,7 +19,7 @@ fn one_missing_figure_is_one_finding() {
         message.starts_with("The octave figure carried from B4 makes this C4, a falling seventh."),
         "{message}"
     );
-    assert!(message.contains("With it go: "), "{message}");
+    assert!(message.contains("Until then there wait: "), "{message}");
     assert!(message.contains("seventh leap"), "{message}");
 }
 
@@ -68,4 +68,20 @@ fn a_doubt_on_which_nothing_rests_stays_a_remark() {
 fn a_doubt_that_is_licensed_takes_nothing() {
     let text = "style chorale\nS | B4 C*a |\n*a licence octave-doubt: the leap is the call\n";
     assert_eq!(told(text), [("seventh-leap", Severity::Fault)]);
+}
+
+#[test]
+fn what_lies_in_the_doubtful_octave_waits_to_the_next_figure() {
+    // The soprano stays an octave too high from the doubt on, and leaps back in the next row.
+    let text = "style chorale\nmetre 2/4\nvoice S soprano\nvoice B bass\n\n\
+                S | D5 B | A B |\nB | G3 G | F G |\n\nS | A4 G |\nB | F3 E |\n";
+    let found = told(text);
+    let on = |rule: &str| found.iter().any(|(found, _)| *found == rule);
+    assert!(on("octave-doubt"), "{found:?}");
+    for rule in ["compass", "leap-beyond-octave", "spacing", "seventh-leap"] {
+        assert!(!on(rule), "{rule}: {found:?}");
+    }
+    let high = told(&text.replace("D5 B |", "D5 B5 |"));
+    let compass = |found: &[(&str, Severity)]| found.iter().any(|(rule, _)| *rule == "compass");
+    assert!(compass(&high), "{high:?}");
 }

@@ -81,8 +81,14 @@ impl Signs {
     /// Those used about a place: where both are, the more frequent.
     fn about(text: &str, place: Span) -> Signs {
         let range = place.range();
-        let start = text.floor_char_boundary(range.start.saturating_sub(AROUND));
-        let end = text.ceil_char_boundary((range.end + AROUND).min(text.len()));
+        let mut start = range.start.saturating_sub(AROUND);
+        let mut end = (range.end + AROUND).min(text.len());
+        while !text.is_char_boundary(start) {
+            start -= 1;
+        }
+        while !text.is_char_boundary(end) {
+            end += 1;
+        }
         let text = text.get(start..end).unwrap_or_default();
         let printed = text.matches(['♯', '♭', '𝄪', '𝄫']).count();
         if printed == 0 {

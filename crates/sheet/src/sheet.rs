@@ -223,8 +223,8 @@ impl<'a> Gather<'a> {
     /// for which the blank line was forgotten: voices are still missing here, and what follows is
     /// no repetition of the rows so far.
     fn is_mislabelled(&self, name: &str, next: Option<&Line>) -> bool {
-        let has = |voice: &&str| self.labels.contains(*voice);
-        if !self.voices.is_empty() && self.voices.iter().all(|voice| has(&voice)) {
+        let has = |voice: &str| self.labels.contains(voice);
+        if !self.voices.is_empty() && self.voices.iter().all(|voice| has(voice)) {
             return false;
         }
         let next = next.and_then(|line| match line.kind {
