@@ -41,8 +41,8 @@ struct Movable {
     rank: (usize, usize),
 }
 
-/// The mends of a finding, the best first: the least movement in scale steps, then inner voices
-/// before outer ones. Empty where no change of one note helps, for licensed findings, and for
+/// The mends of a finding, the best first: the least movement in scale steps (notes outside the
+/// scale count as further off), then inner voices before outer ones. Empty where no change of one note helps, for licensed findings, and for
 /// findings about the text.
 #[must_use]
 pub fn mends(checked: &Checked, finding: &Finding) -> Vec<Mend> {
@@ -69,11 +69,10 @@ pub fn mends(checked: &Checked, finding: &Finding) -> Vec<Mend> {
         let Some(voice) = score.voices.get(movable.voice) else {
             continue;
         };
-        for (order, pitch) in candidates(score, voice, movable.at, movable.pitch)
+        for (order, (pitch, distance)) in candidates(score, voice, movable.at, movable.pitch)
             .into_iter()
             .enumerate()
         {
-            let distance = (pitch.step - movable.pitch.step).abs();
             let Movable {
                 voice,
                 note,

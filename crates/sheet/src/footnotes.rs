@@ -7,6 +7,7 @@ use crate::near::short;
 use crate::problem::Problem;
 use crate::reading::{Footnote, HeadLicence};
 use crate::span::Span;
+use crate::system::problem;
 
 const FORM: &str = "licence parallel-fifths: why";
 
@@ -163,7 +164,11 @@ fn out_of_order(
             end: last.span.end,
         };
         let message = format!("The rules come before the voices: {}.", short(&right));
-        wrong(problems, span, &message, &[&right]);
+        // The voice is marked; what is offered replaces all the names.
+        problems.push(Problem {
+            span: first_voice.span,
+            ..problem(span, message, &[&right])
+        });
     }
 }
 

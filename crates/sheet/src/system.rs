@@ -91,7 +91,12 @@ impl Reader<'_> {
             };
             let message = format!("A bar line stands between the {what}: {} |.", short(name));
             let instead = format!("{name} |");
-            self.slip_with(head, message, &[&instead]);
+            // The name is marked; what is offered replaces all in front of the bar line.
+            let found = Problem {
+                span: label,
+                ..problem(head, message, &[&instead])
+            };
+            self.slip_at(self.system.parts.len(), found);
         }
         match kind {
             RowKind::Music => self.bars(row, at, &mut crate::music::Music::default()),
