@@ -106,8 +106,7 @@ fn is_words_left_open(line: &str) -> bool {
         });
     }
     let edge = |c: Option<char>| c.is_none_or(|c| c == '|' || c == '~' || c.is_whitespace());
-    let joins_nothing = plain.match_indices('~').any(|(at, _)| {
+    plain.match_indices('~').any(|(at, _)| {
         edge(plain[..at].chars().next_back()) || edge(plain[at + 1..].chars().next())
-    });
-    joins_nothing
+    })
 }
