@@ -8,7 +8,7 @@
 //! # Fails
 //!
 //! ```voices
-//! S | B4 C |
+//! S | B4 D |
 //! //     ^ octave doubt (remark): S
 //! ```
 //!
