@@ -91,6 +91,22 @@ fn standard_input_goes_to_standard_output() {
 }
 
 #[test]
+fn a_sheet_that_would_grow_too_large_stays_and_says_why() {
+    let rows: String = (0..200).map(|i| format!("V{i} | _ |\n")).collect();
+    let wide = format!("S | {}|\n{rows}", "c5 ".repeat(60_000));
+    let folder = Folder::with(&[("draft.voices", &wide)]);
+    let ran = folder.run(&["align", "draft.voices"]);
+    assert_eq!(
+        ran.said(&["draft.voices", "stays as it is", "larger than 8 MiB"]),
+        0
+    );
+    assert_eq!(
+        fs::read_to_string(folder.path("draft.voices")).unwrap(),
+        wide
+    );
+}
+
+#[test]
 fn what_is_no_sheet_is_refused_and_left_untouched() {
     let folder = Folder::with(&[
         ("draft.voices", DRAFT),

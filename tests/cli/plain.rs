@@ -322,6 +322,16 @@ fn nothing_in_a_sheet_or_its_name_steers_the_terminal() {
     }
 }
 
+#[test]
+fn a_wide_beat_in_front_of_the_first_bar_line_is_cut_too() {
+    let wide = format!("C4{}", ".-".repeat(38));
+    let sheet = format!("C4 {wide} | F♯5\n S S\n C4 {wide} |");
+    let folder = Folder::with(&[("wide.voices", &sheet)]);
+    let ran = folder.run(&["check", "wide.voices"]);
+    assert!(ran.out.contains("from F#5"), "{}", ran.out);
+    fits(&ran.out, 80);
+}
+
 proptest::proptest! {
     /// Whatever is typed, something is reported, at the width of the page.
     #[test]

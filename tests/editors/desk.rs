@@ -26,8 +26,8 @@ pub(crate) const PARALLEL_FIFTHS: &str = "Parallel fifths: S and voice B go from
                                           over E3. Move one voice the other way.";
 
 /// The best mend of it, and the row that this makes.
-pub(crate) const MEND: &str = "Move B to F#3: similar to S";
-pub(crate) const MENDED: &str = "B | D3  - E -  | D3 F# F♯ B2  | D3  - C♯ - | D3 - - - ||";
+pub(crate) const MEND: &str = "Move voice B to F#3: similar to S";
+pub(crate) const MENDED: &str = "B | D3  - E -  | D3 F♯ F♯ B2  | D3  - C♯ - | D3 - - - ||";
 
 /// A licence for it, and what that makes: a mark at the note, and the reason to be written over.
 pub(crate) const LICENCE: &str = "Grant a licence for parallel-fifths";

@@ -135,6 +135,6 @@ fn parallel_fifths(said: &mut Said) {
     said.exactly("finding 6:21 \"B\" error partwright parallel-fifths");
     said.exactly(&format!("message {PARALLEL_FIFTHS}"));
     said.exactly("related 6 \"A4\" from here: S A4");
-    said.exactly("related 7 \"D3\" from here: B D3");
-    said.exactly("related 7 \"E\" with: B E3");
+    said.exactly("related 7 \"D3\" from here: voice B D3");
+    said.exactly("related 7 \"E\" with: voice B E3");
 }

@@ -29,20 +29,16 @@ fn a_note_tells_what_sounds_and_how_it_got_there() {
     assert_eq!(
         document.hover_text(&mut client, "E -"),
         "\
-**E5** · soprano
+Parallel fifths: soprano and bass go from D5 over G3 to E5 over A3. Move one voice the other way.
 
-bar 1, beat 2
+`parallel-fifths`, fault: the two lines fuse into one, and the ear loses a voice.
+
+**E5** · soprano · bar 1, beat 2
 
 - alto C5: major third below; parallel, D5 over B4 to E5 over C5
 - bass A3: perfect twelfth below; parallel, D5 over G3 to E5 over A3
 
-The other pairs:
-
-- alto and bass: parallel, B4 over G3 to C5 over A3
-
-Found here:
-
-- `parallel-fifths` (fault), soprano and bass: Two voices move in parallel from one perfect fifth to another."
+Other pairs: alto and bass parallel."
     );
     let answer = document.hover(&mut client, &document.at("E -"));
     let line = document.at("E -")["line"].clone();
@@ -65,7 +61,7 @@ fn the_first_note_has_no_motion() {
     let text = document.hover_text(&mut client, "G3");
     assert_eq!(
         text,
-        "**G3** · bass\n\nbar 1, beat 1\n\n- soprano D5: perfect twelfth above\n- alto B4: major tenth above"
+        "**G3** · bass · bar 1, beat 1\n\n- soprano D5: perfect twelfth above\n- alto B4: major tenth above"
     );
     client.goodbye();
 }
@@ -78,7 +74,7 @@ fn a_hold_tells_the_note_that_sounds() {
     let answer = document.hover(&mut client, &at);
     let text = answer["result"]["contents"]["value"].as_str().unwrap();
     assert!(
-        text.starts_with("**E5** · soprano\n\nbar 1, beat 3, since bar 1, beat 2\n"),
+        text.starts_with("**E5** · soprano · bar 1, beat 3, since bar 1, beat 2\n"),
         "{text}"
     );
     assert!(
@@ -96,7 +92,7 @@ fn a_rest_tells_what_the_others_sound() {
     let text = document.hover_text(&mut client, "_");
     assert_eq!(
         text,
-        "**silence** · bass\n\nbar 1, beat 3\n\n- soprano E5\n- alto C5\n\nThe other pairs:\n\n- soprano and alto: at rest"
+        "**silence** · bass · bar 1, beat 3\n\n- soprano E5\n- alto C5\n\nOther pairs: soprano and alto at rest."
     );
     client.goodbye();
 }
@@ -137,8 +133,57 @@ fn a_mistake_tells_its_rule() {
     let document = open(&mut client, "wibble\nS | G4 H4 |\n");
     for words in ["wibble", "H4"] {
         let text = document.hover_text(&mut client, words);
-        assert!(text.contains("`reading` (fault)"), "{words}: {text}");
+        assert!(
+            text.starts_with(words) || text.contains("German"),
+            "{words}: {text}"
+        );
+        assert!(text.contains("`reading`, fault: "), "{words}: {text}");
     }
+    client.goodbye();
+}
+
+#[test]
+fn a_licensed_finding_tells_its_reason() {
+    let mut client = Client::ready();
+    let text = "S | D5 E*a |\nB | G3 A   |\n*a licence parallel-fifths: the drovers' horns\n";
+    let document = open(&mut client, text);
+    let text = document.hover_text(&mut client, "E*a");
+    assert!(
+        text.contains("\n\n`parallel-fifths`, licensed: the drovers' horns\n\n"),
+        "{text}"
+    );
+    client.goodbye();
+}
+
+#[test]
+fn a_bar_line_tells_its_bar() {
+    let mut client = Client::ready();
+    let text = "metre 3/4\nS | D5 | E - - | F - ||\nB | G3 | A - -|B - ||\n";
+    let document = open(&mut client, text);
+    for (words, told) in [
+        ("| D5", "**bar 0** begins here · 1 beat · 3/4"),
+        ("| E", "**bar 0** ends here · 1 beat · 3/4"),
+        ("|B", "**bar 1** ends here · 3 beats · 3/4"),
+        ("||\nB", "**bar 2** ends here · 2 beats · 3/4"),
+    ] {
+        assert_eq!(document.hover_text(&mut client, words), told, "{words}");
+    }
+    // Right behind a bar line stands a note.
+    let text = document.hover_text(&mut client, "B - ||");
+    assert!(text.contains("**B3** · "), "{text}");
+    client.goodbye();
+}
+
+#[test]
+fn a_bar_line_with_a_finding_tells_that_first() {
+    let mut client = Client::ready();
+    let document = open(&mut client, "metre 3/4\nS | D5 E |\n");
+    let text = document.hover_text(&mut client, "|\n");
+    assert!(text.starts_with("Not written yet"), "{text}");
+    assert!(
+        text.ends_with("**bar 1** ends here · 3 beats · 3/4"),
+        "{text}"
+    );
     client.goodbye();
 }
 
@@ -169,7 +214,10 @@ fn a_client_without_markdown_gets_plain_text() {
         let answer = document.hover(&mut client, &document.at("E -"));
         assert_eq!(answer["result"]["contents"]["kind"], "plaintext");
         let text = answer["result"]["contents"]["value"].as_str().unwrap();
-        assert!(text.starts_with("E5 · soprano\n"), "{text}");
+        assert!(
+            text.starts_with("Parallel fifths: ") && text.contains("\n\nE5 · soprano · "),
+            "{text}"
+        );
         assert!(!text.contains(['*', '`']), "{text}");
         client.goodbye();
     }

@@ -30,7 +30,11 @@ fn a_client_that_never_answers_holds_nothing_up() {
         client.send(&json!({ "jsonrpc": "2.0", "id": id, "result": [null] }));
     }
     client.is_there();
-    assert!(document.hover_text(&mut client, "E").starts_with("**E5**"));
+    assert!(
+        document
+            .hover_text(&mut client, "E")
+            .contains("\n**E5** · ")
+    );
     client.goodbye();
 }
 

@@ -29,6 +29,9 @@ pub struct Finding {
     pub offers: Vec<Offer>,
     /// The licence that lifts it.
     pub licence: Option<Lifted>,
+    /// How grave the findings are that wait for this one to be settled: they rest on an octave that
+    /// is in doubt.
+    pub held: Vec<Severity>,
 }
 
 /// The licence that lifts a finding.

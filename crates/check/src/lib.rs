@@ -1,5 +1,6 @@
 //! A sheet or a bare score and a style go in; findings come out, with spans where there is text.
 
+mod doubt;
 mod drawn;
 mod filter;
 mod finding;
@@ -154,6 +155,7 @@ impl Checked {
                 findings.extend(text::finding(id, problem, &reading, &strictness));
             }
         }
+        doubt::gather(&mut findings, &reading, text);
         finding::sort(&mut findings);
         Checked {
             sheet,

@@ -51,5 +51,6 @@ pub(crate) fn in_score(bare: Bare, score: &Score) -> Finding {
         span: None,
         offers: Vec::new(),
         licence: None,
+        held: Vec::new(),
     }
 }

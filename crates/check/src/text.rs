@@ -52,6 +52,7 @@ pub(crate) fn finding(
         related: Vec::new(),
         offers: problem.offers,
         licence: None,
+        held: Vec::new(),
     })
 }
 

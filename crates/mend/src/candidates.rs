@@ -7,20 +7,26 @@ use partwright_score::{Key, Mode, Pitch, Score, Time, Voice};
 /// Scale steps a mend may go away from the written note: an octave either way.
 const FURTHEST: i16 = 7;
 
+/// How many scale steps further a note outside the scale counts.
+const ALTERED: i16 = 2;
+
 /// The pitches a note may take instead, nearest first in scale steps, notes of the scale before
-/// altered ones, upward before downward; all inside the voice's compass.
-pub(crate) fn candidates(score: &Score, voice: &Voice, at: Time, from: Pitch) -> Vec<Pitch> {
+/// altered ones, upward before downward; all inside the voice's compass. Each with its distance: a
+/// note outside the scale is as far as one of the scale two steps on, so that a sharp out of
+/// nowhere is never the first thing offered.
+pub(crate) fn candidates(score: &Score, voice: &Voice, at: Time, from: Pitch) -> Vec<(Pitch, i16)> {
     let signs = Signs::at(score, at);
     let mut found = Vec::new();
     for distance in 0..=FURTHEST {
-        for order in 0..2 {
+        for order in 0..2_i16 {
             for step in [from.step + distance, from.step - distance] {
                 let letter = Pitch { step, sign: 0 };
                 let usual = signs.of(letter.letter(), order);
                 for &sign in usual {
                     let pitch = Pitch { step, sign };
-                    if pitch != from && in_compass(voice, pitch) && !found.contains(&pitch) {
-                        found.push(pitch);
+                    let known = found.iter().any(|(known, _)| *known == pitch);
+                    if pitch != from && in_compass(voice, pitch) && !known {
+                        found.push((pitch, distance + ALTERED * order));
                     }
                 }
             }
@@ -61,7 +67,7 @@ impl Signs {
         }
     }
 
-    fn of(&self, letter: u8, order: usize) -> &[i8] {
+    fn of(&self, letter: u8, order: i16) -> &[i8] {
         let list = if order == 0 {
             &self.scale
         } else {
@@ -169,7 +175,11 @@ mod tests {
         });
         let voice = Voice::new("S", Kind::named(kind).unwrap());
         let found = candidates(&score, &voice, ZERO, from.parse().unwrap());
-        found.iter().take(6).map(ToString::to_string).collect()
+        found
+            .iter()
+            .take(6)
+            .map(|(pitch, _)| pitch.to_string())
+            .collect()
     }
 
     #[test]

@@ -41,8 +41,8 @@ struct Movable {
     rank: (usize, usize),
 }
 
-/// The mends of a finding, the best first: the least movement in scale steps, then inner voices
-/// before outer ones. Empty where no change of one note helps, for licensed findings, and for
+/// The mends of a finding, the best first: the least movement in scale steps (notes outside the
+/// scale count as further off), then inner voices before outer ones. Empty where no change of one note helps, for licensed findings, and for
 /// findings about the text.
 #[must_use]
 pub fn mends(checked: &Checked, finding: &Finding) -> Vec<Mend> {
@@ -69,11 +69,10 @@ pub fn mends(checked: &Checked, finding: &Finding) -> Vec<Mend> {
         let Some(voice) = score.voices.get(movable.voice) else {
             continue;
         };
-        for (order, pitch) in candidates(score, voice, movable.at, movable.pitch)
+        for (order, (pitch, distance)) in candidates(score, voice, movable.at, movable.pitch)
             .into_iter()
             .enumerate()
         {
-            let distance = (pitch.step - movable.pitch.step).abs();
             let Movable {
                 voice,
                 note,
@@ -299,7 +298,7 @@ fn title(
     pitch: Pitch,
 ) -> String {
     let score = &checked.reading.score;
-    let name = score.voice_name(movable.voice);
+    let name = score.spoken_name(movable.voice);
     let earlier = finding
         .at
         .is_some_and(|at| movable.at < at && finding.until.is_none());
@@ -334,7 +333,7 @@ fn title(
             Motion::Similar => "similar to",
             Motion::Still => return None,
         };
-        Some(format!("{word} {}", score.voice_name(other)))
+        Some(format!("{word} {}", score.spoken_name(other)))
     });
     match motion {
         Some(motion) => format!("{what}: {motion}"),

@@ -121,3 +121,20 @@ fn what_may_not_move_does_not() {
             .all(|f| mends(&checked, f).is_empty())
     );
 }
+
+#[test]
+fn a_note_of_the_scale_comes_before_a_sharp_out_of_nowhere() {
+    let text = "style chorale\nkey G major\nvoice S soprano\nvoice B\n\n\
+                S | B4 C5 D E |\nB | G3 C D G |\n";
+    let checked = Checked::text(text, &Wishes::default());
+    let octaves = checked.findings.iter();
+    let octaves = octaves.filter(|f| f.rule == "parallel-octaves");
+    let offered: Vec<_> = octaves.flat_map(|f| mends(&checked, f)).collect();
+    let first = offered.first().unwrap();
+    assert_eq!(first.to.sign, 0, "{}", first.title);
+    // A plain voice is called as the messages call it.
+    assert!(
+        offered.iter().any(|mend| mend.title.contains("voice B")),
+        "{offered:?}"
+    );
+}

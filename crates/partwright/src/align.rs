@@ -66,6 +66,8 @@ pub(crate) fn run(wanted: &Align, stage: &mut Stage<'_>) -> Outcome {
 struct Texts {
     before: String,
     after: String,
+    /// In columns it would be too large, and so it is not set.
+    outgrown: bool,
 }
 
 /// Reads a sheet and sets it in columns.
@@ -84,8 +86,12 @@ fn aligned(sheet: &Sheet, verify: bool, input: &mut dyn Read) -> Result<Texts, T
         let words = "no text but a binary file; expected a voice sheet";
         return Err(Trouble::of(sheet, words));
     }
-    let after = partwright_sheet::align(&before);
-    Ok(Texts { before, after })
+    let after = partwright_sheet::try_align(&before);
+    Ok(Texts {
+        outgrown: after.is_none(),
+        after: after.unwrap_or_else(|| before.clone()),
+        before,
+    })
 }
 
 /// Aligning under way.
@@ -103,6 +109,11 @@ impl Work<'_> {
     fn sheet(&mut self, stage: &mut Stage<'_>, sheet: &Sheet, texts: &Texts) {
         self.sheets += 1;
         let changed = texts.before != texts.after;
+        if texts.outgrown {
+            let words = "stays as it is: in columns it would be larger than 8 MiB, the most that \
+                         is read; part it into several sheets or its longest rows into several";
+            self.say(stage, &Trouble::of(sheet, words).to_string());
+        }
         match &sheet.file {
             _ if self.wanted.verify => {
                 if changed {

@@ -1,5 +1,7 @@
 //! The score itself.
 
+use std::borrow::Cow;
+
 use crate::{Bar, BarPlace, Key, Metre, Pitch, Time, Voice, ZERO};
 
 /// What a voice does for a while.
@@ -171,6 +173,16 @@ impl Score {
                 .count()
                 == 1;
         if alone { this.kind.name } else { &this.label }
+    }
+
+    /// The same where words go on around it: `voice A` where the bare label would read as a note.
+    #[must_use]
+    pub fn spoken_name(&self, voice: usize) -> Cow<'_, str> {
+        let name = self.voice_name(voice);
+        match name {
+            "A" | "B" | "C" | "D" | "E" | "F" | "G" | "H" => Cow::Owned(format!("voice {name}")),
+            _ => Cow::Borrowed(name),
+        }
     }
 
     /// Whether two voices may cross freely.

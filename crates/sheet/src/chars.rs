@@ -83,17 +83,25 @@ pub(crate) fn words(text: &str, from: usize, to: usize) -> impl Iterator<Item = 
 }
 
 /// Where free text from `from` to `to` begins and ends, without the blanks and the comment about
-/// it.
+/// it. A blank behind a backslash is a character like another.
 pub(crate) fn free_text(text: &str, from: usize, to: usize) -> Span {
-    let mut found = words(text, from, to);
-    let Some(first) = found.next() else {
-        return Span::new(from, from);
-    };
-    let last = found.last().unwrap_or(first);
-    Span {
-        start: first.span.start,
-        end: last.span.end,
+    let bytes = text.as_bytes().get(..to).unwrap_or_default();
+    let start = after_blanks(bytes, from);
+    let (mut at, mut end) = (start, start);
+    while at < bytes.len() && !comment_at(bytes, at) {
+        while at < bytes.len() && blank_at(bytes, at) == 0 {
+            at += 1;
+            if bytes.get(at - 1) == Some(&b'\\') && at < bytes.len() {
+                at += blank_at(bytes, at).max(1);
+            }
+        }
+        end = at;
+        at = after_blanks(bytes, at);
     }
+    if end == start {
+        return Span::new(from, from);
+    }
+    Span::new(start, end)
 }
 
 /// Free text with its escapes resolved, and whether it ends in a backslash that makes nothing
@@ -138,5 +146,9 @@ mod tests {
         let found: Vec<&str> = words(line, 0, line.len()).map(|w| w.text).collect();
         assert_eq!(found, ["key", "G", "major//x"]);
         assert_eq!(free_text(line, 4, line.len()).range(), 6..17);
+        let line = "title  Quay\\  // lamps\\ // dusk";
+        assert_eq!(free_text(line, 5, line.len()).range(), 7..13);
+        assert_eq!(free_text(line, 13, line.len()).range(), 13..13);
+        assert_eq!(free_text(line, 16, line.len()).range(), 17..31);
     }
 }

@@ -47,6 +47,7 @@ pub fn note_edits(
     } else {
         to.class_name()
     };
+    let new = Signs::about(text, span).write(&new);
     let mut edits = vec![Edit { span, text: new }];
     if let Some((pitch, next)) = after {
         let bare = text.get(next.range()).is_some_and(|word| !has_figure(word));
@@ -62,6 +63,58 @@ pub fn note_edits(
         }
     }
     edits
+}
+
+/// How far about a note it is looked which signs the sheet writes, in bytes either way.
+const AROUND: usize = 1 << 14;
+
+/// The signs a sheet is written with.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+enum Signs {
+    /// `#` and `b`.
+    Plain,
+    /// `♯` and `♭`.
+    Printed,
+}
+
+impl Signs {
+    /// Those used about a place: where both are, the more frequent.
+    fn about(text: &str, place: Span) -> Signs {
+        let range = place.range();
+        let mut start = range.start.saturating_sub(AROUND);
+        let mut end = (range.end + AROUND).min(text.len());
+        while !text.is_char_boundary(start) {
+            start -= 1;
+        }
+        while !text.is_char_boundary(end) {
+            end += 1;
+        }
+        let text = text.get(start..end).unwrap_or_default();
+        let printed = text.matches(['♯', '♭', '𝄪', '𝄫']).count();
+        if printed == 0 {
+            return Signs::Plain;
+        }
+        // Labels, rules and words may hold a b, a sign stands behind a letter of a note.
+        let plain = |pair: &[u8]| matches!(pair, [b'A'..=b'G', b'#' | b'b'] | [b'a'..=b'g', b'#']);
+        let plain = text
+            .as_bytes()
+            .windows(2)
+            .filter(|pair| plain(pair))
+            .count();
+        if printed >= plain {
+            Signs::Printed
+        } else {
+            Signs::Plain
+        }
+    }
+
+    /// A pitch in these signs.
+    fn write(self, pitch: &str) -> String {
+        match self {
+            Signs::Plain => pitch.to_owned(),
+            Signs::Printed => pitch.replace('#', "♯").replace('b', "♭"),
+        }
+    }
 }
 
 fn has_figure(word: &str) -> bool {
@@ -124,5 +177,17 @@ mod tests {
             moved("S | G4 A4^*a |\nB | C3 D |\n", 1, "F#4"),
             "S | G4 F#4^*a |\nB | C3 D |\n"
         );
+    }
+
+    #[test]
+    fn signs_are_written_as_the_sheet_writes_them() {
+        assert_eq!(moved("S | F♯4 G A |\n", 1, "G#4"), "S | F♯4 G♯ A |\n");
+        assert_eq!(moved("S | F♯4 G A |\n", 1, "Gbb4"), "S | F♯4 G♭♭ A |\n");
+        assert_eq!(moved("S | F#4 G A |\n", 1, "Gb4"), "S | F#4 Gb A |\n");
+        // Where both stand, the more frequent; words hold no signs.
+        let both = "title Crab pots ♯\nS | F#4 G# A |\n";
+        assert_eq!(moved(both, 2, "Ab4"), both.replace("A |", "Ab |"));
+        let words = "title Abbey crabs\nS | F♯4 G A |\n";
+        assert_eq!(moved(words, 1, "G#4"), words.replace("G A", "G♯ A"));
     }
 }

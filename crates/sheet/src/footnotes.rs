@@ -7,6 +7,7 @@ use crate::near::short;
 use crate::problem::Problem;
 use crate::reading::{Footnote, HeadLicence};
 use crate::span::Span;
+use crate::system::problem;
 
 const FORM: &str = "licence parallel-fifths: why";
 
@@ -139,6 +140,38 @@ pub(crate) fn footnote(
     }
 }
 
+/// Reports voices in front of rules: the licence is read all the same.
+fn out_of_order(
+    problems: &mut Vec<Problem>,
+    names: &[Word<'_>],
+    voice: impl Fn(&str) -> Option<usize>,
+) {
+    let is_voice = |name: &&Word<'_>| voice(name.text).is_some();
+    let (voices, rules): (Vec<&Word<'_>>, Vec<_>) = names.iter().partition(is_voice);
+    let (Some(first_voice), Some(last_rule)) = (voices.first(), rules.last()) else {
+        return;
+    };
+    let lawful = rules.iter().all(|name| is_rule(name.text));
+    if !lawful || first_voice.span.start > last_rule.span.start {
+        return;
+    }
+    let right: Vec<&str> = rules.iter().chain(&voices).map(|name| name.text).collect();
+    let right = right.join(" ");
+    let ends = (names.first(), names.last());
+    if let (Some(first), Some(last)) = ends {
+        let span = Span {
+            start: first.span.start,
+            end: last.span.end,
+        };
+        let message = format!("The rules come before the voices: {}.", short(&right));
+        // The voice is marked; what is offered replaces all the names.
+        problems.push(Problem {
+            span: first_voice.span,
+            ..problem(span, message, &[&right])
+        });
+    }
+}
+
 /// Reads a licence header whose first word is `word`; `voice` finds a declared voice.
 pub(crate) fn licence(
     problems: &mut Vec<Problem>,
@@ -156,6 +189,7 @@ pub(crate) fn licence(
     let mut rules = Vec::new();
     let mut voices = Vec::new();
     let mut named = 0;
+    out_of_order(problems, &names, &voice);
     for name in names {
         if let Some(index) = voice(name.text) {
             if !voices.contains(&index) {

@@ -66,8 +66,7 @@ fn note_value(problems: &mut Vec<Problem>, word: Word<'_>) -> Option<(u16, u16)>
                 "C|" | "¢" => ("Write the old sign of alla breve as 2/2.".into(), &["2/2"]),
                 text => (
                     format!(
-                        "{} is no metre or note value. Expected two figures, 1 to 99 over a note \
-                         value, as in 3/4 or 6/8.",
+                        "{} is no metre and no note value: write two figures, as in 3/4.",
                         short(text)
                     ),
                     &[],

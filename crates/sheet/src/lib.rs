@@ -34,10 +34,11 @@ mod under;
 mod voices;
 mod write;
 
-pub use align::{align, align_edits};
+pub use align::{align, align_edits, try_align};
 pub use drawn::{DrawnMark, drawn_marks};
 pub use edit::{apply, note_edits};
 pub use harmony::{Chord, Figure, Numeral};
+pub use lookup::BarLine;
 pub use position::{Lines, line_column};
 pub use problem::{Edit, Offer, Problem, ProblemKind};
 pub use reading::{

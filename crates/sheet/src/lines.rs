@@ -1,6 +1,6 @@
 //! Lines: what each one is, told from its first word alone.
 
-use crate::chars::{after_blanks, blank_at, comment_at};
+use crate::chars::{after_blanks, blank_at, comment_at, is_blank};
 use crate::parts::begins_like_a_part;
 
 /// What a line is.
@@ -18,6 +18,8 @@ pub(crate) enum LineKind {
     Word(Header),
     /// `| …`: a row that forgot its label.
     Unlabelled,
+    /// The last line of the text, of which only the first word is written.
+    Begun,
 }
 
 /// What a row holds.
@@ -99,6 +101,7 @@ pub(crate) struct Line {
 /// The lines of a text from `from` on.
 pub(crate) fn lines(text: &str, from: usize) -> impl Iterator<Item = Line> + '_ {
     let mut at = from;
+    let written = text.trim_end_matches(|c| c == '\n' || is_blank(c)).len();
     std::iter::from_fn(move || {
         let rest = text.get(at..)?;
         if rest.is_empty() {
@@ -109,8 +112,23 @@ pub(crate) fn lines(text: &str, from: usize) -> impl Iterator<Item = Line> + '_ 
         at = start + length + 1;
         let whole = rest.get(..length).unwrap_or_default();
         let end = start + whole.strip_suffix('\r').unwrap_or(whole).len();
-        Some(line(text, start, end))
+        let mut line = line(text, start, end);
+        if at > written && is_begun(text, &line) {
+            line.kind = LineKind::Begun;
+        }
+        Some(line)
     })
+}
+
+/// Whether a line could be one whose first word has just been typed: it says nothing yet, and is no
+/// mistake.
+fn is_begun(text: &str, line: &Line) -> bool {
+    let name = text.get(line.word..line.word_end).unwrap_or_default();
+    let behind = text.get(line.word_end..line.end).unwrap_or_default();
+    let mut behind = behind.split(is_blank).filter(|word| !word.is_empty());
+    // Labels and a verse belong to the name of a words row.
+    let piece = |word: &str| word.len() <= 8 && word.bytes().all(|b| b.is_ascii_alphanumeric());
+    is_label(name) && behind.all(|word| name == "words" && piece(word))
 }
 
 fn line(text: &str, start: usize, end: usize) -> Line {
@@ -197,7 +215,7 @@ mod tests {
     fn the_first_word_tells_what_a_line_is() {
         assert_eq!(
             kinds(
-                "title | x\r\n\r\nkey G major\n// c\n*a licence x: y\nS|\nS | G4\nwords S |\n|x\nS G4 |\nS G4"
+                "title | x\r\n\r\nkey G major\n// c\n*a licence x: y\nS|\nS | G4\nwords S |\n|x\nS G4 |\nS G4\nS\nwords S"
             ),
             [
                 LineKind::Row(RowKind::Music),
@@ -211,6 +229,8 @@ mod tests {
                 LineKind::Unlabelled,
                 LineKind::Row(RowKind::Music),
                 LineKind::Word(Header::Unknown),
+                LineKind::Word(Header::Unknown),
+                LineKind::Begun,
             ]
         );
     }

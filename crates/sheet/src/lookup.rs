@@ -48,6 +48,10 @@ pub(crate) fn place(
         return None;
     }
     let nth = (bar - row.bars.start) as usize;
+    // Behind a bar line left out nobody knows.
+    if system.lost_at(index as u32).is_some_and(|lost| nth > lost) {
+        return None;
+    }
     let grid = plan.grid.get(system.first + nth)?;
     if fill(tree, row.kind, bar) == Fill::Whole {
         return Some((voice, grid.moment(0, 0, 1).time()));
@@ -59,6 +63,17 @@ pub(crate) fn place(
     let parts = tree.parts_of(cell);
     let moment = grid.moment(cell_in_bar, part - parts.start, parts.len());
     Some((voice, moment.time()))
+}
+
+/// A bar line in the text.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub struct BarLine {
+    /// The bar of the score, by index.
+    pub bar: usize,
+    /// It stands in front of that bar, at the beginning of its row.
+    pub opens: bool,
+    /// Where it stands.
+    pub span: Span,
 }
 
 impl Map {
@@ -144,6 +159,36 @@ impl Reading {
         (offset <= end)
             .then(|| place(&self.map.plan, system, index, span))
             .flatten()
+    }
+
+    /// The bar line at an offset, with the bar it closes or, at the beginning of a row, opens.
+    #[must_use]
+    pub fn bar_line_at(&self, offset: usize) -> Option<BarLine> {
+        let system = self.map.system_around(offset)?;
+        let tree = &system.placed.system;
+        let base = system.placed.span.start;
+        let within = u32::try_from(offset).ok()?.checked_sub(base)?;
+        let after = tree.rows.partition_point(|row| row.line.start <= within);
+        let index = after.checked_sub(1)?;
+        let row = tree.rows.get(index)?;
+        let bars = tree
+            .bars
+            .get(row.bars.start as usize..row.bars.end as usize)?;
+        let nth = bars.partition_point(|bar| bar.line <= within);
+        let (start, bar, opens) = match nth.checked_sub(1) {
+            Some(bar) => (bars.get(bar)?.line, bar, false),
+            None => (row.opening.start, 0, true),
+        };
+        let text = self.map.tree.text.as_bytes();
+        let start = (start + base) as usize;
+        let strokes = text.get(start..)?.iter().take_while(|b| **b == b'|');
+        let end = start + strokes.count();
+        let known = bar < system.bars && system.lost_at(index as u32).is_none_or(|lost| bar < lost);
+        (known && start <= offset && offset < end).then(|| BarLine {
+            bar: system.first + bar,
+            opens,
+            span: Span::new(start, end),
+        })
     }
 
     /// The whole lines of the system around an offset, from its first row to its last.

@@ -16,7 +16,7 @@ use crate::tree::{
 };
 
 /// The most parts a cell has.
-const MOST_PARTS: usize = 64;
+pub(crate) const MOST_PARTS: usize = 64;
 
 /// What is known of the octave figure along a row.
 #[derive(Clone, Copy, Debug, Default, PartialEq, Eq)]
@@ -72,8 +72,7 @@ impl Cells for Music {
         if parts > MOST_PARTS {
             reader.system.parts.truncate(first);
             reader.system.slips.truncate(slips);
-            let message = format!("A beat has at most {MOST_PARTS} parts; these are {parts}.");
-            reader.slip(Span::new(start, at), message);
+            reader.slip(Span::new(start, at), too_many(parts));
             self.spoil(reader, start, 0);
         } else if let Some(part) = empty {
             reader.slip_at(part, empty_part(row, start, at, parts));
@@ -126,7 +125,8 @@ impl Music {
                     let span = Span::new(start, unmarked_end(reader.text, start));
                     let before = Pitch { step: last, sign };
                     let index = parts.len();
-                    reader.slip_at(index, doubt(written.sign, before, step, span));
+                    let own = text(reader.text.get(span.range()).unwrap_or_default());
+                    reader.slip_at(index, doubt(written.sign, before, step, span, own));
                 }
                 (PartKind::Note, step, 0)
             }
@@ -278,6 +278,11 @@ fn mark_first(whole: &str) -> Option<String> {
     after.is_empty().then(|| format!("{rest}{mark}"))
 }
 
+/// What is said about a cell of so many parts.
+pub(crate) fn too_many(parts: usize) -> String {
+    format!("A beat has at most {MOST_PARTS} parts; these are {parts}.")
+}
+
 /// Where the cell that begins at `start` ends.
 pub(crate) fn cell_end(row: &[u8], start: usize) -> usize {
     let mut at = start;
@@ -349,7 +354,7 @@ const SIZES: [&str; 7] = [
 ];
 
 /// The carried octave figure makes a sixth or a seventh: both readings are shown.
-fn doubt(sign: i8, before: Pitch, step: i16, span: Span) -> Problem {
+fn doubt(sign: i8, before: Pitch, step: i16, span: Span, own: &str) -> Problem {
     let size = |step: i16| {
         let index = usize::from((step - before.step).unsigned_abs());
         SIZES.get(index).copied().unwrap_or("seventh")
@@ -361,7 +366,10 @@ fn doubt(sign: i8, before: Pitch, step: i16, span: Span) -> Problem {
             "falling"
         }
     };
-    let reading = |step: i16| (Pitch { step, sign }.to_string(), way(step), size(step));
+    let reading = |step: i16| {
+        let pitch = Pitch { step, sign };
+        (pitch, way(step), size(step))
+    };
     let carried = reading(step);
     let mut message = format!(
         "The octave figure carried from {before} makes this {}, a {} {}.",
@@ -378,16 +386,17 @@ fn doubt(sign: i8, before: Pitch, step: i16, span: Span) -> Problem {
         let _ = write!(
             message,
             " Write {} if that is meant, or {} (a {} {}).",
-            readings.first().map_or("", |r| &r.0),
-            near.0,
-            near.1,
-            near.2
+            carried.0, near.0, near.1, near.2
         );
         readings.push(near);
     }
-    let offer = |(text, way, size): (String, &str, &str)| Offer {
-        title: format!("Write {text} ({way} {size})"),
-        edits: vec![Edit { span, text }],
+    // The note stays as it is written, letter and sign; the figure is added.
+    let offer = |(pitch, way, size): (Pitch, &str, &str)| Offer {
+        title: format!("Write {pitch} ({way} {size})"),
+        edits: vec![Edit {
+            span,
+            text: format!("{own}{}", pitch.octave()),
+        }],
     };
     Problem {
         kind: ProblemKind::OctaveDoubt,

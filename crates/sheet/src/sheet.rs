@@ -116,10 +116,12 @@ fn build(text: &str, before: Option<&Tree>) -> Sheet {
             current: None,
             labels: HashSet::new(),
             known: before.map(Known::of),
+            voices: Vec::new(),
             draft: Draft::default(),
         };
-        for line in lines(text, mark_length(text)) {
-            gather.line(line);
+        let mut lines = lines(text, mark_length(text)).peekable();
+        while let Some(line) = lines.next() {
+            gather.line(line, lines.peek());
         }
         gather.close();
         tree.blocks = gather.blocks;
@@ -139,6 +141,8 @@ struct Gather<'a> {
     /// What the rows of the current system are called.
     labels: HashSet<Cow<'a, str>>,
     known: Option<Known<'a>>,
+    /// The labels of the voices, as they are declared or as the first system has them.
+    voices: Vec<&'a str>,
     draft: Draft,
 }
 
@@ -150,22 +154,26 @@ struct Gathered {
 }
 
 impl<'a> Gather<'a> {
-    fn line(&mut self, line: Line) {
+    fn line(&mut self, line: Line, next: Option<&Line>) {
         match line.kind {
             LineKind::Blank => self.close(),
             LineKind::Comment => {}
-            LineKind::Row(kind) => self.row(line, kind),
+            LineKind::Row(kind) => self.row(line, kind, next),
             LineKind::Footnote => self.other(line),
-            LineKind::Word(Header::Unknown) | LineKind::Unlabelled => {
+            LineKind::Word(Header::Unknown) | LineKind::Unlabelled | LineKind::Begun => {
                 // It may have been meant for a row or a comment: the system goes on.
                 if let Some(current) = &mut self.current {
                     current.flawed = true;
                 }
                 self.other(line);
             }
-            LineKind::Word(_) => {
+            LineKind::Word(header) => {
                 self.close();
                 self.other(line);
+                if header == Header::Voice {
+                    let label = words(self.text, line.word_end, line.end).next();
+                    self.voices.extend(label.map(|word| word.text));
+                }
             }
         }
     }
@@ -178,9 +186,10 @@ impl<'a> Gather<'a> {
         }));
     }
 
-    fn row(&mut self, line: Line, kind: RowKind) {
+    /// What a row is called.
+    fn name(&self, line: &Line, kind: RowKind) -> Cow<'a, str> {
         let text = self.text;
-        let name = match kind {
+        match kind {
             // Labels and verse are its name: two verses are two rows.
             RowKind::Words => {
                 let row = text.get(line.word..line.end).unwrap_or_default();
@@ -189,9 +198,14 @@ impl<'a> Gather<'a> {
                 Cow::Owned(names.join(" "))
             }
             _ => Cow::Borrowed(text.get(line.word..line.word_end).unwrap_or_default()),
-        };
+        }
+    }
+
+    fn row(&mut self, line: Line, kind: RowKind, next: Option<&Line>) {
+        let name = self.name(&line, kind);
         let mut unseparated = false;
-        if self.current.is_some() && self.labels.contains(&name) {
+        let again = self.current.is_some() && self.labels.contains(&name);
+        if again && !(kind == RowKind::Music && self.is_mislabelled(&name, next)) {
             // Behind a line that could not be read the blank line is the lesser trouble.
             unseparated = self.current.as_ref().is_some_and(|c| !c.flawed);
             self.close();
@@ -205,10 +219,40 @@ impl<'a> Gather<'a> {
         self.labels.insert(name);
     }
 
+    /// Whether a second row of one name is likelier to have the wrong name than to begin a system
+    /// for which the blank line was forgotten: voices are still missing here, and what follows is
+    /// no repetition of the rows so far.
+    fn is_mislabelled(&self, name: &str, next: Option<&Line>) -> bool {
+        let has = |voice: &str| self.labels.contains(voice);
+        if !self.voices.is_empty() && self.voices.iter().all(|voice| has(voice)) {
+            return false;
+        }
+        let next = next.and_then(|line| match line.kind {
+            LineKind::Row(kind) => Some((kind, self.name(line, kind))),
+            _ => None,
+        });
+        let first = self.current.as_ref().and_then(|current| {
+            let music = |line: &&Line| line.kind == LineKind::Row(RowKind::Music);
+            let line = current.lines.iter().find(music)?;
+            Some(self.name(line, RowKind::Music))
+        });
+        match next {
+            Some((_, next)) if self.labels.contains(&next) => first.is_none_or(|f| f != name),
+            Some((RowKind::Music, _)) => true,
+            _ => first.is_none_or(|first| first != name) || !self.voices.is_empty(),
+        }
+    }
+
     fn close(&mut self) {
         let Some(mut current) = self.current.take() else {
             return;
         };
+        if self.voices.is_empty() {
+            let rows = current.lines.iter();
+            let music = rows.filter(|line| line.kind == LineKind::Row(RowKind::Music));
+            let label = |line: &Line| self.text.get(line.word..line.word_end);
+            self.voices = music.filter_map(label).collect();
+        }
         self.labels.clear();
         let start = current.lines.first().map_or(0, |line| line.start);
         let end = current.lines.last().map_or(start, |line| line.end);

@@ -2,6 +2,7 @@
 
 use crate::chars::{after_blanks, comment_at};
 use crate::lines::{Line, LineKind, RowKind};
+use crate::near::short;
 use crate::problem::{Edit, Offer, Problem, ProblemKind};
 use crate::tree::{
     COPIED, DOUBLE, Draft, OPEN, Part, PartKind, Row, RowBar, Slip, System, part_end, syllable_end,
@@ -63,10 +64,13 @@ impl Reader<'_> {
         let label = Span::new(line.word, line.word_end);
         let first = small(self.system.bars.len());
         let mut at = after_blanks(row, line.word_end);
+        let mut head = label;
         if kind == RowKind::Words {
             // The labels and the verse: they are read when the tree is lowered.
             while at < row.len() && row.get(at) != Some(&b'|') && !comment_at(row, at) {
-                at = after_blanks(row, part_end(row, at).max(at + 1));
+                let end = part_end(row, at).max(at + 1);
+                head = Span::new(line.word, end);
+                at = after_blanks(row, end);
             }
         }
         let mut opening = Span::new(at, at);
@@ -78,11 +82,21 @@ impl Reader<'_> {
                 self.slip_with(span, "A row begins with one stroke: |.".into(), &["|"]);
             }
             at = self.repeat(row, at, at + strokes);
-        } else if kind != RowKind::Words || at < row.len() {
-            let name = self.source.get(label.range()).unwrap_or_default();
-            let message = format!("A bar line stands between the label and the music: {name} |.");
+        } else {
+            let name = self.source.get(head.range()).unwrap_or_default();
+            let what = match kind {
+                RowKind::Music => "label and the music",
+                RowKind::Words => "labels and the words",
+                RowKind::Harmony | RowKind::Figures => "name of a row and what it says",
+            };
+            let message = format!("A bar line stands between the {what}: {} |.", short(name));
             let instead = format!("{name} |");
-            self.slip_with(label, message, &[&instead]);
+            // The name is marked; what is offered replaces all in front of the bar line.
+            let found = Problem {
+                span: label,
+                ..problem(head, message, &[&instead])
+            };
+            self.slip_at(self.system.parts.len(), found);
         }
         match kind {
             RowKind::Music => self.bars(row, at, &mut crate::music::Music::default()),

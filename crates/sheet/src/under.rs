@@ -2,7 +2,7 @@
 
 use crate::chars::{after_blanks, comment_at, word_end};
 use crate::harmony::{Figure, chord, key_prefix, stack};
-use crate::music::cell_end;
+use crate::music::{MOST_PARTS, cell_end, too_many};
 use crate::near::short;
 use crate::parts::text;
 use crate::span::Span;
@@ -102,6 +102,8 @@ fn parts(
     good: fn(&[u8]) -> bool,
     explain: fn(&str) -> (String, Vec<String>),
 ) -> Cell {
+    let first = reader.system.parts.len();
+    let slips = reader.system.slips.len();
     let mut at = start;
     loop {
         let end = part_end(row, at);
@@ -126,8 +128,17 @@ fn parts(
         reader.push(at, kind);
         at = end;
         if row.get(at) != Some(&b'.') {
-            return Cell::Timed(at);
+            break;
         }
         at += 1;
     }
+    let parts = reader.system.parts.len() - first;
+    if parts > MOST_PARTS {
+        reader.system.parts.truncate(first);
+        reader.system.slips.truncate(slips);
+        let span = Span::new(start, at);
+        reader.slip(span, too_many(parts));
+        reader.push(start, PartKind::Spoilt);
+    }
+    Cell::Timed(at)
 }

@@ -196,10 +196,9 @@ impl<'a> VoiceLine<'_, 'a> {
         let message = match other {
             Some(other) => format!("{} is unknown here. Is {other} meant?", short(word)),
             None => format!(
-                "{} is no kind of voice and no option. The kinds are {}; the options {}, and a \
-                 compass such as E2..D4.",
+                "{} is no kind of voice, as alto or viola is, and no option. The options are {}, \
+                 and a compass such as E2..D4.",
                 short(word),
-                kinds().collect::<Vec<_>>().join(", "),
                 OPTIONS.join(", ")
             ),
         };

@@ -68,7 +68,8 @@ fn silence_of_many_voices_in_many_systems_is_summed_up() {
     for voice in 0..MOST_VOICES {
         let _ = writeln!(text, "voice V{voice}");
     }
-    text.push_str(&"\nV1 | G4 |\n".repeat(10_003));
+    // In the last, which is at work, they may still come.
+    text.push_str(&"\nV1 | G4 |\n".repeat(10_004));
     let reading = read(&text);
     let silent = |p: &&partwright_sheet::Problem| p.kind == ProblemKind::VoiceSilent;
     assert_eq!(reading.problems.iter().filter(silent).count(), 10_001);

@@ -305,14 +305,18 @@ impl Target {
 }
 
 /// How much is wrong with a sheet: its faults; with its weaknesses; with its remarks. What is
-/// licensed is lawful.
+/// licensed is lawful; what waits for a doubtful octave counts all the same.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
 struct Weight([usize; 3]);
 
 impl Weight {
     fn of(checked: &Checked) -> Weight {
         let levels = [Severity::Fault, Severity::Weakness, Severity::Remark];
-        Weight(levels.map(|least| checked.open().filter(|f| f.severity >= least).count()))
+        let all = || {
+            let waiting = checked.open().flat_map(|f| f.held.iter().copied());
+            checked.open().map(|f| f.severity).chain(waiting)
+        };
+        Weight(levels.map(|least| all().filter(|severity| *severity >= least).count()))
     }
 
     fn total(self) -> usize {

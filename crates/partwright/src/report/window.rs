@@ -212,7 +212,10 @@ fn cells(text: &str, stretch: &Range<usize>) -> Vec<Range<usize>> {
 /// is room for; only the main mark where even that is too wide.
 fn alone(text: &str, row: &Marked<'_>, room: usize) -> Shown {
     let (line, marks) = row;
-    let base = if marks.iter().all(|mark| mark.span.start >= line.prefix) {
+    // What stands in front of the first bar line may be far more than a label.
+    let label = text.get(line.span.start..line.prefix).unwrap_or_default();
+    let narrow = label.width() <= room / 2;
+    let base = if narrow && marks.iter().all(|mark| mark.span.start >= line.prefix) {
         line.prefix
     } else {
         line.span.start

@@ -99,11 +99,7 @@ impl<'a> Piece<'a> {
     /// as a note.
     #[must_use]
     pub fn name(self, voice: usize) -> Cow<'a, str> {
-        let name = self.score.voice_name(voice);
-        match name {
-            "A" | "B" | "C" | "D" | "E" | "F" | "G" | "H" => Cow::Owned(format!("voice {name}")),
-            _ => Cow::Borrowed(name),
-        }
+        self.score.spoken_name(voice)
     }
 
     /// The length of a beat's cell where the piece is at a moment, in whole notes.

@@ -3,8 +3,8 @@
 use std::fmt::Write;
 
 use partwright_check::{Checked, Finding};
-use partwright_rules::{PairMove, Sounding, entry};
-use partwright_score::{Interval, Score, Sound, Time, Voice};
+use partwright_rules::{Discord, PairMove, Sounding, entry};
+use partwright_score::{Interval, Score, Sound, Time, Voice, show_time};
 use partwright_sheet::Span;
 use partwright_space::Motion;
 use tower_lsp::lsp_types::{Hover, HoverContents, MarkupContent, MarkupKind, Position};
@@ -30,6 +30,7 @@ pub(crate) fn hover(outcome: &Outcome, position: Position, agreed: Agreed) -> Op
         text: String::new(),
     };
     let (span, value) = on_rule(checked, offset)
+        .or_else(|| on_bar_line(checked, offset, &page))
         .or_else(|| on_label(checked, text, offset, &page))
         .or_else(|| on_part(checked, offset, &page))
         .or_else(|| on_finding(checked, offset, &page))?;
@@ -160,7 +161,7 @@ fn about_voice(score: &Score, voice: &Voice) -> String {
         lines.push(format!("In species {species}."));
     }
     if let Some(other) = voice.doubles {
-        let other = score.voice_name(other);
+        let other = score.spoken_name(other);
         lines.push(format!(
             "Doubles {other}: for rules about pairs the two are one voice."
         ));
@@ -186,25 +187,25 @@ fn on_part(checked: &Checked, offset: usize, page: &Page) -> Option<(Span, Strin
     let note = score
         .note_at(voice, at)
         .and_then(|n| score.voices.get(voice)?.notes.get(n))?;
-    let name = piece.name(voice);
-    page.paragraph(&match note.sound {
-        Sound::Pitch(pitch) => format!("{} · {name}", page.strong(&pitch.to_string())),
-        Sound::Rest => format!("{} · {name}", page.strong("silence")),
-        Sound::Unwritten => format!("{} · {name}", page.strong("not written yet")),
-        Sound::Spoilt => format!("{} · {name}", page.strong("not readable")),
+    let here = |f: &&Finding| concerns(f, voice, at) || f.span.is_some_and(|s| covers(s, offset));
+    findings(&mut page, checked.findings.iter().filter(here));
+    let sound = page.strong(&match note.sound {
+        Sound::Pitch(pitch) => pitch.to_string(),
+        Sound::Rest => "silence".to_owned(),
+        Sound::Unwritten => "not written yet".to_owned(),
+        Sound::Spoilt => "not readable".to_owned(),
     });
-    let mut place = piece.place_text(at);
+    let mut line = format!("{sound} · {} · {}", piece.name(voice), piece.place_text(at));
     if note.onset < at && !note.sound.is_unknown() {
-        let _ = write!(place, ", since {}", piece.place_text(note.onset));
+        let _ = write!(line, ", since {}", piece.place_text(note.onset));
     }
-    page.paragraph(&place);
+    page.paragraph(&line);
     if !note.sound.is_unknown()
         && let Some(index) = checked.texture.sounding_at(at)
     {
         around(&mut page, Sounding { piece, index }, voice);
+        dissonances(&mut page, Sounding { piece, index }, voice);
     }
-    let here = |f: &&Finding| concerns(f, voice, at) || f.span.is_some_and(|s| covers(s, offset));
-    findings(&mut page, score, checked.findings.iter().filter(here));
     Some((span, page.text))
 }
 
@@ -239,7 +240,7 @@ fn around(page: &mut Page, sounding: Sounding<'_>, voice: usize) {
     });
     let rest = pairs.filter(|step| step.pair.upper != voice && step.pair.lower != voice);
     let mut rest: Vec<String> = rest
-        .filter_map(|step| Some(format!("{}: {}", step.names(), motion(&step)?)))
+        .filter_map(|step| Some(format!("{} {}", step.names(), motion_word(&step)?)))
         .collect();
     if rest.is_empty() {
         return;
@@ -249,8 +250,18 @@ fn around(page: &mut Page, sounding: Sounding<'_>, voice: usize) {
     if more > 0 {
         rest.push(format!("and {more} more"));
     }
-    page.paragraph("The other pairs:");
-    page.list(&rest);
+    page.paragraph(&format!("Other pairs: {}.", rest.join(", ")));
+}
+
+/// What disagrees with the note from here on, and the figure it is, or what each figure misses.
+fn dissonances(page: &mut Page, sounding: Sounding<'_>, voice: usize) {
+    let piece = sounding.piece;
+    let here = piece.analysis.dissonances_at(sounding.index).iter();
+    for dissonance in here.filter(|d| d.upper.0 == voice || d.lower.0 == voice) {
+        let mut lines = Discord { piece, dissonance }.account();
+        page.paragraph(&format!("{}.", lines.remove(0)));
+        page.list(&lines);
+    }
 }
 
 fn pair<'a>(sounding: Sounding<'a>, a: usize, b: usize) -> Option<PairMove<'a>> {
@@ -266,15 +277,20 @@ fn pair<'a>(sounding: Sounding<'a>, a: usize, b: usize) -> Option<PairMove<'a>> 
     })
 }
 
-/// How a pair got here: `parallel, D5 over G3 to E5 over A3`.
-fn motion(step: &PairMove<'_>) -> Option<String> {
-    let word = match step.motion()? {
+/// How a pair got here, in a word.
+fn motion_word(step: &PairMove<'_>) -> Option<&'static str> {
+    Some(match step.motion()? {
         Motion::Still => "at rest",
         Motion::Oblique => "oblique",
         Motion::Parallel => "parallel",
         Motion::Similar => "similar",
         Motion::Contrary => "contrary",
-    };
+    })
+}
+
+/// The same with its ends: `parallel, D5 over G3 to E5 over A3`.
+fn motion(step: &PairMove<'_>) -> Option<String> {
+    let word = motion_word(step)?;
     let (from, to) = step.ends();
     let mut line = if from == to {
         word.to_owned()
@@ -296,42 +312,65 @@ fn concerns(finding: &Finding, voice: usize, at: Time) -> bool {
     finding.voices.contains(&voice) && finding.at.is_some_and(|from| from == at || goes_on(from))
 }
 
-/// Where nothing sounds, a finding: the rule in a line.
+/// On a bar line: which bar, how long it is, and its metre.
+fn on_bar_line(checked: &Checked, offset: usize, page: &Page) -> Option<(Span, String)> {
+    let line = checked.reading.bar_line_at(offset)?;
+    let mut page = page.clone();
+    let here = |f: &&Finding| f.span == Some(line.span);
+    findings(&mut page, checked.findings.iter().filter(here));
+    let score = &checked.reading.score;
+    let bar = score.bars.get(line.bar)?;
+    let metre = score.metres.get(bar.metre as usize)?;
+    let beats = bar.length / metre.unit();
+    let unit = if beats == 1.into() { "beat" } else { "beats" };
+    let metre = if metre.is_free() {
+        "free metre".to_owned()
+    } else {
+        metre.to_string()
+    };
+    let side = if line.opens { "begins" } else { "ends" };
+    let number = page.strong(&format!("bar {}", bar.number));
+    let beats = show_time(beats);
+    page.paragraph(&format!("{number} {side} here · {beats} {unit} · {metre}"));
+    Some((line.span, page.text))
+}
+
+/// Where nothing sounds, a finding.
 fn on_finding(checked: &Checked, offset: usize, page: &Page) -> Option<(Span, String)> {
     let here = |f: &&Finding| f.span.is_some_and(|span| covers(span, offset));
     let span = checked.findings.iter().find(here)?.span?;
     let mut page = page.clone();
-    findings(
-        &mut page,
-        &checked.reading.score,
-        checked.findings.iter().filter(here),
-    );
+    findings(&mut page, checked.findings.iter().filter(here));
     Some((span, page.text))
 }
 
-fn findings<'a>(page: &mut Page, score: &Score, found: impl Iterator<Item = &'a Finding>) {
-    let lines: Vec<String> = found
-        .map(|finding| {
-            let voices: Vec<&str> = finding
-                .voices
-                .iter()
-                .map(|&v| score.voice_name(v))
-                .collect();
-            let voices = match voices.len() {
-                0 => String::new(),
-                _ => format!(", {}", voices.join(" and ")),
-            };
-            let title = entry(finding.rule).map_or("", |entry| &entry.page.title);
-            format!(
-                "{} ({}){voices}: {title}",
-                page.code(finding.rule),
-                finding.severity
-            )
-        })
-        .collect();
-    if lines.is_empty() {
-        return;
+/// What was found, the worst first: the message, and under it the rule and why it stands.
+fn findings<'a>(page: &mut Page, found: impl Iterator<Item = &'a Finding>) {
+    let mut found: Vec<&Finding> = found.collect();
+    found.sort_by_key(|finding| std::cmp::Reverse(finding.severity));
+    for finding in found {
+        page.paragraph(&finding.message);
+        let rule = page.code(finding.rule);
+        let line = match &finding.licence {
+            Some(licence) => format!("{rule}, licensed: {}", licence.reason),
+            None => format!("{rule}, {}{}", finding.severity, why(finding.rule)),
+        };
+        page.paragraph(&line);
+        if let Some(source) = entry(finding.rule).and_then(|e| e.rule.sources.first()) {
+            page.paragraph(&format!("Source: {source}."));
+        }
     }
-    page.paragraph("Found here:");
-    page.list(&lines);
+}
+
+/// Why a rule stands, in one sentence of its page.
+fn why(rule: &str) -> String {
+    let page = entry(rule).map_or("", |entry| entry.page.text.as_str());
+    let lines = page.lines().skip_while(|line| !line.starts_with("Why: "));
+    let lines: Vec<&str> = lines.take_while(|line| !line.trim().is_empty()).collect();
+    let text = lines.join(" ");
+    let Some(text) = text.strip_prefix("Why: ") else {
+        return String::new();
+    };
+    let sentence = text.split_inclusive(". ").next().unwrap_or(text).trim_end();
+    format!(": {sentence}")
 }

@@ -130,7 +130,7 @@ fn role(related: &Related, score: &Score) -> String {
     let note = score.note_at(related.voice, related.at);
     let voice = score.voices.get(related.voice);
     let pitch = voice.and_then(|v| v.notes.get(note?)?.sound.pitch());
-    let name = score.voice_name(related.voice);
+    let name = score.spoken_name(related.voice);
     pitch.map_or_else(
         || format!("{word}: {name}"),
         |pitch| format!("{word}: {name} {pitch}"),

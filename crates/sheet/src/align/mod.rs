@@ -12,6 +12,7 @@
 //!   one that could be left out may stand there on purpose.
 //! - What cannot be read stays as it is: a part within its cell, a line as a whole. Comments and
 //!   blank lines stay; only marks drawn under the notes (`// ^^`) move with their notes.
+//! - A carriage return that ends no line goes as other blanks go.
 //! - A sheet that would grow beyond [`LARGEST`] in columns stays as it is.
 
 mod carets;
@@ -32,6 +33,14 @@ use crate::{Edit, LARGEST, Sheet, Span, apply};
 #[must_use]
 pub fn align(text: &str) -> String {
     apply(text, &align_edits(text))
+}
+
+/// A sheet in columns; `None` where it would be larger than [`LARGEST`], or is so already.
+#[must_use]
+pub fn try_align(text: &str) -> Option<String> {
+    let sheet = Sheet::read(text);
+    let edits = edits(sheet.tree(), |_| true).filter(|_| !sheet.tree().too_large)?;
+    Some(apply(text, &edits))
 }
 
 /// The edits that set a sheet in columns: at most one a line, within the line, in the order of the

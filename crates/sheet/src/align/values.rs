@@ -157,7 +157,16 @@ impl<'a> Values<'a> {
             _ => None,
         };
         let read = self.problems.len() == before;
-        let end = words.last().map_or(place.word.end, |word| word.span.end);
+        let reason = || words.iter().find(|word| word.text.ends_with(':'));
+        let free_from = match place.kind {
+            LineKind::Word(Header::Title | Header::Subtitle | Header::By) => Some(place.word.end),
+            LineKind::Word(Header::Licence) | LineKind::Footnote => reason().map(|w| w.span.end),
+            _ => None,
+        };
+        let end = match free_from {
+            Some(from) => self.free(place, from).end,
+            None => words.last().map_or(place.word.end, |word| word.span.end),
+        };
         line.filter(|_| read).map(|line| Found {
             place,
             line,
@@ -169,8 +178,7 @@ impl<'a> Values<'a> {
         let problems = &mut self.problems;
         let value = match header {
             Header::Title | Header::Subtitle | Header::By => {
-                let span = free_text(self.text, place.word.end as usize, place.end as usize);
-                let value = self.text.get(span.range())?;
+                let value = self.text.get(self.free(place, place.word.end).range())?;
                 (!value.is_empty() && !plain(value).1).then(|| value.to_owned())?
             }
             Header::Key => {
@@ -203,7 +211,7 @@ impl<'a> Values<'a> {
                     (is_label(word) && !rule).then_some(0)
                 };
                 licence(problems, self.text, place.word, place.end as usize, voice)?;
-                self.licence(words)?
+                self.licence(place, words)?
             }
             Header::Voice | Header::Unknown => return None,
         };
@@ -212,20 +220,24 @@ impl<'a> Values<'a> {
     }
 
     /// What a licence says: its words up to the colon, and its reason as it is written.
-    fn licence(&self, words: &[Word<'a>]) -> Option<String> {
+    fn licence(&self, place: OtherLine, words: &[Word<'a>]) -> Option<String> {
         let colon = words.iter().position(|word| word.text.ends_with(':'))?;
         let names = joined(words.get(..=colon)?);
-        let (first, last) = (words.get(colon + 1)?, words.last()?);
-        let reason = first.span.range().start..last.span.range().end;
+        let reason = self.free(place, words.get(colon)?.span.end);
         let names = names.trim_end_matches(':').trim_end_matches(' ');
-        Some(format!("{names}: {}", self.text.get(reason)?))
+        Some(format!("{names}: {}", self.text.get(reason.range())?))
+    }
+
+    /// The free text of a line from a place on.
+    fn free(&self, place: OtherLine, from: u32) -> Span {
+        free_text(self.text, from as usize, place.end as usize)
     }
 
     fn footnote(&mut self, place: OtherLine, words: &[Word<'a>]) -> Option<Line<'a>> {
         let end = place.end as usize;
         footnote(&mut self.problems, self.text, place.word, end).footnote?;
         let mark = self.text.get(place.word.range())?;
-        let licence = self.licence(words.get(1..)?)?;
+        let licence = self.licence(place, words.get(1..)?)?;
         Some(Line::Footnote(format!("{mark} licence {licence}")))
     }
 

@@ -5,16 +5,13 @@ use partwright_score::{Bar, Change, MOST_VOICES, Metre, ZERO};
 use super::flow::{GRID, Moment};
 use super::head::{Event, Outline};
 use super::{Lowering, insertion};
-use crate::chars::Word;
 use crate::lines::RowKind;
-use crate::near::near;
 use crate::problem::Problem;
 use crate::reading::{ChangeLine, Changed};
 use crate::sheet::Placed;
 use crate::span::Span;
 use crate::system::problem;
 use crate::tree::{COPIED, DOUBLE, OPEN, PartKind, Row, RowBar, System, THROUGHOUT};
-use crate::voices::label_fault;
 
 /// The systems with their bars.
 #[derive(Clone, Debug, Default)]
@@ -45,6 +42,9 @@ pub(crate) struct SystemPlan {
     pub(crate) bars: usize,
     /// A row or a line of it could not be read: its silent voices are unknown.
     pub(crate) doubtful: bool,
+    /// Rows (by index) that lost a bar line, each with the bar of the system in which it did: what
+    /// follows stands under other bars than it was written for.
+    pub(crate) lost: Vec<(u32, usize)>,
 }
 
 /// What fills a bar of one row.
@@ -118,7 +118,8 @@ pub(super) fn bars<'a>(lowering: &mut Lowering<'a>, outline: &Outline<'a>) -> Pl
                 changes.push((sketches.len(), what, *span));
             }
             Event::System(placed) => {
-                let plan = lowering.system(placed, sketches.len());
+                let mut plan = lowering.system(placed, sketches.len());
+                plan.lose(metres.last().and_then(Metre::cells));
                 let sketch = Sketch {
                     metre: crate::system::small(metres.len() - 1),
                     ..Sketch::default()
@@ -157,12 +158,43 @@ pub(super) fn bars<'a>(lowering: &mut Lowering<'a>, outline: &Outline<'a>) -> Pl
     Plan { systems, grid }
 }
 
+impl SystemPlan {
+    /// Finds the rows that lost a bar line: a bar of theirs is too long, and they have fewer bars
+    /// than the other rows.
+    fn lose(&mut self, full: Option<usize>) {
+        let Some(full) = full.and_then(|full| u32::try_from(full).ok()) else {
+            return;
+        };
+        let system = &self.placed.system;
+        for (index, _) in &self.rows {
+            let Some(row) = system.rows.get(*index as usize) else {
+                continue;
+            };
+            let long =
+                |bar: u32| matches!(fill(system, RowKind::Music, bar), Fill::Cells(n) if n > full);
+            if row.bars.len() < self.bars
+                && let Some(bar) = row.bars.clone().position(long)
+            {
+                self.lost.push((*index, bar));
+            }
+        }
+    }
+
+    /// The bar in which a row lost a bar line.
+    pub(crate) fn lost_at(&self, row: u32) -> Option<usize> {
+        let mut lost = self.lost.iter();
+        lost.find(|(lost, _)| *lost == row).map(|(_, bar)| *bar)
+    }
+}
+
 /// How many cells the longest row has, bar by bar.
 fn lengths(plan: &SystemPlan, sketches: &mut [Sketch]) {
     let system = &plan.placed.system;
     for (row, _) in &plan.rows {
         let bars = system.rows.get(*row as usize).map(|row| row.bars.clone());
-        for (bar, sketch) in bars.into_iter().flatten().zip(&mut *sketches) {
+        let kept = plan.lost_at(*row).unwrap_or(usize::MAX);
+        let bars = bars.into_iter().flatten().take(kept);
+        for (bar, sketch) in bars.zip(&mut *sketches) {
             if let Fill::Cells(n) = fill(system, RowKind::Music, bar) {
                 sketch.longest = sketch.longest.max(n);
             }
@@ -266,8 +298,9 @@ impl<'a> Lowering<'a> {
             first,
             bars: 0,
             doubtful: placed.flawed,
+            lost: Vec::new(),
         };
-        let mut nobodys = Vec::new();
+        let (mut nobodys, mut again) = (Vec::new(), Vec::new());
         let mut present = [false; MOST_VOICES];
         for (index, row) in system.rows.iter().enumerate() {
             if row.kind != RowKind::Music {
@@ -275,17 +308,21 @@ impl<'a> Lowering<'a> {
             }
             let label = self.at(row.label.moved(placed.span.start));
             match self.labels.get(label) {
-                Some(&voice) => {
-                    if let Some(here) = present.get_mut(voice) {
-                        *here = true;
+                Some(&voice) => match present.get_mut(voice) {
+                    Some(true) => again.push((index, row)),
+                    here => {
+                        plan.rows.push((index as u32, voice as u8));
+                        here.into_iter().for_each(|here| *here = true);
                     }
-                    plan.rows.push((index as u32, voice as u8));
-                }
+                },
                 None => nobodys.push((index, row, label)),
             }
         }
         for (index, row, label) in nobodys {
             self.nobodys(&mut plan, &mut present, index, row, label);
+        }
+        for (order, (index, row)) in again.into_iter().enumerate() {
+            self.again(&mut plan, &mut present, index, row, order == 0);
         }
         plan.rows.sort_unstable();
         let rows = plan
@@ -296,47 +333,8 @@ impl<'a> Lowering<'a> {
         plan
     }
 
-    /// A row whose label no voice has: read as the nearest voice that has no row here, if one is
-    /// near.
-    fn nobodys(
-        &mut self,
-        plan: &mut SystemPlan,
-        present: &mut [bool; MOST_VOICES],
-        index: usize,
-        row: &Row,
-        label: &str,
-    ) {
-        let span = row.label.moved(plan.placed.span.start);
-        self.stray_marks(&plan.placed, index as u32);
-        if self.refused.contains(label) {
-            return;
-        }
-        if let Some(message) = label_fault(label) {
-            plan.doubtful = true;
-            return self.wrong(span, &message, &[]);
-        }
-        let guess = self.guess();
-        let voices = &self.reading.score.voices;
-        let absent = voices
-            .iter()
-            .enumerate()
-            .filter(|(i, _)| guess && present.get(*i) == Some(&false));
-        let labels = absent.clone().map(|(_, voice)| voice.label.as_str());
-        let meant = near(label, labels).and_then(|label| self.labels.get(label).copied());
-        self.unknown_voice(Word { text: label, span });
-        match meant {
-            Some(voice) => {
-                if let Some(here) = present.get_mut(voice) {
-                    *here = true;
-                }
-                plan.rows.push((index as u32, voice as u8));
-            }
-            None => plan.doubtful = true,
-        }
-    }
-
     /// Footnote marks of a row that is not read are not idle for that.
-    fn stray_marks(&mut self, placed: &Placed, row: u32) {
+    pub(super) fn stray_marks(&mut self, placed: &Placed, row: u32) {
         for part in super::music::parts_of(placed, row) {
             let names = super::music::mark_names(self.text, placed, part);
             self.stray_marks
@@ -347,16 +345,17 @@ impl<'a> Lowering<'a> {
     /// Finds where sections close: most of the rows say so. The others are reported.
     fn sections(&mut self, plan: &SystemPlan, sketches: &mut [Sketch]) {
         let system = &plan.placed.system;
-        let lines = |row: &Row| {
+        let lines = |index: usize, row: &Row| {
             let bars = system
                 .bars
                 .get(row.bars.start as usize..row.bars.end as usize);
-            bars.unwrap_or_default()
+            let kept = plan.lost_at(index as u32).unwrap_or(usize::MAX);
+            bars.unwrap_or_default().iter().take(kept)
         };
         let ended = |line: &RowBar| line.flags & OPEN == 0;
         let double = |line: &RowBar| line.flags & DOUBLE != 0;
-        for row in &system.rows {
-            for (line, sketch) in lines(row).iter().zip(&mut *sketches) {
+        for (index, row) in system.rows.iter().enumerate() {
+            for (line, sketch) in lines(index, row).zip(&mut *sketches) {
                 sketch.lines += u32::from(ended(line));
                 sketch.doubles += u32::from(ended(line) && double(line));
             }
@@ -371,7 +370,7 @@ impl<'a> Lowering<'a> {
         }
         for (index, row) in system.rows.iter().enumerate() {
             let voice = plan.rows.iter().find(|(row, _)| *row as usize == index);
-            for (line, sketch) in lines(row).iter().zip(&*sketches) {
+            for (line, sketch) in lines(index, row).zip(&*sketches) {
                 if !ended(line) || double(line) == sketch.closes {
                     continue;
                 }

@@ -29,10 +29,11 @@ pub(super) fn copies(pass: &mut Pass<'_, '_>, system: &SystemPlan, bar: usize, g
     let mut waiting = Vec::new();
     for (row, voice) in &system.rows {
         let placed = &system.placed;
+        let lost = system.lost_at(*row);
         let Some(row) = placed.system.rows.get(*row as usize) else {
             continue;
         };
-        let Some(index) = bar_of(row, bar) else {
+        let Some(index) = bar_of(row, bar).filter(|_| lost.is_none_or(|lost| bar <= lost)) else {
             continue;
         };
         let Some(line) = placed.system.bars.get(index as usize) else {
@@ -48,6 +49,7 @@ pub(super) fn copies(pass: &mut Pass<'_, '_>, system: &SystemPlan, bar: usize, g
             bar: index,
             line: *line,
             grid,
+            lost: false,
         };
         waiting.extend(pass.wait(here));
     }

@@ -4,12 +4,13 @@ use std::collections::HashSet;
 
 use partwright_score::{Change, MOST_VOICES, Voice, ZERO};
 
-use super::Lowering;
+use super::{Lowering, remark};
 use crate::chars::{Word, free_text};
 use crate::footnotes;
 use crate::headers::{key, metre, tempo};
 use crate::lines::{HEADERS, Header, LineKind, RowKind};
 use crate::near::{near, short};
+use crate::problem::ProblemKind;
 use crate::reading::{Changed, Stated};
 use crate::sheet::{Block, OtherLine, Placed, value_words};
 use crate::span::Span;
@@ -55,6 +56,11 @@ pub(super) fn head<'a>(lowering: &mut Lowering<'a>) -> Outline<'a> {
             }
             Block::Line(line) => match line.kind {
                 LineKind::Footnote => lowering.footnote_line(*line, &mut outline),
+                LineKind::Begun => {
+                    let message = "This line is begun and says nothing yet.";
+                    let found = remark(ProblemKind::Unwritten, line.word, message);
+                    lowering.reading.problems.push(found);
+                }
                 LineKind::Unlabelled => {
                     let message = "The label is missing: a row begins with its voice's label.";
                     lowering.wrong(line.word.first(), message, &[]);
@@ -191,8 +197,7 @@ impl<'a> Lowering<'a> {
             }
             Some(other) => format!("{} begins no line. Is {other} meant?", short(name)),
             None => format!(
-                "{} begins no line. Expected a header such as title, key or metre, a voice, or a \
-                 row: its label, a bar line and the notes. A comment begins with //.",
+                "{} begins no line. A row is its label, a bar line and the notes: S | G4.",
                 short(name)
             ),
         };
@@ -309,7 +314,9 @@ impl<'a> Lowering<'a> {
             let span = row.label.moved(first.span.start);
             let label = self.at(span);
             // A bad label is reported with the row.
-            if label_fault(label).is_none() {
+            // A second row of one name is reported there too.
+            let known = found.iter().any(|d: &Declared<'_>| d.voice.label == label);
+            if label_fault(label).is_none() && !known {
                 found.push(Declared {
                     voice: Voice::new(label, partwright_score::Kind::plain()),
                     label: span,

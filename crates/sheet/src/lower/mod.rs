@@ -7,6 +7,7 @@ pub(crate) mod bars;
 mod copies;
 mod flow;
 mod head;
+mod labels;
 mod lane;
 mod music;
 mod reports;
@@ -63,6 +64,7 @@ pub(crate) fn lower(tree: &Arc<Tree>) -> Reading {
         guesses: crate::near::MOST_GUESSES,
         line_end: line_end(&tree.text),
     };
+    lowering.lone_returns();
     let outline = head::head(&mut lowering);
     let plan = bars::bars(&mut lowering, &outline);
     music::music(&mut lowering, &plan);
@@ -126,6 +128,28 @@ impl<'a> Lowering<'a> {
 
     fn wrong(&mut self, span: Span, message: &str, instead: &[&str]) {
         crate::headers::wrong(&mut self.reading.problems, span, message, instead);
+    }
+
+    /// Carriage returns that end no line: one word for all, since one editor made them all.
+    fn lone_returns(&mut self) {
+        let bytes = self.text.as_bytes();
+        let lone = |at: &usize| bytes.get(at + 1) != Some(&b'\n');
+        let mut found = self.text.match_indices('\r').map(|(at, _)| at).filter(lone);
+        let Some(first) = found.next() else { return };
+        let edits = std::iter::once(first).chain(found).map(|at| Edit {
+            span: Span::new(at, at + 1),
+            text: self.line_end.to_owned(),
+        });
+        let offer = Offer {
+            title: "End the line here".to_owned(),
+            edits: edits.collect(),
+        };
+        let message = "A carriage return alone ends no line: lines end with a line feed.";
+        let span = Span::new(first, first + 1);
+        self.reading.problems.push(Problem {
+            offers: vec![offer],
+            ..problem(span, message.to_owned(), &[])
+        });
     }
 
     /// A mark without footnote, a footnote without mark, two for one mark.
@@ -194,5 +218,27 @@ fn insertion(at: u32, text: &str, title: &str) -> Offer {
             span: Span { start: at, end: at },
             text: text.to_owned(),
         }],
+    }
+}
+
+#[cfg(test)]
+mod tests {
+    use crate::{Sheet, apply};
+
+    #[test]
+    fn carriage_returns_alone_are_one_trouble_with_one_mend() {
+        let text = "title Quay\rS | G4 |\rA | E4 |\r\n";
+        let reading = Sheet::read(text).lower(text);
+        let told: Vec<_> = reading
+            .problems
+            .iter()
+            .filter(|p| p.message.contains("carriage return"))
+            .collect();
+        assert_eq!(told.len(), 1);
+        assert_eq!(told[0].span.range(), 10..11);
+        let mended = apply(text, &told[0].offers[0].edits);
+        assert_eq!(mended, "title Quay\r\nS | G4 |\r\nA | E4 |\r\n");
+        let again = Sheet::read(&mended).lower(&mended);
+        assert_eq!(again.problems, []);
     }
 }

@@ -15,7 +15,7 @@ use crate::sheet::Placed;
 use crate::span::Span;
 use crate::system::is_copied;
 use crate::tree::{
-    BREATH, FERMATA, MARKED, OPEN, Part, PartKind, Row, RowBar, part_end, unmarked_end,
+    BREATH, DOUBLE, FERMATA, MARKED, OPEN, Part, PartKind, Row, RowBar, part_end, unmarked_end,
 };
 
 /// Hints about silent voices beyond these are summed up in one: a sheet of thousands of systems
@@ -68,6 +68,8 @@ pub(super) struct Here<'s> {
     pub(super) bar: u32,
     pub(super) line: RowBar,
     pub(super) grid: GridBar,
+    /// A bar line is missing in it.
+    pub(super) lost: bool,
 }
 
 impl GridBar {
@@ -111,10 +113,14 @@ impl<'a> Pass<'_, 'a> {
             let grid = self.grid(system.first + bar);
             let mut copies = false;
             for ((row, voice), dry) in system.rows.iter().zip(&mut dry) {
+                let lost = system.lost_at(*row);
                 let Some(row) = system.placed.system.rows.get(*row as usize) else {
                     continue;
                 };
                 let voice = usize::from(*voice);
+                if lost.is_some_and(|lost| bar > lost) {
+                    continue;
+                }
                 let Some((index, line)) = bar_of(row, bar).and_then(|i| {
                     let line = system.placed.system.bars.get(i as usize)?;
                     Some((i, *line))
@@ -131,12 +137,16 @@ impl<'a> Pass<'_, 'a> {
                     bar: index,
                     line,
                     grid,
+                    lost: lost == Some(bar),
                 };
                 if is_copied(line.flags) {
                     copies = true;
                     *dry = false;
                 } else {
                     self.bar(here, dry);
+                }
+                if lost == Some(bar) {
+                    self.lost(here);
                 }
             }
             if copies {
@@ -153,7 +163,7 @@ impl<'a> Pass<'_, 'a> {
                 *here = true;
             }
         }
-        let told = !system.doubtful && !system.rows.is_empty();
+        let told = !system.doubtful && !system.rows.is_empty() && !self.is_in_work(system);
         let mut silent: Vec<usize> = Vec::new();
         for (voice, flow) in self.flows.iter_mut().enumerate() {
             if present.get(voice) == Some(&true) || system.bars == 0 && !told {
@@ -182,12 +192,17 @@ impl<'a> Pass<'_, 'a> {
                 "{name} is silent in this system: it has no row here. If it only rests, a row of _ \
                  says so."
             ),
-            [others @ .., last] => format!(
-                "{} and {} are silent in this system: they have no rows here. If they only rest, \
-                 rows of _ say so.",
-                others.join(", "),
-                last.replacen("The ", "the ", 1)
-            ),
+            [first, others @ ..] => {
+                let small = |name: &String| name.replacen("The ", "the ", 1);
+                let mut others: Vec<String> = others.iter().map(small).collect();
+                let last = others.pop().unwrap_or_default();
+                others.insert(0, first.clone());
+                format!(
+                    "{} and {last} are silent in this system: they have no rows here. If they \
+                     only rest, rows of _ say so.",
+                    others.join(", ")
+                )
+            }
             [] => return,
         };
         let span = first.label.moved(system.placed.span.start);
@@ -196,6 +211,15 @@ impl<'a> Pass<'_, 'a> {
             at: Some(start.time()),
             ..remark(ProblemKind::VoiceSilent, span, &message)
         });
+    }
+
+    /// The system stands at the end of the text and closes no section: rows may still come.
+    fn is_in_work(&self, system: &SystemPlan) -> bool {
+        let placed = &system.placed;
+        let behind = self.lowering.text.get(placed.span.end as usize..);
+        let last = behind.is_some_and(|behind| behind.trim().is_empty());
+        let lines = &placed.system.bars;
+        last && !lines.iter().any(|line| line.flags & DOUBLE != 0)
     }
 
     /// The bars a row does not have.
@@ -231,6 +255,19 @@ impl<'a> Pass<'_, 'a> {
                 at: Some(at.time()),
                 ..remark(ProblemKind::Unwritten, span, message)
             });
+        }
+    }
+
+    /// A bar line is missing in this bar: the rest of the row is unknown, and what is wrong with it
+    /// is not told. Its marks are not idle for that.
+    fn lost(&mut self, here: Here<'_>) {
+        self.flows_turn(here.voice, here.grid.end(), Sound::Spoilt);
+        let system = &here.placed.system;
+        let first = |bar: u32| system.parts_of(system.cells_of(bar).start).start;
+        for part in first(here.bar + 1)..first(here.row.bars.end) {
+            let names = mark_names(self.lowering.text, here.placed, part);
+            let names = names.map(|(name, _)| name.to_owned());
+            self.lowering.stray_marks.extend(names);
         }
     }
 

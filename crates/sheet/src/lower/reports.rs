@@ -6,6 +6,7 @@ use partwright_score::{Pitch, show_time};
 
 use super::bars::SystemPlan;
 use super::flow::Moment;
+use super::insertion;
 use super::music::{Here, Pass};
 use crate::problem::{Edit, Offer, Problem};
 use crate::span::Span;
@@ -72,7 +73,8 @@ impl Pass<'_, '_> {
             title: format!("Write {pitch}"),
             edits: vec![Edit {
                 span,
-                text: pitch.to_string(),
+                // Letter and sign stay as they are written.
+                text: format!("{}{}", self.lowering.at(span), pitch.octave()),
             }],
         };
         let found = Problem {
@@ -145,7 +147,27 @@ impl Pass<'_, '_> {
             "The bar is too long by {count}{cells} ({length} of a whole note): it has room for {}.",
             here.grid.cells
         );
-        self.report(here, at, problem(span, message, &[]));
+        if !here.lost {
+            return self.report(here, at, problem(span, message, &[]));
+        }
+        let score = &self.lowering.reading.score;
+        let name = score.spoken_name(here.voice);
+        let plain = score
+            .voices
+            .get(here.voice)
+            .is_none_or(|v| name.contains(&v.label));
+        let the = if plain { "" } else { "the " };
+        let number = score.place(here.grid.start().time()).bar;
+        let message = format!(
+            "The bar is too long by {count}{cells}: a bar line is missing in bar {number} of \
+             {the}{name}. The rest of this row waits for it."
+        );
+        let offer = insertion(span.start, "| ", "Put a bar line here");
+        let found = Problem {
+            offers: vec![offer],
+            ..problem(span, message, &[])
+        };
+        self.report(here, at, found);
     }
 
     /// What was wrong with parts when the system was read.

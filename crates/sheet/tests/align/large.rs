@@ -1,6 +1,6 @@
 //! A sheet too large to be aligned. How fast aligning is stands in no test: the machine is shared.
 
-use partwright_sheet::{LARGEST, align};
+use partwright_sheet::{LARGEST, align, try_align};
 
 #[test]
 fn a_sheet_that_would_grow_beyond_the_largest_stays_as_it_is() {
@@ -10,6 +10,7 @@ fn a_sheet_that_would_grow_beyond_the_largest_stays_as_it_is() {
     let text = format!("{long}{silent}{rows}");
     assert!(text.len() < LARGEST / 16);
     assert_eq!(align(&text), text);
+    assert_eq!(try_align(&text), None);
     let comments = format!(
         "title {} // x\n{}",
         "x".repeat(100_000),
@@ -25,4 +26,6 @@ fn a_sheet_that_would_grow_beyond_the_largest_stays_as_it_is() {
     assert_eq!(align(&most), most);
     let too_large = "S|c4|\n".repeat(LARGEST / 6 + 1);
     assert_eq!(align(&too_large), too_large);
+    assert_eq!(try_align(&too_large), None);
+    assert_eq!(try_align("S|c4|\n").as_deref(), Some("S | C4 |\n"));
 }

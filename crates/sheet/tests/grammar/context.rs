@@ -38,7 +38,11 @@ pub(crate) const KINDS: [Kind; 9] = [
     Kind {
         reason: "3: the metre, and the other rows, say how long a bar is",
         words: &["too long by"],
-        cases: &[],
+        cases: &[
+            "a bar line left out is one mistake",
+            "a bar line left out behind a pickup",
+            "a mark behind a bar line left out is not idle",
+        ],
         messages: &["The bar is too long by"],
     },
     Kind {
@@ -64,6 +68,9 @@ pub(crate) const KINDS: [Kind; 9] = [
             "a label misspelt is one mistake",
             "a new label in the second system",
             "a label declared twice",
+            "a label written twice in place of the only one missing",
+            "a label written twice while voices are missing",
+            "a label written twice where the first system declares the voices",
             "doubling a voice that is not there",
             "words for a voice that is not there",
         ],
@@ -76,6 +83,8 @@ pub(crate) const KINDS: [Kind; 9] = [
             "does not double itself",
             "double each other in a ring",
             "A second row of this name",
+            // Which words of a licence name voices.
+            "The rules come before the voices",
             // Of a licence whose only word names a voice.
             "The rule is missing",
         ],

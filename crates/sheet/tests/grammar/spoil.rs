@@ -1,8 +1,6 @@
 //! Sheets spoilt by a slip of the hand, and where the grammar and the reader of sheets are known to
 //! differ.
 
-use partwright_sheet::Problem;
-
 use crate::derive::Random;
 use crate::ebnf::BLANKS;
 
@@ -85,46 +83,12 @@ pub(crate) fn spoil(text: &str, words: &[&str], random: &mut Random) -> String {
     all.into_iter().collect()
 }
 
-/// The grammar lets a backslash make a blank plain in all free text; the reader does so in words,
-/// but in titles and reasons it takes the last blank of the text for the end of it, and two strokes
-/// after the blank for a comment.
-pub(crate) fn is_blank_made_plain(text: &str, problem: &Problem) -> bool {
-    let before = &text[..problem.span.end as usize];
-    let line = before.rsplit('\n').next().unwrap_or_default();
-    let after = text[problem.span.end as usize..].chars().next();
-    let row = line.trim_start().starts_with("words");
-    !row && before.ends_with('\\') && after.is_some_and(|c| BLANKS.contains(&c))
-}
-
-/// What the grammar refuses and the reader lets pass: a lone carriage return (a blank to it), a
-/// words row without any bar line, a join of words with nothing to join, more than 64 parts in a
-/// cell of harmony or figures, and a licence that names voices before rules.
+/// What the grammar refuses and the reader lets pass: a join of words with nothing to join.
 pub(crate) fn is_left_open(text: &str) -> bool {
-    let lone_return = text.replace("\r\n", "\n").contains('\r');
     let blank = |c| BLANKS.contains(&c) || c == '\u{feff}';
-    lone_return
-        || text
-            .lines()
-            .map(|line| line.trim_start_matches(blank))
-            .any(|line| {
-                is_words_left_open(line) || is_long_cell(line) || is_licence_left_open(line)
-            })
-}
-
-fn is_long_cell(line: &str) -> bool {
-    let under = line.starts_with("harmony") || line.starts_with("figures");
-    under
-        && line
-            .split(|c| c == '|' || BLANKS.contains(&c))
-            .any(|cell| cell.matches('.').count() > 63)
-}
-
-fn is_licence_left_open(line: &str) -> bool {
-    let names = line.split(':').next().unwrap_or_default();
-    let mut names = names.split_whitespace();
-    let is_rule = |name: &str| name.chars().all(|c| c.is_ascii_lowercase() || c == '-');
-    matches!(names.next(), Some("licence" | "license"))
-        && names.skip_while(|name| is_rule(name)).any(is_rule)
+    text.lines()
+        .map(|line| line.trim_start_matches(blank))
+        .any(is_words_left_open)
 }
 
 fn is_words_left_open(line: &str) -> bool {
@@ -142,8 +106,7 @@ fn is_words_left_open(line: &str) -> bool {
         });
     }
     let edge = |c: Option<char>| c.is_none_or(|c| c == '|' || c == '~' || c.is_whitespace());
-    let joins_nothing = plain.match_indices('~').any(|(at, _)| {
+    plain.match_indices('~').any(|(at, _)| {
         edge(plain[..at].chars().next_back()) || edge(plain[at + 1..].chars().next())
-    });
-    joins_nothing || !line.contains('|')
+    })
 }

@@ -2,12 +2,13 @@
 //!
 //! Why: the octave figure holds along the row until another is written, so that `B4 C` falls a
 //! seventh. Where the rising step was meant, the figure is missing; where the leap was meant,
-//! writing the figure says so.
+//! writing the figure says so. What is found about the place of such a note is told with the doubt,
+//! which is then as grave as the gravest of it.
 //!
 //! # Fails
 //!
 //! ```voices
-//! S | B4 C |
+//! S | B4 D |
 //! //     ^ octave doubt (remark): S
 //! ```
 //!
