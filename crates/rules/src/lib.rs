@@ -21,12 +21,13 @@ pub use rule::{Case, FAMILIES, Looks, NumberOf, Rule, Severity};
 pub use source::Source;
 pub use style::{Number, Override, STYLES, Setting, Strictness, Style};
 pub use view::{
-    Crossing, Direct, Line, LineMove, NotesOver, PairMove, Passage, Piece, Run, Sounding,
+    Crossing, Direct, HighPoint, Line, LineMove, MinorDegree, NotesOver, PairMove, Passage,
+    Passing, Piece, Run, Sounding, Stretch, Tessitura,
 };
 
 /// What every rule file needs.
 pub mod prelude {
-    pub use partwright_score::{Interval, Pair};
+    pub use partwright_score::{Interval, Note, Pair, Time};
     pub use partwright_space::{Consecutive, Family, Motion, Way};
 
     pub use crate::finding::{Role, Spot};
@@ -34,5 +35,7 @@ pub mod prelude {
     pub use crate::rule::{Case, Looks, NumberOf, Rule, Severity};
     pub use crate::source::{self, Source};
     pub use crate::style::{Setting, Style, allow, fault, remark, weakness};
-    pub use crate::view::{Direct, Line, LineMove, NotesOver, PairMove, Passage, Piece, Sounding};
+    pub use crate::view::{
+        Direct, Line, LineMove, MinorDegree, NotesOver, PairMove, Passage, Piece, Sounding,
+    };
 }

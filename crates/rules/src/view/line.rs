@@ -1,7 +1,10 @@
 //! One voice as a line.
 
+use std::collections::BTreeSet;
+
 use partwright_score::{Interval, Note, Pitch, Time, Voice};
 
+use super::shape::is_triad;
 use super::{Line, Piece, Sounding};
 
 /// Notes in a row of which the same can be said.
@@ -32,12 +35,12 @@ pub struct LineMove {
     pub interval: Interval,
     /// Nothing of the line comes right before: it starts with the note left.
     pub starts: bool,
-    size: i32,
-    quality: Quality,
+    pub(super) size: i32,
+    pub(super) quality: Quality,
 }
 
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
-enum Quality {
+pub(super) enum Quality {
     Plain,
     Augmented,
     Diminished,
@@ -95,13 +98,14 @@ impl LineMove {
     /// The pitch left and the pitch reached, as text.
     #[must_use]
     pub fn ends(&self) -> (String, String) {
-        let text = |note: &Note| {
-            note.sound
-                .pitch()
-                .map(|p| p.to_string())
-                .unwrap_or_default()
-        };
-        (text(&self.from), text(&self.to))
+        (LineMove::text(&self.from), LineMove::text(&self.to))
+    }
+
+    /// The pitch of a note as text.
+    #[must_use]
+    pub fn text(note: &Note) -> String {
+        let pitch = note.sound.pitch();
+        pitch.map(|p| p.to_string()).unwrap_or_default()
     }
 }
 
@@ -230,19 +234,8 @@ impl<'a> Line<'a> {
             return true;
         };
         let class = |p: Pitch| p.place().semitone.rem_euclid(12);
-        let mut classes = [class(a), class(b), class(c)];
-        classes.sort_unstable();
-        let [x, y, z] = classes;
-        if x == y || y == z {
-            return true;
-        }
-        let gaps = [y - x, z - y, 12 - (z - x)];
-        // Major, minor and diminished triads by their cycles of gaps.
-        let shapes = [[4, 3, 5], [3, 4, 5], [3, 3, 6]];
-        (0..3).any(|turn| {
-            let turned = [0, 1, 2].map(|i| gaps.get((i + turn) % 3).copied().unwrap_or(0));
-            shapes.contains(&turned)
-        })
+        let classes: BTreeSet<i32> = [a, b, c].map(class).into();
+        classes.len() < 3 || is_triad(&classes)
     }
 
     /// The runs of notes to which `say` gives the same answer; silence does not break a run.

@@ -3,17 +3,21 @@
 //! These views only read what `partwright_score` laid out, and put it into a musician's words.
 
 mod close;
+mod degree;
 mod line;
 mod pair;
 mod piece;
+mod shape;
 mod sounding;
 
 use partwright_score::{Pair, PairStep, Score, Texture};
 
 pub use close::NotesOver;
+pub use degree::{MinorDegree, Tessitura};
 pub use line::{LineMove, Run};
 pub use pair::Direct;
 pub use piece::{Crossing, Passage};
+pub use shape::{HighPoint, Passing, Stretch};
 
 /// A score with its texture.
 #[derive(Clone, Copy)]

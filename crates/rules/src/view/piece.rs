@@ -2,7 +2,7 @@
 
 use std::borrow::Cow;
 
-use partwright_score::{Pair, Time};
+use partwright_score::{Pair, Time, ZERO};
 
 use super::{Piece, Sounding};
 
@@ -104,6 +104,12 @@ impl<'a> Piece<'a> {
             "A" | "B" | "C" | "D" | "E" | "F" | "G" | "H" => Cow::Owned(format!("voice {name}")),
             _ => Cow::Borrowed(name),
         }
+    }
+
+    /// Where the first bar begins.
+    #[must_use]
+    pub fn start(self) -> Time {
+        self.score.bars.first().map_or(ZERO, |bar| bar.onset)
     }
 
     /// A moment lies between beats.

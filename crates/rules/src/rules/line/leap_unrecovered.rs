@@ -46,13 +46,14 @@
 //!
 //! # Does not apply
 //!
-//! In the bass, in free writing, and where the phrase ends:
+//! In the bass of three parts and more (its octaves count), in free writing, and where the
+//! phrase ends:
 //!
 //! ```voices
 //! style chorale
 //!
 //! S | E4 C5^ D5 |
-//! B | A2 A3  B3 |
+//! B | A2 E3  F3 |
 //! ```
 //!
 //! # What to do
@@ -116,12 +117,15 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
     if line.is_given() {
         return;
     }
-    let strict = found.style().is_species();
-    let motet = found.style() == Style::Motet;
     for (i, step) in line.moves.iter().enumerate() {
         let case = match step.size() {
-            // A bass leaps as it must; only its octaves are balanced in the strict styles.
-            size if line.is_bass() && !strict && !(motet && size == 7) => continue,
+            // A bass leaps as it must, but for its octaves; in two parts it is a line like the other.
+            size if line.is_bass()
+                && size != 7
+                && !(found.style().is_species() && line.parts_at(step) < 3) =>
+            {
+                continue;
+            }
             7 => &OCTAVE,
             5.. => &LARGE,
             3 | 4 => &SMALL,

@@ -35,6 +35,11 @@
 //! # What to do
 //!
 //! Divide the leap, or take a fifth or an octave.
+//!
+//! # Who holds what
+//!
+//! The treatise forbids the falling minor sixth, and its figures 41, 42, 57 and 75 have it:
+//! hence a fault in first species, a weakness in the others (the case `minor-down`).
 
 use crate::prelude::*;
 
