@@ -112,16 +112,22 @@ impl<'a> Line<'a> {
         joined
     }
 
-    /// The same as notes.
+    /// The same as notes, each as long as its repetitions together.
     fn joined_notes(&self) -> Vec<Vec<Note>> {
-        let notes = |moves: Vec<&LineMove>| {
-            let first = moves.first().map(|step| step.from);
-            first
-                .into_iter()
-                .chain(moves.iter().map(|step| step.to))
-                .collect()
-        };
-        self.joined().into_iter().map(notes).collect()
+        let mut joined: Vec<Vec<Note>> = Vec::new();
+        for step in self.moves {
+            if step.starts || joined.is_empty() {
+                joined.push(vec![step.from]);
+            }
+            let Some(notes) = joined.last_mut() else {
+                continue;
+            };
+            match notes.last_mut() {
+                Some(last) if step.is_repeat() => last.length = step.to.end() - last.onset,
+                _ => notes.push(step.to),
+            }
+        }
+        joined
     }
 
     /// The stretches from one turning point to the next, the first and last note of a phrase
