@@ -1,6 +1,6 @@
 //! What a voice's notes are in a stated minor key, and in its compass.
 
-use partwright_score::{Compass, Key, Mode, Note, Time};
+use partwright_score::{Compass, Key, Mode, Note, Pitch, Time};
 
 use super::{Line, LineMove, Piece};
 
@@ -69,6 +69,29 @@ impl Line<'_> {
             (6, 11) => Some(MinorDegree::RaisedSeventh),
             _ => None,
         }
+    }
+
+    /// The raised fourth degree of the minor key stated there sounds somewhere while a note
+    /// lasts: the dominant of the dominant.
+    #[must_use]
+    pub fn is_over_raised_fourth(&self, note: &Note) -> bool {
+        let Some(Key::Of { tonic, .. }) = self.piece.key_at(note.onset) else {
+            return false;
+        };
+        let raised_fourth = |pitch: Pitch| {
+            let up = tonic.place().up_to(pitch.place());
+            (up.steps.rem_euclid(7), up.semitones.rem_euclid(12)) == (3, 6)
+        };
+        let first = self.piece.texture.at(note.onset).unwrap_or(usize::MAX);
+        let mut there = (first..).map_while(|k| {
+            let sounding = self.piece.sounding(k);
+            sounding.sonority().filter(|s| s.onset < note.end())?;
+            Some(sounding)
+        });
+        there.any(|sounding| {
+            let mut voices = self.piece.texture.sounding(sounding.index);
+            voices.any(|voice| sounding.pitch(voice).is_some_and(raised_fourth))
+        })
     }
 
     /// A move reaches the end of a phrase or of the piece, over the tonic in the lowest voice of

@@ -42,6 +42,16 @@
 //!
 //! # Does not apply
 //!
+//! Where it belongs to the dominant of the dominant, or the next key begins (state it):
+//!
+//! ```voices
+//! key A minor
+//!
+//! S | A4 A4 | G#4 A4 |
+//! A | E4 F#4 | E4 E4 |
+//! B | C3 D#3 | E3 C3 |
+//! ```
+//!
 //! Without a stated minor key:
 //!
 //! ```voices
@@ -110,8 +120,10 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
             continue;
         }
         let Some(next) = line.after(i) else { continue };
-        // In harmony it may lead to the natural seventh as to a tonic for a while.
-        let leads = degree(&next.to) == Some(MinorDegree::Seventh) && next.rises();
+        // In harmony it may lead to the natural seventh as to a tonic for a while, or be the
+        // fifth in a dominant of the dominant.
+        let leads = degree(&next.to) == Some(MinorDegree::Seventh) && next.rises()
+            || line.is_over_raised_fourth(&step.to);
         let harmony = matches!(found.style(), Style::Free | Style::Chorale);
         if degree(&next.to) == Some(MinorDegree::RaisedSeventh) || (harmony && leads) {
             continue;
