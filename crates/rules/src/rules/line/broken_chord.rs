@@ -38,7 +38,12 @@ pub const RULE: Rule = Rule {
     looks: Looks::Lines(check),
     cases: &[&ORDINARY],
     numbers: &[&MOST],
-    sources: &[source::LEHMANN.at("lesson II")],
+    sources: &[
+        source::LEHMANN.at("lesson II"),
+        source::RENAISSANCE_WORKS
+            .at("2 or 3 in 100 bars of Palestrina")
+            .looser("basses have it now and then"),
+    ],
 };
 
 static MOST: NumberOf = NumberOf {

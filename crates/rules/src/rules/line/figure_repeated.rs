@@ -61,6 +61,9 @@ pub const RULE: Rule = Rule {
         source::OPEN_MUSIC_THEORY,
         source::BUTTERFIELD.at("ch. 5"),
         source::JEPPESEN,
+        source::RENAISSANCE_WORKS
+            .at("two notes to and fro: 7 in 100 bars of Palestrina, figures 2")
+            .looser("no rarity"),
     ],
 };
 

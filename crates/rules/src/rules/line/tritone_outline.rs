@@ -64,7 +64,9 @@ pub const RULE: Rule = Rule {
             .at("a note to Book II")
             .stricter("the diminished fifth as well"),
         source::GROVE.at("Strict Counterpoint, third order: only the limits count"),
-        source::FUX_FIGURES.at("no augmented fourth, three diminished fifths in 44 figures"),
+        source::FUX_FIGURES
+            .at("in two parts no augmented fourth, three diminished fifths in 44 figures"),
+        source::RENAISSANCE_WORKS.at("augmented fourths: 7 in 1,016 bars of Palestrina"),
     ],
 };
 
