@@ -225,6 +225,13 @@ impl<'a> Line<'a> {
         }
     }
 
+    /// Two moves one way add up to a seventh, or to more than an octave.
+    #[must_use]
+    pub fn oversteps(first: &LineMove, second: &LineMove) -> bool {
+        let sum = first.size() + second.size();
+        sum == 6 || sum > 7
+    }
+
     /// Three notes (a move and the one after it) outline a triad, or divide an octave into a
     /// fourth and a fifth.
     #[must_use]

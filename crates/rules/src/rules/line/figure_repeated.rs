@@ -111,7 +111,10 @@ static BARS: Case = Case {
 };
 
 fn check(line: &Line<'_>, found: &mut Found<'_>) {
-    if line.is_given() {
+    let minds = [&FIGURE, &TWO_NOTES, &BARS]
+        .iter()
+        .any(|case| found.severity(case).is_some());
+    if line.is_given() || !minds {
         return;
     }
     let name = line.piece.name(line.voice);

@@ -67,8 +67,9 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
         let Some(before) = line.before(i) else {
             continue;
         };
-        // Two leaps that make no chord are reported as such already.
-        let reported = before.is_leap() && !Line::outlines_chord(before, step);
+        // Two leaps that make no chord, or too much of one, are `leaps-one-way` already.
+        let reported = before.is_leap()
+            && (Line::oversteps(before, step) || !Line::outlines_chord(before, step));
         if step.size() < 5 || !step.goes_on_from(before) || reported {
             continue;
         }

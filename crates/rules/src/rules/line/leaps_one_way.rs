@@ -123,8 +123,7 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
             continue;
         };
         let third = i.checked_sub(1).and_then(follows);
-        let sum = before.size() + step.size();
-        let case = if sum == 6 || sum > 7 {
+        let case = if Line::oversteps(before, step) {
             &DISSONANT
         } else if let Some((first, _)) = third {
             let chord = Line::outlines_chord(before, step) && Line::outlines_chord(first, before);

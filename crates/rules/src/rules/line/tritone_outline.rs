@@ -93,7 +93,10 @@ static DIMINISHED: Case = Case {
 };
 
 fn check(line: &Line<'_>, found: &mut Found<'_>) {
-    if line.is_given() {
+    let minds = [&AUGMENTED, &DIMINISHED]
+        .iter()
+        .any(|case| found.severity(case).is_some());
+    if line.is_given() || !minds {
         return;
     }
     for stretch in line.stretches() {
