@@ -77,6 +77,12 @@ impl LineMove {
         self.interval.0.semitones > 0
     }
 
+    /// `up` or `down`.
+    #[must_use]
+    pub fn way(&self) -> &'static str {
+        if self.rises() { "up" } else { "down" }
+    }
+
     /// The same pitch again.
     #[must_use]
     pub fn is_repeat(&self) -> bool {

@@ -111,10 +111,7 @@ static BARS: Case = Case {
 };
 
 fn check(line: &Line<'_>, found: &mut Found<'_>) {
-    let minds = [&FIGURE, &TWO_NOTES, &BARS]
-        .iter()
-        .any(|case| found.severity(case).is_some());
-    if line.is_given() || !minds {
+    if line.is_given() || RULE.cases.iter().all(|c| found.severity(c).is_none()) {
         return;
     }
     let name = line.piece.name(line.voice);

@@ -75,7 +75,7 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
         }
         found.line(&ORDINARY, line, step, || {
             let (from, to) = step.ends();
-            let way = if step.rises() { "up" } else { "down" };
+            let way = step.way();
             format!(
                 "Leap unprepared: {} goes {way} from {} to {from} and leaps on {way} to {to}. Come to the leap from the other side.",
                 line.piece.name(line.voice),

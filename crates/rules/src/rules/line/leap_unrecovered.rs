@@ -1,7 +1,6 @@
 //! After a large leap the line does not turn back.
 //!
-//! Why: a leap stretches the line, and the ear waits for what it jumped over; going on the same
-//! way strains the singer as well.
+//! Why: the ear waits for what the leap jumped over; going on the same way strains the singer too.
 //!
 //! # Fails
 //!
@@ -46,8 +45,7 @@
 //!
 //! # Does not apply
 //!
-//! In the bass of three parts and more (its octaves count), in free writing, and where the
-//! phrase ends:
+//! In the bass of three parts and more, octaves apart, in free writing, and where a phrase ends:
 //!
 //! ```voices
 //! style chorale
@@ -117,15 +115,12 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
     if line.is_given() {
         return;
     }
+    let strict = found.style().is_species();
     for (i, step) in line.moves.iter().enumerate() {
+        // A bass leaps as it must, but for its octaves; in two parts it is a line like the other.
+        let bass = line.is_bass() && !(strict && line.parts_at(step) < 3);
         let case = match step.size() {
-            // A bass leaps as it must, but for its octaves; in two parts it is a line like the other.
-            size if line.is_bass()
-                && size != 7
-                && !(found.style().is_species() && line.parts_at(step) < 3) =>
-            {
-                continue;
-            }
+            size if bass && size != 7 => continue,
             7 => &OCTAVE,
             5.. => &LARGE,
             3 | 4 => &SMALL,
@@ -145,7 +140,7 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
         }
         found.line(case, line, step, || {
             let (from, to) = step.ends();
-            let way = if step.rises() { "up" } else { "down" };
+            let way = step.way();
             format!(
                 "Leap unrecovered: {} leaps {way} from {from} to {to} and goes on {way} to {}. Turn back after the leap.",
                 line.piece.name(line.voice),

@@ -109,7 +109,9 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
         };
         let case = match (times, species) {
             (1, _) | (_, 4) => continue,
-            (times, 1) if times <= most => continue,
+            // Once for all the repetitions in a row.
+            (times, 1) if times != most + 1 => continue,
+            (times, 2..) if times > 2 => continue,
             (_, 1) => &THIRD,
             _ if line.parts_at(step) >= 3 => &THIRD,
             (_, 5) if step.to.length > step.from.length => continue,

@@ -120,7 +120,7 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
         };
         found.line(case, line, step, || {
             let (from, to) = step.ends();
-            let way = if step.rises() { "up" } else { "down" };
+            let way = step.way();
             format!(
                 "Sixth leap: {} goes {way} a {} from {from} to {to}. Divide the leap, or take a fifth or an octave.",
                 line.piece.name(line.voice),

@@ -93,10 +93,7 @@ static DIMINISHED: Case = Case {
 };
 
 fn check(line: &Line<'_>, found: &mut Found<'_>) {
-    let minds = [&AUGMENTED, &DIMINISHED]
-        .iter()
-        .any(|case| found.severity(case).is_some());
-    if line.is_given() || !minds {
+    if line.is_given() || RULE.cases.iter().all(|c| found.severity(c).is_none()) {
         return;
     }
     for stretch in line.stretches() {
