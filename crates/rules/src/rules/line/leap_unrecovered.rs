@@ -104,10 +104,7 @@ static SMALL: Case = Case {
         allow(Style::Free, "a matter of taste"),
         weakness(Style::Chorale, "handbooks ask for it (Open Music Theory)"),
         weakness(Style::Motet, "handbooks ask for it (Jeppesen, from memory)"),
-        weakness(
-            Style::Species1,
-            "Fux turns back after all but ten of his leaps",
-        ),
+        weakness(Style::Species1, "Fux turns back after all but ten leaps"),
     ],
 };
 
