@@ -21,14 +21,15 @@ pub use rule::{Case, FAMILIES, Looks, NumberOf, Rule, Severity};
 pub use source::Source;
 pub use style::{Number, Override, STYLES, Setting, Strictness, Style};
 pub use view::{
-    Crossing, Direct, Discord, Line, LineMove, NotesOver, PairMove, Passage, Piece, Run, Sounding,
+    Crossing, Direct, Discord, HighPoint, Line, LineMove, MinorDegree, NotesOver, PairMove,
+    Passage, Passing, Piece, Run, Sounding, Stretch, Tessitura,
 };
 
 /// What every rule file needs.
 pub mod prelude {
     pub use partwright_analysis::Figure;
     pub use partwright_analysis::figures::Near;
-    pub use partwright_score::{Interval, Pair};
+    pub use partwright_score::{Interval, Note, Pair, Time};
     pub use partwright_space::{Consecutive, Family, Motion, Way};
 
     pub use crate::finding::{Role, Spot};
@@ -37,6 +38,6 @@ pub mod prelude {
     pub use crate::source::{self, Source};
     pub use crate::style::{Setting, Style, allow, fault, remark, weakness};
     pub use crate::view::{
-        Direct, Discord, Line, LineMove, NotesOver, PairMove, Passage, Piece, Sounding,
+        Direct, Discord, Line, LineMove, MinorDegree, NotesOver, PairMove, Passage, Piece, Sounding,
     };
 }

@@ -10,8 +10,8 @@ pub mod anticipation;
 pub mod appoggiatura;
 #[path = "rules/line/augmented_interval.rs"]
 pub mod augmented_interval;
-#[path = "rules/dissonance/cambiata.rs"]
-pub mod cambiata;
+#[path = "rules/line/broken_chord.rs"]
+pub mod broken_chord;
 #[path = "rules/line/chromatic_semitone.rs"]
 pub mod chromatic_semitone;
 #[path = "rules/cadence/closing_interval.rs"]
@@ -40,18 +40,34 @@ pub mod direct_unisons;
 pub mod double_neighbour;
 #[path = "rules/dissonance/escape_note.rs"]
 pub mod escape_note;
+#[path = "rules/line/figure_repeated.rs"]
+pub mod figure_repeated;
 #[path = "rules/dissonance/free_dissonance.rs"]
 pub mod free_dissonance;
+#[path = "rules/line/high_point_repeated.rs"]
+pub mod high_point_repeated;
+#[path = "rules/line/high_points_together.rs"]
+pub mod high_points_together;
+#[path = "rules/line/leap_across_bar.rs"]
+pub mod leap_across_bar;
 #[path = "rules/line/leap_beyond_octave.rs"]
 pub mod leap_beyond_octave;
+#[path = "rules/line/leap_from_accent.rs"]
+pub mod leap_from_accent;
+#[path = "rules/line/leap_unprepared.rs"]
+pub mod leap_unprepared;
 #[path = "rules/line/leap_unrecovered.rs"]
 pub mod leap_unrecovered;
 #[path = "rules/line/leaps_one_way.rs"]
 pub mod leaps_one_way;
 #[path = "rules/writing/licence_idle.rs"]
 pub mod licence_idle;
+#[path = "rules/line/melodic_minor.rs"]
+pub mod melodic_minor;
 #[path = "rules/dissonance/neighbour_note.rs"]
 pub mod neighbour_note;
+#[path = "rules/dissonance/nota_cambiata.rs"]
+pub mod nota_cambiata;
 #[path = "rules/writing/octave_doubt.rs"]
 pub mod octave_doubt;
 #[path = "rules/sonority/opening_interval.rs"]
@@ -66,8 +82,8 @@ pub mod parallel_octaves;
 pub mod parallel_unisons;
 #[path = "rules/dissonance/passing_note.rs"]
 pub mod passing_note;
-#[path = "rules/dissonance/pedal.rs"]
-pub mod pedal;
+#[path = "rules/dissonance/pedal_point.rs"]
+pub mod pedal_point;
 #[path = "rules/writing/reading.rs"]
 pub mod reading;
 #[path = "rules/line/repeated_note.rs"]
@@ -90,12 +106,20 @@ pub mod suspension_position;
 pub mod suspension_preparation;
 #[path = "rules/dissonance/suspension_resolution.rs"]
 pub mod suspension_resolution;
+#[path = "rules/range/tessitura.rs"]
+pub mod tessitura;
+#[path = "rules/line/too_many_leaps.rs"]
+pub mod too_many_leaps;
+#[path = "rules/line/tritone_outline.rs"]
+pub mod tritone_outline;
 #[path = "rules/motion/unequal_fifths.rs"]
 pub mod unequal_fifths;
 #[path = "rules/writing/unwritten.rs"]
 pub mod unwritten;
 #[path = "rules/writing/voice_silent.rs"]
 pub mod voice_silent;
+#[path = "rules/range/wide_range.rs"]
+pub mod wide_range;
 
 pub(crate) static FILES: &[File] = &[
     File {
@@ -115,12 +139,6 @@ pub(crate) static FILES: &[File] = &[
         stem: "appoggiatura",
         rule: &appoggiatura::RULE,
         text: include_str!("rules/dissonance/appoggiatura.rs"),
-    },
-    File {
-        family: "dissonance",
-        stem: "cambiata",
-        rule: &cambiata::RULE,
-        text: include_str!("rules/dissonance/cambiata.rs"),
     },
     File {
         family: "dissonance",
@@ -160,15 +178,21 @@ pub(crate) static FILES: &[File] = &[
     },
     File {
         family: "dissonance",
+        stem: "nota_cambiata",
+        rule: &nota_cambiata::RULE,
+        text: include_str!("rules/dissonance/nota_cambiata.rs"),
+    },
+    File {
+        family: "dissonance",
         stem: "passing_note",
         rule: &passing_note::RULE,
         text: include_str!("rules/dissonance/passing_note.rs"),
     },
     File {
         family: "dissonance",
-        stem: "pedal",
-        rule: &pedal::RULE,
-        text: include_str!("rules/dissonance/pedal.rs"),
+        stem: "pedal_point",
+        rule: &pedal_point::RULE,
+        text: include_str!("rules/dissonance/pedal_point.rs"),
     },
     File {
         family: "dissonance",
@@ -202,6 +226,12 @@ pub(crate) static FILES: &[File] = &[
     },
     File {
         family: "line",
+        stem: "broken_chord",
+        rule: &broken_chord::RULE,
+        text: include_str!("rules/line/broken_chord.rs"),
+    },
+    File {
+        family: "line",
         stem: "chromatic_semitone",
         rule: &chromatic_semitone::RULE,
         text: include_str!("rules/line/chromatic_semitone.rs"),
@@ -214,9 +244,45 @@ pub(crate) static FILES: &[File] = &[
     },
     File {
         family: "line",
+        stem: "figure_repeated",
+        rule: &figure_repeated::RULE,
+        text: include_str!("rules/line/figure_repeated.rs"),
+    },
+    File {
+        family: "line",
+        stem: "high_point_repeated",
+        rule: &high_point_repeated::RULE,
+        text: include_str!("rules/line/high_point_repeated.rs"),
+    },
+    File {
+        family: "line",
+        stem: "high_points_together",
+        rule: &high_points_together::RULE,
+        text: include_str!("rules/line/high_points_together.rs"),
+    },
+    File {
+        family: "line",
+        stem: "leap_across_bar",
+        rule: &leap_across_bar::RULE,
+        text: include_str!("rules/line/leap_across_bar.rs"),
+    },
+    File {
+        family: "line",
         stem: "leap_beyond_octave",
         rule: &leap_beyond_octave::RULE,
         text: include_str!("rules/line/leap_beyond_octave.rs"),
+    },
+    File {
+        family: "line",
+        stem: "leap_from_accent",
+        rule: &leap_from_accent::RULE,
+        text: include_str!("rules/line/leap_from_accent.rs"),
+    },
+    File {
+        family: "line",
+        stem: "leap_unprepared",
+        rule: &leap_unprepared::RULE,
+        text: include_str!("rules/line/leap_unprepared.rs"),
     },
     File {
         family: "line",
@@ -229,6 +295,12 @@ pub(crate) static FILES: &[File] = &[
         stem: "leaps_one_way",
         rule: &leaps_one_way::RULE,
         text: include_str!("rules/line/leaps_one_way.rs"),
+    },
+    File {
+        family: "line",
+        stem: "melodic_minor",
+        rule: &melodic_minor::RULE,
+        text: include_str!("rules/line/melodic_minor.rs"),
     },
     File {
         family: "line",
@@ -247,6 +319,18 @@ pub(crate) static FILES: &[File] = &[
         stem: "sixth_leap",
         rule: &sixth_leap::RULE,
         text: include_str!("rules/line/sixth_leap.rs"),
+    },
+    File {
+        family: "line",
+        stem: "too_many_leaps",
+        rule: &too_many_leaps::RULE,
+        text: include_str!("rules/line/too_many_leaps.rs"),
+    },
+    File {
+        family: "line",
+        stem: "tritone_outline",
+        rule: &tritone_outline::RULE,
+        text: include_str!("rules/line/tritone_outline.rs"),
     },
     File {
         family: "motion",
@@ -331,6 +415,18 @@ pub(crate) static FILES: &[File] = &[
         stem: "compass",
         rule: &compass::RULE,
         text: include_str!("rules/range/compass.rs"),
+    },
+    File {
+        family: "range",
+        stem: "tessitura",
+        rule: &tessitura::RULE,
+        text: include_str!("rules/range/tessitura.rs"),
+    },
+    File {
+        family: "range",
+        stem: "wide_range",
+        rule: &wide_range::RULE,
+        text: include_str!("rules/range/wide_range.rs"),
     },
     File {
         family: "sonority",

@@ -197,6 +197,13 @@ pub const BACH_CHORALES: Source = source(
     0,
     Known::Counted,
 );
+/// Counts in vocal polyphony of the 16th century.
+pub const RENAISSANCE_WORKS: Source = source(
+    "",
+    "314 works of 16th-century vocal polyphony (Palestrina, Asola, Certon, Marenzio and others)",
+    0,
+    Known::Counted,
+);
 /// Choral handbooks, as the rule research lists them.
 pub const CHORAL_HANDBOOKS: Source = source(
     "",

@@ -1,7 +1,10 @@
 //! One voice as a line.
 
+use std::collections::BTreeSet;
+
 use partwright_score::{Interval, Note, Pitch, Time, Voice};
 
+use super::shape::is_triad;
 use super::{Line, Piece, Sounding};
 
 /// Notes in a row of which the same can be said.
@@ -32,12 +35,12 @@ pub struct LineMove {
     pub interval: Interval,
     /// Nothing of the line comes right before: it starts with the note left.
     pub starts: bool,
-    size: i32,
-    quality: Quality,
+    pub(super) size: i32,
+    pub(super) quality: Quality,
 }
 
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
-enum Quality {
+pub(super) enum Quality {
     Plain,
     Augmented,
     Diminished,
@@ -74,6 +77,12 @@ impl LineMove {
         self.interval.0.semitones > 0
     }
 
+    /// `up` or `down`.
+    #[must_use]
+    pub fn way(&self) -> &'static str {
+        if self.rises() { "up" } else { "down" }
+    }
+
     /// The same pitch again.
     #[must_use]
     pub fn is_repeat(&self) -> bool {
@@ -95,13 +104,14 @@ impl LineMove {
     /// The pitch left and the pitch reached, as text.
     #[must_use]
     pub fn ends(&self) -> (String, String) {
-        let text = |note: &Note| {
-            note.sound
-                .pitch()
-                .map(|p| p.to_string())
-                .unwrap_or_default()
-        };
-        (text(&self.from), text(&self.to))
+        (LineMove::text(&self.from), LineMove::text(&self.to))
+    }
+
+    /// The pitch of a note as text.
+    #[must_use]
+    pub fn text(note: &Note) -> String {
+        let pitch = note.sound.pitch();
+        pitch.map(|p| p.to_string()).unwrap_or_default()
     }
 }
 
@@ -221,6 +231,13 @@ impl<'a> Line<'a> {
         }
     }
 
+    /// Two moves one way add up to a seventh, or to more than an octave.
+    #[must_use]
+    pub fn oversteps(first: &LineMove, second: &LineMove) -> bool {
+        let sum = first.size() + second.size();
+        sum == 6 || sum > 7
+    }
+
     /// Three notes (a move and the one after it) outline a triad, or divide an octave into a
     /// fourth and a fifth.
     #[must_use]
@@ -230,19 +247,8 @@ impl<'a> Line<'a> {
             return true;
         };
         let class = |p: Pitch| p.place().semitone.rem_euclid(12);
-        let mut classes = [class(a), class(b), class(c)];
-        classes.sort_unstable();
-        let [x, y, z] = classes;
-        if x == y || y == z {
-            return true;
-        }
-        let gaps = [y - x, z - y, 12 - (z - x)];
-        // Major, minor and diminished triads by their cycles of gaps.
-        let shapes = [[4, 3, 5], [3, 4, 5], [3, 3, 6]];
-        (0..3).any(|turn| {
-            let turned = [0, 1, 2].map(|i| gaps.get((i + turn) % 3).copied().unwrap_or(0));
-            shapes.contains(&turned)
-        })
+        let classes: BTreeSet<i32> = [a, b, c].map(class).into();
+        classes.len() < 3 || is_triad(&classes)
     }
 
     /// The runs of notes to which `say` gives the same answer; silence does not break a run.

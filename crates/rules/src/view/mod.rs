@@ -4,19 +4,23 @@
 
 mod account;
 mod close;
+mod degree;
 mod discord;
 mod line;
 mod pair;
 mod piece;
+mod shape;
 mod sounding;
 
 use partwright_analysis::{Analysis, Dissonance};
 use partwright_score::{Pair, PairStep, Score, Texture};
 
 pub use close::NotesOver;
+pub use degree::{MinorDegree, Tessitura};
 pub use line::{LineMove, Run};
 pub use pair::Direct;
 pub use piece::{Crossing, Passage};
+pub use shape::{HighPoint, Passing, Stretch};
 
 /// A score with its texture, and what was read in it.
 #[derive(Clone, Copy)]

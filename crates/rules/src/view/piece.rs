@@ -2,7 +2,7 @@
 
 use std::borrow::Cow;
 
-use partwright_score::{Pair, Time};
+use partwright_score::{Pair, Time, ZERO};
 
 use super::{Piece, Sounding};
 
@@ -108,6 +108,12 @@ impl<'a> Piece<'a> {
         let bar = self.score.bar_at(at).and_then(|i| self.score.bars.get(i))?;
         let metre = self.score.metres.get(bar.metre as usize)?;
         Some(metre.cell())
+    }
+
+    /// Where the first bar begins.
+    #[must_use]
+    pub fn start(self) -> Time {
+        self.score.bars.first().map_or(ZERO, |bar| bar.onset)
     }
 
     /// A moment lies between beats.

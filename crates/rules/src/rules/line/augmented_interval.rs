@@ -39,6 +39,22 @@
 //! B | D3 G2 |
 //! ```
 //!
+//! An augmented fourth inside a sequence:
+//!
+//! ```voices
+//! style chorale
+//!
+//! S | D5 G4 C5 F4 B4 E4 A4 |
+//! ```
+//!
+//! The figuration of an instrument, in open score writing:
+//!
+//! ```voices
+//! voice V violin
+//!
+//! V | C5 B4 F4 G4 |
+//! ```
+//!
 //! # What to do
 //!
 //! Fill the interval, turn it into its diminished complement, or change the sign of one note.
@@ -78,7 +94,11 @@ static ORDINARY: Case = Case {
 };
 
 fn check(line: &Line<'_>, found: &mut Found<'_>) {
-    for step in line.moves {
+    let strict = !matches!(found.style(), Style::Free | Style::Chorale);
+    let played = line.declared().is_some_and(|v| !v.kind.is_sung());
+    for (i, step) in line.moves.iter().enumerate() {
+        let excused = !strict && step.size() == 3 && line.is_in_sequence(i);
+        let figured = found.style() == Style::Free && played;
         let one_chord = || {
             let there = line.sounding_at(step);
             match found.style() {
@@ -87,7 +107,13 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
                 _ => false,
             }
         };
-        if line.is_given() || step.size() == 0 || !step.is_augmented() || one_chord() {
+        if line.is_given()
+            || step.size() == 0
+            || !step.is_augmented()
+            || excused
+            || figured
+            || one_chord()
+        {
             continue;
         }
         found.line(&ORDINARY, line, step, || {

@@ -118,13 +118,9 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
         let (step, before) = (line.moves.get(i)?, line.before(i)?);
         (step.is_leap() && before.is_leap() && step.goes_on_from(before)).then_some((before, step))
     };
-    for i in 0..line.moves.len() {
-        let Some((before, step)) = follows(i) else {
-            continue;
-        };
+    for (i, (before, step)) in (0..line.moves.len()).filter_map(|i| Some((i, follows(i)?))) {
         let third = i.checked_sub(1).and_then(follows);
-        let sum = before.size() + step.size();
-        let case = if sum == 6 || sum > 7 {
+        let case = if Line::oversteps(before, step) {
             &DISSONANT
         } else if let Some((first, _)) = third {
             let chord = Line::outlines_chord(before, step) && Line::outlines_chord(first, before);
@@ -138,7 +134,7 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
             continue;
         };
         found.line(case, line, step, || {
-            let way = if step.rises() { "up" } else { "down" };
+            let way = step.way();
             let notes = match third {
                 Some((first, _)) => format!("three times, {} to {}", first.ends().0, first.ends().1),
                 None => format!("twice, {}", before.ends().0),

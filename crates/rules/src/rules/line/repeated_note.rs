@@ -37,6 +37,11 @@
 //! # What to do
 //!
 //! Move to another note of the chord, or tie the notes where the species allows it.
+//!
+//! # Who holds what
+//!
+//! First species: no repetition (Butterfield), one (Open Music Theory), three notes in a row in
+//! the upper voice (Lehmann); Fux has 12 in ten figures. Set `in-a-row` to 1, 2 or 3.
 
 use crate::prelude::*;
 
@@ -44,12 +49,20 @@ use crate::prelude::*;
 pub const RULE: Rule = Rule {
     looks: Looks::Lines(check),
     cases: &[&THIRD, &QUICK, &FLORID],
-    numbers: &[],
+    numbers: &[&IN_A_ROW],
     sources: &[
         source::LEHMANN.at("lessons I and II"),
-        source::OPEN_MUSIC_THEORY.stricter("one repetition in first species"),
+        source::OPEN_MUSIC_THEORY.at("one repetition in first species"),
+        source::BUTTERFIELD.stricter("none in first species"),
         source::FUX_FIGURES.at("12 in ten first-species figures, none in second and third species"),
     ],
+};
+
+static IN_A_ROW: NumberOf = NumberOf {
+    name: "in-a-row",
+    means: "notes of one pitch in a row that first species allows",
+    value: 2,
+    bounds: (1, 20),
 };
 
 static THIRD: Case = Case {
@@ -86,6 +99,7 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
     let Some(species) = line.piece.species_of(line.voice, found.style()) else {
         return;
     };
+    let most = found.number(&IN_A_ROW);
     let mut times = 1;
     for step in line.moves {
         times = match (step.is_repeat(), step.starts) {
@@ -94,7 +108,10 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
             (true, false) => times + 1,
         };
         let case = match (times, species) {
-            (1, _) | (2, 1) | (_, 4) => continue,
+            (1, _) | (_, 4) => continue,
+            // Once for all the repetitions in a row.
+            (times, 1) if times != most + 1 => continue,
+            (times, 2..) if times > 2 => continue,
             (_, 1) => &THIRD,
             _ if line.parts_at(step) >= 3 => &THIRD,
             (_, 5) if step.to.length > step.from.length => continue,

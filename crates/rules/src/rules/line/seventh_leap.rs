@@ -22,6 +22,13 @@
 //!
 //! # Does not apply
 //!
+//! In the bass a step up may be taken an octave lower, in open score writing:
+//!
+//! ```voices
+//! S | A4 G4 |
+//! B | F3 G2 |
+//! ```
+//!
 //! Inside what may well be one chord:
 //!
 //! ```voices
@@ -41,7 +48,7 @@ use crate::prelude::*;
 /// The rule.
 pub const RULE: Rule = Rule {
     looks: Looks::Lines(check),
-    cases: &[&ORDINARY, &BASS],
+    cases: &[&ORDINARY, &BASS, &DISPLACED],
     numbers: &[],
     sources: &[
         source::LEHMANN.at("lesson I"),
@@ -69,12 +76,26 @@ static ORDINARY: Case = Case {
 
 static BASS: Case = Case {
     name: "bass",
-    when: "in the bass, where a step is taken in another octave",
+    when: "in the bass, rising",
     settings: &[
         weakness(
             Style::Free,
             "instruments take it more lightly (common practice)",
         ),
+        weakness(Style::Chorale, "43 in the basses of 370 chorales"),
+        fault(Style::Motet, "not among the intervals of the style"),
+        fault(
+            Style::Species1,
+            "not among the permitted intervals (Lehmann, lesson I)",
+        ),
+    ],
+};
+
+static DISPLACED: Case = Case {
+    name: "bass-step-displaced",
+    when: "in the bass, falling: a step up, taken an octave lower",
+    settings: &[
+        allow(Style::Free, "the step is heard (common practice)"),
         weakness(Style::Chorale, "43 in the basses of 370 chorales"),
         fault(Style::Motet, "not among the intervals of the style"),
         fault(
@@ -98,7 +119,11 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
         if line.is_given() || step.size() != 6 || !plain || one_chord() {
             continue;
         }
-        let case = if line.is_bass() { &BASS } else { &ORDINARY };
+        let case = match (line.is_bass(), step.rises()) {
+            (false, _) => &ORDINARY,
+            (true, true) => &BASS,
+            (true, false) => &DISPLACED,
+        };
         found.line(case, line, step, || {
             let (from, to) = step.ends();
             format!(

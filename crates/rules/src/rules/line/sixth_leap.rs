@@ -35,6 +35,11 @@
 //! # What to do
 //!
 //! Divide the leap, or take a fifth or an octave.
+//!
+//! # Who holds what
+//!
+//! The treatise forbids the falling minor sixth, and its figures 41, 42, 57 and 75 have it:
+//! hence a fault in first species, a weakness in the others (the case `minor-down`).
 
 use crate::prelude::*;
 
@@ -115,7 +120,7 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
         };
         found.line(case, line, step, || {
             let (from, to) = step.ends();
-            let way = if step.rises() { "up" } else { "down" };
+            let way = step.way();
             format!(
                 "Sixth leap: {} goes {way} a {} from {from} to {to}. Divide the leap, or take a fifth or an octave.",
                 line.piece.name(line.voice),

@@ -10,7 +10,7 @@
 //!
 //! S | E5 - F5 - | D5 - F5 - | E5 - - - |
 //! B | C3 - -  - | -  - -  - | -  - - - |
-//! //       ^ pedal (weakness): S and B
+//! //       ^ pedal point (weakness): S and B
 //! ```
 //!
 //! # Passes
@@ -70,7 +70,7 @@ fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
     let case = &ORDINARY;
     found.dissonance(case, discord, || {
         format!(
-            "Pedal: {}. Let the lowest voice move with the others.",
+            "Pedal point: {}. Let the lowest voice move with the others.",
             discord.words()
         )
     });

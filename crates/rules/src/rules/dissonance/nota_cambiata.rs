@@ -13,7 +13,7 @@
 //!
 //! S | A4 - G4 - | E4 - F4 - | G4 - - - |
 //! C | D4 - -  - | C4 - -  - | E4 - - - |
-//! //       ^ cambiata: S and C
+//! //       ^ nota cambiata: S and C
 //! ```
 //!
 //! Upward:
@@ -24,7 +24,7 @@
 //!
 //! S | D4 E4 G4 F4 |
 //! B | D3 -  B2 D3 |
-//! //     ^ cambiata: S and B
+//! //     ^ nota cambiata: S and B
 //! ```
 //!
 //! # Passes
@@ -122,7 +122,7 @@ fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
     };
     found.dissonance(case, discord, || {
         format!(
-            "Cambiata: {}. Let two steps back follow the third, or pass on by step.",
+            "Nota cambiata: {}. Let two steps back follow the third, or pass on by step.",
             discord.words()
         )
     });
