@@ -33,6 +33,8 @@ Parallel fifths: soprano and bass go from D5 over G3 to E5 over A3. Move one voi
 
 `parallel-fifths`, fault: the two lines fuse into one, and the ear loses a voice.
 
+Source: J. J. Fux, Gradus ad Parnassum (1725), Book II, the four rules of motion [as given in a workbook after A. Mann's translation, and in Grove].
+
 **E5** · soprano · bar 1, beat 2
 
 - alto C5: major third below; parallel, D5 over B4 to E5 over C5
@@ -252,5 +254,32 @@ fn a_hover_that_an_edit_overtakes_is_answered_all_the_same() {
         assert!(answer.get("error").is_none(), "{answer}");
     }
     assert!(document.hover_text(&mut client, "C4").starts_with("**C4**"));
+    client.goodbye();
+}
+
+#[test]
+fn a_dissonance_tells_its_figure_or_what_each_figure_misses() {
+    let mut client = Client::ready();
+    let text =
+        "style motet\nmetre 4/2\n\nS | C5 - - B4 | C5 - A4 - |\nB | A3 - D3 G3 | C3 - G3 - ||\n";
+    let document = open(&mut client, text);
+    let hover = document.hover_text(&mut client, "- B4");
+    assert!(
+        hover.contains(
+            "C5 in S makes a minor fourteenth with D3 in voice B, on a strong beat.\n\n\
+             - S has a suspension: struck in bar 1, beat 1, resolved in bar 1, beat 4"
+        ),
+        "{hover}"
+    );
+    let hover = document.hover_text(&mut client, "A4 -");
+    assert!(
+        hover.contains("Free dissonance: ") || hover.contains("Appoggiatura: "),
+        "{hover}"
+    );
+    assert!(
+        hover.contains("A4 is no passing note") && hover.contains(": nothing follows it"),
+        "{hover}"
+    );
+    assert!(hover.contains("Source: "), "{hover}");
     client.goodbye();
 }
