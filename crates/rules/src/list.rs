@@ -60,6 +60,8 @@ pub mod sixth_leap;
 pub mod spacing;
 #[path = "rules/species/species_rhythm.rs"]
 pub mod species_rhythm;
+#[path = "rules/species/syncopation.rs"]
+pub mod syncopation;
 #[path = "rules/motion/unequal_fifths.rs"]
 pub mod unequal_fifths;
 #[path = "rules/writing/unwritten.rs"]
@@ -229,6 +231,12 @@ pub(crate) static FILES: &[File] = &[
         stem: "species_rhythm",
         rule: &species_rhythm::RULE,
         text: include_str!("rules/species/species_rhythm.rs"),
+    },
+    File {
+        family: "species",
+        stem: "syncopation",
+        rule: &syncopation::RULE,
+        text: include_str!("rules/species/syncopation.rs"),
     },
     File {
         family: "writing",

@@ -6,15 +6,16 @@ mod close;
 mod line;
 mod pair;
 mod piece;
+mod rhythm;
 mod sounding;
 
 use partwright_analysis::Analysis;
 use partwright_score::{Pair, PairStep, Score, Texture};
 
-pub use close::NotesOver;
 pub use line::{LineMove, Run};
 pub use pair::Direct;
 pub use piece::{Crossing, Passage};
+pub use rhythm::{Minim, Over, Quick, Stroke};
 
 /// A score with its texture, and what was read in it.
 #[derive(Clone, Copy)]
