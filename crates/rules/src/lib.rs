@@ -21,8 +21,8 @@ pub use rule::{Case, FAMILIES, Looks, NumberOf, Rule, Severity};
 pub use source::Source;
 pub use style::{Number, Override, STYLES, Setting, Strictness, Style};
 pub use view::{
-    Crossing, Direct, Line, LineMove, Minim, Over, PairMove, Passage, Piece, Quick, Run, Sounding,
-    Stroke,
+    Crossing, Direct, LastMove, Line, LineMove, Minim, Over, PairMove, Passage, Piece, Quick, Run,
+    Sounding, Stroke,
 };
 
 /// What every rule file needs.
@@ -36,6 +36,6 @@ pub mod prelude {
     pub use crate::source::{self, Source};
     pub use crate::style::{Setting, Style, allow, fault, remark, weakness};
     pub use crate::view::{
-        Direct, Line, LineMove, Over, PairMove, Passage, Piece, Sounding, Stroke,
+        Direct, LastMove, Line, LineMove, Over, PairMove, Passage, Piece, Sounding, Stroke,
     };
 }

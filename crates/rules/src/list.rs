@@ -6,8 +6,12 @@ use crate::catalogue::File;
 pub mod all_one_way;
 #[path = "rules/line/augmented_interval.rs"]
 pub mod augmented_interval;
+#[path = "rules/species/cantus.rs"]
+pub mod cantus;
 #[path = "rules/line/chromatic_semitone.rs"]
 pub mod chromatic_semitone;
+#[path = "rules/cadence/closing_approach.rs"]
+pub mod closing_approach;
 #[path = "rules/cadence/closing_interval.rs"]
 pub mod closing_interval;
 #[path = "rules/range/compass.rs"]
@@ -46,6 +50,8 @@ pub mod parallel_fifths;
 pub mod parallel_octaves;
 #[path = "rules/motion/parallel_unisons.rs"]
 pub mod parallel_unisons;
+#[path = "rules/cadence/raised_seventh.rs"]
+pub mod raised_seventh;
 #[path = "rules/writing/reading.rs"]
 pub mod reading;
 #[path = "rules/line/repeated_note.rs"]
@@ -58,6 +64,8 @@ pub mod similar_leaps;
 pub mod sixth_leap;
 #[path = "rules/sonority/spacing.rs"]
 pub mod spacing;
+#[path = "rules/cadence/species_cadence.rs"]
+pub mod species_cadence;
 #[path = "rules/species/species_rhythm.rs"]
 pub mod species_rhythm;
 #[path = "rules/species/syncopation.rs"]
@@ -72,9 +80,27 @@ pub mod voice_silent;
 pub(crate) static FILES: &[File] = &[
     File {
         family: "cadence",
+        stem: "closing_approach",
+        rule: &closing_approach::RULE,
+        text: include_str!("rules/cadence/closing_approach.rs"),
+    },
+    File {
+        family: "cadence",
         stem: "closing_interval",
         rule: &closing_interval::RULE,
         text: include_str!("rules/cadence/closing_interval.rs"),
+    },
+    File {
+        family: "cadence",
+        stem: "raised_seventh",
+        rule: &raised_seventh::RULE,
+        text: include_str!("rules/cadence/raised_seventh.rs"),
+    },
+    File {
+        family: "cadence",
+        stem: "species_cadence",
+        rule: &species_cadence::RULE,
+        text: include_str!("rules/cadence/species_cadence.rs"),
     },
     File {
         family: "line",
@@ -225,6 +251,12 @@ pub(crate) static FILES: &[File] = &[
         stem: "spacing",
         rule: &spacing::RULE,
         text: include_str!("rules/sonority/spacing.rs"),
+    },
+    File {
+        family: "species",
+        stem: "cantus",
+        rule: &cantus::RULE,
+        text: include_str!("rules/species/cantus.rs"),
     },
     File {
         family: "species",

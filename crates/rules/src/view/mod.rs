@@ -3,6 +3,7 @@
 //! These views only read what `partwright_score` laid out, and put it into a musician's words.
 
 mod close;
+mod ending;
 mod line;
 mod pair;
 mod piece;
@@ -12,6 +13,7 @@ mod sounding;
 use partwright_analysis::Analysis;
 use partwright_score::{Pair, PairStep, Score, Texture};
 
+pub use ending::LastMove;
 pub use line::{LineMove, Run};
 pub use pair::Direct;
 pub use piece::{Crossing, Passage};

@@ -36,7 +36,7 @@
 //! voice C cantus
 //!
 //! S | F4 A4 D5 A4 | C5 A4 B4 C5 |
-//! //  ^^ species rhythm: S
+//! //  ^^ species rhythm (weakness): S
 //! C | D4 -  -  -  | F4 -  -  -  |
 //! ```
 //!
@@ -135,9 +135,9 @@ static NO_STEP: Case = Case {
     when: "third species: none of the first three quarters of a bar is left by step",
     settings: &[
         allow(Style::Free, "species only"),
-        fault(
+        weakness(
             Style::Species1,
-            "one of them goes by step (Lehmann, lesson IV; Open Music Theory)",
+            "one of them goes by step (Lehmann, lesson IV; Open Music Theory), but Fux leaps through four bars of 100",
         ),
     ],
 };
