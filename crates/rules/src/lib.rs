@@ -22,7 +22,7 @@ pub use source::Source;
 pub use style::{Number, Override, STYLES, Setting, Strictness, Style};
 pub use view::{
     Crossing, Direct, LastMove, Line, LineMove, Minim, Over, PairMove, Passage, Piece, Quick, Run,
-    Sounding, Stroke,
+    Sounding, Stroke, Value,
 };
 
 /// What every rule file needs.

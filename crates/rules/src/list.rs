@@ -4,6 +4,8 @@ use crate::catalogue::File;
 
 #[path = "rules/motion/all_one_way.rs"]
 pub mod all_one_way;
+#[path = "rules/range/ambitus.rs"]
+pub mod ambitus;
 #[path = "rules/line/augmented_interval.rs"]
 pub mod augmented_interval;
 #[path = "rules/species/cantus.rs"]
@@ -30,6 +32,12 @@ pub mod direct_fifths;
 pub mod direct_octaves;
 #[path = "rules/motion/direct_unisons.rs"]
 pub mod direct_unisons;
+#[path = "rules/species/eighths.rs"]
+pub mod eighths;
+#[path = "rules/species/florid_rhythm.rs"]
+pub mod florid_rhythm;
+#[path = "rules/line/foreign_accidental.rs"]
+pub mod foreign_accidental;
 #[path = "rules/line/leap_beyond_octave.rs"]
 pub mod leap_beyond_octave;
 #[path = "rules/line/leap_unrecovered.rs"]
@@ -50,6 +58,8 @@ pub mod parallel_fifths;
 pub mod parallel_octaves;
 #[path = "rules/motion/parallel_unisons.rs"]
 pub mod parallel_unisons;
+#[path = "rules/line/quarter_leaps.rs"]
+pub mod quarter_leaps;
 #[path = "rules/cadence/raised_seventh.rs"]
 pub mod raised_seventh;
 #[path = "rules/writing/reading.rs"]
@@ -74,6 +84,8 @@ pub mod syncopation;
 pub mod unequal_fifths;
 #[path = "rules/writing/unwritten.rs"]
 pub mod unwritten;
+#[path = "rules/line/vocal_rhythm.rs"]
+pub mod vocal_rhythm;
 #[path = "rules/writing/voice_silent.rs"]
 pub mod voice_silent;
 
@@ -122,6 +134,12 @@ pub(crate) static FILES: &[File] = &[
     },
     File {
         family: "line",
+        stem: "foreign_accidental",
+        rule: &foreign_accidental::RULE,
+        text: include_str!("rules/line/foreign_accidental.rs"),
+    },
+    File {
+        family: "line",
         stem: "leap_beyond_octave",
         rule: &leap_beyond_octave::RULE,
         text: include_str!("rules/line/leap_beyond_octave.rs"),
@@ -140,6 +158,12 @@ pub(crate) static FILES: &[File] = &[
     },
     File {
         family: "line",
+        stem: "quarter_leaps",
+        rule: &quarter_leaps::RULE,
+        text: include_str!("rules/line/quarter_leaps.rs"),
+    },
+    File {
+        family: "line",
         stem: "repeated_note",
         rule: &repeated_note::RULE,
         text: include_str!("rules/line/repeated_note.rs"),
@@ -155,6 +179,12 @@ pub(crate) static FILES: &[File] = &[
         stem: "sixth_leap",
         rule: &sixth_leap::RULE,
         text: include_str!("rules/line/sixth_leap.rs"),
+    },
+    File {
+        family: "line",
+        stem: "vocal_rhythm",
+        rule: &vocal_rhythm::RULE,
+        text: include_str!("rules/line/vocal_rhythm.rs"),
     },
     File {
         family: "motion",
@@ -236,6 +266,12 @@ pub(crate) static FILES: &[File] = &[
     },
     File {
         family: "range",
+        stem: "ambitus",
+        rule: &ambitus::RULE,
+        text: include_str!("rules/range/ambitus.rs"),
+    },
+    File {
+        family: "range",
         stem: "compass",
         rule: &compass::RULE,
         text: include_str!("rules/range/compass.rs"),
@@ -257,6 +293,18 @@ pub(crate) static FILES: &[File] = &[
         stem: "cantus",
         rule: &cantus::RULE,
         text: include_str!("rules/species/cantus.rs"),
+    },
+    File {
+        family: "species",
+        stem: "eighths",
+        rule: &eighths::RULE,
+        text: include_str!("rules/species/eighths.rs"),
+    },
+    File {
+        family: "species",
+        stem: "florid_rhythm",
+        rule: &florid_rhythm::RULE,
+        text: include_str!("rules/species/florid_rhythm.rs"),
     },
     File {
         family: "species",

@@ -9,6 +9,7 @@ mod pair;
 mod piece;
 mod rhythm;
 mod sounding;
+mod vocal;
 
 use partwright_analysis::Analysis;
 use partwright_score::{Pair, PairStep, Score, Texture};
@@ -18,6 +19,7 @@ pub use line::{LineMove, Run};
 pub use pair::Direct;
 pub use piece::{Crossing, Passage};
 pub use rhythm::{Minim, Over, Quick, Stroke};
+pub use vocal::Value;
 
 /// A score with its texture, and what was read in it.
 #[derive(Clone, Copy)]

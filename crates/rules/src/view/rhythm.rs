@@ -44,6 +44,19 @@ impl Stroke {
         *self.beyond.numer() > 0
     }
 
+    /// It lasts on for one part of so many.
+    #[must_use]
+    pub fn lasts_on(&self, part: i64) -> bool {
+        self.beyond == Time::new(1, part)
+    }
+
+    /// It begins on the second quarter, and lasts over the middle.
+    #[must_use]
+    pub fn is_quarter_held(&self) -> bool {
+        let (quarter, middle) = (Time::new(1, 4), Time::new(1, 2));
+        self.at == quarter && self.at + self.share > middle
+    }
+
     /// A rest of one part of so many.
     #[must_use]
     pub fn is_rest_of(&self, part: i64) -> bool {
@@ -80,6 +93,12 @@ impl Over {
     #[must_use]
     pub fn is_one_whole(&self) -> bool {
         matches!(self.strokes[..], [only] if only.is_plain(1))
+    }
+
+    /// When a note or rest of it begins.
+    #[must_use]
+    pub fn moment(&self, stroke: &Stroke) -> Time {
+        self.from + stroke.at * (self.until - self.from)
     }
 
     /// Nothing but rest.
