@@ -197,6 +197,13 @@ pub const BACH_CHORALES: Source = source(
     0,
     Known::Counted,
 );
+/// Counts in vocal music of the 16th century.
+pub const VOCAL_WORKS: Source = source(
+    "",
+    "314 vocal works of the 16th century, Palestrina and Marenzio among them",
+    0,
+    Known::Counted,
+);
 /// Choral handbooks, as the rule research lists them.
 pub const CHORAL_HANDBOOKS: Source = source(
     "",

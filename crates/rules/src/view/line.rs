@@ -189,6 +189,12 @@ impl<'a> Line<'a> {
         self.voice == 0
     }
 
+    /// The voice is declared a tenor.
+    #[must_use]
+    pub fn is_tenor(&self) -> bool {
+        self.declared().is_some_and(|v| v.kind.name == "tenor")
+    }
+
     /// The number of independent voices that sound where a move arrives.
     #[must_use]
     pub fn parts_at(&self, step: &LineMove) -> usize {

@@ -252,10 +252,14 @@ impl Piece<'_> {
             let bar = self.score.bars.get(self.score.bar_at(at)?)?;
             let metre = self.score.metres.get(bar.metre as usize)?;
             let half = Time::new(1, 2);
+            // A bar that does not fill its metre may be in a proportion of its own.
+            if metre.bar_length() != Some(bar.length) {
+                return None;
+            }
             if metre.is_free() || metre.unit() < half || metre.bar_length()? < half * 2 {
                 return None;
             }
-            (bar.onset - bar.lead, half)
+            (bar.onset, half)
         };
         let count = ((at - start) / length).floor();
         Some(Minim {

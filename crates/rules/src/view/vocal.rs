@@ -68,13 +68,13 @@ impl Value {
     }
 
     /// It crosses one bar line, and the part before it is neither as long as the part after it
-    /// nor twice as long.
+    /// nor twice as long. Notes of a breve and more are written as one, whatever the bars say.
     #[must_use]
     pub fn is_tied_short_to_long(&self) -> bool {
         let Some((before, after)) = self.parts else {
             return false;
         };
-        before != after && before != after * 2
+        self.length < part(4, 1) && before != after && before != after * 2
     }
 }
 

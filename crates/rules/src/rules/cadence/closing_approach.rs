@@ -24,6 +24,20 @@
 //! T | D4 D4 A3 D4 ||
 //! ```
 //!
+//! In three parts, where no two voices step:
+//!
+//! ```voices
+//! style species-1
+//! voice S
+//! voice C cantus
+//! voice B
+//!
+//! S | F4 A4 A4 F#4 ||
+//! //           ^^^ closing approach: S and C and B
+//! C | D4 F4 E4 D4 ||
+//! B | D3 D3 A2 D3 ||
+//! ```
+//!
 //! # Passes
 //!
 //! ```voices
@@ -119,17 +133,19 @@ fn check(piece: &Piece<'_>, found: &mut Found<'_>) {
     if moves.iter().any(LastMove::steps_up) && moves.iter().any(LastMove::steps_down) {
         return;
     }
-    let (case, who) = match voices[..] {
-        [upper, lower] => {
-            let who = format!("{} and {}", piece.name(upper), piece.name(lower));
-            (&TWO_PARTS, format!("{who} do not both step"))
-        }
-        _ => {
-            let who = voices.first().map(|&v| piece.name(v)).unwrap_or_default();
-            (&MORE_PARTS, format!("no two voices from {who} down step"))
-        }
+    let names: Vec<_> = voices.iter().map(|&voice| piece.name(voice)).collect();
+    let (case, what) = if voices.len() == 2 {
+        (&TWO_PARTS, "do not step to the final from either side")
+    } else {
+        (
+            &MORE_PARTS,
+            "have no two voices that step to the final from either side",
+        )
     };
     found.sonority(case, &voices, close.onset(), || {
-        format!("Closing approach: {who} to the final from either side. Let one step down to it and another up.")
+        format!(
+            "Closing approach: {} {what}. Let one step down to it and another up.",
+            names.join(" and ")
+        )
     });
 }

@@ -27,6 +27,19 @@
 //! C | D4 - | F4 -  | E4 -   | D4 - ||
 //! ```
 //!
+//! In fifth species the suspension is advice:
+//!
+//! ```voices
+//! style species-5
+//! metre 4/4
+//! voice S
+//! voice C cantus
+//!
+//! S | _ _ A4 - | D5 C5 A4 - | A4 B4 C#5 - | D5 - - - ||
+//! //                          ^^ species cadence (weakness): S and C
+//! C | D4 - - - | F4 -  -  - | E4 -  -  -  | D4 - - - ||
+//! ```
+//!
 //! # Passes
 //!
 //! Seven, six, eight:

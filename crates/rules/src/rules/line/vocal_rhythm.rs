@@ -92,7 +92,7 @@ static ISOLATED: Case = Case {
 
 static TIE: Case = Case {
     name: "tie",
-    when: "a note tied over the bar line in another proportion than two to one or one to one, the longer part first",
+    when: "a note shorter than a breve, tied over the bar line in another proportion than two to one or one to one, the longer part first",
     settings: &[
         allow(Style::Free, "any rhythm"),
         fault(

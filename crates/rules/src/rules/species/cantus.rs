@@ -24,6 +24,29 @@
 //! //           ^^ cantus (weakness): C
 //! ```
 //!
+//! Beginning elsewhere, and closing by leap:
+//!
+//! ```voices
+//! style species-1
+//! voice S
+//! voice C cantus
+//!
+//! S | A4 F4 G4 A4 B4 C5 B4 C5 ||
+//! C | D4 D4 C4 F4 D4 E4 D4 C4 ||
+//! //  ^^ cantus (weakness): C
+//! //     ^^ cantus (weakness): C
+//! ```
+//!
+//! ```voices
+//! style species-1
+//! voice S
+//! voice C cantus
+//!
+//! S | E4 F4 E4 F4 B4 C5 D5 C5 ||
+//! C | C4 D4 C4 A3 G3 C4 G3 C4 ||
+//! //                    ^^ cantus (weakness): C
+//! ```
+//!
 //! # Passes
 //!
 //! ```voices

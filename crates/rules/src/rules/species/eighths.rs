@@ -69,6 +69,7 @@ pub const RULE: Rule = Rule {
         source::FUX_FIGURES
             .at("five rhythms with eighths, all in pairs on the second or fourth quarter"),
         source::JEPPESEN,
+        source::VOCAL_WORKS.at("none otherwise in 1,016 bars of Palestrina; madrigals of the next age are full of them"),
     ],
 };
 
@@ -103,24 +104,19 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
     let name = line.piece.name(line.voice);
     for quick in line.quick_notes(strict) {
         let (case, what) = if quick.notes != 2 || !quick.is_in_place {
-            (
-                &PLACE,
-                "does not stand as a pair in the second half of a beat",
-            )
+            (&PLACE, "not a pair in the second half of a beat")
         } else if !quick.is_by_step {
-            (&LEAP, "leaps")
+            (&LEAP, "a pair that does not go by step")
         } else {
             continue;
         };
         found.passage(case, &[line.voice], (quick.from, quick.until), || {
-            let notes = if quick.notes == 1 {
-                "one eighth".to_owned()
-            } else {
-                format!("{} eighths", quick.notes)
+            let notes = match quick.notes {
+                1 => "one eighth".to_owned(),
+                2 => "two eighths".to_owned(),
+                more => format!("{more} eighths"),
             };
-            format!(
-                "Eighths: {name} has {notes} here that {what}. Write two by step after a quarter."
-            )
+            format!("Eighths: {name} has {notes} here, {what}. Write two by step after a quarter.")
         });
     }
 }

@@ -40,6 +40,49 @@
 //! C | D4 -  -  -  | F4 -  -  -  |
 //! ```
 //!
+//! The last note is as long as that of the cantus:
+//!
+//! ```voices
+//! style species-2
+//! metre 2/2
+//! voice S
+//! voice C cantus
+//!
+//! S | D5 A4 | B4 C#5 | D5 A4 ||
+//! //                   ^^ species rhythm: S
+//! C | D4 -  | E4 -   | D4 -  ||
+//! ```
+//!
+//! A voice that accompanies should not stir:
+//!
+//! ```voices
+//! style species-2
+//! metre 2/2
+//! voice S
+//! voice C cantus
+//! voice B
+//!
+//! S | _ A4 | D5 A4 | C5 A4 | B4 C#5 | D5 - ||
+//! C | D4 - | F4 -  | F4 -  | E4 -   | D4 - ||
+//! B | D3 - | D3 F3 | A3 -  | G3 -   | D3 - ||
+//! //         ^^ species rhythm (weakness): B
+//! ```
+//!
+//! In third species Fux once closes from a whole note, in four parts:
+//!
+//! ```voices
+//! style species-3
+//! metre 4/4
+//! voice S species 3
+//! voice A species 1
+//! voice C cantus
+//!
+//! S | A4 G4 F4 A4 | E4 - - - | F4 - - - ||
+//! //                ^^ species rhythm (weakness): S
+//! A | F4 -  -  -  | C#4 - - - | D4 - - - ||
+//! C | D3 -  -  -  | E3 - - - | D3 - - - ||
+//! ```
+//!
 //! # Passes
 //!
 //! ```voices
