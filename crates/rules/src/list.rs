@@ -4,8 +4,6 @@ use crate::catalogue::File;
 
 #[path = "rules/motion/all_one_way.rs"]
 pub mod all_one_way;
-#[path = "rules/range/ambitus.rs"]
-pub mod ambitus;
 #[path = "rules/line/augmented_interval.rs"]
 pub mod augmented_interval;
 #[path = "rules/species/cantus.rs"]
@@ -32,8 +30,8 @@ pub mod direct_fifths;
 pub mod direct_octaves;
 #[path = "rules/motion/direct_unisons.rs"]
 pub mod direct_unisons;
-#[path = "rules/species/eighths.rs"]
-pub mod eighths;
+#[path = "rules/species/eighth_notes.rs"]
+pub mod eighth_notes;
 #[path = "rules/species/florid_rhythm.rs"]
 pub mod florid_rhythm;
 #[path = "rules/line/foreign_accidental.rs"]
@@ -46,6 +44,8 @@ pub mod leap_unrecovered;
 pub mod leaps_one_way;
 #[path = "rules/writing/licence_idle.rs"]
 pub mod licence_idle;
+#[path = "rules/range/mode_ambitus.rs"]
+pub mod mode_ambitus;
 #[path = "rules/writing/octave_doubt.rs"]
 pub mod octave_doubt;
 #[path = "rules/sonority/opening_interval.rs"]
@@ -266,15 +266,15 @@ pub(crate) static FILES: &[File] = &[
     },
     File {
         family: "range",
-        stem: "ambitus",
-        rule: &ambitus::RULE,
-        text: include_str!("rules/range/ambitus.rs"),
-    },
-    File {
-        family: "range",
         stem: "compass",
         rule: &compass::RULE,
         text: include_str!("rules/range/compass.rs"),
+    },
+    File {
+        family: "range",
+        stem: "mode_ambitus",
+        rule: &mode_ambitus::RULE,
+        text: include_str!("rules/range/mode_ambitus.rs"),
     },
     File {
         family: "sonority",
@@ -296,9 +296,9 @@ pub(crate) static FILES: &[File] = &[
     },
     File {
         family: "species",
-        stem: "eighths",
-        rule: &eighths::RULE,
-        text: include_str!("rules/species/eighths.rs"),
+        stem: "eighth_notes",
+        rule: &eighth_notes::RULE,
+        text: include_str!("rules/species/eighth_notes.rs"),
     },
     File {
         family: "species",

@@ -86,8 +86,9 @@ impl<'a> Piece<'a> {
             && self.score.voices.len() >= 3
             && self.cantus_or_slowest().is_some_and(|cantus| {
                 let over = self.over_cantus(cantus, voice);
-                let whole = over.iter().filter(|over| over.is_one_whole()).count();
-                whole * 2 > over.len()
+                let known = over.iter().filter(|o| !o.is_unknown && !o.is_silent());
+                let whole = known.clone().filter(|o| o.is_one_whole()).count();
+                whole * 2 > known.count()
             })
     }
 

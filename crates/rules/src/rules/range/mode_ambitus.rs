@@ -10,7 +10,7 @@
 //! key D dorian
 //!
 //! T | D3 F3 A3 B3 C4 D4 E4 F4 E4 A3 D3 |
-//! //  ^^ ambitus (remark): T
+//! //  ^^ mode ambitus (remark): T
 //! ```
 //!
 //! # Passes
@@ -84,7 +84,7 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
     }
     found.passage(&ORDINARY, &[line.voice], (whole.from, whole.until), || {
         format!(
-            "Ambitus: {} goes from {} to {}, beyond the octave of its mode. Keep it authentic or plagal.",
+            "Mode ambitus: {} goes from {} to {}, beyond the octave of its mode. Keep it authentic or plagal.",
             line.piece.name(line.voice),
             whole.lowest,
             whole.highest

@@ -12,7 +12,7 @@
 //! voice C cantus
 //!
 //! S | A4 G4 F4 - G4 - A4 - |
-//! //  ^^ eighths: S
+//! //  ^^ eighth notes: S
 //! C | D4 - - - - - - - |
 //! ```
 //!
@@ -25,7 +25,7 @@
 //! voice C cantus
 //!
 //! S | A4 - F4 A4 G4 - F4 - |
-//! //       ^^ eighths: S
+//! //       ^^ eighth notes: S
 //! C | D4 - -  -  -  - -  - |
 //! ```
 //!
@@ -116,7 +116,9 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
                 2 => "two eighths".to_owned(),
                 more => format!("{more} eighths"),
             };
-            format!("Eighths: {name} has {notes} here, {what}. Write two by step after a quarter.")
+            format!(
+                "Eighth notes: {name} has {notes} here, {what}. Write two by step after a quarter."
+            )
         });
     }
 }
