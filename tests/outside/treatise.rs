@@ -6,6 +6,7 @@
 
 use partwright_check::{Severity, Wishes, check_score};
 use partwright_rules::Style;
+use partwright_score::{Pitch, Sound};
 
 use crate::scores::{Piece, set};
 
@@ -117,4 +118,60 @@ fn first_species_in_two_parts_is_clean_but_for_one_bass_line() {
         .collect();
     assert_eq!(faults, ["leaps-one-way"], "figure 21, bar 8: see the list");
     println!("outside: {} first-species figures in two parts", two.len());
+}
+
+/// The rules that find a fault in a figure as it stands.
+fn faults(piece: &Piece, style: Style) -> Vec<&'static str> {
+    let findings = check_score(&piece.score, &Wishes::of_style(style)).into_iter();
+    let faults = findings.filter(|finding| finding.severity == Severity::Fault);
+    faults.map(|finding| finding.rule).collect()
+}
+
+#[test]
+fn leading_notes_made_flat_are_found() {
+    let Some(figures) = figures() else { return };
+    let mut planted = 0;
+    for (mut piece, style) in figures {
+        let mut raised = false;
+        for voice in piece.score.voices.iter_mut().filter(|v| !v.cantus) {
+            let [.., from, to] = &mut voice.notes[..] else {
+                continue;
+            };
+            let (Some(seventh), Some(last)) = (from.sound.pitch(), to.sound.pitch()) else {
+                continue;
+            };
+            if seventh.sign == 1 && seventh.step + 1 == last.step {
+                let sign = 0;
+                from.sound = Sound::Pitch(Pitch { sign, ..seventh });
+                raised = true;
+            }
+        }
+        if raised {
+            planted += 1;
+            let found = faults(&piece, style);
+            assert!(found.contains(&"raised-seventh"), "{}: {found:?}", piece.id);
+        }
+    }
+    assert_eq!(planted, 37);
+}
+
+#[test]
+fn last_notes_cut_in_two_are_found() {
+    let Some(figures) = figures() else { return };
+    for (mut piece, style) in figures {
+        for voice in piece.score.voices.iter_mut().filter(|v| !v.cantus) {
+            let last = voice.notes.last_mut().unwrap();
+            last.length /= 2;
+            let mut second = *last;
+            second.onset = last.end();
+            voice.notes.push(second);
+        }
+        let found = faults(&piece, style);
+        assert!(found.contains(&"species-rhythm"), "{}: {found:?}", piece.id);
+        assert!(
+            !found.contains(&"closing-approach"),
+            "{}: {found:?}",
+            piece.id
+        );
+    }
 }

@@ -11,7 +11,7 @@ use crate::style::Style;
 pub struct LastMove {
     /// The voice.
     pub voice: usize,
-    /// Its move; it arrives where the last sonority begins.
+    /// Its move; it arrives where the last chord begins.
     pub step: LineMove,
 }
 
@@ -50,17 +50,31 @@ impl<'a> Piece<'a> {
     /// The moves with which voices come to the final at the close.
     #[must_use]
     pub fn moves_to_final(self, close: Sounding<'a>) -> Vec<LastMove> {
+        let arrival = self.arrival_of(close);
         let voices = self.texture.sounding(close.index);
         voices
             .filter(|&voice| self.has_final(close, voice) == Some(true))
             .filter_map(|voice| {
-                let moves = self.line_moves(voice);
-                let step = moves
-                    .into_iter()
-                    .rfind(|step| step.to.onset == close.onset())?;
-                Some(LastMove { voice, step })
+                let moves = self.line_moves(voice).into_iter();
+                // A last note struck again has been reached before.
+                let step = moves.rev().find(|step| !step.is_repeat())?;
+                (step.to.onset == arrival).then_some(LastMove { voice, step })
             })
             .collect()
+    }
+
+    /// When the notes of a sonority were all there: those only struck again have come before.
+    fn arrival_of(self, close: Sounding<'a>) -> Time {
+        let stays = |index: usize| {
+            let mut moved = self.texture.sounding(index).map(|voice| {
+                self.texture
+                    .displacement(self.score, index, voice)
+                    .map(|gap| (gap.steps, gap.semitones))
+            });
+            index > 0 && moved.all(|gap| gap == Some((0, 0)))
+        };
+        let first = (0..=close.index).rev().find(|&index| !stays(index));
+        first.map_or(close.onset(), |index| self.sounding(index).onset())
     }
 
     /// The moves that leave a leading note before the last bar but one, do not go up to the final,
