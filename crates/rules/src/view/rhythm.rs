@@ -132,6 +132,23 @@ impl Over {
         moves.iter().filter(inside).any(|m| m.size() == 1)
     }
 
+    /// Two equal notes, or three in triple time, struck anew; half a rest first where the voice
+    /// enters, one whole note in the last bar but one. In three parts and more that bar may hold
+    /// a suspension.
+    #[must_use]
+    pub fn is_second_species(&self, many_parts: bool) -> bool {
+        let last_but_one = self.to_close == Some(2);
+        let may_tie_out = many_parts && self.to_close == Some(3);
+        let count = self.strokes.len();
+        let equal = (count == 2 && self.is_shared_by(2))
+            || (count == 3 && self.is_triple && self.is_shared_by(3));
+        let rests = self.strokes.iter().filter(|stroke| !stroke.sounds).count();
+        let rests_well = rests == 0 || (rests == 1 && self.is_entry && self.starts_with_a_rest());
+        let tied_well = (!self.is_tied_in() || (many_parts && last_but_one))
+            && (!self.is_tied_out() || may_tie_out);
+        (equal && rests_well && tied_well) || (last_but_one && self.is_one_whole())
+    }
+
     /// One whole note at the end of what is written, where no `||` stands yet: it may be the last.
     #[must_use]
     pub fn may_close(&self) -> bool {

@@ -109,69 +109,36 @@ static WIDEST: NumberOf = NumberOf {
     bounds: (1, 99),
 };
 
-const fn advised(name: &'static str, when: &'static str, settings: &'static [Setting]) -> Case {
+static ADVICE: &[Setting] = &[
+    allow(Style::Free, "species only"),
+    weakness(
+        Style::Species1,
+        "so are the seven of Fux, and so Open Music Theory advises",
+    ),
+];
+
+const fn advised(name: &'static str, when: &'static str) -> Case {
     Case {
         name,
         when,
-        settings,
+        settings: ADVICE,
     }
 }
 
-static LENGTH: Case = advised(
-    "length",
-    "fewer than 8 notes, or more than 16",
-    &[
-        allow(Style::Free, "species only"),
-        weakness(Style::Species1, "8 to 16 notes (Open Music Theory)"),
-    ],
-);
-
-static FINAL: Case = advised(
-    "final",
-    "it does not begin on the final with which it ends",
-    &[
-        allow(Style::Free, "species only"),
-        weakness(
-            Style::Species1,
-            "all seven of Fux begin and end on the final",
-        ),
-    ],
-);
-
+static LENGTH: Case = advised("length", "fewer than 8 notes, or more than 16");
+static FINAL: Case = advised("final", "it does not begin on the final with which it ends");
 static LAST_STEP: Case = advised(
     "last-step",
-    "it does not come to its last note by step, from the second degree or seldom the seventh",
-    &[
-        allow(Style::Free, "species only"),
-        weakness(Style::Species1, "by step (Open Music Theory)"),
-    ],
+    "it does not step to its last note, from the second degree or seldom the seventh",
 );
-
 static LEAP: Case = advised(
     "leap",
     "a leap beyond a fifth, but for a minor sixth up and an octave",
-    &[
-        allow(Style::Free, "species only"),
-        weakness(Style::Species1, "small leaps (Open Music Theory)"),
-    ],
 );
-
-static REPEAT: Case = advised(
-    "repeat",
-    "a note struck again at once",
-    &[
-        allow(Style::Free, "species only"),
-        weakness(Style::Species1, "none (Open Music Theory)"),
-    ],
-);
-
+static REPEAT: Case = advised("repeat", "a note struck again at once");
 static COMPASS: Case = advised(
     "compass",
     "more than a tenth from its lowest note to its highest",
-    &[
-        allow(Style::Free, "species only"),
-        weakness(Style::Species1, "a tenth at most (Open Music Theory)"),
-    ],
 );
 
 fn check(line: &Line<'_>, found: &mut Found<'_>) {

@@ -247,24 +247,12 @@ fn missed(keeps: bool, case: &'static Case, wants: &'static str) -> Missed {
 }
 
 fn second(over: &Over, many_parts: bool) -> Missed {
-    // In three parts and more the last bar but one may hold a suspension.
-    let may_tie_in = many_parts && over.to_close == Some(2);
-    let may_tie_out = many_parts && over.to_close == Some(3);
-    let count = over.strokes.len();
-    let equal = (count == 2 && over.is_shared_by(2))
-        || (count == 3 && over.is_triple && over.is_shared_by(3));
-    let rests = over.strokes.iter().filter(|stroke| !stroke.sounds).count();
-    let keeps = equal
-        && (!over.is_tied_in() || may_tie_in)
-        && (!over.is_tied_out() || may_tie_out)
-        && (rests == 0 || (rests == 1 && over.is_entry && over.starts_with_a_rest()));
     let wants = if over.is_triple {
         "two or three equal notes, struck anew"
     } else {
         "two equal notes, struck anew"
     };
-    let closes_whole = over.to_close == Some(2) && over.is_one_whole();
-    missed(keeps || closes_whole, &ORDINARY, wants)
+    missed(over.is_second_species(many_parts), &ORDINARY, wants)
 }
 
 fn third(over: &Over, many_parts: bool, by_step: bool) -> Missed {
