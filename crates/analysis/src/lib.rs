@@ -6,10 +6,12 @@
 
 pub mod consonance;
 pub mod figures;
+pub mod mode;
 
 use partwright_score::{Score, Texture};
 
 pub use figures::{Dissonance, Figure, Reading};
+pub use mode::Final;
 
 /// All that was read, computed once for all rules.
 #[derive(Clone, Debug, Default)]

@@ -21,8 +21,8 @@ pub use rule::{Case, FAMILIES, Looks, NumberOf, Rule, Severity};
 pub use source::Source;
 pub use style::{Number, Override, STYLES, Setting, Strictness, Style};
 pub use view::{
-    Crossing, Direct, Discord, HighPoint, Line, LineMove, MinorDegree, NotesOver, PairMove,
-    Passage, Passing, Piece, Run, Sounding, Stretch, Tessitura,
+    Crossing, Direct, Discord, HighPoint, LastMove, Line, LineMove, Minim, MinorDegree, Over,
+    PairMove, Passage, Passing, Piece, Quick, Run, Sounding, Stretch, Stroke, Tessitura, Value,
 };
 
 /// What every rule file needs.
@@ -38,6 +38,7 @@ pub mod prelude {
     pub use crate::source::{self, Source};
     pub use crate::style::{Setting, Style, allow, fault, remark, weakness};
     pub use crate::view::{
-        Direct, Discord, Line, LineMove, MinorDegree, NotesOver, PairMove, Passage, Piece, Sounding,
+        Direct, Discord, LastMove, Line, LineMove, MinorDegree, Over, PairMove, Passage, Piece,
+        Sounding, Stroke,
     };
 }

@@ -12,8 +12,12 @@ pub mod appoggiatura;
 pub mod augmented_interval;
 #[path = "rules/line/broken_chord.rs"]
 pub mod broken_chord;
+#[path = "rules/species/cantus.rs"]
+pub mod cantus;
 #[path = "rules/line/chromatic_semitone.rs"]
 pub mod chromatic_semitone;
+#[path = "rules/cadence/closing_approach.rs"]
+pub mod closing_approach;
 #[path = "rules/cadence/closing_interval.rs"]
 pub mod closing_interval;
 #[path = "rules/range/compass.rs"]
@@ -38,10 +42,16 @@ pub mod direct_octaves;
 pub mod direct_unisons;
 #[path = "rules/dissonance/double_neighbour.rs"]
 pub mod double_neighbour;
+#[path = "rules/species/eighth_notes.rs"]
+pub mod eighth_notes;
 #[path = "rules/dissonance/escape_note.rs"]
 pub mod escape_note;
 #[path = "rules/line/figure_repeated.rs"]
 pub mod figure_repeated;
+#[path = "rules/species/florid_rhythm.rs"]
+pub mod florid_rhythm;
+#[path = "rules/line/foreign_accidental.rs"]
+pub mod foreign_accidental;
 #[path = "rules/dissonance/free_dissonance.rs"]
 pub mod free_dissonance;
 #[path = "rules/line/high_point_repeated.rs"]
@@ -64,6 +74,8 @@ pub mod leaps_one_way;
 pub mod licence_idle;
 #[path = "rules/line/melodic_minor.rs"]
 pub mod melodic_minor;
+#[path = "rules/range/mode_ambitus.rs"]
+pub mod mode_ambitus;
 #[path = "rules/dissonance/neighbour_note.rs"]
 pub mod neighbour_note;
 #[path = "rules/dissonance/nota_cambiata.rs"]
@@ -84,6 +96,10 @@ pub mod parallel_unisons;
 pub mod passing_note;
 #[path = "rules/dissonance/pedal_point.rs"]
 pub mod pedal_point;
+#[path = "rules/line/quarter_leaps.rs"]
+pub mod quarter_leaps;
+#[path = "rules/cadence/raised_seventh.rs"]
+pub mod raised_seventh;
 #[path = "rules/writing/reading.rs"]
 pub mod reading;
 #[path = "rules/line/repeated_note.rs"]
@@ -98,6 +114,8 @@ pub mod similar_leaps;
 pub mod sixth_leap;
 #[path = "rules/sonority/spacing.rs"]
 pub mod spacing;
+#[path = "rules/cadence/species_cadence.rs"]
+pub mod species_cadence;
 #[path = "rules/species/species_rhythm.rs"]
 pub mod species_rhythm;
 #[path = "rules/dissonance/suspension_position.rs"]
@@ -106,6 +124,8 @@ pub mod suspension_position;
 pub mod suspension_preparation;
 #[path = "rules/dissonance/suspension_resolution.rs"]
 pub mod suspension_resolution;
+#[path = "rules/species/syncopation.rs"]
+pub mod syncopation;
 #[path = "rules/range/tessitura.rs"]
 pub mod tessitura;
 #[path = "rules/line/too_many_leaps.rs"]
@@ -116,6 +136,8 @@ pub mod tritone_outline;
 pub mod unequal_fifths;
 #[path = "rules/writing/unwritten.rs"]
 pub mod unwritten;
+#[path = "rules/line/vocal_rhythm.rs"]
+pub mod vocal_rhythm;
 #[path = "rules/writing/voice_silent.rs"]
 pub mod voice_silent;
 #[path = "rules/range/wide_range.rs"]
@@ -124,9 +146,27 @@ pub mod wide_range;
 pub(crate) static FILES: &[File] = &[
     File {
         family: "cadence",
+        stem: "closing_approach",
+        rule: &closing_approach::RULE,
+        text: include_str!("rules/cadence/closing_approach.rs"),
+    },
+    File {
+        family: "cadence",
         stem: "closing_interval",
         rule: &closing_interval::RULE,
         text: include_str!("rules/cadence/closing_interval.rs"),
+    },
+    File {
+        family: "cadence",
+        stem: "raised_seventh",
+        rule: &raised_seventh::RULE,
+        text: include_str!("rules/cadence/raised_seventh.rs"),
+    },
+    File {
+        family: "cadence",
+        stem: "species_cadence",
+        rule: &species_cadence::RULE,
+        text: include_str!("rules/cadence/species_cadence.rs"),
     },
     File {
         family: "dissonance",
@@ -250,6 +290,12 @@ pub(crate) static FILES: &[File] = &[
     },
     File {
         family: "line",
+        stem: "foreign_accidental",
+        rule: &foreign_accidental::RULE,
+        text: include_str!("rules/line/foreign_accidental.rs"),
+    },
+    File {
+        family: "line",
         stem: "high_point_repeated",
         rule: &high_point_repeated::RULE,
         text: include_str!("rules/line/high_point_repeated.rs"),
@@ -304,6 +350,12 @@ pub(crate) static FILES: &[File] = &[
     },
     File {
         family: "line",
+        stem: "quarter_leaps",
+        rule: &quarter_leaps::RULE,
+        text: include_str!("rules/line/quarter_leaps.rs"),
+    },
+    File {
+        family: "line",
         stem: "repeated_note",
         rule: &repeated_note::RULE,
         text: include_str!("rules/line/repeated_note.rs"),
@@ -331,6 +383,12 @@ pub(crate) static FILES: &[File] = &[
         stem: "tritone_outline",
         rule: &tritone_outline::RULE,
         text: include_str!("rules/line/tritone_outline.rs"),
+    },
+    File {
+        family: "line",
+        stem: "vocal_rhythm",
+        rule: &vocal_rhythm::RULE,
+        text: include_str!("rules/line/vocal_rhythm.rs"),
     },
     File {
         family: "motion",
@@ -418,6 +476,12 @@ pub(crate) static FILES: &[File] = &[
     },
     File {
         family: "range",
+        stem: "mode_ambitus",
+        rule: &mode_ambitus::RULE,
+        text: include_str!("rules/range/mode_ambitus.rs"),
+    },
+    File {
+        family: "range",
         stem: "tessitura",
         rule: &tessitura::RULE,
         text: include_str!("rules/range/tessitura.rs"),
@@ -442,9 +506,33 @@ pub(crate) static FILES: &[File] = &[
     },
     File {
         family: "species",
+        stem: "cantus",
+        rule: &cantus::RULE,
+        text: include_str!("rules/species/cantus.rs"),
+    },
+    File {
+        family: "species",
+        stem: "eighth_notes",
+        rule: &eighth_notes::RULE,
+        text: include_str!("rules/species/eighth_notes.rs"),
+    },
+    File {
+        family: "species",
+        stem: "florid_rhythm",
+        rule: &florid_rhythm::RULE,
+        text: include_str!("rules/species/florid_rhythm.rs"),
+    },
+    File {
+        family: "species",
         stem: "species_rhythm",
         rule: &species_rhythm::RULE,
         text: include_str!("rules/species/species_rhythm.rs"),
+    },
+    File {
+        family: "species",
+        stem: "syncopation",
+        rule: &syncopation::RULE,
+        text: include_str!("rules/species/syncopation.rs"),
     },
     File {
         family: "writing",

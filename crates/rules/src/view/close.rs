@@ -1,43 +1,10 @@
 //! Where a piece opens and closes, its cantus and its final.
 
-use partwright_score::{Interval, Key, Note, Pair, Sound, Time};
+use partwright_score::{Interval, Key, Pair};
 use partwright_space::Family;
 
 use super::{Piece, Sounding};
 use crate::style::Style;
-
-/// The notes of one voice over one note of the cantus.
-#[derive(Clone, Copy, Debug, PartialEq, Eq)]
-pub struct NotesOver {
-    /// Where the cantus's note begins.
-    pub from: Time,
-    /// Where it ends.
-    pub until: Time,
-    /// How many notes sound over it, one tied in from before included.
-    pub notes: usize,
-    /// They share its time equally.
-    pub is_equal: bool,
-    /// The last of them lasts beyond it.
-    pub is_tied_out: bool,
-    /// The first of them was struck before.
-    pub is_tied_in: bool,
-    /// A rest stands among them.
-    pub rests: bool,
-    /// It starts with a rest as long as each of the notes after it.
-    pub starts_with_a_rest: bool,
-    /// The cantus's note fills a bar in triple time.
-    pub is_triple: bool,
-    /// Something of it is not written yet, or not readable.
-    pub is_unknown: bool,
-}
-
-impl NotesOver {
-    /// One note struck with the cantus, and as long.
-    #[must_use]
-    pub fn is_one_whole(&self) -> bool {
-        self.notes == 1 && !self.is_tied_in && !self.is_tied_out && !self.rests
-    }
-}
 
 impl<'a> Piece<'a> {
     /// The first sonority in which all the voices sound, if it comes at once or after rests in
@@ -98,8 +65,8 @@ impl<'a> Piece<'a> {
         }
     }
 
-    /// The species a voice is in under a style: its own, else the style's; a voice in whole notes
-    /// with the cantus accompanies in the first. `None` for the cantus and outside species.
+    /// The species a voice is in under a style: its own, else the style's; a voice that
+    /// accompanies is in the first. `None` for the cantus and outside species.
     #[must_use]
     pub fn species_of(self, voice: usize, style: Style) -> Option<u8> {
         let declared = self.score.voices.get(voice)?;
@@ -107,14 +74,22 @@ impl<'a> Piece<'a> {
         if declared.cantus {
             return None;
         }
-        let accompanies = declared.species.is_none()
+        Some(if self.accompanies(voice) { 1 } else { species })
+    }
+
+    /// A voice without a species of its own that, in three parts and more, goes mostly in whole
+    /// notes with the cantus.
+    #[must_use]
+    pub fn accompanies(self, voice: usize) -> bool {
+        let declared = self.score.voices.get(voice);
+        declared.is_some_and(|v| v.species.is_none())
             && self.score.voices.len() >= 3
             && self.cantus_or_slowest().is_some_and(|cantus| {
-                self.notes_over(cantus, voice)
-                    .iter()
-                    .all(NotesOver::is_one_whole)
-            });
-        Some(if accompanies { 1 } else { species })
+                let over = self.over_cantus(cantus, voice);
+                let known = over.iter().filter(|o| !o.is_unknown && !o.is_silent());
+                let whole = known.clone().filter(|o| o.is_one_whole()).count();
+                whole * 2 > known.count()
+            })
     }
 
     /// Whether a voice has the final at a sonority: the last note of a cantus that is whole, else
@@ -156,57 +131,6 @@ impl<'a> Piece<'a> {
                 .iter()
                 .skip(last)
                 .all(|s| s.unknown == 0)
-    }
-
-    /// A voice's notes over each note of the cantus, in order.
-    #[must_use]
-    pub fn notes_over(self, cantus: usize, voice: usize) -> Vec<NotesOver> {
-        let notes = |v: usize| {
-            self.score
-                .voices
-                .get(v)
-                .map_or(&[][..], |voice| &voice.notes)
-        };
-        let line = notes(voice);
-        let sounding = notes(cantus)
-            .iter()
-            .filter(|note| matches!(note.sound, Sound::Pitch(_)));
-        sounding.map(|note| self.over(note, line)).collect()
-    }
-
-    fn over(self, under: &Note, line: &[Note]) -> NotesOver {
-        let first = line.partition_point(|note| note.end() <= under.onset);
-        let above: Vec<&Note> = line
-            .iter()
-            .skip(first)
-            .take_while(|note| note.onset < under.end())
-            .collect();
-        let pitched = |note: &&&Note| matches!(note.sound, Sound::Pitch(_));
-        let notes = above.iter().filter(pitched).count();
-        let parts = i64::try_from(above.len().max(1)).unwrap_or(1);
-        let share = under.length / parts;
-        let within =
-            |note: &&Note| note.onset.max(under.onset) + share == note.end().min(under.end());
-        let metre = self
-            .score
-            .bar_at(under.onset)
-            .and_then(|i| self.score.bars.get(i));
-        let metre = metre.and_then(|bar| self.score.metres.get(bar.metre as usize));
-        NotesOver {
-            from: under.onset,
-            until: under.end(),
-            notes,
-            is_equal: above.iter().all(within),
-            is_tied_out: above.last().is_some_and(|note| note.end() > under.end()),
-            is_tied_in: above.first().is_some_and(|note| note.onset < under.onset),
-            rests: above.iter().any(|note| note.sound == Sound::Rest),
-            starts_with_a_rest: above.iter().all(within)
-                && above.first().is_some_and(|note| note.sound == Sound::Rest)
-                && notes + 1 == above.len(),
-            is_triple: metre
-                .is_some_and(|m| m.cells() == Some(3) && m.bar_length() == Some(under.length)),
-            is_unknown: above.iter().any(|note| note.sound.is_unknown()),
-        }
     }
 }
 

@@ -24,6 +24,14 @@ pub struct Run<K> {
     pub highest: Pitch,
 }
 
+impl<K> Run<K> {
+    /// Scale steps from the lowest to the highest.
+    #[must_use]
+    pub fn span(&self) -> i32 {
+        Interval(self.lowest.place().up_to(self.highest.place())).size()
+    }
+}
+
 /// One voice going from a note to the next, inside a phrase and without a rest between.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
 pub struct LineMove {
@@ -93,6 +101,12 @@ impl LineMove {
     #[must_use]
     pub fn is_leap(&self) -> bool {
         self.size() >= 2
+    }
+
+    /// By a minor sixth upward.
+    #[must_use]
+    pub fn is_rising_minor_sixth(&self) -> bool {
+        self.size() == 5 && self.interval.is_minor() && self.rises()
     }
 
     /// Both move, the same way.
@@ -183,6 +197,12 @@ impl<'a> Line<'a> {
     #[must_use]
     pub fn is_top(&self) -> bool {
         self.voice == 0
+    }
+
+    /// The voice is declared a tenor.
+    #[must_use]
+    pub fn is_tenor(&self) -> bool {
+        self.declared().is_some_and(|v| v.kind.name == "tenor")
     }
 
     /// The number of independent voices that sound where a move arrives.

@@ -6,21 +6,26 @@ mod account;
 mod close;
 mod degree;
 mod discord;
+mod ending;
 mod line;
 mod pair;
 mod piece;
+mod rhythm;
 mod shape;
 mod sounding;
+mod vocal;
 
 use partwright_analysis::{Analysis, Dissonance};
 use partwright_score::{Pair, PairStep, Score, Texture};
 
-pub use close::NotesOver;
 pub use degree::{MinorDegree, Tessitura};
+pub use ending::LastMove;
 pub use line::{LineMove, Run};
 pub use pair::Direct;
 pub use piece::{Crossing, Passage};
+pub use rhythm::{Minim, Over, Quick, Stroke};
 pub use shape::{HighPoint, Passing, Stretch};
+pub use vocal::Value;
 
 /// A score with its texture, and what was read in it.
 #[derive(Clone, Copy)]

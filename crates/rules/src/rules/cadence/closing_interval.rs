@@ -26,6 +26,17 @@
 //! //        ^^ closing interval: B
 //! ```
 //!
+//! A minor third, in the strict styles:
+//!
+//! ```voices
+//! style motet
+//!
+//! S | B4 C#5 D5 ||
+//! T | D4 E4  F4 ||
+//! //         ^^ closing interval (weakness): T and B
+//! B | G3 A3  D3 ||
+//! ```
+//!
 //! # Passes
 //!
 //! ```voices
@@ -59,11 +70,13 @@ use crate::prelude::*;
 /// The rule.
 pub const RULE: Rule = Rule {
     looks: Looks::Piece(check),
-    cases: &[&TWO_PARTS, &MORE_PARTS, &LOWEST],
+    cases: &[&TWO_PARTS, &MORE_PARTS, &MINOR_THIRD, &LOWEST],
     numbers: &[],
     sources: &[
         source::FUX,
         source::FUX_FIGURES.at("two parts: 43 of 43; three parts: 20 unisons and octaves, 17 with a major third, 4 with a fifth"),
+        source::FUX_FIGURES.at("one of 43 in three parts closes with a minor third"),
+        source::GROVE.at("Strict Counterpoint"),
         source::OPEN_MUSIC_THEORY,
     ],
 };
@@ -83,7 +96,7 @@ static TWO_PARTS: Case = Case {
 
 static MORE_PARTS: Case = Case {
     name: "more-parts",
-    when: "in three parts or more, over the lowest voice something else than octave, fifth and third (in strict styles the major third)",
+    when: "in three parts or more, over the lowest voice something else than octave, fifth and third",
     settings: &[
         weakness(Style::Free, "an open ending may be meant"),
         fault(
@@ -96,7 +109,27 @@ static MORE_PARTS: Case = Case {
         ),
         fault(
             Style::Species1,
-            "only final, major third and fifth (Fux's figures)",
+            "only final, third and fifth (Fux's figures)",
+        ),
+    ],
+};
+
+static MINOR_THIRD: Case = Case {
+    name: "minor-third",
+    when: "in three parts or more, a minor third over the lowest voice",
+    settings: &[
+        allow(Style::Free, "the minor triad closes (common practice)"),
+        allow(
+            Style::Chorale,
+            "it closes, though the older chorale makes it major (Grove)",
+        ),
+        weakness(
+            Style::Motet,
+            "the last third is major, or left out (Grove, Strict Counterpoint)",
+        ),
+        weakness(
+            Style::Species1,
+            "one of 43 figures of Fux in three parts closes so (143)",
         ),
     ],
 };
@@ -122,7 +155,6 @@ fn check(piece: &Piece<'_>, found: &mut Found<'_>) {
     let Some(there) = piece.close() else { return };
     let voices: Vec<usize> = piece.texture.sounding(there.index).collect();
     let at = there.onset();
-    let strict = found.style().is_species();
     let Some(bass) = there.bass().filter(|_| voices.len() >= 2) else {
         return;
     };
@@ -145,22 +177,26 @@ fn check(piece: &Piece<'_>, found: &mut Found<'_>) {
             continue;
         };
         let third_size = interval.size() % 7 == 2;
-        let third = third_size && !(strict && interval.is_minor());
+        let third = voices.len() >= 3 && third_size;
         let rests = family == Some(Family::Octave)
-            || (voices.len() >= 3 && (third || family == Some(Family::Fifth)));
+            || (voices.len() >= 3 && family == Some(Family::Fifth))
+            || (third && !interval.is_minor());
         if rests {
             continue;
         }
-        let case = if voices.len() == 2 {
-            &TWO_PARTS
-        } else {
-            &MORE_PARTS
+        let case = match voices.len() {
+            2 => &TWO_PARTS,
+            _ if third => &MINOR_THIRD,
+            _ => &MORE_PARTS,
         };
         let help = match voices.len() {
             2 => "Close in unison or octave.",
-            _ if third_size => "Raise the third, or leave it out.",
+            _ if third => "Raise the third, or leave it out.",
             _ => "Close with octave, fifth and third over the final.",
         };
+        if found.severity(case).is_none() {
+            continue;
+        }
         found.sonority(case, &[pair.upper, pair.lower], at, || {
             format!(
                 "Closing interval: {} and {} close with {}. {help}",

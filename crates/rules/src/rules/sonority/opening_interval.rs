@@ -27,6 +27,20 @@
 //! B | G3 A3 C4 D4 |
 //! ```
 //!
+//! In three parts the third may stand above as well, but no sixth:
+//!
+//! ```voices
+//! style species-1
+//! voice S
+//! voice C cantus
+//! voice B
+//!
+//! S | Bb4 A4 G4 F4 |
+//! //  ^^^ opening interval: S and B
+//! C | D4  F4 E4 D4 |
+//! B | D3  D3 C3 D3 |
+//! ```
+//!
 //! # Passes
 //!
 //! ```voices
@@ -60,7 +74,7 @@ use crate::prelude::*;
 /// The rule.
 pub const RULE: Rule = Rule {
     looks: Looks::Piece(check),
-    cases: &[&TWO_PARTS, &LOWEST],
+    cases: &[&TWO_PARTS, &MORE_PARTS, &LOWEST],
     numbers: &[],
     sources: &[
         source::FUX,
@@ -78,6 +92,18 @@ static TWO_PARTS: Case = Case {
         allow(Style::Free, "opens as it likes"),
         weakness(Style::Motet, "the mode should be clear at once"),
         fault(Style::Species1, "no exception in 43 figures of Fux"),
+    ],
+};
+
+static MORE_PARTS: Case = Case {
+    name: "more-parts",
+    when: "in three parts or more, over the lowest voice something else than octave, fifth and third",
+    settings: &[
+        allow(Style::Free, "opens as it likes"),
+        fault(
+            Style::Species1,
+            "octave, fifth and third over the final (Fux's figures)",
+        ),
     ],
 };
 
@@ -115,10 +141,10 @@ fn check(piece: &Piece<'_>, found: &mut Found<'_>) {
                 interval.with_article()
             )
         });
-    } else if let Some(bass) = there
-        .bass()
-        .filter(|&bass| piece.has_final(there, bass) == Some(false))
-    {
+        return;
+    }
+    let Some(bass) = there.bass() else { return };
+    if piece.has_final(there, bass) == Some(false) {
         found.sonority(&LOWEST, &[bass], at, || {
             format!(
                 "Opening interval: {} has the lowest note and opens on {}, not on the final. Begin on the final.",
@@ -126,5 +152,28 @@ fn check(piece: &Piece<'_>, found: &mut Found<'_>) {
                 there.pitch_text(bass)
             )
         });
+        return;
+    }
+    for &voice in voices.iter().filter(|&&v| v != bass) {
+        let pair = Pair {
+            upper: voice.min(bass),
+            lower: voice.max(bass),
+        };
+        let Some(interval) = there.interval_of(pair) else {
+            continue;
+        };
+        let perfect = there.family_of(pair).is_some();
+        if perfect || interval.size() % 7 == 2 {
+            continue;
+        }
+        found.sonority(&MORE_PARTS, &[pair.upper, pair.lower], at, || {
+            format!(
+                "Opening interval: {} and {} open with {}. Open with octave, fifth and third over the final.",
+                piece.name(pair.upper),
+                piece.name(pair.lower),
+                interval.with_article()
+            )
+        });
+        return;
     }
 }
