@@ -21,7 +21,8 @@ pub use rule::{Case, FAMILIES, Looks, NumberOf, Rule, Severity};
 pub use source::Source;
 pub use style::{Number, Override, STYLES, Setting, Strictness, Style};
 pub use view::{
-    Crossing, Direct, Line, LineMove, NotesOver, PairMove, Passage, Piece, Run, Sounding,
+    Crossing, Direct, Level, Line, LineMove, NotesOver, PairMove, ParallelRun, Passage, Piece, Run,
+    Sounding, Succession,
 };
 
 /// What every rule file needs.
@@ -34,5 +35,7 @@ pub mod prelude {
     pub use crate::rule::{Case, Looks, NumberOf, Rule, Severity};
     pub use crate::source::{self, Source};
     pub use crate::style::{Setting, Style, allow, fault, remark, weakness};
-    pub use crate::view::{Direct, Line, LineMove, NotesOver, PairMove, Passage, Piece, Sounding};
+    pub use crate::view::{
+        Direct, Level, Line, LineMove, NotesOver, PairMove, Passage, Piece, Sounding, Succession,
+    };
 }

@@ -3,6 +3,8 @@
 //! These views only read what `partwright_score` laid out, and put it into a musician's words.
 
 mod close;
+mod figure;
+mod levels;
 mod line;
 mod pair;
 mod piece;
@@ -11,6 +13,7 @@ mod sounding;
 use partwright_score::{Pair, PairStep, Score, Texture};
 
 pub use close::NotesOver;
+pub use levels::{Level, ParallelRun, Succession};
 pub use line::{LineMove, Run};
 pub use pair::Direct;
 pub use piece::{Crossing, Passage};
