@@ -6,6 +6,10 @@ use crate::catalogue::File;
 pub mod all_one_way;
 #[path = "rules/line/augmented_interval.rs"]
 pub mod augmented_interval;
+#[path = "rules/motion/barline_consecutives.rs"]
+pub mod barline_consecutives;
+#[path = "rules/motion/beat_consecutives.rs"]
+pub mod beat_consecutives;
 #[path = "rules/line/chromatic_semitone.rs"]
 pub mod chromatic_semitone;
 #[path = "rules/cadence/closing_interval.rs"]
@@ -18,6 +22,8 @@ pub mod contrary_fifths;
 pub mod contrary_octaves;
 #[path = "rules/motion/crossing.rs"]
 pub mod crossing;
+#[path = "rules/motion/delayed_consecutives.rs"]
+pub mod delayed_consecutives;
 #[path = "rules/line/diminished_interval.rs"]
 pub mod diminished_interval;
 #[path = "rules/motion/direct_fifths.rs"]
@@ -26,30 +32,54 @@ pub mod direct_fifths;
 pub mod direct_octaves;
 #[path = "rules/motion/direct_unisons.rs"]
 pub mod direct_unisons;
+#[path = "rules/motion/dissonance_into_perfect.rs"]
+pub mod dissonance_into_perfect;
+#[path = "rules/motion/downbeat_consecutives.rs"]
+pub mod downbeat_consecutives;
+#[path = "rules/sonority/few_imperfects.rs"]
+pub mod few_imperfects;
 #[path = "rules/line/leap_beyond_octave.rs"]
 pub mod leap_beyond_octave;
 #[path = "rules/line/leap_unrecovered.rs"]
 pub mod leap_unrecovered;
+#[path = "rules/motion/leaps_into_perfect.rs"]
+pub mod leaps_into_perfect;
 #[path = "rules/line/leaps_one_way.rs"]
 pub mod leaps_one_way;
 #[path = "rules/writing/licence_idle.rs"]
 pub mod licence_idle;
+#[path = "rules/sonority/low_crowding.rs"]
+pub mod low_crowding;
+#[path = "rules/motion/mi_contra_fa.rs"]
+pub mod mi_contra_fa;
 #[path = "rules/writing/octave_doubt.rs"]
 pub mod octave_doubt;
+#[path = "rules/motion/offbeat_consecutives.rs"]
+pub mod offbeat_consecutives;
 #[path = "rules/sonority/opening_interval.rs"]
 pub mod opening_interval;
+#[path = "rules/motion/ottava_battuta.rs"]
+pub mod ottava_battuta;
 #[path = "rules/motion/overlap.rs"]
 pub mod overlap;
+#[path = "rules/motion/parallel_dissonances.rs"]
+pub mod parallel_dissonances;
 #[path = "rules/motion/parallel_fifths.rs"]
 pub mod parallel_fifths;
+#[path = "rules/motion/parallel_fourths.rs"]
+pub mod parallel_fourths;
 #[path = "rules/motion/parallel_octaves.rs"]
 pub mod parallel_octaves;
 #[path = "rules/motion/parallel_unisons.rs"]
 pub mod parallel_unisons;
+#[path = "rules/motion/perfect_to_perfect.rs"]
+pub mod perfect_to_perfect;
 #[path = "rules/writing/reading.rs"]
 pub mod reading;
 #[path = "rules/line/repeated_note.rs"]
 pub mod repeated_note;
+#[path = "rules/motion/running_imperfects.rs"]
+pub mod running_imperfects;
 #[path = "rules/line/seventh_leap.rs"]
 pub mod seventh_leap;
 #[path = "rules/motion/similar_leaps.rs"]
@@ -62,6 +92,8 @@ pub mod spacing;
 pub mod species_rhythm;
 #[path = "rules/motion/unequal_fifths.rs"]
 pub mod unequal_fifths;
+#[path = "rules/sonority/unison_inside.rs"]
+pub mod unison_inside;
 #[path = "rules/writing/unwritten.rs"]
 pub mod unwritten;
 #[path = "rules/writing/voice_silent.rs"]
@@ -136,6 +168,18 @@ pub(crate) static FILES: &[File] = &[
     },
     File {
         family: "motion",
+        stem: "barline_consecutives",
+        rule: &barline_consecutives::RULE,
+        text: include_str!("rules/motion/barline_consecutives.rs"),
+    },
+    File {
+        family: "motion",
+        stem: "beat_consecutives",
+        rule: &beat_consecutives::RULE,
+        text: include_str!("rules/motion/beat_consecutives.rs"),
+    },
+    File {
+        family: "motion",
         stem: "contrary_fifths",
         rule: &contrary_fifths::RULE,
         text: include_str!("rules/motion/contrary_fifths.rs"),
@@ -151,6 +195,12 @@ pub(crate) static FILES: &[File] = &[
         stem: "crossing",
         rule: &crossing::RULE,
         text: include_str!("rules/motion/crossing.rs"),
+    },
+    File {
+        family: "motion",
+        stem: "delayed_consecutives",
+        rule: &delayed_consecutives::RULE,
+        text: include_str!("rules/motion/delayed_consecutives.rs"),
     },
     File {
         family: "motion",
@@ -172,15 +222,63 @@ pub(crate) static FILES: &[File] = &[
     },
     File {
         family: "motion",
+        stem: "dissonance_into_perfect",
+        rule: &dissonance_into_perfect::RULE,
+        text: include_str!("rules/motion/dissonance_into_perfect.rs"),
+    },
+    File {
+        family: "motion",
+        stem: "downbeat_consecutives",
+        rule: &downbeat_consecutives::RULE,
+        text: include_str!("rules/motion/downbeat_consecutives.rs"),
+    },
+    File {
+        family: "motion",
+        stem: "leaps_into_perfect",
+        rule: &leaps_into_perfect::RULE,
+        text: include_str!("rules/motion/leaps_into_perfect.rs"),
+    },
+    File {
+        family: "motion",
+        stem: "mi_contra_fa",
+        rule: &mi_contra_fa::RULE,
+        text: include_str!("rules/motion/mi_contra_fa.rs"),
+    },
+    File {
+        family: "motion",
+        stem: "offbeat_consecutives",
+        rule: &offbeat_consecutives::RULE,
+        text: include_str!("rules/motion/offbeat_consecutives.rs"),
+    },
+    File {
+        family: "motion",
+        stem: "ottava_battuta",
+        rule: &ottava_battuta::RULE,
+        text: include_str!("rules/motion/ottava_battuta.rs"),
+    },
+    File {
+        family: "motion",
         stem: "overlap",
         rule: &overlap::RULE,
         text: include_str!("rules/motion/overlap.rs"),
     },
     File {
         family: "motion",
+        stem: "parallel_dissonances",
+        rule: &parallel_dissonances::RULE,
+        text: include_str!("rules/motion/parallel_dissonances.rs"),
+    },
+    File {
+        family: "motion",
         stem: "parallel_fifths",
         rule: &parallel_fifths::RULE,
         text: include_str!("rules/motion/parallel_fifths.rs"),
+    },
+    File {
+        family: "motion",
+        stem: "parallel_fourths",
+        rule: &parallel_fourths::RULE,
+        text: include_str!("rules/motion/parallel_fourths.rs"),
     },
     File {
         family: "motion",
@@ -193,6 +291,18 @@ pub(crate) static FILES: &[File] = &[
         stem: "parallel_unisons",
         rule: &parallel_unisons::RULE,
         text: include_str!("rules/motion/parallel_unisons.rs"),
+    },
+    File {
+        family: "motion",
+        stem: "perfect_to_perfect",
+        rule: &perfect_to_perfect::RULE,
+        text: include_str!("rules/motion/perfect_to_perfect.rs"),
+    },
+    File {
+        family: "motion",
+        stem: "running_imperfects",
+        rule: &running_imperfects::RULE,
+        text: include_str!("rules/motion/running_imperfects.rs"),
     },
     File {
         family: "motion",
@@ -214,6 +324,18 @@ pub(crate) static FILES: &[File] = &[
     },
     File {
         family: "sonority",
+        stem: "few_imperfects",
+        rule: &few_imperfects::RULE,
+        text: include_str!("rules/sonority/few_imperfects.rs"),
+    },
+    File {
+        family: "sonority",
+        stem: "low_crowding",
+        rule: &low_crowding::RULE,
+        text: include_str!("rules/sonority/low_crowding.rs"),
+    },
+    File {
+        family: "sonority",
         stem: "opening_interval",
         rule: &opening_interval::RULE,
         text: include_str!("rules/sonority/opening_interval.rs"),
@@ -223,6 +345,12 @@ pub(crate) static FILES: &[File] = &[
         stem: "spacing",
         rule: &spacing::RULE,
         text: include_str!("rules/sonority/spacing.rs"),
+    },
+    File {
+        family: "sonority",
+        stem: "unison_inside",
+        rule: &unison_inside::RULE,
+        text: include_str!("rules/sonority/unison_inside.rs"),
     },
     File {
         family: "species",
