@@ -215,6 +215,29 @@ impl<'a> PairMove<'a> {
         })
     }
 
+    /// The interval left, or the one reached, comes of a note that a figure explains: held or
+    /// struck again, or passing by step.
+    #[must_use]
+    pub fn is_explained(&self) -> bool {
+        let voices = [self.pair.upper, self.pair.lower];
+        let prepared = |voice| {
+            let piece = self.sounding.piece;
+            let before = self.sounding.neighbour(-1);
+            let came = before
+                .and_then(|there| piece.texture.displacement(piece.score, there.index, voice));
+            came.is_some_and(|gap| gap.semitones == 0)
+        };
+        let goes_on = self.next().is_some_and(|next| {
+            voices
+                .iter()
+                .any(|&v| self.steps(v) && next.steps(v) && next.rises(v) == self.rises(v))
+        });
+        goes_on
+            || voices
+                .iter()
+                .any(|&v| prepared(v) || (self.steps(v) && self.passes_on(v)))
+    }
+
     /// It arrives on the first beat of a bar.
     #[must_use]
     pub fn is_on_downbeat(&self) -> bool {
@@ -265,6 +288,12 @@ impl Sounding<'_> {
 }
 
 impl Piece<'_> {
+    /// Voices have species of their own.
+    #[must_use]
+    pub fn has_species_of_voices(self) -> bool {
+        self.score.voices.iter().any(|v| v.species.is_some())
+    }
+
     /// The key stated is minor, or a mode with a minor third.
     #[must_use]
     pub fn is_minor_at(self, there: Sounding<'_>) -> bool {

@@ -31,13 +31,20 @@
 //!
 //! # Does not apply
 //!
-//! Between beats, where ornaments meet:
+//! Between beats, where ornaments meet, and where a note is held or passes by step:
 //!
 //! ```voices
 //! style chorale
 //!
 //! S | F5 E.D C5 |
 //! B | D4 F.E A4 |
+//! ```
+//!
+//! ```voices
+//! style chorale
+//!
+//! T | D4 -  C4 |
+//! B | F3 E3 D3 |
 //! ```
 //!
 //! # What to do
@@ -49,7 +56,7 @@ use crate::prelude::*;
 /// The rule.
 pub const RULE: Rule = Rule {
     looks: Looks::Pairs(check),
-    cases: &[&SEVENTHS, &SECONDS, &OFF_BEAT],
+    cases: &[&SEVENTHS, &SECONDS, &FIGURED],
     numbers: &[],
     sources: &[
         source::PROUT_HARMONY.at("§§ 107-108"),
@@ -79,13 +86,10 @@ static SECONDS: Case = Case {
     ],
 };
 
-static OFF_BEAT: Case = Case {
-    name: "off-beat",
-    when: "either, where an ornament may make one of them",
-    settings: &[allow(
-        Style::Free,
-        "ornaments are judged as dissonances, each by itself",
-    )],
+static FIGURED: Case = Case {
+    name: "figured",
+    when: "either, where an ornament may make one of them, or a note is held, struck again or passing",
+    settings: &[allow(Style::Free, "each dissonance is judged by itself")],
 };
 
 fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
@@ -94,8 +98,8 @@ fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
         Some(6) => &SEVENTHS,
         _ => return,
     };
-    let case = if step.may_be_ornament() {
-        &OFF_BEAT
+    let case = if step.may_be_ornament() || step.is_explained() {
+        &FIGURED
     } else {
         case
     };

@@ -77,7 +77,7 @@ static MOST_LONG: NumberOf = NumberOf {
 
 static NOTES: Case = Case {
     name: "",
-    when: "more than three running, note by note, in two parts",
+    when: "more than three running, note by note",
     settings: &[
         allow(Style::Free, "free writing has no limit"),
         weakness(Style::Species1, "three at most (Lehmann, lesson I)"),
@@ -87,7 +87,7 @@ static NOTES: Case = Case {
 
 static LONG: Case = Case {
     name: "long",
-    when: "more than four running from beat to beat, in two parts",
+    when: "more than four running",
     settings: &[
         allow(Style::Free, "free writing has no limit"),
         weakness(Style::Chorale, "from the fifth running"),
@@ -98,7 +98,7 @@ static LONG: Case = Case {
 
 static DOWNBEATS: Case = Case {
     name: "downbeats",
-    when: "more than four running on successive downbeats, in two parts",
+    when: "more than four running on successive downbeats",
     settings: &[
         allow(Style::Free, "free writing has no limit"),
         weakness(
@@ -111,7 +111,7 @@ static DOWNBEATS: Case = Case {
 
 static OFF_BEATS: Case = Case {
     name: "off-beats",
-    when: "more than four running off the beat in successive bars, in two parts",
+    when: "more than four running off the beat in successive bars",
     settings: &[
         allow(Style::Free, "free writing has no limit"),
         weakness(Style::Species4, "from the fifth running"),
@@ -120,9 +120,6 @@ static OFF_BEATS: Case = Case {
 
 fn check(piece: &Piece<'_>, found: &mut Found<'_>) {
     let (most, long) = (found.number(&MOST), found.number(&MOST_LONG));
-    if piece.voices() != 2 {
-        return;
-    }
     for &pair in piece.texture.pairs() {
         for (level, limit, case) in [
             (Level::Notes, most, &NOTES),
@@ -130,6 +127,9 @@ fn check(piece: &Piece<'_>, found: &mut Found<'_>) {
             (Level::Downbeats, long, &DOWNBEATS),
             (Level::OffBeats, long, &OFF_BEATS),
         ] {
+            if found.severity(case).is_none() && !piece.has_species_of_voices() {
+                continue;
+            }
             let runs = piece.parallel_runs(pair, level);
             for run in runs.iter().filter(|run| run.intervals > limit) {
                 let voices = [pair.upper, pair.lower];

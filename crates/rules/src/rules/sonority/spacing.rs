@@ -71,8 +71,8 @@ use crate::prelude::*;
 /// The rule.
 pub const RULE: Rule = Rule {
     looks: Looks::Piece(check),
-    cases: &[&UPPER, &UPPER_LONG, &TWO_PARTS, &TWO_PARTS_LONG, &BASS, &SOPRANO_TENOR],
-    numbers: &[&NEIGHBOURS, &CHORDS, &BASS_GAP, &FIRST_AND_THIRD, &TWO_PARTS_GAP],
+    cases: &[&UPPER, &UPPER_LONG, &TWO_PARTS, &TWO_PARTS_LONG, &BASS, &BASS_ADVICE, &SOPRANO_TENOR],
+    numbers: &[&NEIGHBOURS, &CHORDS, &BASS_GAP, &BASS_ADVISED, &FIRST_AND_THIRD, &TWO_PARTS_GAP],
     sources: &[
         source::OPEN_MUSIC_THEORY,
         source::LEHMANN.at("lesson XI"),
@@ -97,6 +97,12 @@ static BASS_GAP: NumberOf = NumberOf {
     name: "bass",
     means: "the widest interval between the bass and its neighbour, as its number",
     value: 15,
+    bounds: (8, 36),
+};
+static BASS_ADVISED: NumberOf = NumberOf {
+    name: "bass-advised",
+    means: "the interval between the bass and its neighbour that choral guides advise to keep within, as its number",
+    value: 12,
     bounds: (8, 36),
 };
 static FIRST_AND_THIRD: NumberOf = NumberOf {
@@ -160,6 +166,15 @@ static BASS: Case = Case {
     ],
 };
 
+static BASS_ADVICE: Case = Case {
+    name: "bass-advice",
+    when: "the bass more than a twelfth under its neighbour, but within two octaves",
+    settings: &[
+        allow(Style::Free, "open writing is free"),
+        remark(Style::Chorale, "advised against (choral guides)"),
+    ],
+};
+
 static SOPRANO_TENOR: Case = Case {
     name: "soprano-tenor",
     when: "the first and the third of four voices more than a twelfth apart",
@@ -186,7 +201,8 @@ fn check(piece: &Piece<'_>, found: &mut Found<'_>) {
         );
         let long = usize::try_from(found.number(&CHORDS)).unwrap_or(0);
         // What is not wide by any measure is no matter: most sonorities end here.
-        let least = [neighbours, bass, third, two, LONG_TENTH]
+        let advised = steps(&BASS_ADVISED);
+        let least = [neighbours, bass, advised, third, two, LONG_TENTH]
             .into_iter()
             .min()
             .unwrap_or(0);
@@ -223,6 +239,12 @@ fn check(piece: &Piece<'_>, found: &mut Found<'_>) {
             &TWO_PARTS,
             None,
         );
+        let low = |s: Sounding<'_>| beside(&s) && s.is_lowest_present(pair.lower);
+        for run in piece.within(pair, &wide, |s| low(s) && s.is_wider_than(pair, advised)) {
+            if !(run.first..run.end).any(|k| piece.sounding(k).is_wider_than(pair, bass)) {
+                tell(piece, found, pair, &run, &BASS_ADVICE, advised);
+            }
+        }
         for run in piece.within(pair, &wide, |s| {
             piece.voices() == 2 && s.is_wider_than(pair, LONG_TENTH) && s.parts() == 2
         }) {
