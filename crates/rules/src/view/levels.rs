@@ -314,10 +314,11 @@ impl<'a> Piece<'a> {
             };
             let succession = match level {
                 Level::Notes if step.motion() == Some(Motion::Still) => {
-                    if let (Some(run), Some(at)) = (runs.last_mut(), &mut open) {
-                        if *at + 1 == there.index && !step.step.across_phrase() {
-                            (run.until, *at) = (self.end_of(there.index), there.index);
-                        }
+                    if let (Some(run), Some(at)) = (runs.last_mut(), &mut open)
+                        && *at + 1 == there.index
+                        && !step.step.across_phrase()
+                    {
+                        (run.until, *at) = (self.end_of(there.index), there.index);
                     }
                     continue;
                 }
