@@ -36,6 +36,7 @@ pub mod prelude {
     pub use crate::source::{self, Source};
     pub use crate::style::{Setting, Style, allow, fault, remark, weakness};
     pub use crate::view::{
-        Direct, Level, Line, LineMove, NotesOver, PairMove, Passage, Piece, Sounding, Succession,
+        Direct, Level, Line, LineMove, NotesOver, PairMove, ParallelRun, Passage, Piece, Sounding,
+        Succession,
     };
 }

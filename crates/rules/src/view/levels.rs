@@ -40,6 +40,8 @@ pub struct ParallelRun {
     pub sixths: bool,
     /// How many there are.
     pub intervals: i32,
+    /// How many of them begin on a beat.
+    pub on_beats: i32,
     /// Where the first begins.
     pub from: Time,
     /// Where the last ends.
@@ -333,14 +335,17 @@ impl<'a> Piece<'a> {
                 continue;
             };
             let until = self.end_of(there.index);
+            let on_beat = |there: Sounding<'_>| i32::from(!there.is_off_beat());
             match runs.last_mut() {
                 Some(run) if open == Some(succession.from.index) && run.sixths == sixths => {
                     run.intervals += 1;
+                    run.on_beats += on_beat(there);
                     run.until = until;
                 }
                 _ => runs.push(ParallelRun {
                     sixths,
                     intervals: 2,
+                    on_beats: on_beat(succession.from) + on_beat(there),
                     from: succession.from.onset(),
                     until,
                 }),

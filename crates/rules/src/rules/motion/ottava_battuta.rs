@@ -46,7 +46,7 @@ use crate::prelude::*;
 /// The rule.
 pub const RULE: Rule = Rule {
     looks: Looks::Pairs(check),
-    cases: &[&ORDINARY],
+    cases: &[&ORDINARY, &FOURTH],
     numbers: &[],
     sources: &[
         source::GROVE.at("Strict Counterpoint, second order"),
@@ -65,6 +65,19 @@ static ORDINARY: Case = Case {
     ],
 };
 
+static FOURTH: Case = Case {
+    name: "fourth",
+    when: "the same, the lowest voice rising a fourth, as at a cadence",
+    settings: &[
+        allow(Style::Free, "an old scruple"),
+        allow(
+            Style::Motet,
+            "the way of every close; cadences inside are not told apart yet",
+        ),
+        weakness(Style::Species1, "none in 115 figures of Fux"),
+    ],
+};
+
 fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
     if !step.closes_on_octave_by_leap()
         || step.sounding.parts() >= 4
@@ -73,7 +86,9 @@ fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
     {
         return;
     }
-    found.pair(&ORDINARY, step, || {
+    let fourth = step.size_of_move(step.foot()) == Some(3) && step.is_with_bass() != Some(false);
+    let case = if fourth { &FOURTH } else { &ORDINARY };
+    found.pair(case, step, || {
         format!(
             "Ottava battuta: {}, running together into an octave on the downbeat. Let the lower one step.",
             step.story()

@@ -36,6 +36,15 @@
 //!
 //! # Does not apply
 //!
+//! In free style; and in others between beats, where only ornaments run:
+//!
+//! ```voices
+//! style chorale
+//!
+//! S | C5.B4 A4.G4 A4.B4 C5 |
+//! B | A4.G4 F4.E4 F4.G4 A4 |
+//! ```
+//!
 //! ```voices
 //! S | E4 F4 G4 A4 B4 |
 //! B | C4 D4 E4 F4 G4 |
@@ -87,7 +96,7 @@ static NOTES: Case = Case {
 
 static LONG: Case = Case {
     name: "long",
-    when: "more than four running",
+    when: "more than four running, those between beats not counted",
     settings: &[
         allow(Style::Free, "free writing has no limit"),
         weakness(Style::Chorale, "from the fifth running"),
@@ -131,7 +140,12 @@ fn check(piece: &Piece<'_>, found: &mut Found<'_>) {
                 continue;
             }
             let runs = piece.parallel_runs(pair, level);
-            for run in runs.iter().filter(|run| run.intervals > limit) {
+            // Between beats, what runs is an ornament.
+            let count = |run: &ParallelRun| match std::ptr::eq(case, &LONG) {
+                true => run.on_beats,
+                false => run.intervals,
+            };
+            for run in runs.iter().filter(|run| count(run) > limit) {
                 let voices = [pair.upper, pair.lower];
                 found.passage(case, &voices, (run.from, run.until), || {
                     format!(
@@ -139,7 +153,7 @@ fn check(piece: &Piece<'_>, found: &mut Found<'_>) {
                         if run.sixths { "sixths" } else { "thirds" },
                         piece.name(pair.upper),
                         piece.name(pair.lower),
-                        run.intervals,
+                        count(run),
                         piece.extent_text(run.from, run.until)
                     )
                 });
