@@ -175,10 +175,13 @@ fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
     } else {
         &ORDINARY
     };
+    let only_a_label = found.severity(case) == Some(Severity::Remark);
     found.pair(case, step, || {
-        format!(
-            "Parallel fifths: {}. Move one voice the other way.",
-            step.story()
-        )
+        let help = if only_a_label {
+            "An ornament makes them, and custom lets them stand."
+        } else {
+            "Move one voice the other way."
+        };
+        format!("Parallel fifths: {}. {help}", step.story())
     });
 }
