@@ -265,6 +265,27 @@ impl<'a> PairMove<'a> {
 }
 
 impl Sounding<'_> {
+    /// One of the two is the lowest, in the score or as it sounds.
+    #[must_use]
+    pub fn stands_on_bass(self, pair: Pair) -> bool {
+        let bass = self.bass();
+        self.is_lowest_present(pair.lower) || bass == Some(pair.upper) || bass == Some(pair.lower)
+    }
+
+    /// A third voice sounds between the two, wherever it stands in the score.
+    #[must_use]
+    pub fn is_filled(self, pair: Pair) -> bool {
+        let texture = self.piece.texture;
+        // An interval is told from the lower voice in the score up.
+        let over = |high: usize, low: usize| {
+            let gap = texture.gap(self.index, high, low);
+            gap.is_some_and(|gap| gap.semitones != 0 && (gap.semitones > 0) == (high < low))
+        };
+        let between = |v: usize| over(v, pair.lower) && over(pair.upper, v);
+        let mut voices = texture.sounding(self.index);
+        voices.any(|v| v != pair.upper && v != pair.lower && between(v))
+    }
+
     /// The two have the lowest notes, a third or a second apart, the upper of them below the C
     /// that begins an octave (4 for middle C).
     #[must_use]

@@ -71,7 +71,7 @@ use crate::prelude::*;
 /// The rule.
 pub const RULE: Rule = Rule {
     looks: Looks::Piece(check),
-    cases: &[&UPPER, &UPPER_LONG, &TWO_PARTS, &TWO_PARTS_LONG, &BASS, &BASS_ADVICE, &SOPRANO_TENOR],
+    cases: &[&UPPER, &UPPER_LONG, &UPPER_BRIEF, &TWO_PARTS, &TWO_PARTS_LONG, &BASS, &BASS_ADVICE, &SOPRANO_TENOR],
     numbers: &[&NEIGHBOURS, &CHORDS, &BASS_GAP, &BASS_ADVISED, &FIRST_AND_THIRD, &TWO_PARTS_GAP],
     sources: &[
         source::OPEN_MUSIC_THEORY,
@@ -134,6 +134,15 @@ static UPPER_LONG: Case = Case {
     settings: &[
         weakness(Style::Free, "common practice"),
         fault(Style::Chorale, "handbooks allow one or two chords"),
+    ],
+};
+
+static UPPER_BRIEF: Case = Case {
+    name: "brief",
+    when: "the same within a tenth, over one or two chords",
+    settings: &[
+        allow(Style::Free, "one or two chords are let pass (Lehmann)"),
+        weakness(Style::Chorale, "one or two chords are let pass with a word"),
     ],
 };
 
@@ -207,38 +216,36 @@ fn check(piece: &Piece<'_>, found: &mut Found<'_>) {
             .min()
             .unwrap_or(0);
         let wide = piece.passages(pair, |s| s.is_wider_than(pair, least));
-        let mut report =
-            |test: &dyn Fn(&Sounding<'_>) -> bool, limit, case, longer: Option<&'static Case>| {
-                for run in piece.within(pair, &wide, |s| s.is_wider_than(pair, limit) && test(&s)) {
-                    let case = longer.filter(|_| run.chords > long).unwrap_or(case);
-                    tell(piece, found, pair, &run, case, limit);
-                }
-            };
+        let mut report = |test: &dyn Fn(&Sounding<'_>) -> bool, limit, case| {
+            for run in piece.within(pair, &wide, |s| s.is_wider_than(pair, limit) && test(&s)) {
+                tell(piece, found, pair, &run, case, limit);
+            }
+        };
         let beside = |s: &Sounding<'_>| s.parts() >= 3 && s.are_neighbours(pair);
-        report(
-            &|s| beside(s) && !s.is_lowest_present(pair.lower),
-            neighbours,
-            &UPPER,
-            Some(&UPPER_LONG),
-        );
         report(
             &|s| beside(s) && s.is_lowest_present(pair.lower),
             bass,
             &BASS,
-            None,
         );
         report(
             &|s| s.parts() == 4 && s.are_first_and_third(pair),
             third,
             &SOPRANO_TENOR,
-            None,
         );
-        report(
-            &|s| piece.voices() == 2 && s.parts() == 2,
-            two,
-            &TWO_PARTS,
-            None,
-        );
+        report(&|s| piece.voices() == 2 && s.parts() == 2, two, &TWO_PARTS);
+        let upper = |s: Sounding<'_>| beside(&s) && !s.stands_on_bass(pair);
+        for run in piece.within(pair, &wide, |s| {
+            upper(s) && s.is_wider_than(pair, neighbours) && !s.is_filled(pair)
+        }) {
+            let wider =
+                (run.first..run.end).any(|k| piece.sounding(k).is_wider_than(pair, LONG_TENTH));
+            let case = match run.chords > long {
+                true => &UPPER_LONG,
+                false if wider => &UPPER,
+                false => &UPPER_BRIEF,
+            };
+            tell(piece, found, pair, &run, case, neighbours);
+        }
         let low = |s: Sounding<'_>| beside(&s) && s.is_lowest_present(pair.lower);
         for run in piece.within(pair, &wide, |s| low(s) && s.is_wider_than(pair, advised)) {
             if !(run.first..run.end).any(|k| piece.sounding(k).is_wider_than(pair, bass)) {
