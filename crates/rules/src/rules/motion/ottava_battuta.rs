@@ -26,7 +26,7 @@
 //!
 //! # Does not apply
 //!
-//! In four parts, and into the last bar:
+//! In four parts, into the last bar, and in a motet over a bass that rises a fourth:
 //!
 //! ```voices
 //! style motet
@@ -35,6 +35,14 @@
 //! A | G4 | F4 |
 //! T | C4 | A3 |
 //! B | C3 | D3 |
+//! ```
+//!
+//! ```voices
+//! style motet
+//!
+//! S | E5 | D5 | C5 | B4 |
+//! T | G4 | B4 | E4 | G4 |
+//! B | C4 | G3 | C4 | G3 |
 //! ```
 //!
 //! # What to do

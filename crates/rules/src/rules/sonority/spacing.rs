@@ -62,6 +62,30 @@
 //! C | C3 B2 |
 //! ```
 //!
+//! A gap that another voice fills, and in a motet one chord within a tenth:
+//!
+//! ```voices
+//! style motet
+//! equal S T
+//! voice S soprano
+//! voice A alto
+//! voice T tenor
+//! voice B bass
+//!
+//! S | E5 - |
+//! A | C4 - |
+//! T | G4 - |
+//! B | C3 - |
+//! ```
+//!
+//! ```voices
+//! style motet
+//!
+//! S | C5 E5 C5 |
+//! A | E4 C4 E4 |
+//! B | C3 C3 C3 |
+//! ```
+//!
 //! # What to do
 //!
 //! Raise the lower voice or lower the upper one, or exchange notes with a third.

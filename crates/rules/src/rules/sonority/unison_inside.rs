@@ -25,7 +25,7 @@
 //!
 //! # Does not apply
 //!
-//! Off the downbeat, and in chorales and motets:
+//! Off the downbeat in the second species and after, and in chorales and motets:
 //!
 //! ```voices
 //! style chorale
@@ -79,10 +79,20 @@ static MORE_PARTS: Case = Case {
 static OFF_BEAT: Case = Case {
     name: "off-beat",
     when: "off the downbeat, in two parts",
-    settings: &[allow(
-        Style::Free,
-        "let pass but by the strict French school",
-    )],
+    settings: &[
+        allow(Style::Free, "voices meet freely"),
+        fault(
+            Style::Species1,
+            "only at the ends, whatever the bars (Lehmann, lesson I)",
+        ),
+        allow(
+            Style::Species2,
+            "31 in Fux's figures; the strict French school alone forbids it",
+        ),
+        allow(Style::Species3, "as in the second species"),
+        allow(Style::Species4, "where the tie ends"),
+        allow(Style::Species5, "as in the second species"),
+    ],
 };
 
 fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
