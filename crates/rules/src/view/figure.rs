@@ -215,6 +215,14 @@ impl<'a> PairMove<'a> {
         })
     }
 
+    /// The lowest voice leaps a fourth or a fifth: the root changes, and the chord leaps with it.
+    /// Where the lowest voice is not known it may.
+    #[must_use]
+    pub fn bass_leaps_fourth_or_fifth(&self) -> bool {
+        let bass = self.sounding.bass();
+        bass.is_none_or(|bass| matches!(self.size_of_move(bass), Some(3 | 4)))
+    }
+
     /// The interval left, or the one reached, comes of a note that a figure explains: held or
     /// struck again, or passing by step.
     #[must_use]
