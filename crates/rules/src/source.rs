@@ -212,7 +212,12 @@ pub const ORCHESTRATION_HANDBOOKS: Source = source(
     Known::FromMemory,
 );
 /// A training text.
-pub const NAVY: Source = source("", "U.S. Navy School of Music, Harmony", 0, Known::Read);
+pub const NAVY: Source = source(
+    "",
+    "Harmony, a training text of the US Navy",
+    0,
+    Known::Read,
+);
 /// An examiners' guide.
 pub const AP_GUIDE: Source = source(
     "",

@@ -51,7 +51,7 @@ pub const RULE: Rule = Rule {
     cases: &[&UNISON, &OCTAVE],
     numbers: &[],
     sources: &[
-        source::PROUT_HARMONY.at("§ 109"),
+        source::PROUT_HARMONY.at("§ 109 (heading)"),
         source::LEHMANN
             .at("lesson IV")
             .looser("into a unison, if the line goes on"),

@@ -80,7 +80,7 @@ static FOURTH: Case = Case {
         allow(Style::Free, "an old scruple"),
         allow(
             Style::Motet,
-            "the way of every close; cadences inside are not told apart yet",
+            "nine places in 314 pieces of the time, against one of any other leap",
         ),
         weakness(Style::Species1, "none in 115 figures of Fux"),
     ],

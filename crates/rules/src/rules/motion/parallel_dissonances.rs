@@ -59,7 +59,7 @@ pub const RULE: Rule = Rule {
     cases: &[&SEVENTHS, &SECONDS, &FIGURED],
     numbers: &[],
     sources: &[
-        source::PROUT_HARMONY.at("§§ 107-108"),
+        source::PROUT_HARMONY.at("§§ 107-108 (headings)"),
         source::NAVY.at("lesson 6"),
     ],
 };

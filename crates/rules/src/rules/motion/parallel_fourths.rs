@@ -46,7 +46,7 @@ pub const RULE: Rule = Rule {
     cases: &[&ORDINARY, &OFF_BEAT],
     numbers: &[],
     sources: &[
-        source::PROUT_HARMONY.at("§ 106"),
+        source::PROUT_HARMONY.at("§ 106 (heading)"),
         source::NAVY.at("lesson 6"),
     ],
 };

@@ -99,7 +99,10 @@ static LONG: Case = Case {
     when: "more than four running, those between beats not counted",
     settings: &[
         allow(Style::Free, "free writing has no limit"),
-        weakness(Style::Chorale, "from the fifth running"),
+        weakness(
+            Style::Chorale,
+            "from the fifth running; two in a hundred bars of the chorales",
+        ),
         weakness(Style::Motet, "from the fifth running"),
         allow(Style::Species1, "three at most already"),
     ],

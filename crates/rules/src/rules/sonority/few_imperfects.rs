@@ -45,7 +45,7 @@ pub const RULE: Rule = Rule {
     numbers: &[&SHARE],
     sources: &[
         source::OPEN_MUSIC_THEORY.at("first species"),
-        source::LEHMANN.at("lesson I"),
+        source::LEHMANN,
         source::FUX_FIGURES.at("36 in a hundred in the first species, the ends included"),
     ],
 };

@@ -100,6 +100,7 @@ pub const RULE: Rule = Rule {
     sources: &[
         source::OPEN_MUSIC_THEORY,
         source::LEHMANN.at("lesson XI"),
+        source::CHORAL_GUIDE.at("tenor and bass within a twelfth"),
         source::BACH_CHORALES.at("soprano and alto 143, alto and tenor 334, of 30,038 sonorities; the bass beyond a twelfth 312"),
         source::FUX_FIGURES.at("at most a twelfth and a semitone in two parts"),
     ],
@@ -165,7 +166,7 @@ static UPPER_BRIEF: Case = Case {
     name: "brief",
     when: "the same within a tenth, over one or two chords",
     settings: &[
-        allow(Style::Free, "one or two chords are let pass (Lehmann)"),
+        allow(Style::Free, "one or two chords are let pass (handbooks)"),
         weakness(Style::Chorale, "one or two chords are let pass with a word"),
     ],
 };

@@ -52,7 +52,6 @@ pub const RULE: Rule = Rule {
         source::LEHMANN.at("lessons I and II"),
         source::GROVE.at("Strict Counterpoint"),
         source::OPEN_MUSIC_THEORY,
-        source::CHERUBINI.stricter("off the beat as well"),
         source::FUX_FIGURES.at("none on a downbeat inside; 31 off it"),
     ],
 };
