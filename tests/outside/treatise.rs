@@ -39,6 +39,15 @@ const REMAIN: &[(&str, u32, &str, &str)] = &[
     // F4 A4 Bb4 B4 A4: the top voice turns at F and B, the only such outline in first and second
     // species; it comes about by the chromatic semitone, which four parts excuse.
     ("fux-169", 6, "counterpoint 1", "tritone-outline"),
+    // A3-E4 to G3-D4 on successive downbeats, C4 between in the moving lowest voice: a third does
+    // not save the fifths. Figures 134 and 204, of combined species, have the same; all three are
+    // in three or four parts, none in two.
+    (
+        "fux-175",
+        4,
+        "cantus firmus and counterpoint 4",
+        "downbeat-consecutives",
+    ),
 ];
 
 /// Combined species: what each voice but the cantus is in, from the top, as its note values say.

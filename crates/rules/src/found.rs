@@ -6,7 +6,7 @@ use crate::catalogue::Entry;
 use crate::finding::{Finding, Role, Spot};
 use crate::rule::{Case, NumberOf, Severity};
 use crate::style::{Strictness, Style};
-use crate::view::{Discord, Line, LineMove, PairMove};
+use crate::view::{Discord, Line, LineMove, PairMove, Succession};
 
 /// Collects the findings of one rule under one style.
 pub struct Found<'a> {
@@ -99,6 +99,26 @@ impl<'a> Found<'a> {
                 (Role::With, spot(lower, step.arrival())),
             ],
         });
+    }
+
+    /// A finding about two moments with notes between: it stands at the later one and names the
+    /// notes of the earlier one.
+    pub fn succession(
+        &mut self,
+        case: &'static Case,
+        succession: &Succession<'_>,
+        message: impl FnOnce() -> String,
+    ) {
+        let before = self.list.len();
+        self.pair(case, &succession.step, message);
+        let Some(finding) = self.list.get_mut(before) else {
+            return;
+        };
+        for (role, spot) in &mut finding.related {
+            if *role == Role::From {
+                spot.at = succession.struck_at(spot.voice);
+            }
+        }
     }
 
     /// A finding about one voice's move: it stands at the note reached.

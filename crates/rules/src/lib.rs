@@ -21,8 +21,9 @@ pub use rule::{Case, FAMILIES, Looks, NumberOf, Rule, Severity};
 pub use source::Source;
 pub use style::{Number, Override, STYLES, Setting, Strictness, Style};
 pub use view::{
-    Crossing, Direct, Discord, HighPoint, LastMove, Line, LineMove, Minim, MinorDegree, Over,
-    PairMove, Passage, Passing, Piece, Quick, Run, Sounding, Stretch, Stroke, Tessitura, Value,
+    Crossing, Direct, Discord, HighPoint, LastMove, Level, Line, LineMove, Minim, MinorDegree,
+    Over, PairMove, ParallelRun, Passage, Passing, Piece, Quick, Run, Sounding, Stretch, Stroke,
+    Succession, Tessitura, Value,
 };
 
 /// What every rule file needs.
@@ -38,7 +39,7 @@ pub mod prelude {
     pub use crate::source::{self, Source};
     pub use crate::style::{Setting, Style, allow, fault, remark, weakness};
     pub use crate::view::{
-        Direct, Discord, LastMove, Line, LineMove, MinorDegree, Over, PairMove, Passage, Piece,
-        Sounding, Stroke,
+        Direct, Discord, LastMove, Level, Line, LineMove, MinorDegree, Over, PairMove, ParallelRun,
+        Passage, Piece, Sounding, Stroke, Succession,
     };
 }

@@ -10,6 +10,10 @@ pub mod anticipation;
 pub mod appoggiatura;
 #[path = "rules/line/augmented_interval.rs"]
 pub mod augmented_interval;
+#[path = "rules/motion/barline_consecutives.rs"]
+pub mod barline_consecutives;
+#[path = "rules/motion/beat_consecutives.rs"]
+pub mod beat_consecutives;
 #[path = "rules/line/broken_chord.rs"]
 pub mod broken_chord;
 #[path = "rules/species/cantus.rs"]
@@ -30,6 +34,8 @@ pub mod contrary_fifths;
 pub mod contrary_octaves;
 #[path = "rules/motion/crossing.rs"]
 pub mod crossing;
+#[path = "rules/motion/delayed_consecutives.rs"]
+pub mod delayed_consecutives;
 #[path = "rules/dissonance/diminished_fifth.rs"]
 pub mod diminished_fifth;
 #[path = "rules/line/diminished_interval.rs"]
@@ -40,12 +46,18 @@ pub mod direct_fifths;
 pub mod direct_octaves;
 #[path = "rules/motion/direct_unisons.rs"]
 pub mod direct_unisons;
+#[path = "rules/motion/dissonance_into_perfect.rs"]
+pub mod dissonance_into_perfect;
 #[path = "rules/dissonance/double_neighbour.rs"]
 pub mod double_neighbour;
+#[path = "rules/motion/downbeat_consecutives.rs"]
+pub mod downbeat_consecutives;
 #[path = "rules/species/eighth_notes.rs"]
 pub mod eighth_notes;
 #[path = "rules/dissonance/escape_note.rs"]
 pub mod escape_note;
+#[path = "rules/sonority/few_imperfects.rs"]
+pub mod few_imperfects;
 #[path = "rules/line/figure_repeated.rs"]
 pub mod figure_repeated;
 #[path = "rules/species/florid_rhythm.rs"]
@@ -68,12 +80,18 @@ pub mod leap_from_accent;
 pub mod leap_unprepared;
 #[path = "rules/line/leap_unrecovered.rs"]
 pub mod leap_unrecovered;
+#[path = "rules/motion/leaps_into_perfect.rs"]
+pub mod leaps_into_perfect;
 #[path = "rules/line/leaps_one_way.rs"]
 pub mod leaps_one_way;
 #[path = "rules/writing/licence_idle.rs"]
 pub mod licence_idle;
+#[path = "rules/sonority/low_crowding.rs"]
+pub mod low_crowding;
 #[path = "rules/line/melodic_minor.rs"]
 pub mod melodic_minor;
+#[path = "rules/motion/mi_contra_fa.rs"]
+pub mod mi_contra_fa;
 #[path = "rules/range/mode_ambitus.rs"]
 pub mod mode_ambitus;
 #[path = "rules/dissonance/neighbour_note.rs"]
@@ -82,12 +100,20 @@ pub mod neighbour_note;
 pub mod nota_cambiata;
 #[path = "rules/writing/octave_doubt.rs"]
 pub mod octave_doubt;
+#[path = "rules/motion/offbeat_consecutives.rs"]
+pub mod offbeat_consecutives;
 #[path = "rules/sonority/opening_interval.rs"]
 pub mod opening_interval;
+#[path = "rules/motion/ottava_battuta.rs"]
+pub mod ottava_battuta;
 #[path = "rules/motion/overlap.rs"]
 pub mod overlap;
+#[path = "rules/motion/parallel_dissonances.rs"]
+pub mod parallel_dissonances;
 #[path = "rules/motion/parallel_fifths.rs"]
 pub mod parallel_fifths;
+#[path = "rules/motion/parallel_fourths.rs"]
+pub mod parallel_fourths;
 #[path = "rules/motion/parallel_octaves.rs"]
 pub mod parallel_octaves;
 #[path = "rules/motion/parallel_unisons.rs"]
@@ -96,6 +122,8 @@ pub mod parallel_unisons;
 pub mod passing_note;
 #[path = "rules/dissonance/pedal_point.rs"]
 pub mod pedal_point;
+#[path = "rules/motion/perfect_to_perfect.rs"]
+pub mod perfect_to_perfect;
 #[path = "rules/line/quarter_leaps.rs"]
 pub mod quarter_leaps;
 #[path = "rules/cadence/raised_seventh.rs"]
@@ -106,6 +134,8 @@ pub mod reading;
 pub mod repeated_note;
 #[path = "rules/dissonance/retardation.rs"]
 pub mod retardation;
+#[path = "rules/motion/running_imperfects.rs"]
+pub mod running_imperfects;
 #[path = "rules/line/seventh_leap.rs"]
 pub mod seventh_leap;
 #[path = "rules/motion/similar_leaps.rs"]
@@ -134,6 +164,8 @@ pub mod too_many_leaps;
 pub mod tritone_outline;
 #[path = "rules/motion/unequal_fifths.rs"]
 pub mod unequal_fifths;
+#[path = "rules/sonority/unison_inside.rs"]
+pub mod unison_inside;
 #[path = "rules/writing/unwritten.rs"]
 pub mod unwritten;
 #[path = "rules/line/vocal_rhythm.rs"]
@@ -398,6 +430,18 @@ pub(crate) static FILES: &[File] = &[
     },
     File {
         family: "motion",
+        stem: "barline_consecutives",
+        rule: &barline_consecutives::RULE,
+        text: include_str!("rules/motion/barline_consecutives.rs"),
+    },
+    File {
+        family: "motion",
+        stem: "beat_consecutives",
+        rule: &beat_consecutives::RULE,
+        text: include_str!("rules/motion/beat_consecutives.rs"),
+    },
+    File {
+        family: "motion",
         stem: "contrary_fifths",
         rule: &contrary_fifths::RULE,
         text: include_str!("rules/motion/contrary_fifths.rs"),
@@ -413,6 +457,12 @@ pub(crate) static FILES: &[File] = &[
         stem: "crossing",
         rule: &crossing::RULE,
         text: include_str!("rules/motion/crossing.rs"),
+    },
+    File {
+        family: "motion",
+        stem: "delayed_consecutives",
+        rule: &delayed_consecutives::RULE,
+        text: include_str!("rules/motion/delayed_consecutives.rs"),
     },
     File {
         family: "motion",
@@ -434,15 +484,63 @@ pub(crate) static FILES: &[File] = &[
     },
     File {
         family: "motion",
+        stem: "dissonance_into_perfect",
+        rule: &dissonance_into_perfect::RULE,
+        text: include_str!("rules/motion/dissonance_into_perfect.rs"),
+    },
+    File {
+        family: "motion",
+        stem: "downbeat_consecutives",
+        rule: &downbeat_consecutives::RULE,
+        text: include_str!("rules/motion/downbeat_consecutives.rs"),
+    },
+    File {
+        family: "motion",
+        stem: "leaps_into_perfect",
+        rule: &leaps_into_perfect::RULE,
+        text: include_str!("rules/motion/leaps_into_perfect.rs"),
+    },
+    File {
+        family: "motion",
+        stem: "mi_contra_fa",
+        rule: &mi_contra_fa::RULE,
+        text: include_str!("rules/motion/mi_contra_fa.rs"),
+    },
+    File {
+        family: "motion",
+        stem: "offbeat_consecutives",
+        rule: &offbeat_consecutives::RULE,
+        text: include_str!("rules/motion/offbeat_consecutives.rs"),
+    },
+    File {
+        family: "motion",
+        stem: "ottava_battuta",
+        rule: &ottava_battuta::RULE,
+        text: include_str!("rules/motion/ottava_battuta.rs"),
+    },
+    File {
+        family: "motion",
         stem: "overlap",
         rule: &overlap::RULE,
         text: include_str!("rules/motion/overlap.rs"),
     },
     File {
         family: "motion",
+        stem: "parallel_dissonances",
+        rule: &parallel_dissonances::RULE,
+        text: include_str!("rules/motion/parallel_dissonances.rs"),
+    },
+    File {
+        family: "motion",
         stem: "parallel_fifths",
         rule: &parallel_fifths::RULE,
         text: include_str!("rules/motion/parallel_fifths.rs"),
+    },
+    File {
+        family: "motion",
+        stem: "parallel_fourths",
+        rule: &parallel_fourths::RULE,
+        text: include_str!("rules/motion/parallel_fourths.rs"),
     },
     File {
         family: "motion",
@@ -455,6 +553,18 @@ pub(crate) static FILES: &[File] = &[
         stem: "parallel_unisons",
         rule: &parallel_unisons::RULE,
         text: include_str!("rules/motion/parallel_unisons.rs"),
+    },
+    File {
+        family: "motion",
+        stem: "perfect_to_perfect",
+        rule: &perfect_to_perfect::RULE,
+        text: include_str!("rules/motion/perfect_to_perfect.rs"),
+    },
+    File {
+        family: "motion",
+        stem: "running_imperfects",
+        rule: &running_imperfects::RULE,
+        text: include_str!("rules/motion/running_imperfects.rs"),
     },
     File {
         family: "motion",
@@ -494,6 +604,18 @@ pub(crate) static FILES: &[File] = &[
     },
     File {
         family: "sonority",
+        stem: "few_imperfects",
+        rule: &few_imperfects::RULE,
+        text: include_str!("rules/sonority/few_imperfects.rs"),
+    },
+    File {
+        family: "sonority",
+        stem: "low_crowding",
+        rule: &low_crowding::RULE,
+        text: include_str!("rules/sonority/low_crowding.rs"),
+    },
+    File {
+        family: "sonority",
         stem: "opening_interval",
         rule: &opening_interval::RULE,
         text: include_str!("rules/sonority/opening_interval.rs"),
@@ -503,6 +625,12 @@ pub(crate) static FILES: &[File] = &[
         stem: "spacing",
         rule: &spacing::RULE,
         text: include_str!("rules/sonority/spacing.rs"),
+    },
+    File {
+        family: "sonority",
+        stem: "unison_inside",
+        rule: &unison_inside::RULE,
+        text: include_str!("rules/sonority/unison_inside.rs"),
     },
     File {
         family: "species",

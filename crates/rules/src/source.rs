@@ -218,6 +218,36 @@ pub const ORCHESTRATION_HANDBOOKS: Source = source(
     0,
     Known::FromMemory,
 );
+/// A training text.
+pub const NAVY: Source = source(
+    "",
+    "Harmony, a training text of the US Navy",
+    0,
+    Known::Read,
+);
+/// An examiners' guide.
+pub const AP_GUIDE: Source = source(
+    "",
+    "AP Music Theory, scoring guidelines for part-writing",
+    2015,
+    Known::Read,
+);
+/// A study of the listener's ear, by its rules.
+pub const HURON: Source = source(
+    "D. Huron",
+    "Tone and Voice, Music Perception (its list of rules, from seminar slides)",
+    2001,
+    Known::Read,
+);
+/// A choral guide.
+pub const CHORAL_GUIDE: Source = source("", "a guide to chorale writing", 0, Known::Read);
+/// Cherubini's course.
+pub const CHERUBINI: Source = source(
+    "L. Cherubini",
+    "A Course of Counterpoint and Fugue",
+    1835,
+    Known::FromMemory,
+);
 /// What the trade agrees on.
 pub const COMMON_PRACTICE: Source = source("", "common practice", 0, Known::FromMemory);
 /// The definition of our own notation.

@@ -7,6 +7,8 @@ mod close;
 mod degree;
 mod discord;
 mod ending;
+mod figure;
+mod levels;
 mod line;
 mod pair;
 mod piece;
@@ -20,6 +22,7 @@ use partwright_score::{Pair, PairStep, Score, Texture};
 
 pub use degree::{MinorDegree, Tessitura};
 pub use ending::LastMove;
+pub use levels::{Level, ParallelRun, Succession};
 pub use line::{LineMove, Run};
 pub use pair::Direct;
 pub use piece::{Crossing, Passage};

@@ -265,6 +265,11 @@ impl<'a> Sounding<'a> {
     /// It begins between beats.
     #[must_use]
     pub fn is_off_beat(self) -> bool {
-        self.piece.is_off_beat(self.onset())
+        let score = self.piece.score;
+        let beat = self.sonority().and_then(|s| {
+            let bar = score.bars.get(s.bar as usize)?;
+            Some(s.level > score.metres.get(bar.metre as usize)?.beat_level())
+        });
+        beat.unwrap_or(false)
     }
 }

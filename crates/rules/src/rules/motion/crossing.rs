@@ -47,7 +47,7 @@
 //! voice S2 soprano
 //!
 //! S1 | D5 C B4 |
-//! S2 | B4 D C |
+//! S2 | B4 E4 D4 |
 //! ```
 //!
 //! ```voices

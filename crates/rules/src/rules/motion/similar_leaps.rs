@@ -72,9 +72,7 @@ fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
     if !same_way || !step.leaps(top) || !step.leaps(foot) || step.sounding.may_keep_chord() {
         return;
     }
-    let root_moves =
-        matches!(step.size_of_move(foot), Some(3 | 4)) && step.is_with_bass() != Some(false);
-    if root_moves {
+    if step.bass_leaps_fourth_or_fifth() {
         return;
     }
     found.pair(&ORDINARY, step, || {

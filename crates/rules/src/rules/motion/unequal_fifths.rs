@@ -57,13 +57,22 @@
 //! # What to do
 //!
 //! Let the diminished fifth close to a third.
+//!
+//! Lehmann forbids a diminished fifth before a perfect one with the bass, and finds it good where
+//! upper voices rise by step; some examiners let both orders pass unless the bass takes part, or
+//! falling; out of a perfect fifth most treatises are free.
 
 use crate::prelude::*;
 
 /// The rule.
 pub const RULE: Rule = Rule {
     looks: Looks::Pairs(check),
-    cases: &[&INTO_WITH_BASS, &INTO_PERFECT, &OUT_OF_PERFECT],
+    cases: &[
+        &INTO_WITH_BASS,
+        &INTO_PERFECT,
+        &OUT_OF_PERFECT,
+        &OUT_WITH_BASS,
+    ],
     numbers: &[],
     sources: &[
         source::LEHMANN.at("lesson XI, Fig. 92c"),
@@ -116,6 +125,19 @@ static OUT_OF_PERFECT: Case = Case {
     ],
 };
 
+static OUT_WITH_BASS: Case = Case {
+    name: "out-of-perfect-with-bass",
+    when: "the same with the bass",
+    settings: &[
+        allow(
+            Style::Free,
+            "free in most treatises; a stricter house minds it (13 in 370 chorales)",
+        ),
+        weakness(Style::Motet, "the diminished fifth must resolve or pass"),
+        weakness(Style::Species1, "the diminished fifth must resolve or pass"),
+    ],
+};
+
 fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
     let Some(Consecutive::Unequal(Family::Fifth, way)) = step.consecutive() else {
         return;
@@ -145,7 +167,12 @@ fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
             if !is_diminished(step.after()) || goes_on_well(step) {
                 return;
             }
-            found.pair(&OUT_OF_PERFECT, step, || {
+            let case = if step.is_with_bass() == Some(true) {
+                &OUT_WITH_BASS
+            } else {
+                &OUT_OF_PERFECT
+            };
+            found.pair(case, step, || {
                 format!(
                     "Unequal fifths: {}, perfect to diminished, and the diminished fifth does not resolve. Close it to a third.",
                     step.story()

@@ -62,6 +62,30 @@
 //! C | C3 B2 |
 //! ```
 //!
+//! A gap that another voice fills, and in a motet one chord within a tenth:
+//!
+//! ```voices
+//! style motet
+//! equal S T
+//! voice S soprano
+//! voice A alto
+//! voice T tenor
+//! voice B bass
+//!
+//! S | E5 - |
+//! A | C4 - |
+//! T | G4 - |
+//! B | C3 - |
+//! ```
+//!
+//! ```voices
+//! style motet
+//!
+//! S | C5 E5 C5 |
+//! A | E4 C4 E4 |
+//! B | C3 C3 C3 |
+//! ```
+//!
 //! # What to do
 //!
 //! Raise the lower voice or lower the upper one, or exchange notes with a third.
@@ -71,11 +95,12 @@ use crate::prelude::*;
 /// The rule.
 pub const RULE: Rule = Rule {
     looks: Looks::Piece(check),
-    cases: &[&UPPER, &UPPER_LONG, &TWO_PARTS, &TWO_PARTS_LONG, &BASS, &SOPRANO_TENOR],
-    numbers: &[&NEIGHBOURS, &CHORDS, &BASS_GAP, &FIRST_AND_THIRD, &TWO_PARTS_GAP],
+    cases: &[&UPPER, &UPPER_LONG, &UPPER_BRIEF, &TWO_PARTS, &TWO_PARTS_LONG, &BASS, &BASS_ADVICE, &SOPRANO_TENOR],
+    numbers: &[&NEIGHBOURS, &CHORDS, &BASS_GAP, &BASS_ADVISED, &FIRST_AND_THIRD, &TWO_PARTS_GAP],
     sources: &[
         source::OPEN_MUSIC_THEORY,
         source::LEHMANN.at("lesson XI"),
+        source::CHORAL_GUIDE.at("tenor and bass within a twelfth"),
         source::BACH_CHORALES.at("soprano and alto 143, alto and tenor 334, of 30,038 sonorities; the bass beyond a twelfth 312"),
         source::FUX_FIGURES.at("at most a twelfth and a semitone in two parts"),
     ],
@@ -97,6 +122,12 @@ static BASS_GAP: NumberOf = NumberOf {
     name: "bass",
     means: "the widest interval between the bass and its neighbour, as its number",
     value: 15,
+    bounds: (8, 36),
+};
+static BASS_ADVISED: NumberOf = NumberOf {
+    name: "bass-advised",
+    means: "the interval between the bass and its neighbour that choral guides advise to keep within, as its number",
+    value: 12,
     bounds: (8, 36),
 };
 static FIRST_AND_THIRD: NumberOf = NumberOf {
@@ -131,6 +162,15 @@ static UPPER_LONG: Case = Case {
     ],
 };
 
+static UPPER_BRIEF: Case = Case {
+    name: "brief",
+    when: "the same within a tenth, over one or two chords",
+    settings: &[
+        allow(Style::Free, "one or two chords are let pass (handbooks)"),
+        weakness(Style::Chorale, "one or two chords are let pass with a word"),
+    ],
+};
+
 static TWO_PARTS: Case = Case {
     name: "two-parts",
     when: "two voices more than a twelfth apart, in two parts",
@@ -160,6 +200,15 @@ static BASS: Case = Case {
     ],
 };
 
+static BASS_ADVICE: Case = Case {
+    name: "bass-advice",
+    when: "the bass more than a twelfth under its neighbour, but within two octaves",
+    settings: &[
+        allow(Style::Free, "open writing is free"),
+        remark(Style::Chorale, "advised against (choral guides)"),
+    ],
+};
+
 static SOPRANO_TENOR: Case = Case {
     name: "soprano-tenor",
     when: "the first and the third of four voices more than a twelfth apart",
@@ -186,43 +235,48 @@ fn check(piece: &Piece<'_>, found: &mut Found<'_>) {
         );
         let long = usize::try_from(found.number(&CHORDS)).unwrap_or(0);
         // What is not wide by any measure is no matter: most sonorities end here.
-        let least = [neighbours, bass, third, two, LONG_TENTH]
+        let advised = steps(&BASS_ADVISED);
+        let least = [neighbours, bass, advised, third, two, LONG_TENTH]
             .into_iter()
             .min()
             .unwrap_or(0);
         let wide = piece.passages(pair, |s| s.is_wider_than(pair, least));
-        let mut report =
-            |test: &dyn Fn(&Sounding<'_>) -> bool, limit, case, longer: Option<&'static Case>| {
-                for run in piece.within(pair, &wide, |s| s.is_wider_than(pair, limit) && test(&s)) {
-                    let case = longer.filter(|_| run.chords > long).unwrap_or(case);
-                    tell(piece, found, pair, &run, case, limit);
-                }
-            };
+        let mut report = |test: &dyn Fn(&Sounding<'_>) -> bool, limit, case| {
+            for run in piece.within(pair, &wide, |s| s.is_wider_than(pair, limit) && test(&s)) {
+                tell(piece, found, pair, &run, case, limit);
+            }
+        };
         let beside = |s: &Sounding<'_>| s.parts() >= 3 && s.are_neighbours(pair);
-        report(
-            &|s| beside(s) && !s.is_lowest_present(pair.lower),
-            neighbours,
-            &UPPER,
-            Some(&UPPER_LONG),
-        );
         report(
             &|s| beside(s) && s.is_lowest_present(pair.lower),
             bass,
             &BASS,
-            None,
         );
         report(
             &|s| s.parts() == 4 && s.are_first_and_third(pair),
             third,
             &SOPRANO_TENOR,
-            None,
         );
-        report(
-            &|s| piece.voices() == 2 && s.parts() == 2,
-            two,
-            &TWO_PARTS,
-            None,
-        );
+        report(&|s| piece.voices() == 2 && s.parts() == 2, two, &TWO_PARTS);
+        let upper = |s: Sounding<'_>| beside(&s) && !s.stands_on_bass(pair);
+        for run in piece.within(pair, &wide, |s| {
+            upper(s) && s.is_wider_than(pair, neighbours) && !s.is_filled(pair)
+        }) {
+            let wider =
+                (run.first..run.end).any(|k| piece.sounding(k).is_wider_than(pair, LONG_TENTH));
+            let case = match run.chords > long {
+                true => &UPPER_LONG,
+                false if wider => &UPPER,
+                false => &UPPER_BRIEF,
+            };
+            tell(piece, found, pair, &run, case, neighbours);
+        }
+        let low = |s: Sounding<'_>| beside(&s) && s.is_lowest_present(pair.lower);
+        for run in piece.within(pair, &wide, |s| low(s) && s.is_wider_than(pair, advised)) {
+            if !(run.first..run.end).any(|k| piece.sounding(k).is_wider_than(pair, bass)) {
+                tell(piece, found, pair, &run, &BASS_ADVICE, advised);
+            }
+        }
         for run in piece.within(pair, &wide, |s| {
             piece.voices() == 2 && s.is_wider_than(pair, LONG_TENTH) && s.parts() == 2
         }) {
