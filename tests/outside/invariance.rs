@@ -8,9 +8,8 @@ use partwright_sheet::{Heading, write};
 use crate::scores::set;
 use crate::treatise::figures;
 
-/// Rules that read letters by their names: the modes of the treatise and the signs of the old
-/// style belong to the untransposed system.
-const BY_LETTER: [&str; 0] = [];
+/// Rules that read letters by their names: the signs of the old style belong to its signatures.
+const BY_LETTER: [&str; 1] = ["foreign-accidental"];
 
 /// A finding without its words: rule, severity, place, voices.
 type Bare = (&'static str, String, String, Vec<usize>);

@@ -48,6 +48,49 @@ const REMAIN: &[(&str, u32, &str, &str)] = &[
         "cantus firmus and counterpoint 4",
         "downbeat-consecutives",
     ),
+    (
+        "fux-134",
+        3,
+        "counterpoint 2 and cantus firmus",
+        "downbeat-consecutives",
+    ),
+    (
+        "fux-204",
+        3,
+        "counterpoint 1 and cantus firmus",
+        "downbeat-consecutives",
+    ),
+    // Octaves on the second quarter and the downbeat after it, in third species in four parts.
+    (
+        "fux-177",
+        11,
+        "counterpoint 1 and counterpoint 4",
+        "barline-consecutives",
+    ),
+    (
+        "fux-185",
+        2,
+        "counterpoint 1 and counterpoint 3",
+        "barline-consecutives",
+    ),
+    (
+        "fux-186",
+        10,
+        "cantus firmus and counterpoint 4",
+        "barline-consecutives",
+    ),
+    // B3 A3 F3 C4 and F3 G3 B3 G3: inner and lower lines in three and four parts that turn at both
+    // ends of an augmented fourth.
+    ("fux-144", 7, "counterpoint 2", "tritone-outline"),
+    ("fux-177", 4, "counterpoint 3", "tritone-outline"),
+    // C5 over a held G3, tied into the next bar and resolved there: the consonant fourth of the
+    // old style, in three parts.
+    (
+        "fux-141",
+        3,
+        "counterpoint 1 and counterpoint 3",
+        "consonant-fourth",
+    ),
 ];
 
 /// Combined species: what each voice but the cantus is in, from the top, as its note values say.

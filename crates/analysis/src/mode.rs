@@ -56,6 +56,28 @@ pub fn of_cantus(score: &Score) -> Option<Final> {
     })
 }
 
+/// The signature that most notes of a score fit, as a number of flats; negative for sharps, and
+/// the smallest where several fit as many.
+#[must_use]
+pub fn likely_flats(score: &Score) -> i32 {
+    let mut counts = [0_u32; 64];
+    let notes = score.voices.iter().flat_map(|voice| &voice.notes);
+    for pitch in notes.filter_map(|note| note.sound.pitch()) {
+        let slot = usize::try_from(fifths(pitch) + 32).ok();
+        if let Some(count) = slot.and_then(|slot| counts.get_mut(slot)) {
+            *count += 1;
+        }
+    }
+    // Without signs the seven letters are F to B: -1 to 5 among the fifths.
+    let fit = |flats: i32| -> u32 {
+        let first = usize::try_from(31 - flats).unwrap_or(0);
+        counts.iter().skip(first).take(7).sum()
+    };
+    (-7..=7)
+        .max_by_key(|&flats| (fit(flats), -i32::abs(flats)))
+        .unwrap_or(0)
+}
+
 /// A letter and sign by its place among the fifths: 0 for C, 1 for G, -1 for F, 6 for F#.
 #[must_use]
 pub fn fifths(pitch: Pitch) -> i32 {

@@ -24,6 +24,7 @@ fn repeated(rows: &[&str], look: fn(&PairMove<'_>) -> Option<(String, bool)>) ->
     let piece = Piece {
         score: &score,
         texture: &texture,
+        analysis: &partwright_check::Analysis::default(),
     };
     let pair = Pair { upper: 0, lower: 1 };
     let mut found = Vec::new();
@@ -162,6 +163,7 @@ fn runs_are_counted_at_each_level() {
         let piece = Piece {
             score: &score,
             texture: &texture,
+            analysis: &partwright_check::Analysis::default(),
         };
         let runs = piece.parallel_runs(Pair { upper: 0, lower: 1 }, level);
         runs.iter().map(|run| (run.sixths, run.intervals)).collect()

@@ -35,7 +35,7 @@ fn severities(style: Style, from: Pitch, to: Pitch) -> Vec<Severity> {
     let mine = checked
         .findings
         .iter()
-        .filter(|f| family_of(f.rule) == Some("line"));
+        .filter(|f| family_of(f.rule) == Some("line") && f.rule != "foreign-accidental");
     mine.map(|f| f.severity).collect()
 }
 

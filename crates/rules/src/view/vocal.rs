@@ -145,14 +145,21 @@ impl Line<'_> {
             .then(|| ((line - note.onset) / minim, (note.end() - line) / minim))
     }
 
-    /// A pitch is outside the notes of the modes with their usual accidentals, under the key
-    /// stated at the beginning: B flat to G sharp; E flat with a flat in the signature or without
-    /// a key; a further flat, or sharp, for each further one of the signature.
-    #[must_use]
-    pub fn is_foreign(&self, pitch: Pitch) -> bool {
-        let flats = self.piece.stated_final().map_or(1, |key| key.flats);
-        let (lowest, highest) = (-2 - flats.max(0), 8 - flats.min(0));
-        !(lowest..=highest).contains(&mode::fifths(pitch))
+    /// Tells whether a pitch is outside the notes of the modes with their usual accidentals, under
+    /// the key stated at the beginning, else the signature that most notes fit: B flat to G sharp;
+    /// E flat with a flat in the signature or without a key; a further flat, or sharp, for each
+    /// further one of the signature.
+    pub fn foreign(&self) -> impl Fn(Pitch) -> bool + use<> {
+        let piece = self.piece;
+        let flats = piece.stated_final().map_or_else(
+            || match mode::likely_flats(piece.score) {
+                0 => 1,
+                flats => flats,
+            },
+            |key| key.flats,
+        );
+        let known = -2 - flats.max(0)..=8 - flats.min(0);
+        move |pitch| !known.contains(&mode::fifths(pitch))
     }
 
     /// The notes of a run keep within the authentic or the plagal octave of a final, and so many

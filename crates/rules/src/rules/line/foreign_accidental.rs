@@ -67,7 +67,8 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
     if found.style() != Style::Motet {
         return;
     }
-    for run in line.runs(|pitch| line.is_foreign(pitch).then_some(pitch)) {
+    let is_foreign = line.foreign();
+    for run in line.runs(|pitch| is_foreign(pitch).then_some(pitch)) {
         found.passage(&ORDINARY, &[line.voice], (run.from, run.until), || {
             format!(
                 "Foreign accidental: {} has {}, which the mode does not know. Keep to its own notes, B flat, and F, C and G sharp.",

@@ -17,8 +17,8 @@
 //! ```voices
 //! style species-1
 //!
-//! S | F5 G5 |
-//! B | G4 C4 |
+//! S | A4 G4 |
+//! B | F3 C4 |
 //! ```
 //!
 //! # Does not apply
@@ -29,7 +29,7 @@
 //! style species-1
 //!
 //! S | E5 G5 |
-//! A | C5 E5 |
+//! A | B4 E5 |
 //! B | G4 C4 |
 //! ```
 //!
