@@ -21,7 +21,8 @@ pub use rule::{Case, FAMILIES, Looks, NumberOf, Rule, Severity};
 pub use source::Source;
 pub use style::{Number, Override, STYLES, Setting, Strictness, Style};
 pub use view::{
-    Crossing, Direct, Discord, Line, LineMove, NotesOver, PairMove, Passage, Piece, Run, Sounding,
+    Crossing, Direct, Discord, Line, LineMove, NotesOver, Numbers, PairMove, Passage, Piece, Run,
+    SixFive, Sounding, Together,
 };
 
 /// What every rule file needs.
@@ -37,6 +38,6 @@ pub mod prelude {
     pub use crate::source::{self, Source};
     pub use crate::style::{Setting, Style, allow, fault, remark, weakness};
     pub use crate::view::{
-        Direct, Discord, Line, LineMove, NotesOver, PairMove, Passage, Piece, Sounding,
+        Direct, Discord, Line, LineMove, NotesOver, Numbers, PairMove, Passage, Piece, Sounding,
     };
 }

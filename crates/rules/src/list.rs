@@ -10,10 +10,14 @@ pub mod anticipation;
 pub mod appoggiatura;
 #[path = "rules/line/augmented_interval.rs"]
 pub mod augmented_interval;
+#[path = "rules/dissonance/broken_ties.rs"]
+pub mod broken_ties;
 #[path = "rules/dissonance/cambiata.rs"]
 pub mod cambiata;
 #[path = "rules/line/chromatic_semitone.rs"]
 pub mod chromatic_semitone;
+#[path = "rules/dissonance/clash_together.rs"]
+pub mod clash_together;
 #[path = "rules/cadence/closing_interval.rs"]
 pub mod closing_interval;
 #[path = "rules/range/compass.rs"]
@@ -50,12 +54,16 @@ pub mod leap_unrecovered;
 pub mod leaps_one_way;
 #[path = "rules/writing/licence_idle.rs"]
 pub mod licence_idle;
+#[path = "rules/dissonance/long_dissonance.rs"]
+pub mod long_dissonance;
 #[path = "rules/dissonance/neighbour_note.rs"]
 pub mod neighbour_note;
 #[path = "rules/writing/octave_doubt.rs"]
 pub mod octave_doubt;
 #[path = "rules/sonority/opening_interval.rs"]
 pub mod opening_interval;
+#[path = "rules/dissonance/ornamented_resolution.rs"]
+pub mod ornamented_resolution;
 #[path = "rules/motion/overlap.rs"]
 pub mod overlap;
 #[path = "rules/motion/parallel_fifths.rs"]
@@ -72,28 +80,40 @@ pub mod pedal;
 pub mod reading;
 #[path = "rules/line/repeated_note.rs"]
 pub mod repeated_note;
+#[path = "rules/dissonance/resolution_sounding.rs"]
+pub mod resolution_sounding;
 #[path = "rules/dissonance/retardation.rs"]
 pub mod retardation;
 #[path = "rules/line/seventh_leap.rs"]
 pub mod seventh_leap;
 #[path = "rules/motion/similar_leaps.rs"]
 pub mod similar_leaps;
+#[path = "rules/dissonance/six_five_exchange.rs"]
+pub mod six_five_exchange;
 #[path = "rules/line/sixth_leap.rs"]
 pub mod sixth_leap;
 #[path = "rules/sonority/spacing.rs"]
 pub mod spacing;
 #[path = "rules/species/species_rhythm.rs"]
 pub mod species_rhythm;
+#[path = "rules/dissonance/suspension_chain.rs"]
+pub mod suspension_chain;
+#[path = "rules/dissonance/suspension_kind.rs"]
+pub mod suspension_kind;
 #[path = "rules/dissonance/suspension_position.rs"]
 pub mod suspension_position;
 #[path = "rules/dissonance/suspension_preparation.rs"]
 pub mod suspension_preparation;
 #[path = "rules/dissonance/suspension_resolution.rs"]
 pub mod suspension_resolution;
+#[path = "rules/sonority/third_missing.rs"]
+pub mod third_missing;
 #[path = "rules/motion/unequal_fifths.rs"]
 pub mod unequal_fifths;
 #[path = "rules/writing/unwritten.rs"]
 pub mod unwritten;
+#[path = "rules/dissonance/upper_clash.rs"]
+pub mod upper_clash;
 #[path = "rules/writing/voice_silent.rs"]
 pub mod voice_silent;
 
@@ -118,9 +138,21 @@ pub(crate) static FILES: &[File] = &[
     },
     File {
         family: "dissonance",
+        stem: "broken_ties",
+        rule: &broken_ties::RULE,
+        text: include_str!("rules/dissonance/broken_ties.rs"),
+    },
+    File {
+        family: "dissonance",
         stem: "cambiata",
         rule: &cambiata::RULE,
         text: include_str!("rules/dissonance/cambiata.rs"),
+    },
+    File {
+        family: "dissonance",
+        stem: "clash_together",
+        rule: &clash_together::RULE,
+        text: include_str!("rules/dissonance/clash_together.rs"),
     },
     File {
         family: "dissonance",
@@ -154,9 +186,21 @@ pub(crate) static FILES: &[File] = &[
     },
     File {
         family: "dissonance",
+        stem: "long_dissonance",
+        rule: &long_dissonance::RULE,
+        text: include_str!("rules/dissonance/long_dissonance.rs"),
+    },
+    File {
+        family: "dissonance",
         stem: "neighbour_note",
         rule: &neighbour_note::RULE,
         text: include_str!("rules/dissonance/neighbour_note.rs"),
+    },
+    File {
+        family: "dissonance",
+        stem: "ornamented_resolution",
+        rule: &ornamented_resolution::RULE,
+        text: include_str!("rules/dissonance/ornamented_resolution.rs"),
     },
     File {
         family: "dissonance",
@@ -172,9 +216,33 @@ pub(crate) static FILES: &[File] = &[
     },
     File {
         family: "dissonance",
+        stem: "resolution_sounding",
+        rule: &resolution_sounding::RULE,
+        text: include_str!("rules/dissonance/resolution_sounding.rs"),
+    },
+    File {
+        family: "dissonance",
         stem: "retardation",
         rule: &retardation::RULE,
         text: include_str!("rules/dissonance/retardation.rs"),
+    },
+    File {
+        family: "dissonance",
+        stem: "six_five_exchange",
+        rule: &six_five_exchange::RULE,
+        text: include_str!("rules/dissonance/six_five_exchange.rs"),
+    },
+    File {
+        family: "dissonance",
+        stem: "suspension_chain",
+        rule: &suspension_chain::RULE,
+        text: include_str!("rules/dissonance/suspension_chain.rs"),
+    },
+    File {
+        family: "dissonance",
+        stem: "suspension_kind",
+        rule: &suspension_kind::RULE,
+        text: include_str!("rules/dissonance/suspension_kind.rs"),
     },
     File {
         family: "dissonance",
@@ -193,6 +261,12 @@ pub(crate) static FILES: &[File] = &[
         stem: "suspension_resolution",
         rule: &suspension_resolution::RULE,
         text: include_str!("rules/dissonance/suspension_resolution.rs"),
+    },
+    File {
+        family: "dissonance",
+        stem: "upper_clash",
+        rule: &upper_clash::RULE,
+        text: include_str!("rules/dissonance/upper_clash.rs"),
     },
     File {
         family: "line",
@@ -343,6 +417,12 @@ pub(crate) static FILES: &[File] = &[
         stem: "spacing",
         rule: &spacing::RULE,
         text: include_str!("rules/sonority/spacing.rs"),
+    },
+    File {
+        family: "sonority",
+        stem: "third_missing",
+        rule: &third_missing::RULE,
+        text: include_str!("rules/sonority/third_missing.rs"),
     },
     File {
         family: "species",

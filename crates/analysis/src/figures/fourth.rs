@@ -1,6 +1,8 @@
 //! The consonant fourth: over a held bass, reached by step on a weak moment and held into a strong
 //! one, on which it is dissonant and then resolves (Jeppesen, from memory).
 
+use partwright_score::Time;
+
 use super::{Figure, Place};
 use crate::consonance;
 
@@ -14,18 +16,24 @@ pub(super) fn ask(place: &Place<'_>) -> Result<Figure, &'static str> {
     if place.other().is_none_or(|note| note.onset >= place.at) {
         return Err("the lowest voice does not hold its note");
     }
-    if place.into().is_none_or(|into| into.steps.abs() != 1) {
+    // It may have been sounded early.
+    let before = if place.held_from().is_some() { -2 } else { -1 };
+    if place.step(before).is_none_or(|into| into.steps.abs() != 1) {
         return Err("it is not reached by step");
     }
     let this = place.this().ok_or("it was there before")?;
-    let held_into_stronger = place
-        .texture
-        .sonorities()
-        .get(place.sonority + 1..)
-        .unwrap_or_default()
-        .iter()
-        .take_while(|s| s.onset < this.end())
-        .any(|s| s.level < place.score.level(place.at));
+    // Where nothing is struck on the strong moment, it halves the note or begins a bar.
+    let here = place.score.level(place.at);
+    let is_stronger = |at: Time| at > place.at && at < this.end() && place.score.level(at) < here;
+    let later = place.texture.sonorities().get(place.sonority + 1..);
+    let struck = later.unwrap_or_default().iter().map(|s| s.onset);
+    let bars = place.score.bars.iter().map(|bar| bar.onset);
+    let held_into_stronger = is_stronger(place.at + this.length / 2)
+        || struck.take_while(|&at| at < this.end()).any(is_stronger)
+        || bars
+            .skip_while(|&at| at <= place.at)
+            .take(1)
+            .any(is_stronger);
     if !held_into_stronger {
         return Err("it is not held into a stronger moment");
     }

@@ -144,8 +144,9 @@ impl Dissonance {
 type Question = fn(&Place<'_>) -> Result<Figure, &'static str>;
 
 /// The figures in the order they are asked, with their names. The struck ones of weak moments
-/// come first; a held note is asked for its resolution before the note struck against it is
-/// taken for an accented ornament.
+/// come first; a held note is asked for its resolution down before the note struck against it is
+/// taken for an accented ornament, and for one up only after. A pedal is what no ornament above
+/// it explains.
 const QUESTIONS: [(&str, Question); 15] = [
     ("diminished fifth that closes", diminished_fifth::together),
     ("passing note", passing::unaccented),
@@ -156,10 +157,10 @@ const QUESTIONS: [(&str, Question); 15] = [
     ("cambiata", cambiata::ask),
     ("anticipation", anticipation::ask),
     ("suspension", suspension::ask),
-    ("retardation", suspension::ask_upward),
-    ("pedal", pedal::ask),
     ("accented passing note", passing::accented),
     ("accented neighbour", neighbour::accented),
+    ("retardation", suspension::ask_upward),
+    ("pedal", pedal::ask),
     ("escape note", escape::ask),
     ("appoggiatura", appoggiatura::ask),
 ];

@@ -86,6 +86,11 @@ impl<'a> Place<'a> {
         Some(left.place().up_to(reached.place()))
     }
 
+    /// Whether a step leads up; a chromatic semitone is one. `None` for a leap and a repetition.
+    pub(super) fn way(gap: Gap) -> Option<bool> {
+        (gap.steps.abs() <= 1 && gap.semitones != 0).then_some(gap.semitones > 0)
+    }
+
     /// The move into the note.
     pub(super) fn into(&self) -> Option<Gap> {
         self.step(-1)
@@ -96,17 +101,50 @@ impl<'a> Place<'a> {
         self.step(0)
     }
 
+    /// How many notes further on the voice still sounds the same pitch, struck again.
+    pub(super) fn repeats(&self) -> isize {
+        let this = self.this().map(|note| note.sound);
+        let same = |by: &isize| self.neighbour(*by).map(|note| note.sound) == this;
+        let again = (1..).take_while(same).count();
+        isize::try_from(again).unwrap_or(0)
+    }
+
+    /// Where the pitch ends, struck again or not.
+    fn held_to(&self) -> Option<Time> {
+        self.neighbour(self.repeats()).map(Note::end)
+    }
+
+    /// Where the other note's pitch ends, struck again or not.
+    fn other_held_to(&self) -> Option<Time> {
+        Place {
+            voice: self.against,
+            note: self.texture.note(self.sonority, self.against)?,
+            against: self.voice,
+            ..*self
+        }
+        .held_to()
+    }
+
     /// How strong the onset of a neighbour is: 0 strongest.
     pub(super) fn level(&self, by: isize) -> Option<u8> {
         self.neighbour(by).map(|note| self.score.level(note.onset))
     }
 
-    /// The note stands on a weaker moment than a note beside it, and on a stronger than none.
+    /// The note stands on a weaker moment than a note beside it, and on a stronger than none. A
+    /// shorter note a step before it is an ornament of its own and no measure.
     pub(super) fn is_weak(&self) -> bool {
         let here = self.score.level(self.at);
         let compare = |by| self.level(by).map(|there| here.cmp(&there));
-        let both = [compare(-1), compare(1)];
-        both.contains(&Some(Ordering::Greater)) && !both.contains(&Some(Ordering::Less))
+        let (before, after) = (compare(-1), compare(1));
+        let is_shorter = match (self.neighbour(-1), self.this()) {
+            (Some(before), Some(this)) => {
+                before.length < this.length && self.into().is_some_and(|g| g.steps.abs() == 1)
+            }
+            _ => false,
+        };
+        let weaker = |side| side == Some(Ordering::Greater);
+        let stronger = |side| side == Some(Ordering::Less);
+        (weaker(before) || weaker(after)) && !(stronger(before) && !is_shorter) && !stronger(after)
     }
 
     /// The other note.
@@ -118,18 +156,16 @@ impl<'a> Place<'a> {
     /// The other note goes on while this one stays, and this one then agrees: the other was the
     /// ornament.
     pub(super) fn is_relieved(&self) -> bool {
-        match (self.this(), self.other()) {
-            (Some(this), Some(other)) => {
-                other.end() < this.end() && self.agrees_at(other.end()) == Some(true)
-            }
+        match (self.held_to(), self.other_held_to()) {
+            (Some(this), Some(other)) => other < this && self.agrees_at(other) == Some(true),
             _ => false,
         }
     }
 
     /// The other note goes on before this one does: it is the other that resolves.
     pub(super) fn is_outlasted(&self) -> bool {
-        match (self.this(), self.other()) {
-            (Some(this), Some(other)) => other.end() < this.end(),
+        match (self.held_to(), self.other_held_to()) {
+            (Some(this), Some(other)) => other < this,
             _ => false,
         }
     }

@@ -114,19 +114,22 @@ fn held(place: &Place<'_>, way: i32) -> Result<Held, &'static str> {
 /// When the note a step beside comes, and whether another note stands between.
 fn resolution(place: &Place<'_>, way: i32) -> Result<(Time, bool), &'static str> {
     let from = place.this().and_then(|n| n.sound.pitch());
+    // Struck again, it is still the held note.
+    let last = place.repeats();
     let reaches = |by: isize| -> Option<(&Note, i32)> {
         let note = place.neighbour(by)?;
         let gap = from?.place().up_to(note.sound.pitch()?.place());
         Some((note, gap.steps))
     };
-    match reaches(1) {
+    match reaches(last + 1) {
         Some((note, steps)) if steps == way => return Ok((note.onset, false)),
         Some(_) => {}
         None => return Err("nothing follows it"),
     }
-    // One decorating note, or two, that agree; then the resolution.
-    for by in 2..=3 {
-        let between = (1..by).all(|b| {
+    // One decorating note, or two, that agree; then the resolution, which goes down.
+    let decorated = if way < 0 { last + 2..=last + 3 } else { 1..=0 };
+    for by in decorated {
+        let between = (last + 1..by).all(|b| {
             place.neighbour(b).is_some_and(|note| {
                 place.agrees_at(note.onset) != Some(false) && note.length <= place.at_most()
             })

@@ -141,7 +141,12 @@ impl Sweep<'_> {
         let Some(last) = self.last.get_mut(upper * self.voices + lower) else {
             return;
         };
-        if std::mem::replace(last, (high, low)) == (high, low) {
+        // Struck again, they are still the same two.
+        let first = (
+            first_of(self.score, upper, high),
+            first_of(self.score, lower, low),
+        );
+        if std::mem::replace(last, first) == first {
             return;
         }
         // A note that is a figure already may disagree with others too.
@@ -200,4 +205,13 @@ impl Sweep<'_> {
             })
         })
     }
+}
+
+/// The first of the notes that only strike a pitch again.
+fn first_of(score: &Score, voice: usize, note: usize) -> usize {
+    let notes = score.voices.get(voice).map_or(&[][..], |v| &v.notes);
+    let sound = notes.get(note).map(|n| n.sound);
+    let before = notes.get(..note).unwrap_or_default();
+    let again = before.iter().rev().take_while(|n| Some(n.sound) == sound);
+    note - again.count()
 }

@@ -2,7 +2,7 @@
 
 use partwright_analysis::figures::{Held, Near, near_suspension};
 use partwright_analysis::{Dissonance, Figure};
-use partwright_score::{Interval, Note, ZERO};
+use partwright_score::{Interval, Note, Time, ZERO};
 
 use super::{Discord, Sounding};
 
@@ -76,6 +76,18 @@ impl<'a> Discord<'a> {
         near_suspension(self.piece.score, self.piece.texture, self.dissonance)
     }
 
+    /// No figure accounts for it, and no note is held that lacks something of a suspension.
+    #[must_use]
+    pub fn is_unexplained(&self) -> bool {
+        self.dissonance.reading.is_none() && self.near_suspension().is_none()
+    }
+
+    /// One of the two notes is the lowest.
+    #[must_use]
+    pub fn is_over_bass(&self) -> bool {
+        self.dissonance.over_bass
+    }
+
     /// The parts of the suspension it is.
     #[must_use]
     pub fn suspension(&self) -> Option<Held> {
@@ -109,6 +121,13 @@ impl<'a> Discord<'a> {
         let length = self.note(self.dissonant()).map_or(ZERO, |note| note.length);
         let cell = self.piece.cell_at(self.dissonance.at);
         cell.is_some_and(|cell| length < cell)
+    }
+
+    /// The dissonant note is shorter than a quarter.
+    #[must_use]
+    pub fn is_shorter_than_quarter(&self) -> bool {
+        let note = self.note(self.dissonant());
+        note.is_some_and(|note| note.length < Time::new(1, 4))
     }
 
     /// `D5 in soprano makes a major ninth with C4 in bass`.

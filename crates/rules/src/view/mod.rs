@@ -4,6 +4,7 @@
 
 mod close;
 mod discord;
+mod held;
 mod line;
 mod pair;
 mod piece;
@@ -13,6 +14,7 @@ use partwright_analysis::{Analysis, Dissonance};
 use partwright_score::{Pair, PairStep, Score, Texture};
 
 pub use close::NotesOver;
+pub use held::{Numbers, SixFive, Together};
 pub use line::{LineMove, Run};
 pub use pair::Direct;
 pub use piece::{Crossing, Passage};

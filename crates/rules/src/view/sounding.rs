@@ -256,6 +256,51 @@ impl<'a> Sounding<'a> {
             .pitch(self.piece.score, self.index, voice)
     }
 
+    /// Three voices or more sound nothing but perfect fifths and octaves over the lowest, for a
+    /// beat at least.
+    #[must_use]
+    pub fn lacks_third(self) -> bool {
+        let Some(bass) = self.bass().filter(|_| self.parts() >= 3) else {
+            return false;
+        };
+        let texture = self.piece.texture;
+        let is_perfect = |v| {
+            let family = texture
+                .gap(self.index, v, bass)
+                .and_then(|gap| gap.family());
+            v == bass || family.is_some()
+        };
+        let lasts = self.piece.end_of(self.index) - self.onset();
+        texture.sounding(self.index).all(is_perfect)
+            && self
+                .piece
+                .cell_at(self.onset())
+                .is_some_and(|cell| lasts >= cell)
+    }
+
+    /// It begins a bar or a half of one.
+    #[must_use]
+    pub fn is_strong(self) -> bool {
+        self.sonority().is_some_and(|s| s.level <= 1)
+    }
+
+    /// Nothing sounds before it, or no note is struck after it in its phrase.
+    #[must_use]
+    pub fn is_first_or_last(self) -> bool {
+        let sonorities = self.piece.texture.sonorities();
+        let silent = |s: &Sonority| s.sounding == 0 && s.unknown == 0;
+        let first = sonorities.iter().take(self.index).all(silent);
+        let next = sonorities.get(self.index + 1);
+        let is_phrase_end = self.piece.texture.sounding(self.index).any(|v| {
+            let note = self.piece.texture.note(self.index, v);
+            let notes = self.piece.score.voices.get(v).map(|voice| &voice.notes);
+            let note = note.and_then(|n| notes?.get(n));
+            note.is_some_and(|note| note.fermata)
+        });
+        let last = next.is_none_or(|s| s.sounding == 0 || s.new_section);
+        first || last || is_phrase_end
+    }
+
     /// When it begins.
     #[must_use]
     pub fn onset(self) -> Time {
