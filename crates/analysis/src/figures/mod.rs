@@ -145,9 +145,9 @@ type Question = fn(&Place<'_>) -> Result<Figure, &'static str>;
 
 /// The figures in the order they are asked, with their names. The struck ones of weak moments
 /// come first; a held note is asked for its resolution down before the note struck against it is
-/// taken for an accented ornament, and for one up only after. A pedal is what no ornament above
-/// it explains.
-const QUESTIONS: [(&str, Question); 15] = [
+/// taken for an accented ornament, and for one up only after. A pedal is asked before accented
+/// ornaments under long notes, and after them under short ones.
+const QUESTIONS: [(&str, Question); 16] = [
     ("diminished fifth that closes", diminished_fifth::together),
     ("passing note", passing::unaccented),
     ("consonant fourth", fourth::ask),
@@ -157,6 +157,7 @@ const QUESTIONS: [(&str, Question); 15] = [
     ("cambiata", cambiata::ask),
     ("anticipation", anticipation::ask),
     ("suspension", suspension::ask),
+    ("pedal", pedal::under_long),
     ("accented passing note", passing::accented),
     ("accented neighbour", neighbour::accented),
     ("retardation", suspension::ask_upward),

@@ -82,6 +82,16 @@ impl<'a> Discord<'a> {
         self.dissonance.reading.is_none() && self.near_suspension().is_none()
     }
 
+    /// Both notes are struck where they begin to disagree.
+    #[must_use]
+    pub fn is_struck_together(&self) -> bool {
+        let at = self.dissonance.at;
+        let notes = self.dissonance.notes();
+        notes
+            .into_iter()
+            .all(|of| self.note(of).is_some_and(|note| note.onset == at))
+    }
+
     /// One of the two notes is the lowest.
     #[must_use]
     pub fn is_over_bass(&self) -> bool {

@@ -233,11 +233,17 @@ impl Discord<'_> {
             )
     }
 
+    /// It is an ornament against a note that is held.
+    fn leaves_what_is_held(&self) -> bool {
+        let other = self.note(self.other());
+        self.is_struck_ornament() && other.is_some_and(|note| note.onset < self.dissonance.at)
+    }
+
     /// Another ornament struck with it, in a voice further down the score, with which it
-    /// disagrees too.
+    /// disagrees; both disagree with what is held.
     #[must_use]
     pub fn together(&self) -> Option<Together> {
-        if !self.is_struck_ornament() {
+        if !self.leaves_what_is_held() {
             return None;
         }
         let piece = self.piece;
@@ -249,7 +255,7 @@ impl Discord<'_> {
             .find_map(|dissonance| {
                 let other = Discord { piece, dissonance };
                 let low = other.dissonant().0;
-                if low <= voice || !other.is_struck_ornament() {
+                if low <= voice || !other.leaves_what_is_held() {
                     return None;
                 }
                 self.clash(Pair {

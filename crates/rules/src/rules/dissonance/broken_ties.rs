@@ -83,6 +83,10 @@ fn check(piece: &Piece<'_>, found: &mut Found<'_>) {
             continue;
         }
         let groups = piece.notes_over(cantus, voice);
+        // Without any tie it is another species.
+        if !groups.iter().any(|group| group.is_tied_in) {
+            continue;
+        }
         // The last note stands alone, in the species as in a fragment.
         let inner = groups.get(1..groups.len().saturating_sub(1));
         let breaks = inner

@@ -63,8 +63,10 @@ static ORDINARY: Case = Case {
     name: "",
     when: "in a second, a seventh or a ninth",
     settings: &[
-        weakness(Style::Free, "as in strict counterpoint"),
-        weakness(Style::Chorale, "as in strict counterpoint"),
+        allow(
+            Style::Free,
+            "one of the two may belong to the chord: judged with the harmony",
+        ),
         fault(Style::Motet, "the two must agree with each other"),
         fault(
             Style::Species1,

@@ -19,9 +19,9 @@
 //! voice S
 //! voice C cantus
 //!
-//! S | E5 - D5 - | C5 - - - |
+//! S | E5 - D5 - | E5 - - - |
 //! //       ^ long dissonance: S and C
-//! C | C4 - -  - | A3 - - - |
+//! C | C4 - -  - | C4 - - - |
 //! ```
 //!
 //! # Passes
@@ -86,7 +86,7 @@ static MINIM: Case = Case {
 
 static QUARTER: Case = Case {
     name: "quarter",
-    when: "longer than a quarter, unless it is a half that passes on the weak half of a florid bar",
+    when: "longer than a quarter, unless it is a half that passes on the weak half of the bar",
     settings: &[
         allow(Style::Free, "length is free"),
         fault(Style::Species3, "the species is quarters"),
@@ -102,7 +102,7 @@ fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
     let passes = matches!(discord.figure(), Some(Figure::Passing { accented: false }));
     let (case, most) = if !style.is_species() {
         (&MINIM, found.number(&MOST))
-    } else if passes && style == Style::Species5 {
+    } else if passes {
         (&QUARTER, found.number(&MOST))
     } else {
         (&QUARTER, found.number(&MOST_QUARTERS))
