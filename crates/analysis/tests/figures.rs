@@ -324,7 +324,7 @@ fn what_a_suspension_lacks() {
     let near = |rows: &[&str]| {
         let read = sheet(rows);
         let last = read.all().last().unwrap();
-        near_suspension(&read.score, &read.texture, last)
+        near_suspension(&read.score, &read.texture, last).map(|(near, _)| near)
     };
     let leap = near(&["D5 - - - | - - A4 -", "D4 - - - | E4 - - -"]);
     assert_eq!(leap, Some(Near::Resolution));

@@ -144,7 +144,7 @@ impl Dissonance {
 type Question = fn(&Place<'_>) -> Result<Figure, &'static str>;
 
 /// The figures in the order they are asked, with their names. The struck ones of weak moments
-/// come first; a held note is asked for its resolution down before the note struck against it is
+/// come first (but for the double neighbour, whose second note may be strong); a held note is asked for its resolution down before the note struck against it is
 /// taken for an accented ornament, and for one up only after. A pedal is asked before accented
 /// ornaments under long notes, and after them under short ones.
 const QUESTIONS: [(&str, Question); 16] = [
@@ -153,10 +153,10 @@ const QUESTIONS: [(&str, Question); 16] = [
     ("consonant fourth", fourth::ask),
     ("diminished fifth that closes", diminished_fifth::ask),
     ("neighbour", neighbour::unaccented),
-    ("double neighbour", double_neighbour::ask),
     ("cambiata", cambiata::ask),
     ("anticipation", anticipation::ask),
     ("suspension", suspension::ask),
+    ("double neighbour", double_neighbour::ask),
     ("pedal", pedal::under_long),
     ("accented passing note", passing::accented),
     ("accented neighbour", neighbour::accented),

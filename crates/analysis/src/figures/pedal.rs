@@ -1,17 +1,14 @@
 //! The pedal: the lowest voice holds its note through at least two bars, and agrees with the
 //! others where it begins and where it ends.
 
-use partwright_score::Bar;
+use partwright_score::Time;
 
 use super::place::agrees;
 use super::{Figure, Place};
 
-/// Under a note of a quarter of a bar at least.
+/// Under a half at least.
 pub(super) fn under_long(place: &Place<'_>) -> Result<Figure, &'static str> {
-    let bar = place.score.bar_at(place.at);
-    let bar = bar.and_then(|i| place.score.bars.get(i));
-    let is_short = |bar: &Bar| place.other().is_none_or(|o| o.length * 4 < bar.length);
-    if bar.is_none_or(is_short) {
+    if place.other().is_none_or(|o| o.length < Time::new(1, 2)) {
         return Err("the note above it is an ornament");
     }
     ask(place)

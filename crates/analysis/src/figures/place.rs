@@ -72,11 +72,10 @@ impl<'a> Place<'a> {
     /// it, or struck again (a new syllable); `None` where it is new.
     pub(super) fn held_from(&self) -> Option<Time> {
         let this = self.this()?;
-        if this.onset < self.at {
-            return Some(this.onset);
-        }
-        let before = self.neighbour(-1)?;
-        (before.sound == this.sound).then_some(before.onset)
+        let same = |by: &isize| self.neighbour(-by).map(|note| note.sound) == Some(this.sound);
+        let before = isize::try_from((1..).take_while(same).count()).unwrap_or(0);
+        let first = self.neighbour(-before)?;
+        (first.onset < self.at).then_some(first.onset)
     }
 
     /// The move of the voice from one neighbour to the next; `None` at a rest or an end.
@@ -110,7 +109,7 @@ impl<'a> Place<'a> {
     }
 
     /// Where the pitch ends, struck again or not.
-    fn held_to(&self) -> Option<Time> {
+    pub(super) fn held_to(&self) -> Option<Time> {
         self.neighbour(self.repeats()).map(Note::end)
     }
 
@@ -123,6 +122,26 @@ impl<'a> Place<'a> {
             ..*self
         }
         .held_to()
+    }
+
+    /// A stronger moment than the note's own comes before a time. Where nothing is struck on it,
+    /// it halves the while or begins a bar.
+    pub(super) fn is_stronger_before(&self, end: Time) -> bool {
+        let here = self.score.level(self.at);
+        let is_stronger = |at: Time| at > self.at && at < end && self.score.level(at) < here;
+        let later = self.texture.sonorities().get(self.sonority + 1..);
+        let mut struck = later.unwrap_or_default().iter().map(|s| s.onset);
+        let next_bar = self.score.bar_at(self.at).map_or(0, |bar| bar + 1);
+        let next_bar = self.score.bars.get(next_bar).map(|bar| bar.onset);
+        is_stronger(self.at + (end - self.at) / 2)
+            || next_bar.is_some_and(is_stronger)
+            || struck.by_ref().take_while(|&at| at < end).any(is_stronger)
+    }
+
+    /// It is struck on a weak moment and held over a stronger one.
+    pub(super) fn is_syncopated(&self) -> bool {
+        self.this()
+            .is_some_and(|note| self.is_stronger_before(note.end()))
     }
 
     /// How strong the onset of a neighbour is: 0 strongest.

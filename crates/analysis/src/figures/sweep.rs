@@ -4,7 +4,7 @@ use partwright_score::{Score, Texture};
 use partwright_space::Gap;
 
 use super::place::over;
-use super::{Dissonance, Figure, Place, QUESTIONS, Reading};
+use super::{Dissonance, Figure, Place, QUESTIONS, Reading, near_suspension};
 use crate::consonance;
 
 /// No note yet.
@@ -167,6 +167,8 @@ impl Sweep<'_> {
             reading: None,
         };
         dissonance.reading = self.ask(&dissonance);
+        let near = dissonance.reading.is_none()
+            && near_suspension(self.score, self.texture, &dissonance).is_some();
         let mut mark = |list: fn(&mut Self) -> &mut Vec<usize>, voice: usize, note: usize| {
             if let Some(slot) = list(self).get_mut(voice) {
                 *slot = note;
@@ -179,10 +181,11 @@ impl Sweep<'_> {
                 figure: Figure::Pedal,
             }) => mark(|s| &mut s.pedal, voice, note),
             Some(Reading { voice, note, .. }) => mark(|s| &mut s.read, voice, note),
-            // What no figure explains is told once: of the notes struck here.
+            // What no figure explains is told once: of the notes struck here, and of one held
+            // that lacks something of a suspension.
             None => {
                 for (voice, note) in dissonance.notes() {
-                    if sonority.struck >> voice & 1 == 1 {
+                    if near || sonority.struck >> voice & 1 == 1 {
                         mark(|s| &mut s.read, voice, note);
                     }
                 }

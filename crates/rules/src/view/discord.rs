@@ -24,8 +24,10 @@ impl<'a> Discord<'a> {
             upper, lower, at, ..
         } = *self.dissonance;
         let is_struck = |of| self.note(of).is_some_and(|note| note.onset == at);
-        let lower_is = is_struck(lower) && !is_struck(upper);
-        if lower_is != self.near_suspension().is_some() {
+        if let Some((_, held)) = self.near() {
+            return held;
+        }
+        if is_struck(lower) && !is_struck(upper) {
             lower
         } else {
             upper
@@ -73,6 +75,10 @@ impl<'a> Discord<'a> {
         if self.dissonance.reading.is_some() {
             return None;
         }
+        self.near().map(|(near, _)| near)
+    }
+
+    fn near(&self) -> Option<(Near, (usize, usize))> {
         near_suspension(self.piece.score, self.piece.texture, self.dissonance)
     }
 

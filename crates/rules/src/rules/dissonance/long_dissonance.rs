@@ -10,7 +10,7 @@
 //!
 //! S | E5 - - D5 | - - C5 - |
 //! //         ^ long dissonance: S and B
-//! B | C4 - - -  | - - -  - |
+//! B | C4 - - -  | - - A3 - |
 //! ```
 //!
 //! ```voices
@@ -95,7 +95,8 @@ static QUARTER: Case = Case {
 };
 
 fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
-    if !discord.is_struck_ornament() {
+    // A leap to it is told by a rule of its own.
+    if !discord.is_struck_ornament() || discord.figure() == Some(Figure::Appoggiatura) {
         return;
     }
     let style = found.style_of(&[discord.dissonant().0]);
