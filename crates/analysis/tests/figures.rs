@@ -560,3 +560,20 @@ fn empty_scores_have_no_dissonances() {
             .is_empty()
     );
 }
+
+#[test]
+fn a_clash_of_upper_voices_is_read_where_it_began() {
+    // D passes under C; the bass, which C did not agree with, then passes as well.
+    let read = sheet(&[
+        "C5 - - - | B4 - - -",
+        "C4 - D E | D4 - - -",
+        "A3 - G.F E | G3 - - -",
+    ]);
+    assert!(
+        read.told().iter().all(|t| !t.ends_with("none")),
+        "{:?}",
+        read.told()
+    );
+    let order: Vec<_> = read.all().iter().map(|d| d.sonority).collect();
+    assert!(order.is_sorted());
+}

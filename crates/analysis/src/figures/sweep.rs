@@ -27,6 +27,7 @@ pub(crate) fn dissonances(score: &Score, texture: &Texture) -> Vec<Dissonance> {
             sweep.sonority(k, sonority.followers);
         }
     }
+    sweep.found.sort_by_key(|d| d.sonority);
     sweep.found
 }
 
@@ -154,6 +155,12 @@ impl Sweep<'_> {
         if known(upper, high) || known(lower, low) {
             return;
         }
+        // Among upper voices a disagreement older than the lowest note began before it.
+        let k = if over_bass {
+            k
+        } else {
+            self.began(k, [(upper, high), (lower, low)])
+        };
         let Some(sonority) = self.texture.sonorities().get(k) else {
             return;
         };
@@ -192,6 +199,13 @@ impl Sweep<'_> {
             }
         }
         self.found.push(dissonance);
+    }
+
+    /// The sonority in which the later of two notes is struck.
+    fn began(&self, k: usize, notes: [(usize, usize); 2]) -> usize {
+        let note = |(v, n): (usize, usize)| self.score.voices.get(v)?.notes.get(n);
+        let later = notes.into_iter().filter_map(note).map(|n| n.onset).max();
+        later.and_then(|at| self.texture.at(at)).unwrap_or(k).min(k)
     }
 
     fn ask(&self, dissonance: &Dissonance) -> Option<Reading> {
