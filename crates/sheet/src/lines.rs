@@ -167,8 +167,8 @@ const RESERVED: [&str; 14] = [
     "words", "harmony", "figures", "easy", "cantus", "species", "clef", "written", "doubles",
     "line", "motion", "sonority", "cadence", "range",
 ];
-const RESERVED_RULES: [&str; 6] = [
-    "writing", "reading", "spacing", "crossing", "overlap", "compass",
+const RESERVED_RULES: [&str; 8] = [
+    "writing", "reading", "spacing", "crossing", "overlap", "compass", "cambiata", "pedal",
 ];
 
 /// Whether a word is shaped like a label: a letter and at most seven more letters or digits.

@@ -147,7 +147,7 @@ type Question = fn(&Place<'_>) -> Result<Figure, &'static str>;
 /// come first (but for the double neighbour, whose second note may be strong); a held note is asked for its resolution down before the note struck against it is
 /// taken for an accented ornament, and for one up only after. A pedal is asked before accented
 /// ornaments under long notes, and after them under short ones.
-const QUESTIONS: [(&str, Question); 16] = [
+const QUESTIONS: [(&str, Question); 17] = [
     ("diminished fifth that closes", diminished_fifth::together),
     ("passing note", passing::unaccented),
     ("consonant fourth", fourth::ask),
@@ -160,6 +160,7 @@ const QUESTIONS: [(&str, Question); 16] = [
     ("pedal", pedal::under_long),
     ("accented passing note", passing::accented),
     ("accented neighbour", neighbour::accented),
+    ("suspension", suspension::ask_relieved),
     ("retardation", suspension::ask_upward),
     ("pedal", pedal::ask),
     ("escape note", escape::ask),

@@ -163,7 +163,8 @@ impl<'a> Place<'a> {
         };
         let weaker = |side| side == Some(Ordering::Greater);
         let stronger = |side| side == Some(Ordering::Less);
-        (weaker(before) || weaker(after)) && !(stronger(before) && !is_shorter) && !stronger(after)
+        let is_stronger = stronger(after) || (stronger(before) && !is_shorter);
+        !is_stronger && (weaker(before) || weaker(after))
     }
 
     /// The other note.

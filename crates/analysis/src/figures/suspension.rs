@@ -44,11 +44,22 @@ impl Held {
 
 /// Downward.
 pub(super) fn ask(place: &Place<'_>) -> Result<Figure, &'static str> {
+    if place.is_relieved() {
+        return Err("the other note goes on first, to one that agrees");
+    }
+    held(place, -1).map(Figure::Suspension)
+}
+
+/// Downward, although the other note goes on first: it is no ornament either.
+pub(super) fn ask_relieved(place: &Place<'_>) -> Result<Figure, &'static str> {
     held(place, -1).map(Figure::Suspension)
 }
 
 /// Upward.
 pub(super) fn ask_upward(place: &Place<'_>) -> Result<Figure, &'static str> {
+    if place.is_relieved() {
+        return Err("the other note goes on first, to one that agrees");
+    }
     held(place, 1).map(Figure::Retardation)
 }
 
@@ -107,9 +118,6 @@ fn held(place: &Place<'_>, way: i32) -> Result<Held, &'static str> {
     if !is_prepared(place, from) {
         return Err("its preparation is dissonant");
     }
-    if place.is_relieved() {
-        return Err("the other note goes on first, to one that agrees");
-    }
     let (resolved, ornamented) = resolution(place, way)?;
     // In groups of three the second and third beats are equally weak; elsewhere between equally
     // weak moments there is a stronger one.
@@ -143,8 +151,8 @@ fn resolution(place: &Place<'_>, way: i32) -> Result<(Time, bool), &'static str>
         None => return Err("nothing follows it"),
     }
     // One decorating note, or two, that agree; then the resolution, which goes down.
-    let decorated = if way < 0 { last + 2..=last + 3 } else { 1..=0 };
-    for by in decorated {
+    let decorations = if way < 0 { 2 } else { 0 };
+    for by in (last + 2..).take(decorations) {
         let between = (last + 1..by).all(|b| {
             place.neighbour(b).is_some_and(|note| {
                 place.agrees_at(note.onset) != Some(false)

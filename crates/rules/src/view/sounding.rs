@@ -1,6 +1,6 @@
 //! One sonority, and the step into it.
 
-use partwright_score::{Interval, Pair, Pitch, Sonority, Time, ZERO};
+use partwright_score::{Interval, Note, Pair, Pitch, Sonority, Time, ZERO};
 use partwright_space::{Family, Motion};
 
 use super::{PairMove, Sounding};
@@ -284,21 +284,25 @@ impl<'a> Sounding<'a> {
         self.sonority().is_some_and(|s| s.level <= 1)
     }
 
-    /// Nothing sounds before it, or no note is struck after it in its phrase.
+    /// A voice enters with it after silence, or ends its phrase or falls silent after it.
     #[must_use]
-    pub fn is_first_or_last(self) -> bool {
-        let sonorities = self.piece.texture.sonorities();
-        let silent = |s: &Sonority| s.sounding == 0 && s.unknown == 0;
-        let first = sonorities.iter().take(self.index).all(silent);
-        let next = sonorities.get(self.index + 1);
-        let is_phrase_end = self.piece.texture.sounding(self.index).any(|v| {
-            let note = self.piece.texture.note(self.index, v);
-            let notes = self.piece.score.voices.get(v).map(|voice| &voice.notes);
-            let note = note.and_then(|n| notes?.get(n));
-            note.is_some_and(|note| note.fermata)
-        });
-        let last = next.is_none_or(|s| s.sounding == 0 || s.new_section);
-        first || last || is_phrase_end
+    pub fn opens_or_closes(self) -> bool {
+        let texture = self.piece.texture;
+        let next = texture.sonorities().get(self.index + 1);
+        let is_last = next.is_none_or(|s| s.sounding == 0 || s.new_section);
+        is_last
+            || texture.sounding(self.index).any(|v| {
+                let notes = self.piece.score.voices.get(v).map(|voice| &voice.notes);
+                let (Some(notes), Some(n)) = (notes, texture.note(self.index, v)) else {
+                    return false;
+                };
+                let sounds = |n: Option<usize>| {
+                    let note = n.and_then(|n| notes.get(n));
+                    note.is_some_and(|note| note.sound.pitch().is_some())
+                };
+                let ends = notes.get(n).is_some_and(Note::ends_phrase);
+                ends || !sounds(n.checked_sub(1)) || !sounds(Some(n + 1))
+            })
     }
 
     /// When it begins.

@@ -17,7 +17,7 @@
 //!
 //! # Passes
 //!
-//! The last chord may be bare:
+//! A first or a last chord may be bare:
 //!
 //! ```voices
 //! style chorale
@@ -62,7 +62,7 @@ pub const RULE: Rule = Rule {
 
 static ORDINARY: Case = Case {
     name: "",
-    when: "three parts or more in fifths and octaves over the lowest, for a beat, not the first chord and not the last",
+    when: "three parts or more in fifths and octaves over the lowest, for a beat, and no voice enters there or ends its phrase",
     settings: &[
         fault(Style::Free, "the chord is not whole"),
         fault(Style::Chorale, "the chord is not whole"),
@@ -72,7 +72,7 @@ static ORDINARY: Case = Case {
 };
 
 fn check(sounding: &Sounding<'_>, found: &mut Found<'_>) {
-    if !sounding.is_strong() || !sounding.lacks_third() || sounding.is_first_or_last() {
+    if !sounding.is_strong() || !sounding.lacks_third() || sounding.opens_or_closes() {
         return;
     }
     let voices: Vec<usize> = sounding.piece.texture.sounding(sounding.index).collect();
