@@ -218,6 +218,13 @@ pub const BACH_CHORALES: Source = source(
     0,
     Known::Counted,
 );
+/// Counts in vocal polyphony.
+pub const VOCAL_POLYPHONY: Source = source(
+    "",
+    "314 pieces of vocal polyphony of the 16th century",
+    0,
+    Known::Counted,
+);
 /// Choral handbooks, as the rule research lists them.
 pub const CHORAL_HANDBOOKS: Source = source(
     "",

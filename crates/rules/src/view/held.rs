@@ -174,24 +174,25 @@ impl Discord<'_> {
     }
 
     /// A voice, other than the one it disagrees with, that sounds the note of resolution while
-    /// that is still awaited.
+    /// that is still awaited, and whether right beside the held note.
     #[must_use]
-    pub fn resolution_in(&self) -> Option<usize> {
+    pub fn resolution_in(&self) -> Option<(usize, bool)> {
         let held = self.suspension()?;
         let (voice, against) = (self.dissonant().0, self.other().0);
         let sounding = self.sounding();
         let awaited = self.note_starting(voice, held)?.sound.pitch()?;
-        let numbers = self.numbers();
-        self.piece.texture.sounding(sounding.index).find(|&v| {
-            let same = sounding
-                .pitch(v)
-                .is_some_and(|p| p.letter() == awaited.letter() && p.sign == awaited.sign);
+        let is_ninth = self.numbers() == Some(Numbers::NineEight);
+        let sounds = |v: usize| {
+            let pitch = sounding.pitch(v)?;
+            let same = pitch.letter() == awaited.letter() && pitch.sign == awaited.sign;
+            let beside = self.size_over(voice, v) == Some(1);
             // A ninth goes to the octave of the lowest note, which others may double, but not
             // right beside it.
-            let beside = self.size_over(voice, v) == Some(1);
-            let doubles_root = numbers == Some(Numbers::NineEight) && !beside;
-            v != voice && v != against && same && !doubles_root && !self.follows(v)
-        })
+            let counts = v != voice && v != against && !self.follows(v) && (beside || !is_ninth);
+            (same && counts).then_some((v, beside))
+        };
+        let voices = self.piece.texture.sounding(sounding.index);
+        voices.filter_map(sounds).max_by_key(|&(_, beside)| beside)
     }
 
     fn follows(&self, voice: usize) -> bool {

@@ -15,6 +15,18 @@
 //! B | A3 - - - | G3 - - - |
 //! ```
 //!
+//! An octave away:
+//!
+//! ```voices
+//! style motet
+//! metre 4/2
+//!
+//! S | C5 - - - | - - B4 - |
+//! //             ^ resolution sounding (weakness): S and B
+//! T | A3 - - - | B3 - G3 - |
+//! B | A3 - - - | G3 - - - |
+//! ```
+//!
 //! # Passes
 //!
 //! Nine to eight, with the root in the lowest voice:
@@ -50,16 +62,21 @@ use crate::prelude::*;
 /// The rule.
 pub const RULE: Rule = Rule {
     looks: Looks::Dissonances(check),
-    cases: &[&ORDINARY],
+    cases: &[&BESIDE, &OCTAVE],
     numbers: &[],
-    sources: &[source::OPEN_MUSIC_THEORY
-        .at("fourth species")
-        .looser("nine to eight over its root")],
+    sources: &[
+        source::VOCAL_POLYPHONY
+            .at("57 in 15,030 bars, some of them Palestrina's")
+            .looser("an octave away"),
+        source::OPEN_MUSIC_THEORY
+            .at("fourth species")
+            .looser("nine to eight over its root"),
+    ],
 };
 
-static ORDINARY: Case = Case {
+static BESIDE: Case = Case {
     name: "",
-    when: "in a voice other than the one it is dissonant with; of a ninth only right beside it",
+    when: "right beside it, in a voice other than the one it is dissonant with",
     settings: &[
         weakness(Style::Free, "the suspension loses its point"),
         weakness(Style::Chorale, "the suspension loses its point"),
@@ -70,11 +87,28 @@ static ORDINARY: Case = Case {
     ],
 };
 
+static OCTAVE: Case = Case {
+    name: "octave",
+    when: "in another octave, unless it is the octave of a ninth's lower note",
+    settings: &[
+        weakness(Style::Free, "the suspension loses its point"),
+        weakness(Style::Chorale, "the suspension loses its point"),
+        weakness(
+            Style::Motet,
+            "57 in 15,030 bars of vocal polyphony, Palestrina's among them",
+        ),
+        allow(Style::Species1, "no suspensions"),
+        fault(Style::Species4, "the note of resolution is kept free"),
+        fault(Style::Species5, "the note of resolution is kept free"),
+    ],
+};
+
 fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
-    let Some(voice) = discord.resolution_in() else {
+    let Some((voice, beside)) = discord.resolution_in() else {
         return;
     };
-    found.dissonance(&ORDINARY, discord, || {
+    let case = if beside { &BESIDE } else { &OCTAVE };
+    found.dissonance(case, discord, || {
         format!(
             "Resolution sounding: {}, and {} sounds the note of its resolution. Keep that note free.",
             discord.words(),

@@ -31,6 +31,19 @@
 //! C | E3 - | F3 - | E3 - |
 //! ```
 //!
+//! Seven to eight, under the cantus:
+//!
+//! ```voices
+//! style species-4
+//! metre 2/2
+//! voice C cantus
+//! voice B
+//!
+//! C | F4 - | C4 - |
+//! B | _ D3 | - C3 |
+//! //         ^ suspension kind: C and B
+//! ```
+//!
 //! # Passes
 //!
 //! ```voices
