@@ -181,6 +181,19 @@ impl<'a> Found<'a> {
         });
     }
 
+    /// A finding about two ornaments that clash: it stands at the dissonant note and names the
+    /// other of the two.
+    pub fn clash(
+        &mut self,
+        case: &'static Case,
+        discord: &Discord<'_>,
+        other: usize,
+        message: impl FnOnce() -> String,
+    ) {
+        let (voice, at) = (discord.dissonant().0, discord.dissonance.at);
+        self.sonority(case, &[voice, other], at, message);
+    }
+
     /// A finding about a sonority: it stands where it begins, in the first of the voices.
     pub fn sonority(
         &mut self,

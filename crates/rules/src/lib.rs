@@ -22,8 +22,8 @@ pub use source::Source;
 pub use style::{Number, Override, STYLES, Setting, Strictness, Style};
 pub use view::{
     Crossing, Direct, Discord, HighPoint, LastMove, Level, Line, LineMove, Minim, MinorDegree,
-    Over, PairMove, ParallelRun, Passage, Passing, Piece, Quick, Run, Sounding, Stretch, Stroke,
-    Succession, Tessitura, Value,
+    Numbers, Over, PairMove, ParallelRun, Passage, Passing, Piece, Quick, Run, SixFive, Sounding,
+    Stretch, Stroke, Succession, Tessitura, Together, Value,
 };
 
 /// What every rule file needs.
@@ -39,7 +39,7 @@ pub mod prelude {
     pub use crate::source::{self, Source};
     pub use crate::style::{Setting, Style, allow, fault, remark, weakness};
     pub use crate::view::{
-        Direct, Discord, LastMove, Level, Line, LineMove, MinorDegree, Over, PairMove, ParallelRun,
-        Passage, Piece, Sounding, Stroke, Succession,
+        Direct, Discord, LastMove, Level, Line, LineMove, MinorDegree, Numbers, Over, PairMove,
+        ParallelRun, Passage, Piece, Sounding, Stroke, Succession,
     };
 }

@@ -20,6 +20,8 @@ pub mod broken_chord;
 pub mod cantus;
 #[path = "rules/line/chromatic_semitone.rs"]
 pub mod chromatic_semitone;
+#[path = "rules/dissonance/clash_together.rs"]
+pub mod clash_together;
 #[path = "rules/cadence/closing_approach.rs"]
 pub mod closing_approach;
 #[path = "rules/cadence/closing_interval.rs"]
@@ -86,6 +88,8 @@ pub mod leaps_into_perfect;
 pub mod leaps_one_way;
 #[path = "rules/writing/licence_idle.rs"]
 pub mod licence_idle;
+#[path = "rules/dissonance/long_dissonance.rs"]
+pub mod long_dissonance;
 #[path = "rules/sonority/low_crowding.rs"]
 pub mod low_crowding;
 #[path = "rules/line/melodic_minor.rs"]
@@ -104,6 +108,8 @@ pub mod octave_doubt;
 pub mod offbeat_consecutives;
 #[path = "rules/sonority/opening_interval.rs"]
 pub mod opening_interval;
+#[path = "rules/dissonance/ornamented_resolution.rs"]
+pub mod ornamented_resolution;
 #[path = "rules/motion/ottava_battuta.rs"]
 pub mod ottava_battuta;
 #[path = "rules/motion/overlap.rs"]
@@ -132,6 +138,8 @@ pub mod raised_seventh;
 pub mod reading;
 #[path = "rules/line/repeated_note.rs"]
 pub mod repeated_note;
+#[path = "rules/dissonance/resolution_sounding.rs"]
+pub mod resolution_sounding;
 #[path = "rules/dissonance/retardation.rs"]
 pub mod retardation;
 #[path = "rules/motion/running_imperfects.rs"]
@@ -140,6 +148,8 @@ pub mod running_imperfects;
 pub mod seventh_leap;
 #[path = "rules/motion/similar_leaps.rs"]
 pub mod similar_leaps;
+#[path = "rules/dissonance/six_five_exchange.rs"]
+pub mod six_five_exchange;
 #[path = "rules/line/sixth_leap.rs"]
 pub mod sixth_leap;
 #[path = "rules/sonority/spacing.rs"]
@@ -148,6 +158,10 @@ pub mod spacing;
 pub mod species_cadence;
 #[path = "rules/species/species_rhythm.rs"]
 pub mod species_rhythm;
+#[path = "rules/dissonance/suspension_chain.rs"]
+pub mod suspension_chain;
+#[path = "rules/dissonance/suspension_kind.rs"]
+pub mod suspension_kind;
 #[path = "rules/dissonance/suspension_position.rs"]
 pub mod suspension_position;
 #[path = "rules/dissonance/suspension_preparation.rs"]
@@ -158,6 +172,8 @@ pub mod suspension_resolution;
 pub mod syncopation;
 #[path = "rules/range/tessitura.rs"]
 pub mod tessitura;
+#[path = "rules/sonority/third_missing.rs"]
+pub mod third_missing;
 #[path = "rules/line/too_many_leaps.rs"]
 pub mod too_many_leaps;
 #[path = "rules/line/tritone_outline.rs"]
@@ -168,6 +184,8 @@ pub mod unequal_fifths;
 pub mod unison_inside;
 #[path = "rules/writing/unwritten.rs"]
 pub mod unwritten;
+#[path = "rules/dissonance/upper_clash.rs"]
+pub mod upper_clash;
 #[path = "rules/line/vocal_rhythm.rs"]
 pub mod vocal_rhythm;
 #[path = "rules/writing/voice_silent.rs"]
@@ -214,6 +232,12 @@ pub(crate) static FILES: &[File] = &[
     },
     File {
         family: "dissonance",
+        stem: "clash_together",
+        rule: &clash_together::RULE,
+        text: include_str!("rules/dissonance/clash_together.rs"),
+    },
+    File {
+        family: "dissonance",
         stem: "consonant_fourth",
         rule: &consonant_fourth::RULE,
         text: include_str!("rules/dissonance/consonant_fourth.rs"),
@@ -244,6 +268,12 @@ pub(crate) static FILES: &[File] = &[
     },
     File {
         family: "dissonance",
+        stem: "long_dissonance",
+        rule: &long_dissonance::RULE,
+        text: include_str!("rules/dissonance/long_dissonance.rs"),
+    },
+    File {
+        family: "dissonance",
         stem: "neighbour_note",
         rule: &neighbour_note::RULE,
         text: include_str!("rules/dissonance/neighbour_note.rs"),
@@ -253,6 +283,12 @@ pub(crate) static FILES: &[File] = &[
         stem: "nota_cambiata",
         rule: &nota_cambiata::RULE,
         text: include_str!("rules/dissonance/nota_cambiata.rs"),
+    },
+    File {
+        family: "dissonance",
+        stem: "ornamented_resolution",
+        rule: &ornamented_resolution::RULE,
+        text: include_str!("rules/dissonance/ornamented_resolution.rs"),
     },
     File {
         family: "dissonance",
@@ -268,9 +304,33 @@ pub(crate) static FILES: &[File] = &[
     },
     File {
         family: "dissonance",
+        stem: "resolution_sounding",
+        rule: &resolution_sounding::RULE,
+        text: include_str!("rules/dissonance/resolution_sounding.rs"),
+    },
+    File {
+        family: "dissonance",
         stem: "retardation",
         rule: &retardation::RULE,
         text: include_str!("rules/dissonance/retardation.rs"),
+    },
+    File {
+        family: "dissonance",
+        stem: "six_five_exchange",
+        rule: &six_five_exchange::RULE,
+        text: include_str!("rules/dissonance/six_five_exchange.rs"),
+    },
+    File {
+        family: "dissonance",
+        stem: "suspension_chain",
+        rule: &suspension_chain::RULE,
+        text: include_str!("rules/dissonance/suspension_chain.rs"),
+    },
+    File {
+        family: "dissonance",
+        stem: "suspension_kind",
+        rule: &suspension_kind::RULE,
+        text: include_str!("rules/dissonance/suspension_kind.rs"),
     },
     File {
         family: "dissonance",
@@ -289,6 +349,12 @@ pub(crate) static FILES: &[File] = &[
         stem: "suspension_resolution",
         rule: &suspension_resolution::RULE,
         text: include_str!("rules/dissonance/suspension_resolution.rs"),
+    },
+    File {
+        family: "dissonance",
+        stem: "upper_clash",
+        rule: &upper_clash::RULE,
+        text: include_str!("rules/dissonance/upper_clash.rs"),
     },
     File {
         family: "line",
@@ -625,6 +691,12 @@ pub(crate) static FILES: &[File] = &[
         stem: "spacing",
         rule: &spacing::RULE,
         text: include_str!("rules/sonority/spacing.rs"),
+    },
+    File {
+        family: "sonority",
+        stem: "third_missing",
+        rule: &third_missing::RULE,
+        text: include_str!("rules/sonority/third_missing.rs"),
     },
     File {
         family: "sonority",

@@ -148,6 +148,27 @@ pub const KOSTKA_PAYNE: Source = source(
     0,
     Known::Read,
 );
+/// An open textbook.
+pub const HUTCHINSON: Source = source(
+    "R. Hutchinson",
+    "Music Theory for the 21st-Century Classroom",
+    0,
+    Known::Read,
+);
+/// Marking guidelines of an examination.
+pub const ADVANCED_PLACEMENT: Source = source(
+    "College Board",
+    "AP Music Theory, scoring guidelines",
+    2015,
+    Known::Read,
+);
+/// Two writers of the 15th century.
+pub const TINCTORIS_GAFFURIUS: Source = source(
+    "J. Tinctoris, F. Gaffurius",
+    "on dissonance in counterpoint",
+    0,
+    Known::AsGivenIn("a summary of both"),
+);
 /// Prout's counterpoint.
 pub const PROUT_COUNTERPOINT: Source = source(
     "E. Prout",

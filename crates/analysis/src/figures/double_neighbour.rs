@@ -17,6 +17,11 @@ pub(super) fn ask(place: &Place<'_>) -> Result<Figure, &'static str> {
     let Some(first) = [0, -1].into_iter().find(|&first| turns(first)) else {
         return Err("the line does not go round a note and back to it");
     };
+    // A longer second note is no ornament: the first was left by leap.
+    let length = |by| place.neighbour(by).map(|note| note.length);
+    if length(first) != length(first + 1) {
+        return Err("the two notes are not equally long");
+    }
     // The second of the two may be stronger than the first, never than the main note.
     if place.level(first) <= place.level(first - 1) || place.level(0) <= place.level(first - 1) {
         return Err("it stands on a strong moment");

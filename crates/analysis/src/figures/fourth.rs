@@ -14,19 +14,12 @@ pub(super) fn ask(place: &Place<'_>) -> Result<Figure, &'static str> {
     if place.other().is_none_or(|note| note.onset >= place.at) {
         return Err("the lowest voice does not hold its note");
     }
-    if place.into().is_none_or(|into| into.steps.abs() != 1) {
+    // It may have been sounded early.
+    let before = if place.held_from().is_some() { -2 } else { -1 };
+    if place.step(before).is_none_or(|into| into.steps.abs() != 1) {
         return Err("it is not reached by step");
     }
-    let this = place.this().ok_or("it was there before")?;
-    let held_into_stronger = place
-        .texture
-        .sonorities()
-        .get(place.sonority + 1..)
-        .unwrap_or_default()
-        .iter()
-        .take_while(|s| s.onset < this.end())
-        .any(|s| s.level < place.score.level(place.at));
-    if !held_into_stronger {
+    if !place.is_syncopated() {
         return Err("it is not held into a stronger moment");
     }
     if place.out_of().is_none_or(|out| out.steps != -1) {

@@ -144,22 +144,25 @@ impl Dissonance {
 type Question = fn(&Place<'_>) -> Result<Figure, &'static str>;
 
 /// The figures in the order they are asked, with their names. The struck ones of weak moments
-/// come first; a held note is asked for its resolution before the note struck against it is
-/// taken for an accented ornament.
-const QUESTIONS: [(&str, Question); 15] = [
+/// come first (but for the double neighbour, whose second note may be strong); a held note is asked for its resolution down before the note struck against it is
+/// taken for an accented ornament, and for one up only after. A pedal is asked before accented
+/// ornaments under long notes, and after them under short ones.
+const QUESTIONS: [(&str, Question); 17] = [
     ("diminished fifth that closes", diminished_fifth::together),
     ("passing note", passing::unaccented),
     ("consonant fourth", fourth::ask),
     ("diminished fifth that closes", diminished_fifth::ask),
     ("neighbour", neighbour::unaccented),
-    ("double neighbour", double_neighbour::ask),
     ("cambiata", cambiata::ask),
     ("anticipation", anticipation::ask),
     ("suspension", suspension::ask),
-    ("retardation", suspension::ask_upward),
-    ("pedal", pedal::ask),
+    ("double neighbour", double_neighbour::ask),
+    ("pedal", pedal::under_long),
     ("accented passing note", passing::accented),
     ("accented neighbour", neighbour::accented),
+    ("suspension", suspension::ask_relieved),
+    ("retardation", suspension::ask_upward),
+    ("pedal", pedal::ask),
     ("escape note", escape::ask),
     ("appoggiatura", appoggiatura::ask),
 ];

@@ -8,6 +8,9 @@ pub(super) fn unaccented(place: &Place<'_>) -> Result<Figure, &'static str> {
     if !place.is_weak() {
         return Err("it does not stand on a weaker moment than its neighbours");
     }
+    if place.is_syncopated() {
+        return Err("it is held over a stronger moment");
+    }
     Ok(Figure::Neighbour {
         upper,
         accented: false,

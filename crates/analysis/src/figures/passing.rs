@@ -1,5 +1,7 @@
 //! The passing note.
 
+use partwright_space::Gap;
+
 use super::{Figure, Place};
 
 /// On a weak moment.
@@ -7,6 +9,9 @@ pub(super) fn unaccented(place: &Place<'_>) -> Result<Figure, &'static str> {
     passes(place)?;
     if !place.is_weak() {
         return Err("it does not stand on a weaker moment than its neighbours");
+    }
+    if place.is_syncopated() {
+        return Err("it is held over a stronger moment");
     }
     Ok(Figure::Passing { accented: false })
 }
@@ -26,13 +31,14 @@ fn passes(place: &Place<'_>) -> Result<(), &'static str> {
     }
     let into = place.into().ok_or("nothing leads to it")?;
     let out_of = place.out_of().ok_or("nothing follows it")?;
-    if into.steps.abs() != 1 {
+    // A note that passes through its own chromatic form has a whole step on one side.
+    let by_step = |gap: Gap| gap.steps.abs() == 1;
+    let reached = Place::way(into).ok_or("it is not reached by step")?;
+    let left = Place::way(out_of).ok_or("it is not left by step")?;
+    if !by_step(into) && !by_step(out_of) {
         return Err("it is not reached by step");
     }
-    if out_of.steps.abs() != 1 {
-        return Err("it is not left by step");
-    }
-    if into.steps != out_of.steps {
+    if reached != left {
         return Err("it turns back");
     }
     Ok(())

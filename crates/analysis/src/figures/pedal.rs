@@ -1,8 +1,18 @@
 //! The pedal: the lowest voice holds its note through at least two bars, and agrees with the
 //! others where it begins and where it ends.
 
+use partwright_score::Time;
+
 use super::place::agrees;
 use super::{Figure, Place};
+
+/// Under a half at least.
+pub(super) fn under_long(place: &Place<'_>) -> Result<Figure, &'static str> {
+    if place.other().is_none_or(|o| o.length < Time::new(1, 2)) {
+        return Err("the note above it is an ornament");
+    }
+    ask(place)
+}
 
 pub(super) fn ask(place: &Place<'_>) -> Result<Figure, &'static str> {
     if !place.over_bass || place.texture.bass(place.sonority) != Some(place.voice) {

@@ -72,11 +72,10 @@ impl<'a> Place<'a> {
     /// it, or struck again (a new syllable); `None` where it is new.
     pub(super) fn held_from(&self) -> Option<Time> {
         let this = self.this()?;
-        if this.onset < self.at {
-            return Some(this.onset);
-        }
-        let before = self.neighbour(-1)?;
-        (before.sound == this.sound).then_some(before.onset)
+        let same = |by: &isize| self.neighbour(-by).map(|note| note.sound) == Some(this.sound);
+        let before = isize::try_from((1..).take_while(same).count()).unwrap_or(0);
+        let first = self.neighbour(-before)?;
+        (first.onset < self.at).then_some(first.onset)
     }
 
     /// The move of the voice from one neighbour to the next; `None` at a rest or an end.
@@ -84,6 +83,11 @@ impl<'a> Place<'a> {
         let left = self.neighbour(from)?.sound.pitch()?;
         let reached = self.neighbour(from + 1)?.sound.pitch()?;
         Some(left.place().up_to(reached.place()))
+    }
+
+    /// Whether a step leads up; a chromatic semitone is one. `None` for a leap and a repetition.
+    pub(super) fn way(gap: Gap) -> Option<bool> {
+        (gap.steps.abs() <= 1 && gap.semitones != 0).then_some(gap.semitones > 0)
     }
 
     /// The move into the note.
@@ -96,17 +100,71 @@ impl<'a> Place<'a> {
         self.step(0)
     }
 
+    /// How many notes further on the voice still sounds the same pitch, struck again.
+    pub(super) fn repeats(&self) -> isize {
+        let this = self.this().map(|note| note.sound);
+        let same = |by: &isize| self.neighbour(*by).map(|note| note.sound) == this;
+        let again = (1..).take_while(same).count();
+        isize::try_from(again).unwrap_or(0)
+    }
+
+    /// Where the pitch ends, struck again or not.
+    pub(super) fn held_to(&self) -> Option<Time> {
+        self.neighbour(self.repeats()).map(Note::end)
+    }
+
+    /// Where the other note's pitch ends, struck again or not.
+    fn other_held_to(&self) -> Option<Time> {
+        Place {
+            voice: self.against,
+            note: self.texture.note(self.sonority, self.against)?,
+            against: self.voice,
+            ..*self
+        }
+        .held_to()
+    }
+
+    /// A stronger moment than the note's own comes before a time. Where nothing is struck on it,
+    /// it halves the while or begins a bar.
+    pub(super) fn is_stronger_before(&self, end: Time) -> bool {
+        let here = self.score.level(self.at);
+        let is_stronger = |at: Time| at > self.at && at < end && self.score.level(at) < here;
+        let later = self.texture.sonorities().get(self.sonority + 1..);
+        let mut struck = later.unwrap_or_default().iter().map(|s| s.onset);
+        let next_bar = self.score.bar_at(self.at).map_or(0, |bar| bar + 1);
+        let next_bar = self.score.bars.get(next_bar).map(|bar| bar.onset);
+        is_stronger(self.at + (end - self.at) / 2)
+            || next_bar.is_some_and(is_stronger)
+            || struck.by_ref().take_while(|&at| at < end).any(is_stronger)
+    }
+
+    /// It is struck on a weak moment and held over a stronger one.
+    pub(super) fn is_syncopated(&self) -> bool {
+        self.this()
+            .is_some_and(|note| self.is_stronger_before(note.end()))
+    }
+
     /// How strong the onset of a neighbour is: 0 strongest.
     pub(super) fn level(&self, by: isize) -> Option<u8> {
         self.neighbour(by).map(|note| self.score.level(note.onset))
     }
 
-    /// The note stands on a weaker moment than a note beside it, and on a stronger than none.
+    /// The note stands on a weaker moment than a note beside it, and on a stronger than none. A
+    /// shorter note a step before it is an ornament of its own and no measure.
     pub(super) fn is_weak(&self) -> bool {
         let here = self.score.level(self.at);
         let compare = |by| self.level(by).map(|there| here.cmp(&there));
-        let both = [compare(-1), compare(1)];
-        both.contains(&Some(Ordering::Greater)) && !both.contains(&Some(Ordering::Less))
+        let (before, after) = (compare(-1), compare(1));
+        let is_shorter = match (self.neighbour(-1), self.this()) {
+            (Some(before), Some(this)) => {
+                before.length < this.length && self.into().is_some_and(|g| g.steps.abs() == 1)
+            }
+            _ => false,
+        };
+        let weaker = |side| side == Some(Ordering::Greater);
+        let stronger = |side| side == Some(Ordering::Less);
+        let is_stronger = stronger(after) || (stronger(before) && !is_shorter);
+        !is_stronger && (weaker(before) || weaker(after))
     }
 
     /// The other note.
@@ -118,18 +176,16 @@ impl<'a> Place<'a> {
     /// The other note goes on while this one stays, and this one then agrees: the other was the
     /// ornament.
     pub(super) fn is_relieved(&self) -> bool {
-        match (self.this(), self.other()) {
-            (Some(this), Some(other)) => {
-                other.end() < this.end() && self.agrees_at(other.end()) == Some(true)
-            }
+        match (self.held_to(), self.other_held_to()) {
+            (Some(this), Some(other)) => other < this && self.agrees_at(other) == Some(true),
             _ => false,
         }
     }
 
     /// The other note goes on before this one does: it is the other that resolves.
     pub(super) fn is_outlasted(&self) -> bool {
-        match (self.this(), self.other()) {
-            (Some(this), Some(other)) => other.end() < this.end(),
+        match (self.held_to(), self.other_held_to()) {
+            (Some(this), Some(other)) => other < this,
             _ => false,
         }
     }

@@ -18,6 +18,8 @@ pub struct Held {
     pub struck: Time,
     /// When it becomes dissonant.
     pub at: Time,
+    /// When its voice leaves it.
+    pub left: Time,
     /// When the note of resolution comes.
     pub resolved: Time,
     /// Scale steps and semitones of the dissonance, from the lower voice up.
@@ -27,6 +29,12 @@ pub struct Held {
 }
 
 impl Held {
+    /// It is held for a shorter time as a preparation than as a dissonance.
+    #[must_use]
+    pub fn is_short(&self) -> bool {
+        self.preparation() < self.left.min(self.resolved) - self.at
+    }
+
     /// How long the preparation is, in whole notes.
     #[must_use]
     pub fn preparation(&self) -> Time {
@@ -36,11 +44,22 @@ impl Held {
 
 /// Downward.
 pub(super) fn ask(place: &Place<'_>) -> Result<Figure, &'static str> {
+    if place.is_relieved() {
+        return Err("the other note goes on first, to one that agrees");
+    }
+    held(place, -1).map(Figure::Suspension)
+}
+
+/// Downward, although the other note goes on first: it is no ornament either.
+pub(super) fn ask_relieved(place: &Place<'_>) -> Result<Figure, &'static str> {
     held(place, -1).map(Figure::Suspension)
 }
 
 /// Upward.
 pub(super) fn ask_upward(place: &Place<'_>) -> Result<Figure, &'static str> {
+    if place.is_relieved() {
+        return Err("the other note goes on first, to one that agrees");
+    }
     held(place, 1).map(Figure::Retardation)
 }
 
@@ -56,10 +75,14 @@ pub enum Near {
 }
 
 /// Asks the held note of a dissonance against which the other one is struck what it lacks to be
-/// a suspension; `None` where no note is held, or on a weak moment, where the struck note is the
+/// a suspension, and names it; `None` where no note is held, or on a weak moment, where the struck note is the
 /// one to explain.
 #[must_use]
-pub fn near_suspension(score: &Score, texture: &Texture, of: &Dissonance) -> Option<Near> {
+pub fn near_suspension(
+    score: &Score,
+    texture: &Texture,
+    of: &Dissonance,
+) -> Option<(Near, (usize, usize))> {
     let [first, second] = Place::both(score, texture, of);
     let new = |place: &Place<'_>| place.is_struck() && place.held_from().is_none();
     let (struck, kept) = match (new(&first), new(&second)) {
@@ -71,13 +94,14 @@ pub fn near_suspension(score: &Score, texture: &Texture, of: &Dissonance) -> Opt
     if struck.is_weak() || kept.is_outlasted() || kept.is_relieved() {
         return None;
     }
-    if !is_prepared(&kept, from) {
-        return Some(Near::Preparation);
-    }
-    Some(match resolution(&kept, -1) {
-        Err(_) => Near::Resolution,
-        Ok(_) => Near::Position,
-    })
+    let near = if !is_prepared(&kept, from) {
+        Near::Preparation
+    } else if resolution(&kept, -1).is_err() {
+        Near::Resolution
+    } else {
+        Near::Position
+    };
+    Some((near, (kept.voice, kept.note)))
 }
 
 fn is_prepared(place: &Place<'_>, from: Time) -> bool {
@@ -94,17 +118,17 @@ fn held(place: &Place<'_>, way: i32) -> Result<Held, &'static str> {
     if !is_prepared(place, from) {
         return Err("its preparation is dissonant");
     }
-    if place.is_relieved() {
-        return Err("the other note goes on first, to one that agrees");
-    }
     let (resolved, ornamented) = resolution(place, way)?;
-    // In groups of three the second and third beats are equally weak.
-    if place.score.level(place.at) > place.score.level(resolved) {
+    // In groups of three the second and third beats are equally weak; elsewhere between equally
+    // weak moments there is a stronger one.
+    let levels = (place.score.level(place.at), place.score.level(resolved));
+    if levels.0 > levels.1 || (levels.0 == levels.1 && place.is_stronger_before(resolved)) {
         return Err("it becomes dissonant on a weaker moment than it resolves");
     }
     Ok(Held {
         struck: from,
         at: place.at,
+        left: place.held_to().unwrap_or(resolved),
         resolved,
         gap: place.gap,
         ornamented,
@@ -114,21 +138,26 @@ fn held(place: &Place<'_>, way: i32) -> Result<Held, &'static str> {
 /// When the note a step beside comes, and whether another note stands between.
 fn resolution(place: &Place<'_>, way: i32) -> Result<(Time, bool), &'static str> {
     let from = place.this().and_then(|n| n.sound.pitch());
+    // Struck again, it is still the held note.
+    let last = place.repeats();
     let reaches = |by: isize| -> Option<(&Note, i32)> {
         let note = place.neighbour(by)?;
         let gap = from?.place().up_to(note.sound.pitch()?.place());
         Some((note, gap.steps))
     };
-    match reaches(1) {
+    match reaches(last + 1) {
         Some((note, steps)) if steps == way => return Ok((note.onset, false)),
         Some(_) => {}
         None => return Err("nothing follows it"),
     }
-    // One decorating note, or two, that agree; then the resolution.
-    for by in 2..=3 {
-        let between = (1..by).all(|b| {
+    // One decorating note, or two, that agree; then the resolution, which goes down.
+    let decorations = if way < 0 { 2 } else { 0 };
+    for by in (last + 2..).take(decorations) {
+        let between = (last + 1..by).all(|b| {
             place.neighbour(b).is_some_and(|note| {
-                place.agrees_at(note.onset) != Some(false) && note.length <= place.at_most()
+                place.agrees_at(note.onset) != Some(false)
+                    && note.length <= place.at_most()
+                    && place.score.level(note.onset) > place.score.level(place.at)
             })
         });
         if let (true, Some((note, steps))) = (between, reaches(by))
@@ -147,7 +176,7 @@ fn resolution(place: &Place<'_>, way: i32) -> Result<(Time, bool), &'static str>
 impl Place<'_> {
     /// The longest a decorating note may be: as long as the dissonance holds.
     fn at_most(&self) -> Time {
-        self.this()
-            .map_or_else(|| Time::from_integer(0), |n| n.end() - self.at)
+        self.held_to()
+            .map_or_else(|| Time::from_integer(0), |end| end - self.at)
     }
 }

@@ -4,7 +4,7 @@ use partwright_score::{Score, Texture};
 use partwright_space::Gap;
 
 use super::place::over;
-use super::{Dissonance, Figure, Place, QUESTIONS, Reading};
+use super::{Dissonance, Figure, Place, QUESTIONS, Reading, near_suspension};
 use crate::consonance;
 
 /// No note yet.
@@ -27,6 +27,7 @@ pub(crate) fn dissonances(score: &Score, texture: &Texture) -> Vec<Dissonance> {
             sweep.sonority(k, sonority.followers);
         }
     }
+    sweep.found.sort_by_key(|d| d.sonority);
     sweep.found
 }
 
@@ -141,7 +142,12 @@ impl Sweep<'_> {
         let Some(last) = self.last.get_mut(upper * self.voices + lower) else {
             return;
         };
-        if std::mem::replace(last, (high, low)) == (high, low) {
+        // Struck again, they are still the same two.
+        let first = (
+            first_of(self.score, upper, high),
+            first_of(self.score, lower, low),
+        );
+        if std::mem::replace(last, first) == first {
             return;
         }
         // A note that is a figure already may disagree with others too.
@@ -149,6 +155,12 @@ impl Sweep<'_> {
         if known(upper, high) || known(lower, low) {
             return;
         }
+        // Among upper voices a disagreement older than the lowest note began before it.
+        let k = if over_bass {
+            k
+        } else {
+            self.began(k, [(upper, high), (lower, low)])
+        };
         let Some(sonority) = self.texture.sonorities().get(k) else {
             return;
         };
@@ -162,6 +174,8 @@ impl Sweep<'_> {
             reading: None,
         };
         dissonance.reading = self.ask(&dissonance);
+        let near = dissonance.reading.is_none()
+            && near_suspension(self.score, self.texture, &dissonance).is_some();
         let mut mark = |list: fn(&mut Self) -> &mut Vec<usize>, voice: usize, note: usize| {
             if let Some(slot) = list(self).get_mut(voice) {
                 *slot = note;
@@ -174,16 +188,24 @@ impl Sweep<'_> {
                 figure: Figure::Pedal,
             }) => mark(|s| &mut s.pedal, voice, note),
             Some(Reading { voice, note, .. }) => mark(|s| &mut s.read, voice, note),
-            // What no figure explains is told once: of the notes struck here.
+            // What no figure explains is told once: of the notes struck here, and of one held
+            // that lacks something of a suspension.
             None => {
                 for (voice, note) in dissonance.notes() {
-                    if sonority.struck >> voice & 1 == 1 {
+                    if near || sonority.struck >> voice & 1 == 1 {
                         mark(|s| &mut s.read, voice, note);
                     }
                 }
             }
         }
         self.found.push(dissonance);
+    }
+
+    /// The sonority in which the later of two notes is struck.
+    fn began(&self, k: usize, notes: [(usize, usize); 2]) -> usize {
+        let note = |(v, n): (usize, usize)| self.score.voices.get(v)?.notes.get(n);
+        let later = notes.into_iter().filter_map(note).map(|n| n.onset).max();
+        later.and_then(|at| self.texture.at(at)).unwrap_or(k).min(k)
     }
 
     fn ask(&self, dissonance: &Dissonance) -> Option<Reading> {
@@ -200,4 +222,13 @@ impl Sweep<'_> {
             })
         })
     }
+}
+
+/// The first of the notes that only strike a pitch again.
+fn first_of(score: &Score, voice: usize, note: usize) -> usize {
+    let notes = score.voices.get(voice).map_or(&[][..], |v| &v.notes);
+    let sound = notes.get(note).map(|n| n.sound);
+    let before = notes.get(..note).unwrap_or_default();
+    let again = before.iter().rev().take_while(|n| Some(n.sound) == sound);
+    note - again.count()
 }

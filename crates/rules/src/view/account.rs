@@ -39,13 +39,13 @@ impl Discord<'_> {
         let line = format!("{voice} has {article} {name}");
         match figure {
             Figure::Suspension(held) | Figure::Retardation(held) => {
-                format!("{line}: {}", self.parts(&held))
+                format!("{line}: {}", self.times(&held))
             }
             _ => line,
         }
     }
 
-    fn parts(&self, held: &Held) -> String {
+    fn times(&self, held: &Held) -> String {
         let place = |at| self.piece.place_text(at);
         let after = if held.ornamented {
             ", after a decorating note"

@@ -2,7 +2,7 @@
 
 use partwright_analysis::figures::{Held, Near, near_suspension};
 use partwright_analysis::{Dissonance, Figure};
-use partwright_score::{Interval, Note, ZERO};
+use partwright_score::{Interval, Note, Time, ZERO};
 
 use super::{Discord, Sounding};
 
@@ -24,8 +24,10 @@ impl<'a> Discord<'a> {
             upper, lower, at, ..
         } = *self.dissonance;
         let is_struck = |of| self.note(of).is_some_and(|note| note.onset == at);
-        let lower_is = is_struck(lower) && !is_struck(upper);
-        if lower_is != self.near_suspension().is_some() {
+        if let Some((_, held)) = self.near() {
+            return held;
+        }
+        if is_struck(lower) && !is_struck(upper) {
             lower
         } else {
             upper
@@ -73,7 +75,33 @@ impl<'a> Discord<'a> {
         if self.dissonance.reading.is_some() {
             return None;
         }
+        self.near().map(|(near, _)| near)
+    }
+
+    fn near(&self) -> Option<(Near, (usize, usize))> {
         near_suspension(self.piece.score, self.piece.texture, self.dissonance)
+    }
+
+    /// No figure accounts for it, and no note is held that lacks something of a suspension.
+    #[must_use]
+    pub fn is_unexplained(&self) -> bool {
+        self.dissonance.reading.is_none() && self.near_suspension().is_none()
+    }
+
+    /// Both notes are struck where they begin to disagree.
+    #[must_use]
+    pub fn is_struck_together(&self) -> bool {
+        let at = self.dissonance.at;
+        let notes = self.dissonance.notes();
+        notes
+            .into_iter()
+            .all(|of| self.note(of).is_some_and(|note| note.onset == at))
+    }
+
+    /// One of the two notes is the lowest.
+    #[must_use]
+    pub fn is_over_bass(&self) -> bool {
+        self.dissonance.over_bass
     }
 
     /// The parts of the suspension it is.
@@ -109,6 +137,13 @@ impl<'a> Discord<'a> {
         let length = self.note(self.dissonant()).map_or(ZERO, |note| note.length);
         let cell = self.piece.cell_at(self.dissonance.at);
         cell.is_some_and(|cell| length < cell)
+    }
+
+    /// The dissonant note is shorter than a quarter.
+    #[must_use]
+    pub fn is_shorter_than_quarter(&self) -> bool {
+        let note = self.note(self.dissonant());
+        note.is_some_and(|note| note.length < Time::new(1, 4))
     }
 
     /// `D5 in soprano makes a major ninth with C4 in bass`.

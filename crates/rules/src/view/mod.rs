@@ -8,6 +8,7 @@ mod degree;
 mod discord;
 mod ending;
 mod figure;
+mod held;
 mod levels;
 mod line;
 mod pair;
@@ -22,6 +23,7 @@ use partwright_score::{Pair, PairStep, Score, Texture};
 
 pub use degree::{MinorDegree, Tessitura};
 pub use ending::LastMove;
+pub use held::{Numbers, SixFive, Together};
 pub use levels::{Level, ParallelRun, Succession};
 pub use line::{LineMove, Run};
 pub use pair::Direct;

@@ -1,6 +1,6 @@
 //! One sonority, and the step into it.
 
-use partwright_score::{Interval, Pair, Pitch, Sonority, Time, ZERO};
+use partwright_score::{Interval, Note, Pair, Pitch, Sonority, Time, ZERO};
 use partwright_space::{Family, Motion};
 
 use super::{PairMove, Sounding};
@@ -254,6 +254,55 @@ impl<'a> Sounding<'a> {
         self.piece
             .texture
             .pitch(self.piece.score, self.index, voice)
+    }
+
+    /// Three voices or more sound nothing but perfect fifths and octaves over the lowest, for a
+    /// beat at least.
+    #[must_use]
+    pub fn lacks_third(self) -> bool {
+        let Some(bass) = self.bass().filter(|_| self.parts() >= 3) else {
+            return false;
+        };
+        let texture = self.piece.texture;
+        let is_perfect = |v| {
+            let family = texture
+                .gap(self.index, v, bass)
+                .and_then(|gap| gap.family());
+            v == bass || family.is_some()
+        };
+        let lasts = self.piece.end_of(self.index) - self.onset();
+        texture.sounding(self.index).all(is_perfect)
+            && self
+                .piece
+                .cell_at(self.onset())
+                .is_some_and(|cell| lasts >= cell)
+    }
+
+    /// It begins a bar or a half of one.
+    #[must_use]
+    pub fn is_strong(self) -> bool {
+        self.sonority().is_some_and(|s| s.level <= 1)
+    }
+
+    /// A voice enters with it after silence, or ends its phrase or falls silent after it.
+    #[must_use]
+    pub fn opens_or_closes(self) -> bool {
+        let texture = self.piece.texture;
+        let next = texture.sonorities().get(self.index + 1);
+        let is_last = next.is_none_or(|s| s.sounding == 0 || s.new_section);
+        is_last
+            || texture.sounding(self.index).any(|v| {
+                let notes = self.piece.score.voices.get(v).map(|voice| &voice.notes);
+                let (Some(notes), Some(n)) = (notes, texture.note(self.index, v)) else {
+                    return false;
+                };
+                let sounds = |n: Option<usize>| {
+                    let note = n.and_then(|n| notes.get(n));
+                    note.is_some_and(|note| note.sound.pitch().is_some())
+                };
+                let ends = notes.get(n).is_some_and(Note::ends_phrase);
+                ends || !sounds(n.checked_sub(1)) || !sounds(Some(n + 1))
+            })
     }
 
     /// When it begins.

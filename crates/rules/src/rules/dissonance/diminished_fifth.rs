@@ -47,13 +47,14 @@ use crate::prelude::*;
 /// The rule.
 pub const RULE: Rule = Rule {
     looks: Looks::Dissonances(check),
-    cases: &[&ORDINARY],
+    cases: &[&ORDINARY, &PREPARED],
     numbers: &[],
     sources: &[
         source::LEHMANN,
         source::PROUT_COUNTERPOINT
             .at("ch. 2")
             .looser("a consonance if it closes"),
+        source::JEPPESEN,
     ],
 };
 
@@ -62,7 +63,7 @@ static ORDINARY: Case = Case {
     when: "it closes to a third",
     settings: &[
         allow(Style::Free, "ordinary in every later style"),
-        allow(Style::Motet, "ordinary at cadences"),
+        weakness(Style::Motet, "a dissonance, if a mild one"),
         weakness(
             Style::Species1,
             "Lehmann and Prout let it close to a third, stricter books do not",
@@ -70,11 +71,28 @@ static ORDINARY: Case = Case {
     ],
 };
 
+static PREPARED: Case = Case {
+    name: "prepared",
+    when: "one of the two notes is held, and it closes to a third",
+    settings: &[
+        allow(Style::Free, "ordinary in every later style"),
+        allow(
+            Style::Motet,
+            "prepared and resolved like a suspension (Jeppesen, from memory)",
+        ),
+        weakness(Style::Species1, "as when struck together"),
+    ],
+};
+
 fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
     let Some(Figure::DiminishedFifth) = discord.figure() else {
         return;
     };
-    let case = &ORDINARY;
+    let case = if discord.is_struck_together() {
+        &ORDINARY
+    } else {
+        &PREPARED
+    };
     found.dissonance(case, discord, || {
         format!(
             "Diminished fifth: {}. Write a sixth or a third in its place.",

@@ -1,4 +1,4 @@
-//! A dissonance that no figure accounts for.
+//! A dissonance with the lowest voice that no figure accounts for.
 //!
 //! Why: a dissonance is borne by what leads to it and away from it; without that it is heard as a wrong note.
 //!
@@ -150,8 +150,9 @@ static FOURTH: Case = Case {
 };
 
 fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
-    // A held note that lacks something of a suspension is told by the rules of suspensions.
-    if discord.figure().is_some() || discord.near_suspension().is_some() {
+    // A held note that lacks something of a suspension is told by the rules of suspensions, a
+    // clash among upper voices by a rule of its own.
+    if !discord.is_unexplained() || !discord.is_over_bass() {
         return;
     }
     let leap = |steps: Option<i32>| steps.is_some_and(|steps| steps.abs() >= 2);

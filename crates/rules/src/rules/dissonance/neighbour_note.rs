@@ -58,7 +58,7 @@ use crate::prelude::*;
 /// The rule.
 pub const RULE: Rule = Rule {
     looks: Looks::Dissonances(check),
-    cases: &[&WEAK, &ACCENTED],
+    cases: &[&WEAK, &ACCENTED, &QUICK],
     numbers: &[],
     sources: &[
         source::OPEN_MUSIC_THEORY,
@@ -101,11 +101,27 @@ static ACCENTED: Case = Case {
     ],
 };
 
+static QUICK: Case = Case {
+    name: "quick",
+    when: "in notes shorter than a quarter, outside the species",
+    settings: &[
+        allow(Style::Free, "a common ornament"),
+        allow(Style::Motet, "eighths in pairs (Jeppesen, from memory)"),
+    ],
+};
+
 fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
     let Some(Figure::Neighbour { accented, .. }) = discord.figure() else {
         return;
     };
-    let case = if accented { &ACCENTED } else { &WEAK };
+    let strict = found.style_of(&[discord.dissonant().0]).is_species();
+    let case = if accented && !strict && discord.is_shorter_than_quarter() {
+        &QUICK
+    } else if accented {
+        &ACCENTED
+    } else {
+        &WEAK
+    };
     found.dissonance(case, discord, || {
         format!(
             "Neighbour note: {}. Go on by step, or make it consonant.",

@@ -72,7 +72,7 @@ use crate::prelude::*;
 /// The rule.
 pub const RULE: Rule = Rule {
     looks: Looks::Dissonances(check),
-    cases: &[&WEAK, &ACCENTED, &DOWNBEAT, &DESCENDING],
+    cases: &[&WEAK, &ACCENTED, &DOWNBEAT, &DESCENDING, &QUICK],
     numbers: &[],
     sources: &[
         source::FUX,
@@ -154,6 +154,18 @@ static DESCENDING: Case = Case {
     ],
 };
 
+static QUICK: Case = Case {
+    name: "quick",
+    when: "in notes shorter than a quarter",
+    settings: &[
+        allow(Style::Free, "ordinary in instrumental lines"),
+        allow(
+            Style::Motet,
+            "pairs of eighths pass on either of the two (Jeppesen, from memory)",
+        ),
+    ],
+};
+
 fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
     let Some(Figure::Passing { accented }) = discord.figure() else {
         return;
@@ -163,6 +175,8 @@ fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
         &WEAK
     } else if strict && discord.is_on_downbeat() {
         &DOWNBEAT
+    } else if !strict && discord.is_shorter_than_quarter() {
+        &QUICK
     } else if !strict && discord.is_shorter_than_beat() && discord.steps_into() == Some(-1) {
         &DESCENDING
     } else {

@@ -43,7 +43,7 @@ use crate::prelude::*;
 /// The rule.
 pub const RULE: Rule = Rule {
     looks: Looks::Dissonances(check),
-    cases: &[&ORDINARY],
+    cases: &[&ORDINARY, &LEADING],
     numbers: &[],
     sources: &[
         source::OPEN_MUSIC_THEORY,
@@ -67,11 +67,29 @@ static ORDINARY: Case = Case {
     ],
 };
 
+static LEADING: Case = Case {
+    name: "leading-note",
+    when: "a major seventh over the lowest voice that rises a semitone to the octave (7-8)",
+    settings: &[
+        allow(Style::Free, "the leading note at a close"),
+        fault(Style::Motet, "suspensions go down"),
+        fault(Style::Species1, "suspensions go down"),
+        allow(
+            Style::Species4,
+            "the leading note may rise (Lehmann, lesson VI)",
+        ),
+    ],
+};
+
 fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
     let Some(Figure::Retardation(_)) = discord.figure() else {
         return;
     };
-    let case = &ORDINARY;
+    let case = if discord.is_leading_seventh() {
+        &LEADING
+    } else {
+        &ORDINARY
+    };
     found.dissonance(case, discord, || {
         format!("Retardation: {}. Let it go down by step.", discord.words())
     });

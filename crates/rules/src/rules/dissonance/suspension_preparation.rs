@@ -75,9 +75,7 @@ static MISSING: Case = Case {
 };
 
 fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
-    let is_short = discord
-        .suspension()
-        .is_some_and(|held| held.preparation() < held.resolved - held.at);
+    let is_short = discord.suspension().is_some_and(|held| held.is_short());
     let (case, lacks) = if discord.near_suspension() == Some(Near::Preparation) {
         (&MISSING, "is dissonant before")
     } else if is_short {

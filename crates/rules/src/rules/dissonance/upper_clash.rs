@@ -1,0 +1,85 @@
+//! Two upper voices clash over a bass they both agree with.
+//!
+//! Why: each agrees with the lowest voice, and still the second or the seventh between them needs a reason:
+//! a step through it, or a preparation.
+//!
+//! # Fails
+//!
+//! ```voices
+//! style motet
+//! metre 4/2
+//!
+//! S | E5 - - - | A5 - - - | E5 - - - |
+//! //             ^ upper clash: S and A
+//! A | B4 - - - | G5 - - - | C5 - - - |
+//! B | E3 - - - | C4 - - - | A3 - - - |
+//! ```
+//!
+//! # Passes
+//!
+//! The fifth is held and goes down to make room for the sixth:
+//!
+//! ```voices
+//! style motet
+//! metre 4/2
+//!
+//! S | B4 - - - | A4 - -  - |
+//! A | G4 - - - | -  - F4 - |
+//! B | G3 - - - | C3 - F3 - |
+//! ```
+//!
+//! # Does not apply
+//!
+//! ```voices
+//! style chorale
+//!
+//! S | E5 - | A5 - |
+//! A | C5 - | G5 - |
+//! B | A3 - | C4 - |
+//! ```
+//!
+//! # What to do
+//!
+//! Prepare one of the two and let it go down by step, or give them notes that agree.
+
+use crate::prelude::*;
+
+/// The rule.
+pub const RULE: Rule = Rule {
+    looks: Looks::Dissonances(check),
+    cases: &[&ORDINARY],
+    numbers: &[],
+    sources: &[source::LEHMANN.at("lesson XIII")],
+};
+
+static ORDINARY: Case = Case {
+    name: "",
+    when: "a second or a seventh among upper voices, and no figure accounts for it",
+    settings: &[
+        allow(
+            Style::Free,
+            "a seventh chord, or a ninth: judged with the harmony",
+        ),
+        allow(
+            Style::Chorale,
+            "a seventh chord, or a ninth: judged with the harmony",
+        ),
+        fault(Style::Motet, "upper voices agree with each other"),
+        fault(
+            Style::Species1,
+            "upper voices agree with each other (Lehmann, lesson XIII)",
+        ),
+    ],
+};
+
+fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
+    if !discord.is_unexplained() || discord.is_over_bass() {
+        return;
+    }
+    found.dissonance(&ORDINARY, discord, || {
+        format!(
+            "Upper clash: {}. Prepare one of them, or let them agree.",
+            discord.words()
+        )
+    });
+}
