@@ -106,7 +106,7 @@ fn a_thousand_hurts() {
             }
         }
         println!("outside: {name}: of {tried} hurts {found} found, {faults} of them by a fault");
-        // What stands here is what was measured, rounded down; it may only grow.
+        // What was measured may only grow.
         let least = LEAST.iter().find(|least| least.0 == *name).unwrap();
         assert!(
             found >= least.1 && faults >= least.2,
@@ -116,4 +116,4 @@ fn a_thousand_hurts() {
 }
 
 /// The least number of hurts found, and found by a fault, of 500.
-const LEAST: [(&str, usize, usize); 2] = [("treatise", 0, 0), ("renaissance", 0, 0)];
+const LEAST: [(&str, usize, usize); 2] = [("treatise", 471, 423), ("renaissance", 409, 348)];
