@@ -10,7 +10,7 @@ pub fn notes_findings(piece: &Piece<'_>, strictness: &Strictness) -> Vec<Finding
     let mut list = Vec::new();
     let (mut pairs, mut sonorities, mut lines) = (Vec::new(), Vec::new(), Vec::new());
     for entry in catalogue() {
-        if !strictness.takes(&entry.id, entry.family) {
+        if !strictness.takes(&entry.id, entry.family) || !strictness.minds(entry, score) {
             continue;
         }
         match entry.rule.looks {

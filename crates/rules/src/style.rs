@@ -3,8 +3,11 @@
 //! The overrides stand in the rule files, beside the cases they set, so that a rule is added in
 //! one file; the shape of a style (its base and what it is for) stands here.
 
-use std::iter::successors;
+use std::iter::{once, successors};
 
+use partwright_score::Score;
+
+use crate::catalogue::Entry;
 use crate::rule::{Case, NumberOf, Severity};
 
 /// Which rules apply, and how strictly. The order is the order of every list.
@@ -261,6 +264,21 @@ impl Strictness {
             Some(change) => change.severity,
             None => case.setting(style)?.severity,
         }
+    }
+
+    /// Whether any case of a rule can be minded in a score: a rule that the style allows
+    /// throughout need not be asked.
+    #[must_use]
+    pub fn minds(&self, entry: &Entry, score: &Score) -> bool {
+        let own = score.voices.iter().filter_map(|voice| voice.species);
+        let own = own
+            .filter_map(Style::of_species)
+            .filter(|_| self.style.is_species());
+        let mut styles = once(self.style).chain(own);
+        styles.any(|style| {
+            let severity = |case| self.severity_in(style, &entry.id, entry.family, case);
+            entry.rule.cases.iter().any(|case| severity(case).is_some())
+        })
     }
 
     /// The value of a rule's number: the house's, else the rule's own.
