@@ -61,6 +61,11 @@ fn rule(problems: &mut Vec<Problem>, word: Word<'_>) -> Option<(String, Span)> {
         wrong(problems, word.span, message, &[]);
         return None;
     }
+    if let Some(bare) = word.text.strip_suffix(',').filter(|bare| is_rule(bare)) {
+        let message = "Rules stand side by side with a blank between, without commas.";
+        wrong(problems, word.span, message, &[bare]);
+        return Some((bare.to_owned(), word.span));
+    }
     if !is_rule(word.text) {
         let message = format!(
             "{} is no rule: rules and families are named in small letters with hyphens, as in \
