@@ -111,7 +111,14 @@ impl Reading {
         let system = self.map.system(bar)?;
         let row = self.map.row(system, voice)?;
         let tree = &system.placed.system;
-        let index = bar_of(row, bar - system.first)?;
+        let nth = bar - system.first;
+        // Behind a bar line left out nobody knows.
+        let behind = |row: &(u32, u8)| system.lost_at(row.0).is_some_and(|lost| nth > lost);
+        let mut rows = system.rows.iter();
+        if rows.any(|row| usize::from(row.1) == voice && behind(row)) {
+            return None;
+        }
+        let index = bar_of(row, nth)?;
         let cells = tree.cells_of(index);
         let part = if fill(tree, row.kind, index) == Fill::Whole {
             tree.parts_of(cells.start).start
