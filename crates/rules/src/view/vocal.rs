@@ -188,6 +188,19 @@ impl Line<'_> {
         move |pitch| !known.contains(&mode::fifths(pitch))
     }
 
+    /// Some move to or from a stretch of time is augmented, or a diminished leap: the rules for
+    /// those tell of the note.
+    #[must_use]
+    pub fn jars(&self, from: Time, until: Time) -> bool {
+        let inside = |note: &Note| from <= note.onset && note.onset < until;
+        let mut moves = self.moves.iter();
+        !self.is_given()
+            && moves.any(|m| {
+                (inside(&m.from) || inside(&m.to))
+                    && (m.is_augmented() || (m.is_diminished() && m.is_leap()))
+            })
+    }
+
     /// The notes of a run keep within the authentic or the plagal octave of a final, and so many
     /// steps beyond either end.
     #[must_use]

@@ -74,20 +74,19 @@ static ORDINARY: Case = Case {
 };
 
 fn check(line: &Line<'_>, found: &mut Found<'_>) {
-    let species = found.style().is_species();
-    let strict = species || found.style() == Style::Motet;
-    // A diminished second needs a note that the modes do not know: in motets that one is told.
-    let counts = |size: i32| species || matches!(size, 2 | 3 | 4 | 6) || (strict && size > 4);
+    let motet = found.style() == Style::Motet;
+    let strict = found.style().is_species() || motet;
+    // A diminished second takes a note that the modes do not know: told as a foreign accidental.
     for (i, step) in line.moves.iter().enumerate() {
         let turns_back = || {
             line.after(i)
                 .is_none_or(|next| next.size() == 1 && next.rises() != step.rises())
         };
         if line.is_given()
-            || step.size() == 0
-            || !counts(step.size())
+            || (step.size() == 0 || !(strict || matches!(step.size(), 2 | 3 | 4 | 6)))
             || !step.is_diminished()
             || (!strict && turns_back())
+            || (motet && step.size() == 1)
         {
             continue;
         }
