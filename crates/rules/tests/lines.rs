@@ -64,6 +64,26 @@ fn lines_are_judged_by_the_letter_of_the_rule() {
             "style motet\nmetre 4/2\n\nS | A4 - G4 A4.G4 | F4 - - - |",
             &[],
         ),
+        (
+            "style motet\nmetre 4/2\n\nS | F4 A4 G4 A4 | G4 - A4 - |",
+            &[],
+        ),
+        (
+            "style motet\nmetre 4/2\n\nS | F4 A4 G4 A4 | G4 A4 F4 - |",
+            &["figure-repeated"],
+        ),
+        // Held over, but in leaps: no suspension comes and goes.
+        (
+            "style motet\nmetre 4/2\n\nS | B4 A4 G4 B4 | - G4 B4 - | A4 - - - |",
+            &["figure-repeated"],
+        ),
+        // One wrong sign is told once: by the interval, or where it makes none by the sign.
+        ("style motet\n\nS | A4 B#4 A4 B4 |", &["augmented-interval"]),
+        ("style motet\n\nS | C5 B#4 C5 B4 |", &["foreign-accidental"]),
+        (
+            "style species-1\n\nS | A4 C5 B#4 C5 |",
+            &["diminished-interval", "diminished-interval"],
+        ),
         // Two bars of one figure are no monotony yet.
         (
             "style species-3\nmetre 4/4\n\nS | A4 B4 C5 D5 | G4 A4 B4 C5 | A4 G4 F4 E4 |",

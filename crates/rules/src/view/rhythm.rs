@@ -1,6 +1,6 @@
 //! Rhythm: a voice's notes over one note of the cantus, and where the minims lie.
 
-use partwright_score::{Note, Sound, Time};
+use partwright_score::{Note, Sound, Time, ZERO};
 
 use super::{Line, LineMove, Piece};
 
@@ -187,6 +187,24 @@ pub struct Quick {
     pub is_in_place: bool,
     /// From the first on to the note after the last, every move is a step.
     pub is_by_step: bool,
+    /// How many groups of such notes it joins.
+    pub groups: usize,
+    /// A semibreve where it ends.
+    semibreve: Time,
+}
+
+impl Quick {
+    /// Joins it to a passage it goes on from: less than a semibreve lies between.
+    pub fn join(&mut self, next: Quick) -> bool {
+        let near = next.from - self.until < self.semibreve;
+        if near {
+            self.until = next.until;
+            self.notes += next.notes;
+            self.groups += next.groups;
+            self.semibreve = next.semibreve;
+        }
+        near
+    }
 }
 
 impl Piece<'_> {
@@ -288,13 +306,18 @@ impl Piece<'_> {
 }
 
 impl Line<'_> {
-    /// The runs of notes shorter than half a minim, where it is known what a minim is.
+    /// The runs of notes shorter than half a minim, where it is known what a minim is. Three in
+    /// the time of two are another proportion, and no eighths.
     #[must_use]
     pub fn quick_notes(&self, strict: bool) -> Vec<Quick> {
         let notes = self.declared().map_or(&[][..], |v| &v.notes);
         let minim = |note: &Note| self.piece.minim_at(note.onset, strict);
         let is_quick = |note: &Note| {
-            note.sound.pitch().is_some() && minim(note).is_some_and(|m| note.length * 2 < m.length)
+            let short = |m: Minim| {
+                let share = note.length / m.length;
+                share * 2 < Time::new(1, 1) && share.denom().count_ones() == 1
+            };
+            note.sound.pitch().is_some() && minim(note).is_some_and(short)
         };
         let mut runs: Vec<Quick> = Vec::new();
         for note in notes.iter().filter(|note| is_quick(note)) {
@@ -309,11 +332,14 @@ impl Line<'_> {
                     notes: 1,
                     is_in_place: true,
                     is_by_step: true,
+                    groups: 1,
+                    semibreve: ZERO,
                 }),
             }
         }
         for run in &mut runs {
             let place = self.piece.minim_at(run.from, strict);
+            run.semibreve = place.map_or(ZERO, |m| m.length * 2);
             run.is_in_place = place.is_some_and(|m| {
                 run.from == m.from + m.length / 2 && run.until == m.from + m.length
             });

@@ -230,8 +230,8 @@ impl<'a> Line<'a> {
         phrases
     }
 
-    /// Passages in which two notes alternate, each struck twice at least and in one rhythm; the
-    /// last may last longer or shorter.
+    /// Passages in which two notes alternate, each struck twice at least and each time as long;
+    /// the last of the passage may last longer or shorter.
     #[must_use]
     pub fn alternations(&self) -> Vec<Passing> {
         let mut found = Vec::new();
@@ -247,7 +247,9 @@ impl<'a> Line<'a> {
                     end += 1;
                 }
                 let passage = notes.get(from..end).unwrap_or_default();
-                if passage.windows(4).any(same_rhythm) {
+                let last = passage.len().saturating_sub(4);
+                let mut fours = passage.windows(4).enumerate();
+                if fours.any(|(i, four)| same_rhythm(four, i == last)) {
                     found.extend(Passing::of(passage, 2));
                 }
                 from = (end - 1).max(from + 1);
@@ -343,9 +345,10 @@ impl<'a> Line<'a> {
     }
 }
 
-/// Of four notes the third is as long as the first.
-fn same_rhythm(four: &[Note]) -> bool {
-    matches!(four, [a, _, c, _] if a.length == c.length)
+/// Of four notes the third is as long as the first, and the fourth as the second, unless it is
+/// the last of a passage.
+fn same_rhythm(four: &[Note], is_last: bool) -> bool {
+    matches!(four, [a, b, c, d] if a.length == c.length && (is_last || b.length == d.length))
 }
 
 /// So many notes from a note on, and the first `n` of them again after `by` notes.

@@ -125,6 +125,32 @@ impl Line<'_> {
         (0..notes.len()).filter_map(value).collect()
     }
 
+    /// In a stretch that goes by step, one of its notes but the last is held over a stronger
+    /// minim, or a stronger half of one: a suspension comes and goes.
+    #[must_use]
+    pub fn suspends(&self, (from, until): (Time, Time)) -> bool {
+        let inside = |at: Time| from <= at && at < until;
+        let mut moves = self
+            .moves
+            .iter()
+            .filter(|m| inside(m.to.onset) && m.to.onset > from);
+        let is_held = |note: &Note| {
+            self.piece.minim_at(note.onset, false).is_some_and(|minim| {
+                let weak = if note.onset == minim.from {
+                    !minim.is_strong && note.length > minim.length
+                } else {
+                    note.end() > minim.from + minim.length
+                };
+                weak && note.end() < until
+            })
+        };
+        moves.all(|m| m.size() <= 1)
+            && self
+                .notes()
+                .iter()
+                .any(|note| inside(note.onset) && is_held(note))
+    }
+
     /// The parts of a note on either side of the bar line, in minims, if it crosses one only and
     /// does not close the line.
     fn parts_of(&self, note: &Note, minim: Time) -> Option<(Time, Time)> {
@@ -160,6 +186,19 @@ impl Line<'_> {
         );
         let known = -2 - flats.max(0)..=8 - flats.min(0);
         move |pitch| !known.contains(&mode::fifths(pitch))
+    }
+
+    /// Some move to or from a stretch of time is augmented, or a diminished leap: the rules for
+    /// those tell of the note.
+    #[must_use]
+    pub fn jars(&self, from: Time, until: Time) -> bool {
+        let inside = |note: &Note| from <= note.onset && note.onset < until;
+        let mut moves = self.moves.iter();
+        !self.is_given()
+            && moves.any(|m| {
+                (inside(&m.from) || inside(&m.to))
+                    && (m.is_augmented() || (m.is_diminished() && m.is_leap()))
+            })
     }
 
     /// The notes of a run keep within the authentic or the plagal octave of a final, and so many

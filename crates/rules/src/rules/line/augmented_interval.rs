@@ -75,7 +75,7 @@ pub const RULE: Rule = Rule {
 
 static ORDINARY: Case = Case {
     name: "",
-    when: "an augmented second, fourth, fifth or sixth between successive notes",
+    when: "an augmented second, fourth, fifth or sixth between successive notes; in strict styles a note between two of them is told once",
     settings: &[
         weakness(
             Style::Free,
@@ -96,6 +96,11 @@ static ORDINARY: Case = Case {
 fn check(line: &Line<'_>, found: &mut Found<'_>) {
     let strict = !matches!(found.style(), Style::Free | Style::Chorale);
     let played = line.declared().is_some_and(|v| !v.kind.is_sung());
+    // One wrong sign makes two such moves, to the note and from it.
+    let told = |i: usize| {
+        let before = line.before(i).filter(|before| before.size() > 0);
+        strict && before.is_some_and(LineMove::is_augmented)
+    };
     for (i, step) in line.moves.iter().enumerate() {
         let excused = !strict && step.size() == 3 && line.is_in_sequence(i);
         let figured = found.style() == Style::Free && played;
@@ -111,6 +116,7 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
             || step.size() == 0
             || !step.is_augmented()
             || excused
+            || told(i)
             || figured
             || one_chord()
         {

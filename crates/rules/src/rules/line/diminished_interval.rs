@@ -74,7 +74,9 @@ static ORDINARY: Case = Case {
 };
 
 fn check(line: &Line<'_>, found: &mut Found<'_>) {
-    let strict = found.style().is_species() || found.style() == Style::Motet;
+    let motet = found.style() == Style::Motet;
+    let strict = found.style().is_species() || motet;
+    // A diminished second takes a note that the modes do not know: told as a foreign accidental.
     for (i, step) in line.moves.iter().enumerate() {
         let turns_back = || {
             line.after(i)
@@ -84,6 +86,7 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
             || (step.size() == 0 || !(strict || matches!(step.size(), 2 | 3 | 4 | 6)))
             || !step.is_diminished()
             || (!strict && turns_back())
+            || (motet && step.size() == 1)
         {
             continue;
         }

@@ -39,6 +39,15 @@
 //! S | D4 E4 F4 D4 | G4 F4 E4 D4 | F4 A4 G4 F4 |
 //! ```
 //!
+//! About a suspension, in motets:
+//!
+//! ```voices
+//! style motet
+//! metre 4/2
+//!
+//! S | G4 A4 B4 C5 | - B4 C5 - | A4 - - - ||
+//! ```
+//!
 //! # Does not apply
 //!
 //! ```voices
@@ -62,7 +71,7 @@ pub const RULE: Rule = Rule {
         source::BUTTERFIELD.at("ch. 5"),
         source::JEPPESEN,
         source::RENAISSANCE_WORKS
-            .at("two notes to and fro: 7 in 100 bars of Palestrina, figures 2")
+            .at("two notes to and fro: 3 in 100 bars of Palestrina, and 4 more about a suspension; figures 2")
             .looser("no rarity"),
     ],
 };
@@ -92,7 +101,7 @@ static FIGURE: Case = Case {
 
 static TWO_NOTES: Case = Case {
     name: "two-notes",
-    when: "two notes to and fro in one rhythm, each struck twice",
+    when: "two notes to and fro in one rhythm, each struck twice; in motets not where one is held over as a suspension",
     settings: &[
         allow(Style::Free, "common in accompaniment"),
         weakness(Style::Motet, "the line stands still (Butterfield)"),
@@ -124,7 +133,12 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
             )
         });
     }
+    let motet = found.style() == Style::Motet;
     for passage in line.alternations() {
+        // The closes of the style suspend and resolve: to and fro, and no standing still.
+        if motet && line.suspends(passage.extent()) {
+            continue;
+        }
         found.passage(&TWO_NOTES, &[line.voice], passage.extent(), || {
             let [first, second, _] = passage.pitches();
             format!(

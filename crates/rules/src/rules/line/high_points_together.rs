@@ -26,6 +26,16 @@
 //! C | D4 F4 G4 A4 | G4 F4 E4  D4 ||
 //! ```
 //!
+//! In motets, where one of them was there before:
+//!
+//! ```voices
+//! style motet
+//! metre 4/2
+//!
+//! S | A4 - B4 - | D5 - C5 - | B4 C5 D5 - | C5 - - - | D5 - - - ||
+//! B | D3 - G3 - | G3 - A3 - | G3 A3 B3 - | A3 - - - | D3 - - - ||
+//! ```
+//!
 //! # Does not apply
 //!
 //! ```voices
@@ -44,12 +54,17 @@ pub const RULE: Rule = Rule {
     looks: Looks::Piece(check),
     cases: &[&ORDINARY],
     numbers: &[],
-    sources: &[source::OPEN_MUSIC_THEORY.at("first species")],
+    sources: &[
+        source::OPEN_MUSIC_THEORY.at("first species"),
+        source::RENAISSANCE_WORKS
+            .at("in 314 pieces the highest voice comes to its highest note three times in the median, only once in 87")
+            .looser("a highest note that comes back is no high point"),
+    ],
 };
 
 static ORDINARY: Case = Case {
     name: "",
-    when: "the outer voices strike their highest notes at one moment",
+    when: "the outer voices strike their highest notes at one moment; in motets, each for the first time",
     settings: &[
         allow(Style::Free, "a climax may be common to all"),
         weakness(Style::Motet, "each voice has its own (Open Music Theory)"),
@@ -85,6 +100,11 @@ fn check(piece: &Piece<'_>, found: &mut Found<'_>) {
     let Some(&at) = above.times.iter().find(reached) else {
         return;
     };
+    // In a long piece the highest note comes back: what counts is the first time.
+    let first = [&above, &below].map(|top| top.times.first());
+    if found.style() == Style::Motet && first != [Some(&at); 2] {
+        return;
+    }
     found.sonority(&ORDINARY, &[0, lower], at, || {
         format!(
             "High points together: {} comes to {} and {} to {} in {}, the highest note of each. Bring one earlier or later.",

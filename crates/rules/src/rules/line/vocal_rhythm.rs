@@ -66,7 +66,11 @@ pub const RULE: Rule = Rule {
     looks: Looks::Lines(check),
     cases: &[&DOT, &ISOLATED, &TIE],
     numbers: &[],
-    sources: &[source::JEPPESEN],
+    sources: &[
+        source::JEPPESEN,
+        source::RENAISSANCE_WORKS
+            .at("a dotted half has its quarter in 7,846 of 7,907 places, a dotted whole its half or less in 1,730 of 1,832"),
+    ],
 };
 
 static DOT: Case = Case {

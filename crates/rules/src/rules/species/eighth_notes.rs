@@ -29,6 +29,16 @@
 //! C | D4 - -  -  -  - -  - |
 //! ```
 //!
+//! Again and again within a semibreve is one passage:
+//!
+//! ```voices
+//! style motet
+//! metre 4/2 by 1/8
+//!
+//! S | A4 - - G4 A4 - - B4 C5 - - - B4 - A4 - | A4 - - - - - - - G4 - - - - - - - |
+//! //         ^^ eighth notes (weakness): S
+//! ```
+//!
 //! # Passes
 //!
 //! ```voices
@@ -39,6 +49,15 @@
 //!
 //! S | A4 - G4 F4 G4 - A4 - |
 //! C | D4 - -  -  -  - -  - |
+//! ```
+//!
+//! Three in the time of two quarters are another proportion:
+//!
+//! ```voices
+//! style motet
+//! metre 4/2
+//!
+//! S | A4 A4.G4.F4 G4 A4 | G4 - A4 - |
 //! ```
 //!
 //! # Does not apply
@@ -55,6 +74,7 @@
 //!
 //! Write two eighths in the place of the second or fourth quarter, and go on by step.
 
+use crate::Quick;
 use crate::prelude::*;
 
 /// The rule.
@@ -69,7 +89,7 @@ pub const RULE: Rule = Rule {
         source::FUX_FIGURES
             .at("five rhythms with eighths, all in pairs on the second or fourth quarter"),
         source::JEPPESEN,
-        source::RENAISSANCE_WORKS.at("none otherwise in 1,016 bars of Palestrina; madrigals of the next age are full of them"),
+        source::RENAISSANCE_WORKS.at("none otherwise in 1,016 bars of Palestrina, 2 passages in 100 bars of other sacred music and songs, 77 in madrigals of the next age"),
     ],
 };
 
@@ -101,20 +121,37 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
     if line.is_given() || !(strict || found.style() == Style::Motet) {
         return;
     }
-    let name = line.piece.name(line.voice);
+    // What goes on within a semibreve is one passage.
+    let mut passages: Vec<(&'static Case, Quick)> = Vec::new();
     for quick in line.quick_notes(strict) {
-        let (case, what) = if quick.notes != 2 || !quick.is_in_place {
-            (&PLACE, "not a pair in the second half of a beat")
+        let case = if quick.notes != 2 || !quick.is_in_place {
+            &PLACE
         } else if !quick.is_by_step {
-            (&LEAP, "a pair that does not go by step")
+            &LEAP
         } else {
             continue;
         };
-        found.passage(case, &[line.voice], (quick.from, quick.until), || {
-            let notes = match quick.notes {
-                1 => "one eighth".to_owned(),
-                2 => "two eighths".to_owned(),
-                more => format!("{more} eighths"),
+        let open = passages
+            .last_mut()
+            .filter(|open| std::ptr::eq(open.0, case));
+        if !open.is_some_and(|(_, passage)| passage.join(quick)) {
+            passages.push((case, quick));
+        }
+    }
+    let name = line.piece.name(line.voice);
+    for (case, passage) in passages {
+        found.passage(case, &[line.voice], (passage.from, passage.until), || {
+            let notes = match (passage.notes, passage.groups) {
+                (1, _) => "one eighth".to_owned(),
+                (2, 1) => "two eighths".to_owned(),
+                (notes, 1) => format!("{notes} eighths"),
+                (notes, groups) => format!("{notes} eighths in {groups} groups"),
+            };
+            let what = match (std::ptr::eq(case, &PLACE), passage.groups) {
+                (true, 1) => "not a pair in the second half of a beat",
+                (true, _) => "not pairs in the second half of a beat",
+                (false, 1) => "a pair that does not go by step",
+                (false, _) => "pairs that do not go by step",
             };
             format!(
                 "Eighth notes: {name} has {notes} here, {what}. Write two by step after a quarter."
