@@ -28,6 +28,21 @@ fn files(rules: &Path) -> Result<Vec<(String, String)>, String> {
     Ok(found)
 }
 
+/// A row of the table.
+const ROW: &str = r#"
+macro_rules! file {
+    ($family:literal, $stem:ident) => {
+        File {
+            family: $family,
+            stem: stringify!($stem),
+            rule: &$stem::RULE,
+            text: include_str!(concat!("rules/", $family, "/", stringify!($stem), ".rs")),
+        }
+    };
+}
+
+"#;
+
 fn text(files: &[(String, String)]) -> String {
     let mut text = String::from(
         "//! The rule files. Written by `cargo xtask list`; do not edit.\n\nuse crate::catalogue::File;\n\n",
@@ -41,13 +56,10 @@ fn text(files: &[(String, String)]) -> String {
             "#[path = \"rules/{family}/{stem}.rs\"]\npub mod {stem};"
         );
     }
-    text.push_str("\npub(crate) static FILES: &[File] = &[\n");
+    text.push_str(ROW);
+    text.push_str("pub(crate) static FILES: &[File] = &[\n");
     for (family, stem) in files {
-        let _ = write!(
-            text,
-            "    File {{\n        family: \"{family}\",\n        stem: \"{stem}\",\n        rule: &{stem}::RULE,\n        \
-             text: include_str!(\"rules/{family}/{stem}.rs\"),\n    }},\n",
-        );
+        let _ = writeln!(text, "    file!(\"{family}\", {stem}),");
     }
     text.push_str("];\n");
     text
