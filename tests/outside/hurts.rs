@@ -115,5 +115,6 @@ fn a_thousand_hurts() {
     }
 }
 
-/// The least number of hurts found, and found by a fault, of 500.
-const LEAST: [(&str, usize, usize); 2] = [("treatise", 471, 423), ("renaissance", 407, 348)];
+/// The least number of hurts found, and found by a fault, of 500. Leaps of inner voices in motets
+/// (see `similar-leaps`) count no longer, nor what two voices do as a third falls silent.
+const LEAST: [(&str, usize, usize); 2] = [("treatise", 474, 427), ("renaissance", 401, 347)];

@@ -289,7 +289,10 @@ impl Sounding<'_> {
             let gap = texture.gap(self.index, high, low);
             gap.is_some_and(|gap| gap.semitones != 0 && (gap.semitones > 0) == (high < low))
         };
-        let between = |v: usize| over(v, pair.lower) && over(pair.upper, v);
+        // In score order, or crossed: of two choirs, a bass stands over the other's soprano.
+        let within = |high, low, v| over(high, v) && over(v, low);
+        let between =
+            |v: usize| within(pair.upper, pair.lower, v) || within(pair.lower, pair.upper, v);
         let mut voices = texture.sounding(self.index);
         voices.any(|v| v != pair.upper && v != pair.lower && between(v))
     }

@@ -3,7 +3,7 @@
 use partwright_score::{Interval, Time, ZERO};
 use partwright_space::{Consecutive, Family, Motion, Way};
 
-use super::PairMove;
+use super::{PairMove, Sounding};
 use crate::rule::Case;
 
 /// How a perfect interval reached in similar motion stands in the texture.
@@ -122,10 +122,28 @@ impl<'a> PairMove<'a> {
         moved.is_some_and(|gap| gap.semitones > 0)
     }
 
-    /// The pair is the outermost that sounds.
+    /// The pair is the outermost that sounds: the highest and the lowest note, since voices cross
+    /// and a fifth or sixth voice may stand anywhere in the score. Where a voice is not written
+    /// yet, the outermost in the score.
     #[must_use]
     pub fn is_outer(&self) -> bool {
-        self.sounding.outer() == Some(self.pair)
+        let there = self.sounding;
+        if there.sonority().is_none_or(|s| s.unknown != 0) {
+            return there.outer() == Some(self.pair);
+        }
+        let height = |&v: &usize| there.pitch(v).map(|p| p.place().semitone);
+        // Of voices in unison the one further out in the score.
+        let voices = there.piece.texture.sounding(there.index);
+        let highest = voices.max_by_key(|v| (height(v), std::cmp::Reverse(*v)));
+        highest == Some(self.top()) && there.bass() == Some(self.foot())
+    }
+
+    /// The number of parts the step is written in: a voice that falls silent with it, or enters
+    /// with it, still belongs to the texture.
+    #[must_use]
+    pub fn parts(&self) -> usize {
+        let before = self.sounding.neighbour(-1).map_or(0, Sounding::parts);
+        before.max(self.sounding.parts())
     }
 
     /// The lower of the two has the lowest note of all; `None` where that cannot be told, since
@@ -162,6 +180,13 @@ impl<'a> PairMove<'a> {
                 });
             }
         }
+    }
+
+    /// The same pair's next step in which this voice moves, whatever the other does meanwhile.
+    #[must_use]
+    pub fn next_of(&self, voice: usize) -> Option<PairMove<'a>> {
+        std::iter::successors(self.next(), Self::next)
+            .find(|next| next.size_of_move(voice).is_some_and(|size| size > 0))
     }
 
     /// The two leave the same pitch.
@@ -246,11 +271,7 @@ impl<'a> PairMove<'a> {
     /// How a direct perfect interval stands in the texture.
     #[must_use]
     pub fn direct(&self) -> Direct {
-        match (
-            self.sounding.parts(),
-            self.leaps(self.top()),
-            self.is_outer(),
-        ) {
+        match (self.parts(), self.leaps(self.top()), self.is_outer()) {
             (..=2, true, _) => Direct::TwoParts,
             (..=2, false, _) => Direct::TwoPartsStep,
             (3, true, true) => Direct::ThreeOuter,

@@ -278,6 +278,17 @@ impl<'a> Sounding<'a> {
                 .is_some_and(|cell| lasts >= cell)
     }
 
+    /// Two voices arrive by steps in contrary motion on an octave or a unison, as at a close.
+    #[must_use]
+    pub fn closes_by_steps(self) -> bool {
+        self.moves(false).any(|step| {
+            step.motion() == Some(Motion::Contrary)
+                && step.after().and_then(|i| i.0.family()) == Some(Family::Octave)
+                && step.steps(step.pair.upper)
+                && step.steps(step.pair.lower)
+        })
+    }
+
     /// It begins a bar or a half of one.
     #[must_use]
     pub fn is_strong(self) -> bool {

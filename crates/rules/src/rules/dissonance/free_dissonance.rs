@@ -39,6 +39,20 @@
 //! //       ^ free dissonance: S and B
 //! ```
 //!
+//! In the first species not even a note struck again that resolves:
+//!
+//! ```voices
+//! style species-1
+//!
+//! metre 4/4
+//! voice S
+//! voice C cantus
+//!
+//! S | A4 - - - | A4 - - - | G4 - - - |
+//! //             ^ free dissonance: S and C
+//! C | C4 - - - | B3 - - - | C4 - - - |
+//! ```
+//!
 //! # Passes
 //!
 //! ```voices
@@ -69,7 +83,7 @@ use crate::prelude::*;
 /// The rule.
 pub const RULE: Rule = Rule {
     looks: Looks::Dissonances(check),
-    cases: &[&ORDINARY, &LEAP, &FOURTH],
+    cases: &[&ORDINARY, &LEAP, &FOURTH, &FIRST],
     numbers: &[],
     sources: &[
         source::FUX,
@@ -149,7 +163,30 @@ static FOURTH: Case = Case {
     ],
 };
 
+static FIRST: Case = Case {
+    name: "first-species",
+    when: "held or struck again like a suspension, in note against note",
+    settings: &[
+        allow(Style::Free, "a suspension"),
+        fault(
+            Style::Species1,
+            "note against note has only consonances (Fux; Lehmann, lesson I)",
+        ),
+        allow(Style::Species2, "judged as a suspension"),
+    ],
+};
+
 fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
+    let style = found.style_of(&[discord.dissonant().0]);
+    if style == Style::Species1 && discord.is_over_bass() && discord.suspension().is_some() {
+        found.dissonance(&FIRST, discord, || {
+            format!(
+                "Free dissonance: {}. Note against note, every interval is consonant.",
+                discord.words()
+            )
+        });
+        return;
+    }
     // A held note that lacks something of a suspension is told by the rules of suspensions, a
     // clash among upper voices by a rule of its own.
     if !discord.is_unexplained() || !discord.is_over_bass() {

@@ -90,7 +90,7 @@ static CLOSE: Case = Case {
 fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
     if step.consecutive() != Some(Consecutive::Contrary(Family::Fifth))
         || step.step.keeps_classes()
-        || step.sounding.parts() >= 5
+        || step.parts() >= 5
     {
         return;
     }

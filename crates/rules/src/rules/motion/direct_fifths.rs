@@ -58,6 +58,27 @@
 //! B | F3 D3 |
 //! ```
 //!
+//! Nor where a voice lies above the upper of the two, whatever its place in the score:
+//!
+//! ```voices
+//! style motet
+//!
+//! S | A3 D4 |
+//! A | A4 G4 |
+//! T | C4 B3 |
+//! B | F3 G3 |
+//! ```
+//!
+//! Two voices are not two parts while a third ends with the note before:
+//!
+//! ```voices
+//! style motet
+//!
+//! S | E4 D4 |
+//! A | C4 G3 |
+//! B | C3 _  |
+//! ```
+//!
 //! # What to do
 //!
 //! Let the upper voice step, or one of the two stay or move the other way.
@@ -167,10 +188,10 @@ fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
     }
     let strict = found.style().is_species() || found.style() == Style::Motet;
     // A change of position in one chord is no arrival.
-    if !strict && step.sounding.parts() >= 3 && step.sounding.may_keep_chord() {
+    if !strict && step.parts() >= 3 && step.sounding.may_keep_chord() {
         return;
     }
-    let helps = !(strict && step.sounding.parts() <= 2);
+    let helps = !(strict && step.parts() <= 2);
     let case = match step.direct() {
         Direct::TwoParts => &TWO_PARTS,
         Direct::TwoPartsStep if found.style() == Style::Motet && step.is_horn_fifth() => return,

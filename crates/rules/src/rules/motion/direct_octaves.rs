@@ -152,10 +152,10 @@ fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
     }
     let strict = found.style().is_species() || found.style() == Style::Motet;
     // A change of position in one chord is no arrival.
-    if !strict && step.sounding.parts() >= 3 && step.sounding.may_keep_chord() {
+    if !strict && step.parts() >= 3 && step.sounding.may_keep_chord() {
         return;
     }
-    let helps = !(strict && step.sounding.parts() <= 2);
+    let helps = !(strict && step.parts() <= 2);
     let case = match step.direct() {
         Direct::TwoParts => &TWO_PARTS,
         Direct::TwoPartsStep => &TWO_PARTS_STEP,

@@ -23,6 +23,17 @@
 //!
 //! # Does not apply
 //!
+//! In a motet, where an inner voice takes part:
+//!
+//! ```voices
+//! style motet
+//!
+//! S | C5 B4 |
+//! A | G4 E4 |
+//! T | C4 G3 |
+//! B | E3 E3 |
+//! ```
+//!
 //! The bass leaps a fourth or a fifth, or the chord may be the same:
 //!
 //! ```voices
@@ -50,18 +61,38 @@ use crate::prelude::*;
 /// The rule.
 pub const RULE: Rule = Rule {
     looks: Looks::Pairs(check),
-    cases: &[&ORDINARY],
+    cases: &[&ORDINARY, &INNER],
     numbers: &[],
-    sources: &[source::OPEN_MUSIC_THEORY, source::SALZER_SCHACHTER],
+    sources: &[
+        source::OPEN_MUSIC_THEORY,
+        source::SALZER_SCHACHTER,
+        source::RENAISSANCE_WORKS.looser(
+            "with an inner voice, in three parts or more, 1,467 pairs leap the same way and 1,366 apart",
+        ),
+    ],
 };
 
 static ORDINARY: Case = Case {
     name: "",
-    when: "both a third or more, outside one chord; not where the bass leaps a fourth or fifth",
+    when: "both a third or more, in two parts or between the outer voices, outside one chord; not where the bass leaps a fourth or fifth",
     settings: &[
         allow(Style::Free, "a matter of taste"),
         weakness(Style::Chorale, "handbooks warn of it"),
         weakness(Style::Motet, "handbooks warn of it"),
+        weakness(Style::Species1, "handbooks warn of it (Open Music Theory)"),
+    ],
+};
+
+static INNER: Case = Case {
+    name: "inner",
+    when: "the same where an inner voice takes part",
+    settings: &[
+        allow(Style::Free, "a matter of taste"),
+        weakness(Style::Chorale, "handbooks warn of it"),
+        allow(
+            Style::Motet,
+            "inner voices that leap go the same way as often as not (314 works)",
+        ),
         weakness(Style::Species1, "handbooks warn of it (Open Music Theory)"),
     ],
 };
@@ -75,7 +106,8 @@ fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
     if step.bass_leaps_fourth_or_fifth() {
         return;
     }
-    found.pair(&ORDINARY, step, || {
+    let case = if step.is_outer() { &ORDINARY } else { &INNER };
+    found.pair(case, step, || {
         let way = if step.rises(top) { "up" } else { "down" };
         format!(
             "Similar leaps: {}, both leaping {way}. Let one of them step or stay.",

@@ -42,6 +42,16 @@
 //! B | C4 B3 C4 |
 //! ```
 //!
+//! It closes too where the lower voice turns before the upper one falls:
+//!
+//! ```voices
+//! style motet
+//!
+//! S | G4 F4    E4 |
+//! A | C4 B3.A3 C4 |
+//! B | C3 D3    C3 |
+//! ```
+//!
 //! # Does not apply
 //!
 //! Both upper voices rise by step over a bass in tenths or sixths with one of them:
@@ -195,14 +205,17 @@ fn is_covered(step: &PairMove<'_>) -> bool {
             .any(|&v| step.sounding.goes_in_thirds_or_sixths_with_bass(v))
 }
 
-/// The diminished fifth closes by step in at least one voice, or both voices pass on by step.
-/// Where the line goes no further, nothing is held against it.
+/// The diminished fifth closes by step in at least one voice, though the other turn meanwhile, or
+/// both voices pass on by step. Where the line goes no further, nothing is held against it.
 fn goes_on_well(step: &PairMove<'_>) -> bool {
     let Some(next) = step.next() else { return true };
     let (top, foot) = (step.top(), step.foot());
-    let closes = (next.steps(top) && !next.rises(top)) || (next.steps(foot) && next.rises(foot));
+    let steps_on = |voice, up| {
+        step.next_of(voice)
+            .is_some_and(|on| on.steps(voice) && on.rises(voice) == up)
+    };
     let passes = [top, foot]
         .iter()
         .all(|&v| next.steps(v) && next.rises(v) == step.rises(v));
-    closes || passes
+    steps_on(top, false) || steps_on(foot, true) || passes
 }

@@ -80,6 +80,19 @@
 //!
 //! ```voices
 //! style motet
+//! voice T tenor
+//! voice S soprano
+//! voice A alto
+//! voice B bass
+//!
+//! T | G3 - |
+//! S | E5 - |
+//! A | E4 - |
+//! B | C3 - |
+//! ```
+//!
+//! ```voices
+//! style motet
 //!
 //! S | C5 E5 C5 |
 //! A | E4 C4 E4 |

@@ -31,6 +31,17 @@
 //!
 //! # Does not apply
 //!
+//! In a motet, a close within the piece:
+//!
+//! ```voices
+//! style motet
+//! metre 4/4
+//!
+//! S | D5 - C5 - | D5 - E5 - |
+//! A | A4 - G4 - | A4 - -  - |
+//! B | F4 - E4 - | D4 - C4 - |
+//! ```
+//!
 //! ```voices
 //! style chorale
 //! metre 4/4
@@ -48,7 +59,7 @@ use crate::prelude::*;
 /// The rule.
 pub const RULE: Rule = Rule {
     looks: Looks::Sonorities(check),
-    cases: &[&ORDINARY],
+    cases: &[&ORDINARY, &CLOSE],
     numbers: &[],
     sources: &[
         source::LEHMANN.at("lesson XI"),
@@ -57,6 +68,7 @@ pub const RULE: Rule = Rule {
         source::FUX_FIGURES.at(
             "16 in a hundred downbeats in three parts, 11 in four, first and last bars among them",
         ),
+        source::FUX_FIGURES.at("of 29 last chords in four parts 14 are open fifths"),
     ],
 };
 
@@ -71,12 +83,31 @@ static ORDINARY: Case = Case {
     ],
 };
 
+static CLOSE: Case = Case {
+    name: "close",
+    when: "the same where two voices close by steps in contrary motion into an octave or unison",
+    settings: &[
+        fault(Style::Free, "the chord is not whole"),
+        fault(Style::Chorale, "the chord is not whole"),
+        allow(
+            Style::Motet,
+            "a close may stay open, as 14 of 29 of Fux's in four parts",
+        ),
+        weakness(Style::Species1, "fuller chords are preferred (Lehmann)"),
+    ],
+};
+
 fn check(sounding: &Sounding<'_>, found: &mut Found<'_>) {
     if !sounding.is_strong() || !sounding.lacks_third() || sounding.opens_or_closes() {
         return;
     }
     let voices: Vec<usize> = sounding.piece.texture.sounding(sounding.index).collect();
-    found.sonority(&ORDINARY, &voices, sounding.onset(), || {
+    let case = if sounding.closes_by_steps() {
+        &CLOSE
+    } else {
+        &ORDINARY
+    };
+    found.sonority(case, &voices, sounding.onset(), || {
         String::from("Third missing: the chord has only fifths and octaves over its lowest note. Give the third to a voice that doubles.")
     });
 }
