@@ -5,6 +5,8 @@
 
 #![allow(clippy::unwrap_used, clippy::panic, clippy::print_stdout)]
 
+#[path = "outside/beats.rs"]
+mod beats;
 #[path = "outside/consecutives.rs"]
 mod consecutives;
 #[path = "outside/figures.rs"]
