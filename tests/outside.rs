@@ -11,6 +11,8 @@ mod beats;
 mod consecutives;
 #[path = "outside/figures.rs"]
 mod figures;
+#[path = "outside/harmony.rs"]
+mod harmony;
 #[path = "outside/hurts.rs"]
 mod hurts;
 #[path = "outside/invariance.rs"]

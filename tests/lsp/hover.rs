@@ -40,7 +40,9 @@ Source: J. J. Fux, Gradus ad Parnassum (1725), Book II, the four rules of motion
 - alto C5: major third below; parallel, D5 over B4 to E5 over C5
 - bass A3: perfect twelfth below; parallel, D5 over G3 to E5 over A3
 
-Other pairs: alto and bass parallel."
+Other pairs: alto and bass parallel.
+
+Chord: **A minor**, in C major."
     );
     let answer = document.hover(&mut client, &document.at("E -"));
     let line = document.at("E -")["line"].clone();
@@ -63,7 +65,7 @@ fn the_first_note_has_no_motion() {
     let text = document.hover_text(&mut client, "G3");
     assert_eq!(
         text,
-        "**G3** · bass · bar 1, beat 1\n\n- soprano D5: perfect twelfth above\n- alto B4: major tenth above"
+        "**G3** · bass · bar 1, beat 1\n\n- soprano D5: perfect twelfth above\n- alto B4: major tenth above\n\nChord: **G major**, in C major."
     );
     client.goodbye();
 }

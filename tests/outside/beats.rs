@@ -128,7 +128,7 @@ fn placed(score: &Score, piece: &str, grid: i64) -> Vec<(Value, Time)> {
         .collect()
 }
 
-fn each_piece(mut look: impl FnMut(&Score, &[(Value, Time)], i64)) {
+pub(crate) fn each_piece(mut look: impl FnMut(&Score, &[(Value, Time)], i64)) {
     for (group, piece, count, grid) in DRAWN {
         let Some(score) = score(group, piece) else {
             continue;

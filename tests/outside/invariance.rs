@@ -31,7 +31,7 @@ fn bare(score: &Score, style: Style) -> Vec<Bare> {
 }
 
 /// Up by so many letters and semitones.
-fn transposed(score: &Score, steps: i16, semitones: i32) -> Score {
+pub(crate) fn transposed(score: &Score, steps: i16, semitones: i32) -> Score {
     let moved = |pitch: partwright_score::Pitch| {
         let mut to = partwright_score::Pitch {
             step: pitch.step + steps,

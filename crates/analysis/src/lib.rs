@@ -6,6 +6,7 @@
 
 pub mod consonance;
 pub mod figures;
+pub mod harmony;
 pub mod mode;
 
 use partwright_score::{Score, Texture};

@@ -56,6 +56,18 @@ pub fn of_cantus(score: &Score) -> Option<Final> {
     })
 }
 
+/// The name of a letter and sign at a place among the fifths: `C`, `F#`, `Bb`.
+#[must_use]
+pub fn named(place: i32) -> String {
+    let letters = ["F", "C", "G", "D", "A", "E", "B"];
+    let letter = usize::try_from((place + 1).rem_euclid(7)).unwrap_or(0);
+    let signs = (place + 1).div_euclid(7);
+    let sign = if signs < 0 { "b" } else { "#" };
+    let count = usize::try_from(signs.abs()).unwrap_or(0);
+    let letter = letters.get(letter).copied().unwrap_or_default();
+    format!("{letter}{}", sign.repeat(count))
+}
+
 /// The signature that most notes of a score fit, as a number of flats; negative for sharps, and
 /// the smallest where several fit as many.
 #[must_use]
