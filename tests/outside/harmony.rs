@@ -147,7 +147,7 @@ fn the_inferred_harmony_agrees_with_the_analysts() {
         );
     }
     println!(
-        "outside: {} chords of analysts: root {:.1}, chord {:.1}, key {:.1} in a hundred",
+        "outside: {} chords of analysts\nroot {:.1}, chord {:.1}, key {:.1} in a hundred",
         total.all,
         share(total.root, total.all),
         share(total.chord, total.all),

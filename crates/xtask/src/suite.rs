@@ -13,6 +13,9 @@ const OUTSIDE: &[(&str, usize)] = &[
     ("contrary consecutives in 231 pieces", 30),
     ("consecutives in 545 pieces", 1042),
     ("judged passages", 26),
+    ("dissonances of the treatise are figures", 328),
+    ("pieces transposed have the same findings", 115),
+    ("chords of analysts", 2448),
     ("scores written and read back", 545),
 ];
 
