@@ -34,6 +34,15 @@ impl<'a> Found<'a> {
         }
     }
 
+    /// A collector for another rule, under the same style and house.
+    pub(crate) fn beside<'b>(
+        &'b self,
+        entry: &'static Entry,
+        list: &'b mut Vec<Finding>,
+    ) -> Found<'b> {
+        Found::new(entry, self.strictness, self.score, list)
+    }
+
     /// The style in force.
     #[must_use]
     pub fn style(&self) -> Style {
