@@ -87,8 +87,9 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
         found.line(&ORDINARY, line, step, || {
             let (from, to) = step.ends();
             let way = step.way();
+            let side = if step.rises() { "above" } else { "below" };
             format!(
-                "Leap unprepared: {} goes {way} from {} to {from} and leaps on {way} to {to}. Come to the leap from the other side.",
+                "Leap unprepared: {} goes {way} from {} to {from} and leaps on {way} to {to}. Come to the leap from {side}.",
                 line.piece.name(line.voice),
                 before.ends().0
             )
