@@ -34,6 +34,17 @@ impl<'a> Found<'a> {
         }
     }
 
+    /// A collector for another rule, under the same style and house; `None` where that rule takes
+    /// no part.
+    pub(crate) fn beside<'b>(
+        &'b self,
+        entry: &'static Entry,
+        list: &'b mut Vec<Finding>,
+    ) -> Option<Found<'b>> {
+        let takes = self.strictness.takes(&entry.id, entry.family);
+        takes.then(|| Found::new(entry, self.strictness, self.score, list))
+    }
+
     /// The style in force.
     #[must_use]
     pub fn style(&self) -> Style {

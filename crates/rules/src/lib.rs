@@ -11,6 +11,7 @@ mod page;
 mod rule;
 pub mod source;
 mod style;
+mod told;
 mod view;
 
 pub use catalogue::{Entry, catalogue, entry, family_of, is_family};

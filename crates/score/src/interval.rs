@@ -92,6 +92,23 @@ impl Interval {
         format!("{article} {name}")
     }
 
+    /// With its article, as it is said of two notes that sound together: from a fourteenth on,
+    /// the octaves that only stand between are left out (`a minor ninth` for a sixteenth).
+    #[must_use]
+    pub fn spoken(self) -> String {
+        let gap = self.0.sounding();
+        let octaves = if gap.steps > 12 {
+            (gap.steps - 6) / 7
+        } else {
+            0
+        };
+        let nearer = Gap {
+            steps: gap.steps - 7 * octaves,
+            semitones: gap.semitones - 12 * octaves,
+        };
+        Interval(nearer).with_article()
+    }
+
     /// A size by its name, with its article: `an octave`, `a twelfth`, `two octaves` for 14 steps.
     #[must_use]
     pub fn noun(steps: i32) -> String {
@@ -149,6 +166,23 @@ impl fmt::Display for Interval {
 mod tests {
     use super::*;
     use crate::Pitch;
+
+    #[test]
+    fn far_octaves_are_not_said() {
+        for (low, high, spoken) in [
+            ("C4", "D5", "a major ninth"),
+            ("C3", "A4", "a major thirteenth"),
+            ("D3", "C5", "a minor seventh"),
+            ("C3", "C5", "an octave"),
+            ("E2", "F4", "a minor ninth"),
+            ("C2", "F4", "a perfect eleventh"),
+            ("C2", "B4", "a major seventh"),
+        ] {
+            let (low, high): (Pitch, Pitch) = (low.parse().unwrap(), high.parse().unwrap());
+            let interval = Interval(low.place().up_to(high.place()));
+            assert_eq!(interval.spoken(), spoken, "{low} {high}");
+        }
+    }
 
     #[test]
     fn names_follow_the_trade() {

@@ -157,7 +157,7 @@ impl<'a> Discord<'a> {
         format!(
             "{} makes {} with {}",
             text(self.dissonant()),
-            Interval(self.dissonance.gap).with_article(),
+            Interval(self.dissonance.gap).spoken(),
             text(self.other())
         )
     }

@@ -337,28 +337,25 @@ impl<'a> PairMove<'a> {
     }
 
     /// `D5 over G3`, at the departure and at the arrival: the upper voice in the score first, as
-    /// its name comes first; `under` where it sounds below the other.
+    /// its name comes first; `under` where it sounds below the other, `D5 in unison` on one note.
     #[must_use]
     pub fn ends(&self) -> (String, String) {
         let (upper, lower) = (self.pair.upper, self.pair.lower);
-        let word = |gap: Option<Interval>| {
-            if gap.is_some_and(|i| i.0.semitones < 0) {
-                "under"
-            } else {
-                "over"
-            }
+        let text = |gap: Option<Interval>, above: String, below: String| match gap {
+            Some(gap) if gap.0.semitones == 0 && gap.0.steps == 0 => format!("{above} in unison"),
+            Some(gap) if gap.0.semitones < 0 => format!("{above} under {below}"),
+            _ => format!("{above} over {below}"),
         };
-        let (from, to) = (word(self.before()), word(self.after()));
         (
-            format!(
-                "{} {from} {}",
+            text(
+                self.before(),
                 self.pitch_before(upper),
-                self.pitch_before(lower)
+                self.pitch_before(lower),
             ),
-            format!(
-                "{} {to} {}",
+            text(
+                self.after(),
                 self.pitch_after(upper),
-                self.pitch_after(lower)
+                self.pitch_after(lower),
             ),
         )
     }

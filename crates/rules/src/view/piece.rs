@@ -102,6 +102,18 @@ impl<'a> Piece<'a> {
         self.score.spoken_name(voice)
     }
 
+    /// Several voices in a row: `soprano, alto and bass`.
+    #[must_use]
+    pub fn names(self, voices: &[usize]) -> String {
+        let names: Vec<_> = voices.iter().map(|&voice| self.name(voice)).collect();
+        match names.split_last() {
+            Some((last, others)) if !others.is_empty() => {
+                format!("{} and {last}", others.join(", "))
+            }
+            _ => names.concat(),
+        }
+    }
+
     /// The length of a beat's cell where the piece is at a moment, in whole notes.
     #[must_use]
     pub fn cell_at(self, at: Time) -> Option<Time> {

@@ -133,19 +133,15 @@ fn check(piece: &Piece<'_>, found: &mut Found<'_>) {
     if moves.iter().any(LastMove::steps_up) && moves.iter().any(LastMove::steps_down) {
         return;
     }
-    let names: Vec<_> = voices.iter().map(|&voice| piece.name(voice)).collect();
+    let names = piece.names(&voices);
     let (case, what) = if voices.len() == 2 {
-        (&TWO_PARTS, "do not step to the final from either side")
+        (&TWO_PARTS, format!("{names} do not step"))
     } else {
-        (
-            &MORE_PARTS,
-            "have no two voices that step to the final from either side",
-        )
+        (&MORE_PARTS, format!("no two of {names} step"))
     };
     found.sonority(case, &voices, close.onset(), || {
         format!(
-            "Closing approach: {} {what}. Let one step down to it and another up.",
-            names.join(" and ")
+            "Closing approach: {what} to the final from above and below. Let one step down to it and another up."
         )
     });
 }

@@ -202,7 +202,7 @@ fn check(piece: &Piece<'_>, found: &mut Found<'_>) {
                 "Closing interval: {} and {} close with {}. {help}",
                 piece.name(pair.upper),
                 piece.name(pair.lower),
-                interval.with_article()
+                interval.spoken()
             )
         });
         return;

@@ -180,7 +180,7 @@ fn check(piece: &Piece<'_>, found: &mut Found<'_>) {
     }
     found.passage(case, &[voice, cantus], (over.from, over.until), || {
         format!(
-            "Species cadence: over the last note but one of {} {} wants {wants}.",
+            "Species cadence: over the last note but one of {}, {} wants {wants}.",
             piece.name(cantus),
             piece.name(voice)
         )

@@ -89,6 +89,10 @@ fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
         return;
     };
     let case = &ORDINARY;
+    // One that is too long is told as that, which weighs more.
+    if found.is_told_of_dissonance("long-dissonance", discord) {
+        return;
+    }
     found.dissonance(case, discord, || {
         format!(
             "Escape note: {}. Go on by step, or make it consonant.",

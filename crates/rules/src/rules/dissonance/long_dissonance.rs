@@ -112,6 +112,9 @@ fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
         return;
     }
     found.dissonance(case, discord, || {
-        format!("Long dissonance: {}. Shorten it.", discord.words())
+        format!(
+            "Long dissonance: {}. Shorten it, or prepare it as a suspension.",
+            discord.words()
+        )
     });
 }

@@ -122,6 +122,10 @@ fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
     } else {
         &WEAK
     };
+    // One that is too long is told as that, which weighs more.
+    if found.is_told_of_dissonance("long-dissonance", discord) {
+        return;
+    }
     found.dissonance(case, discord, || {
         format!(
             "Neighbour note: {}. Go on by step, or make it consonant.",

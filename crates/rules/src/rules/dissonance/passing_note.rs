@@ -182,6 +182,10 @@ fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
     } else {
         &ACCENTED
     };
+    // One that is too long is told as that, which weighs more.
+    if found.is_told_of_dissonance("long-dissonance", discord) {
+        return;
+    }
     found.dissonance(case, discord, || {
         let advice = if accented {
             "Make it consonant, or move it to a weaker moment."

@@ -81,8 +81,10 @@ fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
     }
     found.dissonance(&ORDINARY, discord, || {
         format!(
-            "Suspension chain: {} comes more than {most} times running. Break the chain with another tie.",
-            numbers.text()
+            "Suspension chain: {} has {} over {} more than {most} times running. Break the chain with another interval.",
+            discord.piece.name(discord.dissonant().0),
+            numbers.text(),
+            discord.piece.name(discord.other().0)
         )
     });
 }

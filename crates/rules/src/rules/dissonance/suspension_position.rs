@@ -73,6 +73,9 @@ fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
         return;
     }
     found.dissonance(&ORDINARY, discord, || {
-        format!("Suspension position: {}. Let it become dissonant on a stronger moment than it resolves.", discord.words())
+        format!(
+            "Suspension position: {}. Let it resolve on a weaker moment than it clashes on.",
+            discord.words()
+        )
     });
 }

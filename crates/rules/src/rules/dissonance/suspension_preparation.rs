@@ -77,7 +77,7 @@ static MISSING: Case = Case {
 fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
     let is_short = discord.suspension().is_some_and(|held| held.is_short());
     let (case, lacks) = if discord.near_suspension() == Some(Near::Preparation) {
-        (&MISSING, "is dissonant before")
+        (&MISSING, "is dissonant before that")
     } else if is_short {
         (&SHORT, "is prepared for less time than it lasts")
     } else {
@@ -85,7 +85,7 @@ fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
     };
     found.dissonance(case, discord, || {
         format!(
-            "Suspension preparation: {}, and {lacks}. Strike it on a consonance earlier.",
+            "Suspension preparation: {}, and {lacks}. Strike it earlier, on a consonance.",
             discord.words()
         )
     });

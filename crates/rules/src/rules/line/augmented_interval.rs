@@ -126,7 +126,7 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
             let (from, to) = step.ends();
             let name = step.interval.with_article();
             format!(
-                "Augmented interval: {} goes from {from} to {to}, {name}. Fill it or change a sign.",
+                "Augmented interval: {} goes from {from} to {to}, {name}. Fill it in by step, or change an accidental.",
                 line.piece.name(line.voice)
             )
         });

@@ -30,7 +30,7 @@
 //!
 //! # What to do
 //!
-//! Step to another letter, or leave the sign away.
+//! Go to the next note name, or leave out the accidental.
 
 use crate::prelude::*;
 

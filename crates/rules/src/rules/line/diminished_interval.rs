@@ -92,8 +92,13 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
         }
         found.line(&ORDINARY, line, step, || {
             let (from, to) = step.ends();
+            let help = if strict {
+                "Fill it in by step, or take another interval."
+            } else {
+                "Turn back inside it by step, or take another interval."
+            };
             format!(
-                "Diminished interval: {} goes from {from} to {to}, {}. Turn back inside it by step, or take another.",
+                "Diminished interval: {} goes from {from} to {to}, {}. {help}",
                 line.piece.name(line.voice),
                 step.interval.with_article()
             )

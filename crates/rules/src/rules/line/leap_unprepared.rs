@@ -59,25 +59,37 @@ static ORDINARY: Case = Case {
     ],
 };
 
+/// The rules that tell of the same leap: for itself, with the leap before it, or with what it
+/// leads to, which weighs more than what led to it.
+const MORE: [&str; 7] = [
+    "sixth-leap",
+    "seventh-leap",
+    "leap-beyond-octave",
+    "augmented-interval",
+    "diminished-interval",
+    "leaps-one-way",
+    "leap-unrecovered",
+];
+
 fn check(line: &Line<'_>, found: &mut Found<'_>) {
     if line.is_given() || (found.style() == Style::Chorale && !line.is_top()) {
         return;
     }
+    let told = found.told_on_line(&MORE, line);
     for (i, step) in line.moves.iter().enumerate() {
         let Some(before) = line.before(i) else {
             continue;
         };
-        // Two leaps that make no chord, or too much of one, are `leaps-one-way` already.
-        let reported = before.is_leap()
-            && (Line::oversteps(before, step) || !Line::outlines_chord(before, step));
-        if step.size() < 5 || !step.goes_on_from(before) || reported {
+        let is_told = told.binary_search(&step.to.onset).is_ok();
+        if step.size() < 5 || !step.goes_on_from(before) || is_told {
             continue;
         }
         found.line(&ORDINARY, line, step, || {
             let (from, to) = step.ends();
             let way = step.way();
+            let side = if step.rises() { "above" } else { "below" };
             format!(
-                "Leap unprepared: {} goes {way} from {} to {from} and leaps on {way} to {to}. Come to the leap from the other side.",
+                "Leap unprepared: {} goes {way} from {} to {from} and leaps on {way} to {to}. Come to the leap from {side}.",
                 line.piece.name(line.voice),
                 before.ends().0
             )

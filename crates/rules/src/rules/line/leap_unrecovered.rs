@@ -111,11 +111,22 @@ static SMALL: Case = Case {
     ],
 };
 
+/// The rules that tell of a leap for itself.
+const ITSELF: [&str; 5] = [
+    "sixth-leap",
+    "seventh-leap",
+    "leap-beyond-octave",
+    "augmented-interval",
+    "diminished-interval",
+];
+
 fn check(line: &Line<'_>, found: &mut Found<'_>) {
     if line.is_given() {
         return;
     }
     let strict = found.style().is_species();
+    // A leap that should not be there at all is told by its own rule.
+    let told = found.told_on_line(&ITSELF, line);
     for (i, step) in line.moves.iter().enumerate() {
         // A bass leaps as it must, but for its octaves; in two parts it is a line like the other.
         let bass = line.is_bass() && !(strict && line.parts_at(step) < 3);
@@ -127,6 +138,9 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
             _ => continue,
         };
         let Some(next) = line.after(i) else { continue };
+        if told.binary_search(&step.to.onset).is_ok() {
+            continue;
+        }
         // After a fourth or fifth the line may fill out a triad, or top the leap with one step.
         let excused = step.size() <= 4
             && if next.is_leap() {

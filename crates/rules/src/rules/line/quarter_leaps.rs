@@ -9,7 +9,7 @@
 //! style motet
 //! metre 4/2 by 1/4
 //!
-//! S | C5 - A4 F4 D4 - E4 - |
+//! S | D5 - C5 A4 F4 - G4 - |
 //! //             ^^ quarter leaps (weakness): S
 //! ```
 //!
@@ -63,12 +63,17 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
     if found.style() != Style::Motet || line.is_given() {
         return;
     }
+    // Two leaps that are wrong in any note value are told once.
+    let told = found.told_on_line(&["leaps-one-way"], line);
     for (i, step) in line.moves.iter().enumerate() {
         let Some(before) = line.before(i) else {
             continue;
         };
         let same = step.is_leap() && before.is_leap() && step.goes_on_from(before);
         if !same || !line.is_quarter(&step.from) || !line.is_quarter(&before.from) {
+            continue;
+        }
+        if told.binary_search(&step.to.onset).is_ok() {
             continue;
         }
         found.line(&ORDINARY, line, step, || {

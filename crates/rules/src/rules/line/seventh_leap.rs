@@ -127,8 +127,10 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
         found.line(case, line, step, || {
             let (from, to) = step.ends();
             format!(
-                "Seventh leap: {} goes from {from} to {to}. Move by another interval, or divide the leap.",
-                line.piece.name(line.voice)
+                "Seventh leap: {} goes {} a {} from {from} to {to}. Divide the leap, or take another interval.",
+                line.piece.name(line.voice),
+                step.way(),
+                step.interval.name()
             )
         });
     }

@@ -115,7 +115,7 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
         let (case, what) = if value.is_dot_unanswered() {
             (
                 &DOT,
-                "a dotted note without the short note that its dot takes from. Follow it with that note",
+                "a dotted note without the short note that completes it. Follow it with that note",
             )
         } else if value.are_quarters_alone() {
             (
@@ -125,7 +125,7 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
         } else if value.is_tied_short_to_long() {
             (
                 &TIE,
-                "a tie over the bar that is not from long to short. Strike the note again, or tie it the other way",
+                "a tie over the bar to a note neither as long nor half as long. Strike the note again, or shorten it",
             )
         } else {
             continue;

@@ -81,12 +81,9 @@ fn check(there: &Sounding<'_>, found: &mut Found<'_>) {
     let voices: Vec<usize> = there.piece.texture.sounding(there.index).collect();
     found.sonority(&ORDINARY, &voices, there.onset(), || {
         let way = if rising { "up" } else { "down" };
-        let names: Vec<_> = voices.iter().map(|&v| there.piece.name(v)).collect();
-        let (last, others) = names.split_at(names.len().saturating_sub(1));
         format!(
-            "All one way: {} and {} all move {way} together. Let one of them stay or move the other way.",
-            last.join(", "),
-            others.concat()
+            "All one way: {} all move {way} together. Let one of them stay or move the other way.",
+            there.piece.names(&voices)
         )
     });
 }

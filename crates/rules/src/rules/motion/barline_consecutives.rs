@@ -105,7 +105,7 @@ fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
     found.succession(case, &bar, || {
         let noun = bar.noun();
         format!(
-            "Consecutive {noun} over the bar line: {}, and the notes between do not hide it. Let one of the two be a third or a sixth.",
+            "Consecutive {noun} over the bar line: {}, and the notes between do not hide them. Let one of the two be a third or a sixth.",
             bar.story()
         )
     });

@@ -143,7 +143,7 @@ fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
     found.succession(case, &delayed, || {
         let noun = delayed.noun();
         format!(
-            "Consecutive {noun} that a suspension delays: {}. Prepare it in another interval.",
+            "Consecutive {noun} that a suspension delays: {}. Prepare the suspension in another interval.",
             delayed.story()
         )
     });

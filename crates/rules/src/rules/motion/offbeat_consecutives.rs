@@ -96,7 +96,7 @@ fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
     found.succession(case, &bar, || {
         let noun = bar.noun();
         format!(
-            "Consecutive {noun} off the beat in successive bars: {}. Let one of the two be imperfect.",
+            "Consecutive {noun} off the beat in successive bars: {}. Let one of the two be a third or a sixth.",
             bar.story()
         )
     });

@@ -84,6 +84,10 @@ fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
     {
         return;
     }
+    // Going to one note from the same side, one of them always passes the other's.
+    if found.is_told_of_pair(&["direct-unisons"], step) {
+        return;
+    }
     found.pair(&ORDINARY, step, || {
         let piece = step.sounding.piece;
         let up = step.rises(step.pair.lower);

@@ -97,13 +97,29 @@ static INNER: Case = Case {
     ],
 };
 
+/// The rules that tell the same leaps more closely.
+const MORE: [&str; 7] = [
+    "parallel-fifths",
+    "parallel-octaves",
+    "parallel-unisons",
+    "direct-fifths",
+    "direct-octaves",
+    "direct-unisons",
+    "overlap",
+];
+
 fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
     let (top, foot) = (step.top(), step.foot());
     let same_way = matches!(step.motion(), Some(Motion::Parallel | Motion::Similar));
     if !same_way || !step.leaps(top) || !step.leaps(foot) || step.sounding.may_keep_chord() {
         return;
     }
-    if step.bass_leaps_fourth_or_fifth() {
+    // The perfect interval they leap into says more, and so does one voice leaping beyond the
+    // other's note; where all the voices go one way, the leaps are part of that.
+    if step.bass_leaps_fourth_or_fifth()
+        || found.is_told_of_pair(&MORE, step)
+        || found.is_told_of_sonority("all-one-way", &step.sounding)
+    {
         return;
     }
     let case = if step.is_outer() { &ORDINARY } else { &INNER };

@@ -1,4 +1,4 @@
-//! The lowest two voices stand close together in the depth.
+//! The lowest two voices stand close together low down.
 //!
 //! Why: low notes a third apart growl; the lower the chord, the wider the ear wants its lowest
 //! interval.

@@ -138,7 +138,7 @@ fn check(piece: &Piece<'_>, found: &mut Found<'_>) {
                 "Opening interval: {} and {} open with {}. Open with a unison or octave, or above the cantus with a fifth.",
                 piece.name(upper),
                 piece.name(lower),
-                interval.with_article()
+                interval.spoken()
             )
         });
         return;

@@ -107,7 +107,12 @@ fn check(sounding: &Sounding<'_>, found: &mut Found<'_>) {
     } else {
         &ORDINARY
     };
+    let Some(bass) = sounding.bass() else { return };
     found.sonority(case, &voices, sounding.onset(), || {
-        String::from("Third missing: the chord has only fifths and octaves over its lowest note. Give the third to a voice that doubles.")
+        format!(
+            "Third missing: the chord has only fifths and octaves over {} in {}. Give the third to a voice that doubles.",
+            sounding.pitch_text(bass),
+            sounding.piece.name(bass)
+        )
     });
 }

@@ -171,7 +171,9 @@ fn voice_of_fifth(piece: &Piece<'_>, found: &mut Found<'_>, cantus: usize, voice
             };
             found.sonority(&TIE, &[voice], over.moment(stroke), || {
                 let name = piece.name(voice);
-                format!("Florid rhythm: {name} has {what}. Tie a half, to a half or a quarter.")
+                format!(
+                    "Florid rhythm: {name} has {what}. Tie only halves, to a half or a quarter."
+                )
             });
         }
     }

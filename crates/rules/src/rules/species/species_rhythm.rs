@@ -214,10 +214,16 @@ fn check(piece: &Piece<'_>, found: &mut Found<'_>) {
                 continue;
             }
             let missed = match species {
-                Some(1) if beside => {
-                    missed(over.is_one_whole(), &ACCOMPANYING, "one note, as long")
-                }
-                Some(1) => missed(over.is_one_whole(), &ORDINARY, "one note, as long"),
+                Some(1) if beside => missed(
+                    over.is_one_whole(),
+                    &ACCOMPANYING,
+                    "one note of the same length",
+                ),
+                Some(1) => missed(
+                    over.is_one_whole(),
+                    &ORDINARY,
+                    "one note of the same length",
+                ),
                 Some(2..) if over.to_close == Some(1) => {
                     missed(over.is_one_whole(), &LAST, "one note to close with")
                 }
@@ -230,7 +236,7 @@ fn check(piece: &Piece<'_>, found: &mut Found<'_>) {
             };
             found.passage(case, &[voice], (over.from, over.until), || {
                 format!(
-                    "Species rhythm: over this note of {} {} wants {wants}.",
+                    "Species rhythm: over this note of {}, {} wants {wants}.",
                     piece.name(cantus),
                     piece.name(voice)
                 )

@@ -144,7 +144,7 @@ fn check(piece: &Piece<'_>, found: &mut Found<'_>) {
             };
             found.passage(case, &[voice], (over.from, over.until), || {
                 format!(
-                    "Syncopation: over this note of {} {} wants {wants}.",
+                    "Syncopation: over this note of {}, {} wants {wants}.",
                     piece.name(cantus),
                     piece.name(voice)
                 )

@@ -1,0 +1,75 @@
+//! What another rule tells already: one fact is told once, by the graver or more particular rule.
+//!
+//! The asking goes one way: no rule that is asked asks back.
+
+use partwright_score::Time;
+
+use crate::catalogue::entry;
+use crate::finding::Finding;
+use crate::found::Found;
+use crate::rule::Looks;
+use crate::view::{Discord, Line, PairMove, Sounding};
+
+impl Found<'_> {
+    /// What a rule finds, asked under the same style and house.
+    fn ask(&self, rule: &str, look: impl FnOnce(&Looks, &mut Found<'_>)) -> Vec<Finding> {
+        let mut list = Vec::new();
+        if let Some(entry) = entry(rule)
+            && let Some(mut found) = self.beside(entry, &mut list)
+        {
+            look(&entry.rule.looks, &mut found);
+        }
+        list
+    }
+
+    /// One of the rules has a word on this step of a pair.
+    #[must_use]
+    pub fn is_told_of_pair(&self, rules: &[&str], step: &PairMove<'_>) -> bool {
+        let tells = |rule: &&str| {
+            let found = self.ask(rule, |looks, found| {
+                if let Looks::Pairs(check) = looks {
+                    check(step, found);
+                }
+            });
+            !found.is_empty()
+        };
+        rules.iter().any(tells)
+    }
+
+    /// A rule has a word on this sonority.
+    #[must_use]
+    pub fn is_told_of_sonority(&self, rule: &str, there: &Sounding<'_>) -> bool {
+        let found = self.ask(rule, |looks, found| {
+            if let Looks::Sonorities(check) = looks {
+                check(there, found);
+            }
+        });
+        !found.is_empty()
+    }
+
+    /// A rule has a word on this dissonance.
+    #[must_use]
+    pub fn is_told_of_dissonance(&self, rule: &str, discord: &Discord<'_>) -> bool {
+        let found = self.ask(rule, |looks, found| {
+            if let Looks::Dissonances(check) = looks {
+                check(discord, found);
+            }
+        });
+        !found.is_empty()
+    }
+
+    /// The notes of a line on which one of the rules has a word, by their onsets, sorted.
+    #[must_use]
+    pub fn told_on_line(&self, rules: &[&str], line: &Line<'_>) -> Vec<Time> {
+        let on_line = |rule: &&str| {
+            self.ask(rule, |looks, found| {
+                if let Looks::Lines(check) = looks {
+                    check(line, found);
+                }
+            })
+        };
+        let mut told: Vec<Time> = rules.iter().flat_map(on_line).map(|f| f.spot.at).collect();
+        told.sort_unstable();
+        told
+    }
+}
