@@ -77,7 +77,7 @@ fn one_fact_is_told_by_one_rule() {
         ),
         (
             "motet",
-            "metre 4/2\n\nS | E5 - - D5 | - - E5 - |\nB | C4 - - - | - - - - |",
+            "metre 4/2\n\nS | E5 - - - | D5 - E5 - |\nB | C4 - - - | C4 - A3 - |",
             "long-dissonance",
             "neighbour-note",
         ),
