@@ -307,6 +307,30 @@ fn the_catalogue_shows_what_the_house_changes_and_why() {
         page.contains("allowed in quayside") && !page.contains("in chorale:"),
         "{page}"
     );
+    // A rule's page tells what is in force, case by case and number by number, and what it was.
+    let said = |page: &str| page.split_whitespace().collect::<Vec<_>>().join(" ");
+    let page = said(&rules(&["crossing"]));
+    for words in [
+        "[bass]: - allowed in quayside: chorale says fault - ",
+        "- fault in chorale",
+    ] {
+        assert!(page.contains(words), "{words}: {page}");
+    }
+    for arguments in [&["spacing"][..], &["spacing", "--style", "quayside"]] {
+        let page = said(&rules(arguments));
+        for words in [
+            "- fault in quayside",
+            "Numbers - neighbours 8: the widest interval",
+            "- bass 24 in quayside, 15 without it: the widest interval",
+        ] {
+            assert!(page.contains(words), "{words}: {page}");
+        }
+        assert!(
+            !page.contains("chorale says"),
+            "severities as they were: {page}"
+        );
+    }
+    assert!(said(&rules(&["spacing", "--style", "chorale"])).contains("- bass 15: "));
     // One of ours is as it is everywhere.
     assert!(!rules(&["--style", "chorale"]).contains("quayside"));
     let wrong = folder.run(&["rules", "--style", "quaysid"]);

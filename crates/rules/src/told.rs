@@ -10,6 +10,15 @@ use crate::found::Found;
 use crate::rule::Looks;
 use crate::view::{Discord, Line, PairMove, Sounding};
 
+/// The rules that tell of a leap for itself.
+const LEAPS: [&str; 5] = [
+    "sixth-leap",
+    "seventh-leap",
+    "leap-beyond-octave",
+    "augmented-interval",
+    "diminished-interval",
+];
+
 impl Found<'_> {
     /// What a rule finds, asked under the same style and house.
     fn ask(&self, rule: &str, look: impl FnOnce(&Looks, &mut Found<'_>)) -> Vec<Finding> {
@@ -71,5 +80,12 @@ impl Found<'_> {
         let mut told: Vec<Time> = rules.iter().flat_map(on_line).map(|f| f.spot.at).collect();
         told.sort_unstable();
         told
+    }
+
+    /// The leaps of a line that should not be there at all, or of which these rules have a word:
+    /// by the onsets of the notes reached, sorted.
+    #[must_use]
+    pub fn leaps_told(&self, also: &[&str], line: &Line<'_>) -> Vec<Time> {
+        self.told_on_line(&[&LEAPS, also].concat(), line)
     }
 }

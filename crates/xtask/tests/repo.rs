@@ -111,7 +111,13 @@ fn no_file_is_one_to_dread() {
     rust_files(&root().join("crates"), &mut files);
     rust_files(&root().join("tests"), &mut files);
     for path in files {
-        let lines = read(&path).lines().count();
+        let text = read(&path);
+        // What a chore writes nobody reads.
+        let written = text.lines().next().unwrap_or_default();
+        if written.ends_with("do not edit.") {
+            continue;
+        }
+        let lines = text.lines().count();
         assert!(lines <= 600, "{}: {lines} lines", path.display());
     }
 }

@@ -3,7 +3,7 @@
 use std::sync::Arc;
 
 use partwright_check::{Checked, Choice, House, Wishes};
-use partwright_rules::{Case, Entry, Severity, Strictness, Style};
+use partwright_rules::{Case, Entry, NumberOf, Severity, Strictness, Style};
 
 use crate::houses::Houses;
 use crate::prose::block;
@@ -61,6 +61,11 @@ impl InForce {
     /// How strictly it takes a case.
     pub(super) fn severity(&self, entry: &Entry, case: &Case) -> Option<Severity> {
         self.strictness.severity(&entry.id, entry.family, case)
+    }
+
+    /// The value it goes by for a number of a rule.
+    pub(super) fn number(&self, entry: &Entry, number: &NumberOf) -> i32 {
+        self.strictness.number(&entry.id, number)
     }
 
     /// How strictly it takes a rule: as its strictest case.

@@ -22,6 +22,7 @@ pub(super) fn page(entry: &Entry, view: View<'_>, look: Plain) -> String {
         }
         text.push_str(&case_text(entry, case, view, look));
     }
+    text.push_str(&numbers(entry, view, look));
     if let Some(house) = view.house() {
         text.push('\n');
         text.push_str(&house.changes(&[entry], false, look));
@@ -40,10 +41,21 @@ fn title(words: &str, look: Plain) -> String {
 
 /// A case: when it applies, and what each style says to it. Styles that say the same share a line.
 fn case_text(entry: &Entry, case: &Case, view: View<'_>, look: Plain) -> String {
-    let mut text = block(&sentence(case.when), look.width, 2);
-    if let View::House(house) = view {
-        let severity = house.severity(entry, case);
-        text.push_str(&said(severity, "", house.name(), look));
+    // A house style calls a case by its name.
+    let name = match case.name {
+        "" => String::new(),
+        name => format!(" [{name}]"),
+    };
+    let when = format!("{}{name}", case.when.trim_end_matches('.'));
+    let mut text = block(&sentence(&when), look.width, 2);
+    if let Some(house) = view.house() {
+        let (in_force, before) = (house.severity(entry, case), severity(case, house.base()));
+        let because = if in_force == before {
+            String::new()
+        } else {
+            format!("{} says {}", house.base().name(), word(before))
+        };
+        text.push_str(&said(in_force, &because, house.name(), look));
     }
     let mut all: Vec<(Option<_>, &str, Vec<Style>)> = Vec::new();
     for style in STYLES.into_iter().filter(|style| view.shows(*style)) {
@@ -63,9 +75,37 @@ fn case_text(entry: &Entry, case: &Case, view: View<'_>, look: Plain) -> String 
     text
 }
 
+/// The numbers in its conditions, and what the house style puts in their place.
+fn numbers(entry: &Entry, view: View<'_>, look: Plain) -> String {
+    if entry.rule.numbers.is_empty() {
+        return String::new();
+    }
+    let mut text = title("Numbers", look);
+    for number in entry.rule.numbers {
+        let own = number.value;
+        let value = match view
+            .house()
+            .map(|house| (house, house.number(entry, number)))
+        {
+            Some((house, set)) if set != own => {
+                format!("{set} in {}, {own} without it", house.name())
+            }
+            _ => own.to_string(),
+        };
+        let words = format!("- {} {value}: {}", number.name, number.means);
+        let lines = wrap(&words, look.width, 4).join("\n    ");
+        text.push_str(&format!("  {lines}\n"));
+    }
+    text
+}
+
+fn word(severity: Option<Severity>) -> &'static str {
+    severity.map_or("allowed", Severity::word)
+}
+
 /// `weakness in motet: lighter in many voices`.
 fn said(severity: Option<Severity>, because: &str, styles: &str, look: Plain) -> String {
-    let word = severity.map_or("allowed", |severity| severity.word());
+    let word = word(severity);
     let painted = severity.map_or(word.to_owned(), |severity| {
         look.paint(severity_style(severity), word)
     });
@@ -163,14 +203,14 @@ fn paragraphs(text: &str) -> Vec<String> {
         .collect()
 }
 
-/// The first letter large, a full stop at the end.
+/// The first letter large, a colon at the end.
 fn sentence(words: &str) -> String {
     let mut letters = words.chars();
     let first: String = letters
         .next()
         .map(|c| c.to_uppercase().collect())
         .unwrap_or_default();
-    format!("{first}{}:", letters.as_str().trim_end_matches('.'))
+    format!("{first}{}:", letters.as_str())
 }
 
 /// A source, how it is known, and how it stands to the rule.

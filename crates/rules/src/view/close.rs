@@ -77,6 +77,18 @@ impl<'a> Piece<'a> {
         Some(if self.accompanies(voice) { 1 } else { species })
     }
 
+    /// The voices of one species against the cantus, and the cantus; none outside the species.
+    #[must_use]
+    pub fn in_species(self, species: u8, style: Style) -> Vec<(usize, usize)> {
+        let Some(cantus) = self.cantus_or_slowest().filter(|_| style.is_species()) else {
+            return Vec::new();
+        };
+        (0..self.score.voices.len())
+            .filter(|&v| v != cantus && self.species_of(v, style) == Some(species))
+            .map(|voice| (voice, cantus))
+            .collect()
+    }
+
     /// A voice without a species of its own that, in three parts and more, goes mostly in whole
     /// notes with the cantus.
     #[must_use]

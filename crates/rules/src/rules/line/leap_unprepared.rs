@@ -59,23 +59,13 @@ static ORDINARY: Case = Case {
     ],
 };
 
-/// The rules that tell of the same leap: for itself, with the leap before it, or with what it
-/// leads to, which weighs more than what led to it.
-const MORE: [&str; 7] = [
-    "sixth-leap",
-    "seventh-leap",
-    "leap-beyond-octave",
-    "augmented-interval",
-    "diminished-interval",
-    "leaps-one-way",
-    "leap-unrecovered",
-];
-
 fn check(line: &Line<'_>, found: &mut Found<'_>) {
     if line.is_given() || (found.style() == Style::Chorale && !line.is_top()) {
         return;
     }
-    let told = found.told_on_line(&MORE, line);
+    // A leap that is told for itself, or with the leap before it, or with what it leads to, which
+    // weighs more than what led to it.
+    let told = found.leaps_told(&["leaps-one-way", "leap-unrecovered"], line);
     for (i, step) in line.moves.iter().enumerate() {
         let Some(before) = line.before(i) else {
             continue;

@@ -111,22 +111,13 @@ static SMALL: Case = Case {
     ],
 };
 
-/// The rules that tell of a leap for itself.
-const ITSELF: [&str; 5] = [
-    "sixth-leap",
-    "seventh-leap",
-    "leap-beyond-octave",
-    "augmented-interval",
-    "diminished-interval",
-];
-
 fn check(line: &Line<'_>, found: &mut Found<'_>) {
     if line.is_given() {
         return;
     }
     let strict = found.style().is_species();
     // A leap that should not be there at all is told by its own rule.
-    let told = found.told_on_line(&ITSELF, line);
+    let told = found.leaps_told(&[], line);
     for (i, step) in line.moves.iter().enumerate() {
         // A bass leaps as it must, but for its octaves; in two parts it is a line like the other.
         let bass = line.is_bass() && !(strict && line.parts_at(step) < 3);

@@ -102,6 +102,10 @@ fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
     } else {
         &ORDINARY
     };
+    // What is that far off is told from downbeat to downbeat where it stood on both.
+    if case.name == SECOND_BEAT.name && found.is_told_of_pair(&["downbeat-consecutives"], step) {
+        return;
+    }
     found.succession(case, &bar, || {
         let noun = bar.noun();
         format!(

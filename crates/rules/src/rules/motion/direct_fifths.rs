@@ -187,8 +187,7 @@ fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
         return;
     }
     let strict = found.style().is_species() || found.style() == Style::Motet;
-    // A change of position in one chord is no arrival.
-    if !strict && step.parts() >= 3 && step.sounding.may_keep_chord() {
+    if !strict && step.only_changes_position() {
         return;
     }
     let helps = !(strict && step.parts() <= 2);

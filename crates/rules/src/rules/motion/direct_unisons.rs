@@ -107,8 +107,9 @@ fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
     };
     found.pair(case, step, || {
         format!(
-            "Direct unisons: {} in the same direction. Let one of them stay or move the other way.",
-            step.story()
+            "Direct unisons: {}, both {}. Let one of them stay or move the other way.",
+            step.story(),
+            if step.rises(step.top()) { "up" } else { "down" }
         )
     });
 }

@@ -135,10 +135,6 @@ fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
     if bar.same_perfect().is_none() || !bar.has_notes_between() {
         return;
     }
-    // The same interval nearer by, at the end of the bar, says more.
-    if found.is_told_of_pair(&["barline-consecutives"], step) {
-        return;
-    }
     let case = if bar.leaps_between() {
         &LEAP
     } else {

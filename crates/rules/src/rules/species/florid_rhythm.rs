@@ -125,16 +125,8 @@ static TIE: Case = Case {
 };
 
 fn check(piece: &Piece<'_>, found: &mut Found<'_>) {
-    if !found.style().is_species() {
-        return;
-    }
-    let Some(cantus) = piece.cantus_or_slowest() else {
-        return;
-    };
-    for voice in (0..piece.score.voices.len()).filter(|&v| v != cantus) {
-        if piece.species_of(voice, found.style()) == Some(5) {
-            voice_of_fifth(piece, found, cantus, voice);
-        }
+    for (voice, cantus) in piece.in_species(5, found.style()) {
+        voice_of_fifth(piece, found, cantus, voice);
     }
 }
 

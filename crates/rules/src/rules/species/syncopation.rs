@@ -116,16 +116,7 @@ static BROKEN: Case = Case {
 };
 
 fn check(piece: &Piece<'_>, found: &mut Found<'_>) {
-    if !found.style().is_species() {
-        return;
-    }
-    let Some(cantus) = piece.cantus_or_slowest() else {
-        return;
-    };
-    for voice in (0..piece.score.voices.len()).filter(|&v| v != cantus) {
-        if piece.species_of(voice, found.style()) != Some(4) {
-            continue;
-        }
+    for (voice, cantus) in piece.in_species(4, found.style()) {
         let (mut breaks, mut before) = (0, false);
         for over in piece.over_cantus(cantus, voice) {
             let skip = over.is_unknown || over.is_waiting || over.is_triple;

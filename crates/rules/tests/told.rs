@@ -1,0 +1,94 @@
+//! One fact is told once: by the graver or more particular rule, and only while that speaks.
+
+#![allow(clippy::unwrap_used)]
+
+use std::path::Path;
+use std::sync::Arc;
+
+use partwright_check::{Checked, Choice, House, Wishes};
+
+/// The rules with a word on music in a style, where a house switches one off.
+fn told(style: &str, music: &str, off: Option<&str>) -> Vec<&'static str> {
+    let change = off.map_or(String::new(), |rule| {
+        format!("[[rule]]\nrule = \"{rule}\"\nseverity = \"off\"\nreason = \"a test\"\n")
+    });
+    let text = format!("base = \"{style}\"\n{change}");
+    let house = House::read(Path::new("house.toml"), &mut |_| Ok(text.clone())).unwrap();
+    let wishes = Wishes {
+        style: Some(Choice::House),
+        house: Some(Arc::new(house)),
+        ..Wishes::default()
+    };
+    let checked = Checked::text(music, &wishes);
+    checked.findings.iter().map(|f| f.rule).collect()
+}
+
+#[test]
+fn one_fact_is_told_by_one_rule() {
+    for (style, sheet, speaks, silent) in [
+        (
+            "species-1",
+            "S | E5 A5 |\nB | B3 D4 |",
+            "direct-fifths",
+            "similar-leaps",
+        ),
+        (
+            "species-1",
+            "S | A4 C5 |\nB | D4 F4 |",
+            "parallel-fifths",
+            "similar-leaps",
+        ),
+        (
+            "chorale",
+            "S | E4 A |\nA | C4 F |\nB | E3 D |",
+            "overlap",
+            "similar-leaps",
+        ),
+        (
+            "chorale",
+            "S | C5 E5 |\nA | A4 B4 |\nB | E4 G4 |",
+            "all-one-way",
+            "similar-leaps",
+        ),
+        (
+            "chorale",
+            "S | E5 E5 |\nA | C5 C5 |\nT | A3 D4 |\nB | F3 D4 |",
+            "direct-unisons",
+            "overlap",
+        ),
+        ("motet", "S | C4 A4 B4 |", "sixth-leap", "leap-unrecovered"),
+        (
+            "motet",
+            "S | B3 C4 A4 G4 |",
+            "sixth-leap",
+            "leap-unprepared",
+        ),
+        (
+            "motet",
+            "S | D4 E4 C5 D5 |",
+            "leap-unrecovered",
+            "leap-unprepared",
+        ),
+        (
+            "motet",
+            "metre 4/2 by 1/4\n\nS | C5 - A4 F4 D4 - E4 - |",
+            "leaps-one-way",
+            "quarter-leaps",
+        ),
+        (
+            "motet",
+            "metre 4/2\n\nS | E5 - - - | D5 - E5 - |\nB | C4 - - - | C4 - A3 - |",
+            "long-dissonance",
+            "neighbour-note",
+        ),
+    ] {
+        let rules = told(style, sheet, None);
+        assert!(rules.contains(&speaks), "{sheet}: {rules:?}");
+        assert!(!rules.contains(&silent), "{sheet}: {rules:?}");
+        let rules = told(style, sheet, Some(speaks));
+        assert!(
+            rules.contains(&silent),
+            "without {speaks}: {sheet}: {rules:?}"
+        );
+    }
+}
