@@ -33,9 +33,10 @@ impl Found<'_> {
     #[must_use]
     pub fn is_told_of_pair(&self, rules: &[&str], step: &PairMove<'_>) -> bool {
         let tells = |rule: &&str| {
-            let found = self.ask(rule, |looks, found| match looks {
-                Looks::Pairs(check) => check(step, found),
-                _ => {}
+            let found = self.ask(rule, |looks, found| {
+                if let Looks::Pairs(check) = looks {
+                    check(step, found);
+                }
             });
             !found.is_empty()
         };
@@ -45,9 +46,10 @@ impl Found<'_> {
     /// A rule has a word on this sonority.
     #[must_use]
     pub fn is_told_of_sonority(&self, rule: &str, there: &Sounding<'_>) -> bool {
-        let found = self.ask(rule, |looks, found| match looks {
-            Looks::Sonorities(check) => check(there, found),
-            _ => {}
+        let found = self.ask(rule, |looks, found| {
+            if let Looks::Sonorities(check) = looks {
+                check(there, found);
+            }
         });
         !found.is_empty()
     }
@@ -55,9 +57,10 @@ impl Found<'_> {
     /// A rule has a word on this dissonance.
     #[must_use]
     pub fn is_told_of_dissonance(&self, rule: &str, discord: &Discord<'_>) -> bool {
-        let found = self.ask(rule, |looks, found| match looks {
-            Looks::Dissonances(check) => check(discord, found),
-            _ => {}
+        let found = self.ask(rule, |looks, found| {
+            if let Looks::Dissonances(check) = looks {
+                check(discord, found);
+            }
         });
         !found.is_empty()
     }
@@ -66,9 +69,10 @@ impl Found<'_> {
     #[must_use]
     pub fn told_on_line(&self, rules: &[&str], line: &Line<'_>) -> Vec<Time> {
         let on_line = |rule: &&str| {
-            self.ask(rule, |looks, found| match looks {
-                Looks::Lines(check) => check(line, found),
-                _ => {}
+            self.ask(rule, |looks, found| {
+                if let Looks::Lines(check) = looks {
+                    check(line, found);
+                }
             })
         };
         let mut told: Vec<Time> = rules.iter().flat_map(on_line).map(|f| f.spot.at).collect();
