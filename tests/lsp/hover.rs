@@ -266,7 +266,7 @@ fn a_dissonance_tells_its_figure_or_what_each_figure_misses() {
     let hover = document.hover_text(&mut client, "- B4");
     assert!(
         hover.contains(
-            "C5 in S makes a minor fourteenth with D3 in voice B, on a strong beat.\n\n\
+            "C5 in S makes a minor seventh with D3 in voice B, on a strong beat.\n\n\
              - S has a suspension: struck in bar 1, beat 1, resolved in bar 1, beat 4"
         ),
         "{hover}"
