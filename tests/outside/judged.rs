@@ -181,12 +181,154 @@ const CASES: &[(&str, &str, &str, Verdict)] = &[
     ),
 ];
 
+/// The same where values and bars matter: whole sheets but for the style.
+const MEASURED: &[(&str, &str, &str, Verdict)] = &[
+    (
+        "Lehmann, Fig. 13a",
+        "species-1",
+        "a | B4 A4 |\nb | E4 F4 |",
+        Bad("mi-contra-fa"),
+    ),
+    (
+        "Lehmann, Fig. 13a, second",
+        "species-1",
+        "a | A4 B4 |\nb | F4 E4 |",
+        Bad("mi-contra-fa"),
+    ),
+    (
+        "Lehmann, Fig. 13a, third",
+        "species-1",
+        "a | B4 C5 |\nb | G4 F4 |",
+        Bad("mi-contra-fa"),
+    ),
+    (
+        "Lehmann, Fig. 13a, fourth",
+        "species-1",
+        "a | C5 B4 |\nb | F4 G4 |",
+        Bad("mi-contra-fa"),
+    ),
+    (
+        "Lehmann, Fig. 14",
+        "species-1",
+        "a | A4 B4 A4 |\nb | F4 G4 F4 |",
+        Bad("mi-contra-fa"),
+    ),
+    (
+        "Lehmann, Fig. 28, first",
+        "species-2",
+        "metre 4/4\nvoice a\nvoice b cantus\na | E5 - C5 - | D5 - B4 - |\nb | A4 - - - | G4 - - - |",
+        Bad("downbeat-consecutives"),
+    ),
+    (
+        "Lehmann, Fig. 28, third",
+        "species-2",
+        "metre 4/4\nvoice a\nvoice b cantus\na | E4 - G4 - | F4 - A4 - |\nb | C4 - - - | D4 - - - |",
+        Bad("offbeat-consecutives"),
+    ),
+    (
+        "Lehmann, Fig. 28, fifth",
+        "species-2",
+        "metre 4/4\nvoice a\nvoice b cantus\na | E5 - G4 - | A4 - C5 - |\nb | C4 - - - | F4 - - - |",
+        Clean("motion"),
+    ),
+    (
+        "Lehmann, Fig. 47, first",
+        "species-3",
+        "metre 4/4\nvoice a\nvoice b cantus\na | G4 C5 E5 D5 | C5 B4 A4 ? |\nb | C4 - - - | F4 - - - |",
+        Bad("downbeat-consecutives"),
+    ),
+    (
+        "Lehmann, Fig. 47, fourth",
+        "species-3",
+        "metre 4/4\nvoice a\nvoice b cantus\na | C5 E5 D5 C5 | D5 G4 A4 B4 |\nb | A4 - - - | G4 - - - |",
+        Bad("barline-consecutives"),
+    ),
+    (
+        "Grove, third-species model",
+        "species-3",
+        "metre 4/4\nvoice a cantus\nvoice b\na | C5 - - - | D5 - - - | E5 - - - | F5 - - - | E5 - - - | D5 - - - | C5 - - - ||\nb | _ C5 B4 A4 | B4 G4 A4 B4 | C5 B4 G4 A4 | F4 D4 E4 F4 | G4 C4 D4 E4 | F4 G4 A4 B4 | C5 - - - ||",
+        NoFault("dissonance"),
+    ),
+    (
+        "Grove, third-species model",
+        "species-3",
+        "metre 4/4\nvoice a cantus\nvoice b\na | C5 - - - | D5 - - - | E5 - - - | F5 - - - | E5 - - - | D5 - - - | C5 - - - ||\nb | _ C5 B4 A4 | B4 G4 A4 B4 | C5 B4 G4 A4 | F4 D4 E4 F4 | G4 C4 D4 E4 | F4 G4 A4 B4 | C5 - - - ||",
+        NoFault("motion"),
+    ),
+    (
+        "second to unison",
+        "chorale",
+        "a | E4 D4 |\nb | D4 D4 |",
+        Bad("dissonance-into-perfect"),
+    ),
+    (
+        "seven to six",
+        "species-4",
+        "metre 4/4\nvoice a\nvoice b cantus\na | _ _ C5 - | - - B4 - |\nb | E4 - - - | D4 - - - |",
+        Clean("dissonance"),
+    ),
+    (
+        "nine to eight",
+        "species-4",
+        "metre 4/4\nvoice a\nvoice b cantus\na | _ _ E5 - | - - D5 - |\nb | C4 - - - | D4 - - - |",
+        Clean("dissonance"),
+    ),
+    (
+        "two to three",
+        "species-4",
+        "metre 4/4\nvoice a cantus\nvoice b\na | G4 - - - | F4 - - - |\nb | _ _ E4 - | - - D4 - |",
+        Clean("dissonance"),
+    ),
+    (
+        "a suspension that rises",
+        "species-4",
+        "metre 4/4\nvoice a\nvoice b cantus\na | _ _ C5 - | - - D5 - |\nb | E4 - - - | D4 - - - |",
+        Fault("retardation"),
+    ),
+    (
+        "a passing half",
+        "species-2",
+        "metre 4/4\nvoice a\nvoice b cantus\na | E4 - F4 - | G4 - - - |\nb | C4 - - - | B3 - - - |",
+        Clean("dissonance"),
+    ),
+    (
+        "cambiata",
+        "species-3",
+        "metre 4/4\nvoice a\nvoice b cantus\na | E5 D5 B4 C5 | D5 - - - |\nb | E4 - - - | D4 - - - |",
+        Clean("dissonance"),
+    ),
+    (
+        "fifths of an anticipation",
+        "chorale",
+        "metre 4/4\ns | B4.A4 A4 - - |\na | G#4 E4 - - |\nt | E4.D4 C#4 - - |\nb | E3 A2 - - |",
+        NoFault("motion"),
+    ),
+    (
+        "sixth to octave",
+        "species-1",
+        "voice a\nvoice b cantus\na | C#5 D5 ||\nb | E4 D4 ||",
+        Clean("cadence"),
+    ),
+    (
+        "fifth before the last",
+        "species-1",
+        "voice a\nvoice b cantus\na | A4 A4 F4 A4 B4 D5 ||\nb | D4 F4 A4 F4 E4 D4 ||",
+        Bad("closing-approach"),
+    ),
+];
+
 #[test]
 fn judged_passages_get_their_verdict() {
     let mut wrong = Vec::new();
-    for (source, style, passage, verdict) in CASES {
+    let short = CASES.iter().map(|(source, style, passage, verdict)| {
         let rows: Vec<&str> = passage.split('/').map(str::trim).collect();
-        let text = format!("style {style}\n{}\n", rows.join("\n"));
+        (source, style, rows.join("\n"), verdict)
+    });
+    let measured = MEASURED
+        .iter()
+        .map(|(source, style, sheet, verdict)| (source, style, (*sheet).to_owned(), verdict));
+    for (source, style, sheet, verdict) in short.chain(measured) {
+        let text = format!("style {style}\n{sheet}\n");
         let checked = Checked::text(&text, &Wishes::default());
         let found: Vec<_> = checked
             .findings
@@ -221,5 +363,5 @@ fn judged_passages_get_their_verdict() {
         }
     }
     assert!(wrong.is_empty(), "{}", wrong.join("\n"));
-    println!("outside: {} judged passages", CASES.len());
+    println!("outside: {} judged passages", CASES.len() + MEASURED.len());
 }

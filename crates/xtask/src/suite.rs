@@ -12,7 +12,7 @@ const OUTSIDE: &[(&str, usize)] = &[
     ("parallels in 231 pieces", 13),
     ("contrary consecutives in 231 pieces", 30),
     ("consecutives in 545 pieces", 1042),
-    ("judged passages", 26),
+    ("judged passages", 48),
     ("dissonances of the treatise are figures", 328),
     ("pieces transposed have the same findings", 115),
     ("chords of analysts", 2448),
