@@ -18,14 +18,6 @@ pub struct Entry {
     pub page: Page,
 }
 
-impl Entry {
-    /// The id with blanks: `parallel fifths`.
-    #[must_use]
-    pub fn short_name(&self) -> String {
-        self.id.replace('-', " ")
-    }
-}
-
 /// A rule file as the generated list names it.
 pub(crate) struct File {
     pub(crate) family: &'static str,

@@ -75,8 +75,8 @@ pub enum Near {
 }
 
 /// Asks the held note of a dissonance against which the other one is struck what it lacks to be
-/// a suspension, and names it; `None` where no note is held, or on a weak moment, where the struck note is the
-/// one to explain.
+/// a suspension, and names it; `None` where no note is held, or on a weak moment, where the struck
+/// note is the one to explain.
 #[must_use]
 pub fn near_suspension(
     score: &Score,

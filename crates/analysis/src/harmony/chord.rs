@@ -56,12 +56,6 @@ impl Quality {
         }
     }
 
-    /// It has a seventh.
-    #[must_use]
-    pub const fn has_seventh(self) -> bool {
-        self.tones().len() == 4
-    }
-
     /// The triad in it.
     #[must_use]
     pub const fn triad(self) -> Quality {

@@ -59,8 +59,8 @@ fn strangeness(chord: Chord, key: LocalKey) -> Cost {
     })
 }
 
-/// The key of each segment.
-pub(super) fn keys(score: &Score, segments: &[Segment]) -> Vec<Option<LocalKey>> {
+/// The key of each segment, setting out from the stated one where there is one.
+pub(super) fn keys(home: Option<LocalKey>, segments: &[Segment]) -> Vec<Option<LocalKey>> {
     let (Some(low), Some(high)) = (
         segments.iter().map(|s| s.chord.root).min(),
         segments.iter().map(|s| s.chord.root).max(),
@@ -70,7 +70,6 @@ pub(super) fn keys(score: &Score, segments: &[Segment]) -> Vec<Option<LocalKey>>
     let states: Vec<LocalKey> = (low - 1..=high + 1)
         .flat_map(|tonic| [false, true].map(|minor| LocalKey { tonic, minor }))
         .collect();
-    let home = home(score);
     let mut best: Vec<Cost> = states
         .iter()
         .map(|key| {
@@ -112,7 +111,7 @@ pub(super) fn keys(score: &Score, segments: &[Segment]) -> Vec<Option<LocalKey>>
 }
 
 /// The key the score states at its beginning, where it is major or minor.
-fn home(score: &Score) -> Option<LocalKey> {
+pub(super) fn home(score: &Score) -> Option<LocalKey> {
     match score.keys.first()?.value {
         Key::Of { tonic, mode, .. } if matches!(mode, Mode::Major | Mode::Minor) => {
             Some(LocalKey {
