@@ -3,7 +3,7 @@
 use std::collections::BTreeMap;
 
 use partwright_check::Analysis;
-use partwright_check::harmony::{LocalKey, SURE, Segment, segment_at, segments};
+use partwright_check::harmony::{LocalKey, SURE, Segment, in_one_go};
 use partwright_score::{Pitch, Score, Texture, Time};
 use serde_json::Value;
 
@@ -85,7 +85,8 @@ fn the_inferred_harmony_agrees_with_the_analysts() {
             let piece: &Piece = scores.iter().find(|p| p.id == analysis["id"]).unwrap();
             let texture = Texture::of(&piece.score);
             let read = Analysis::of(&piece.score, &texture);
-            let found = segments(&piece.score, &texture, read.dissonances());
+            let found = in_one_go(&piece.score, &texture, read.dissonances());
+            let near = read.harmony(&piece.score, &texture);
             let mut events: Vec<Event> = analysis["events"]
                 .as_array()
                 .unwrap()
@@ -111,7 +112,7 @@ fn the_inferred_harmony_agrees_with_the_analysts() {
                 classes.sort_unstable();
                 let mut theirs = event.classes.clone();
                 theirs.sort_unstable();
-                let near = segment_at(&piece.score, &texture, read.dissonances(), k).unwrap();
+                let near = near.at(k).unwrap();
                 settled += usize::from(near.chord == segment.chord && near.key == segment.key);
                 let row = table.entry((segment.margin / 50).min(12)).or_default();
                 for sum in [row, &mut total] {
@@ -175,7 +176,7 @@ fn transposed_music_has_the_same_harmony() {
     let read = |score: &Score| {
         let texture = Texture::of(score);
         let analysis = Analysis::of(score, &texture);
-        segments(score, &texture, analysis.dissonances())
+        analysis.harmony(score, &texture).segments().to_vec()
     };
     for piece in pieces.iter().step_by(6) {
         let here = read(&piece.score);
@@ -210,7 +211,7 @@ fn the_hundred_beats_are_read_as_they_were_judged() {
         let analysis = Analysis::of(score, &texture);
         for (beat, at) in placed.iter().filter(|(beat, _)| beat["root"].is_string()) {
             let k = texture.sounding_at(*at).unwrap();
-            let found = segment_at(score, &texture, analysis.dissonances(), k);
+            let found = analysis.harmony(score, &texture).at(k);
             let Some(segment) = found else { continue };
             let quality = segment
                 .chord

@@ -9,7 +9,11 @@ pub mod figures;
 pub mod harmony;
 pub mod mode;
 
+use std::sync::OnceLock;
+
 use partwright_score::{Score, Texture};
+
+use harmony::Harmony;
 
 pub use figures::{Dissonance, Figure, Reading};
 pub use mode::Final;
@@ -18,6 +22,10 @@ pub use mode::Final;
 #[derive(Clone, Debug, Default)]
 pub struct Analysis {
     dissonances: Vec<Dissonance>,
+    /// Of an earlier state of the score.
+    earlier: Option<Box<Harmony>>,
+    /// Read when it is first asked for: many styles never do.
+    harmony: OnceLock<Harmony>,
 }
 
 impl Analysis {
@@ -26,7 +34,29 @@ impl Analysis {
     pub fn of(score: &Score, texture: &Texture) -> Analysis {
         Analysis {
             dissonances: figures::dissonances(score, texture),
+            earlier: None,
+            harmony: OnceLock::new(),
         }
+    }
+
+    /// Reads a score of which an earlier state was read before: chords that an edit cannot reach
+    /// are taken over.
+    #[must_use]
+    pub fn again(score: &Score, texture: &Texture, earlier: &Analysis) -> Analysis {
+        let known = earlier.harmony.get().or(earlier.earlier.as_deref());
+        Analysis {
+            earlier: known.cloned().map(Box::new),
+            ..Analysis::of(score, texture)
+        }
+    }
+
+    /// The chords and keys of the score this was read from.
+    #[must_use]
+    pub fn harmony(&self, score: &Score, texture: &Texture) -> &Harmony {
+        self.harmony.get_or_init(|| {
+            let earlier = self.earlier.as_deref();
+            Harmony::again(score, texture, &self.dissonances, earlier)
+        })
     }
 
     /// The dissonances in order of time.

@@ -125,22 +125,26 @@ impl Checked {
     /// Checks the text of a sheet. Never fails: what cannot be read is a finding.
     #[must_use]
     pub fn text(text: &str, wishes: &Wishes) -> Checked {
-        Checked::of(Sheet::read(text), text, wishes)
+        Checked::of(Sheet::read(text), text, wishes, None)
     }
 
     /// Checks a text of which an earlier state was checked before: systems that did not change
     /// are not read again.
     #[must_use]
     pub fn again(&self, text: &str, wishes: &Wishes) -> Checked {
-        Checked::of(Sheet::read_again(text, &self.sheet), text, wishes)
+        let sheet = Sheet::read_again(text, &self.sheet);
+        Checked::of(sheet, text, wishes, Some(&self.analysis))
     }
 
-    fn of(sheet: Sheet, text: &str, wishes: &Wishes) -> Checked {
+    fn of(sheet: Sheet, text: &str, wishes: &Wishes, earlier: Option<&Analysis>) -> Checked {
         let reading = sheet.lower(text);
         let texture = Texture::of(&reading.score);
         let strictness = wishes.strictness(reading.score.style.as_deref());
         let mut findings = text::findings(&reading, wishes, &strictness);
-        let analysis = Analysis::of(&reading.score, &texture);
+        let analysis = match earlier {
+            Some(earlier) => Analysis::again(&reading.score, &texture, earlier),
+            None => Analysis::of(&reading.score, &texture),
+        };
         let piece = Piece {
             score: &reading.score,
             texture: &texture,

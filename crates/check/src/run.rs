@@ -1,6 +1,6 @@
 //! Running the rules over a score.
 
-use partwright_rules::{Discord, Finding, Found, Line, Looks, Piece, Strictness, catalogue};
+use partwright_rules::{Chord, Discord, Finding, Found, Line, Looks, Piece, Strictness, catalogue};
 
 /// The findings of all the rules that take part, in terms of voices and moments, in no order.
 #[must_use]
@@ -24,6 +24,12 @@ pub fn notes_findings(piece: &Piece<'_>, strictness: &Strictness) -> Vec<Finding
                 let mut found = Found::new(entry, strictness, score, &mut list);
                 for dissonance in piece.analysis.dissonances() {
                     check(&Discord { piece, dissonance }, &mut found);
+                }
+            }
+            Looks::Chords(check) => {
+                let mut found = Found::new(entry, strictness, score, &mut list);
+                for chord in piece.chords().filter(Chord::is_sure) {
+                    check(&chord, &mut found);
                 }
             }
             Looks::Text => {}

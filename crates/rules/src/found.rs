@@ -6,7 +6,7 @@ use crate::catalogue::Entry;
 use crate::finding::{Finding, Role, Spot};
 use crate::rule::{Case, NumberOf, Severity};
 use crate::style::{Strictness, Style};
-use crate::view::{Discord, Line, LineMove, PairMove, Succession};
+use crate::view::{Discord, Line, LineMove, Member, PairMove, Succession};
 
 /// Collects the findings of one rule under one style.
 pub struct Found<'a> {
@@ -218,6 +218,32 @@ impl<'a> Found<'a> {
         if let Some(finding) = self.list.get_mut(before) {
             finding.until = None;
         }
+    }
+
+    /// A finding about a note of one chord that goes to a note of the next: it stands at the
+    /// note reached.
+    pub fn member(
+        &mut self,
+        case: &'static Case,
+        (from, to): (&Member, &Member),
+        message: impl FnOnce() -> String,
+    ) {
+        let Some(severity) = self.severity_of(case, &[to.voice]) else {
+            return;
+        };
+        let spot = |member: &Member| Spot {
+            voice: member.voice,
+            at: member.onset,
+        };
+        self.list.push(Finding {
+            rule: self.rule,
+            severity,
+            message: message(),
+            voices: vec![to.voice],
+            spot: spot(to),
+            until: None,
+            related: vec![(Role::From, spot(from))],
+        });
     }
 
     /// A finding about a passage: it stands at the beginning, once, with its extent.

@@ -22,15 +22,16 @@ pub use rule::{Case, FAMILIES, Looks, NumberOf, Rule, Severity};
 pub use source::Source;
 pub use style::{Number, Override, STYLES, Setting, Strictness, Style};
 pub use view::{
-    Crossing, Direct, Discord, HighPoint, LastMove, Level, Line, LineMove, Minim, MinorDegree,
-    Numbers, Over, PairMove, ParallelRun, Passage, Passing, Piece, Quick, Run, SixFive, Sounding,
-    Stretch, Stroke, Succession, Tessitura, Together, Value,
+    Chord, Crossing, Direct, Discord, HighPoint, LastMove, Level, Line, LineMove, Member, Minim,
+    MinorDegree, Numbers, Over, PairMove, ParallelRun, Passage, Passing, Piece, Quick, Run,
+    SixFive, Sounding, Stretch, Stroke, Succession, Tessitura, Together, Tone, Value,
 };
 
 /// What every rule file needs.
 pub mod prelude {
     pub use partwright_analysis::Figure;
     pub use partwright_analysis::figures::Near;
+    pub use partwright_analysis::harmony::Quality;
     pub use partwright_score::{Interval, Note, Pair, Time};
     pub use partwright_space::{Consecutive, Family, Motion, Way};
 
@@ -40,7 +41,7 @@ pub mod prelude {
     pub use crate::source::{self, Source};
     pub use crate::style::{Setting, Style, allow, fault, remark, weakness};
     pub use crate::view::{
-        Direct, Discord, LastMove, Level, Line, LineMove, MinorDegree, Numbers, Over, PairMove,
-        ParallelRun, Passage, Piece, Sounding, Stroke, Succession,
+        Chord, Direct, Discord, LastMove, Level, Line, LineMove, Member, MinorDegree, Numbers,
+        Over, PairMove, ParallelRun, Passage, Piece, Sounding, Stroke, Succession, Tone,
     };
 }

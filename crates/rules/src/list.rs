@@ -72,6 +72,8 @@ pub mod free_dissonance;
 pub mod high_point_repeated;
 #[path = "rules/line/high_points_together.rs"]
 pub mod high_points_together;
+#[path = "rules/harmony/leading_note_doubled.rs"]
+pub mod leading_note_doubled;
 #[path = "rules/line/leap_across_bar.rs"]
 pub mod leap_across_bar;
 #[path = "rules/line/leap_beyond_octave.rs"]
@@ -232,6 +234,7 @@ pub(crate) static FILES: &[File] = &[
     file!("dissonance", suspension_preparation),
     file!("dissonance", suspension_resolution),
     file!("dissonance", upper_clash),
+    file!("harmony", leading_note_doubled),
     file!("line", augmented_interval),
     file!("line", broken_chord),
     file!("line", chromatic_semitone),

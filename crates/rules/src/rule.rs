@@ -5,7 +5,7 @@ use std::fmt;
 use crate::found::Found;
 use crate::source::Source;
 use crate::style::{Setting, Style};
-use crate::view::{Discord, Line, PairMove, Piece, Sounding};
+use crate::view::{Chord, Discord, Line, PairMove, Piece, Sounding};
 
 /// How much a style minds.
 #[derive(Clone, Copy, Debug, PartialEq, Eq, Hash, PartialOrd, Ord)]
@@ -59,6 +59,8 @@ pub enum Looks {
     Sonorities(fn(&Sounding<'_>, &mut Found<'_>)),
     /// Every dissonance.
     Dissonances(fn(&Discord<'_>, &mut Found<'_>)),
+    /// Every chord of which root and triad are sure.
+    Chords(fn(&Chord<'_>, &mut Found<'_>)),
     /// Every voice as a line.
     Lines(fn(&Line<'_>, &mut Found<'_>)),
     /// The piece as a whole: passages.

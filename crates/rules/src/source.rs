@@ -269,6 +269,26 @@ pub const CHERUBINI: Source = source(
     1835,
     Known::FromMemory,
 );
+/// Conventions of part-writing.
+pub const COLAROS: Source = source("Colaros", "Part-writing Conventions", 0, Known::Read);
+/// An article on doublings.
+pub const AARDEN_VON_HIPPEL: Source = source(
+    "B. Aarden, P. von Hippel",
+    "Rules for Chord Doubling (and Spacing), Music Theory Online 10.2",
+    2004,
+    Known::Read,
+);
+/// Altered notes in part-writing.
+pub const FEEZELL: Source = source("Feezell", "Chromatic part-writing", 0, Known::Read);
+/// Voice-leading guidelines.
+pub const WIELAND: Source = source("Wieland", "More voice-leading guidelines", 0, Known::Read);
+/// Counts in the chorales that the developers' share of scores holds.
+pub const CHORALES_HERE: Source = source(
+    "",
+    "156 four-part chorales of J. S. Bach",
+    0,
+    Known::Counted,
+);
 /// What the trade agrees on.
 pub const COMMON_PRACTICE: Source = source("", "common practice", 0, Known::FromMemory);
 /// The definition of our own notation.

@@ -18,7 +18,7 @@ pub(super) const QUARTER: Cost = 100;
 const BEFORE: usize = 16;
 
 /// One note in a sonority.
-#[derive(Clone, Copy)]
+#[derive(Clone, Copy, Hash)]
 pub(super) struct Tone {
     /// Its place among the fifths.
     pub place: i32,
@@ -29,6 +29,7 @@ pub(super) struct Tone {
 }
 
 /// One sonority as the search sees it.
+#[derive(Hash)]
 pub(super) struct Slice {
     pub tones: Vec<Tone>,
     pub length: Cost,

@@ -3,6 +3,7 @@
 //! These views only read what `partwright_score` laid out, and put it into a musician's words.
 
 mod account;
+mod chord;
 mod close;
 mod degree;
 mod discord;
@@ -18,9 +19,11 @@ mod shape;
 mod sounding;
 mod vocal;
 
+use partwright_analysis::harmony::Segment;
 use partwright_analysis::{Analysis, Dissonance};
 use partwright_score::{Pair, PairStep, Score, Texture};
 
+pub use chord::{Member, Tone};
 pub use degree::{MinorDegree, Tessitura};
 pub use ending::LastMove;
 pub use held::{Numbers, SixFive, Together};
@@ -70,6 +73,17 @@ pub struct Discord<'a> {
     pub piece: Piece<'a>,
     /// What was read of it.
     pub dissonance: &'a Dissonance,
+}
+
+/// One chord, as long as it lasts.
+#[derive(Clone, Copy)]
+pub struct Chord<'a> {
+    /// The piece.
+    pub piece: Piece<'a>,
+    /// Which chord, from 0.
+    pub index: usize,
+    /// What was inferred.
+    pub segment: &'a Segment,
 }
 
 /// One voice as a line.

@@ -2,7 +2,7 @@
 
 use std::fmt::Write;
 
-use partwright_check::harmony::{SURE, segment_at};
+use partwright_check::harmony::SURE;
 use partwright_check::{Checked, Finding};
 use partwright_rules::{Discord, PairMove, Sounding, Style, entry};
 use partwright_score::{Interval, Score, Sound, Time, Voice, show_time};
@@ -272,9 +272,8 @@ fn dissonances(page: &mut Page, sounding: Sounding<'_>, voice: usize) {
 /// The chord as it is inferred, and what does not belong to it; nothing where that is a guess.
 fn chord(page: &mut Page, sounding: Sounding<'_>) {
     let Sounding { piece, index } = sounding;
-    let dissonances = piece.analysis.dissonances();
-    let found = segment_at(piece.score, piece.texture, dissonances, index);
-    let Some(segment) = found.filter(|s| s.margin * 2 >= SURE) else {
+    let harmony = piece.analysis.harmony(piece.score, piece.texture);
+    let Some(segment) = harmony.at(index).filter(|s| s.margin * 2 >= SURE) else {
         return;
     };
     let mut line = format!("Chord: {}", page.strong(&segment.chord.name()));
