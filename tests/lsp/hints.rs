@@ -75,6 +75,29 @@ fn intervals_over_the_bass_stand_behind_the_notes() {
 }
 
 #[test]
+fn chords_stand_in_the_lowest_row_where_they_begin() {
+    let text = "style chorale\nkey C major\nmetre 4/4\n\n\
+        S | G4 A4 G4 - | G4^ - - - |\n\
+        A | E4 F4 F4 D | E4^ - - - |\n\
+        T | C4 C4 D4 B3 | C4^ - - - |\n\
+        B | C3 F3 B2 G2 | C3^ - - - |\n";
+    let mut client = Client::ready();
+    let document = Document::open(&mut client, "file:///a.voices", text);
+    assert_eq!(hints(&mut client, &document), ["4 bars 1–2"]);
+    set(&mut client, json!({ "barNumbers": false, "chords": true }));
+    assert_eq!(
+        hints(&mut client, &document),
+        ["7 C", "7 F", "7 G7/B", "7 G", "7 C"]
+    );
+    let whole = json!({ "range": document.range(0..text.len()) });
+    let found = document.ask(&mut client, "inlayHint", whole);
+    assert_eq!(found[2]["tooltip"], "G dominant seventh, in C major");
+    set(&mut client, json!({ "barNumbers": false }));
+    assert_eq!(hints(&mut client, &document), [""; 0]);
+    client.goodbye();
+}
+
+#[test]
 fn a_client_that_can_be_asked_is_asked() {
     let mut client = Client::start().introduced(capabilities_and(&[
         ("/workspace/configuration", json!(true)),

@@ -14,6 +14,7 @@ pub use drawn::unlike_drawn;
 pub use filter::{BarRange, Filter, FilterError};
 pub use finding::{Finding, Lifted, Related};
 pub use house::House;
+pub use partwright_analysis::mode::fifths;
 pub use partwright_analysis::{Analysis, harmony};
 pub use partwright_rules::{Role, STYLES, Severity, Style};
 pub use run::notes_findings;

@@ -64,6 +64,8 @@ pub(crate) struct Settings {
     pub(crate) bar_numbers: bool,
     /// Hints tell the intervals over the bass.
     pub(crate) intervals: bool,
+    /// Hints tell the names of chords.
+    pub(crate) chords: bool,
 }
 
 impl Default for Settings {
@@ -72,6 +74,7 @@ impl Default for Settings {
             style: None,
             bar_numbers: true,
             intervals: false,
+            chords: false,
         }
     }
 }

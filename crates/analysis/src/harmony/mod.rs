@@ -8,6 +8,7 @@ mod decode;
 mod keys;
 mod segments;
 mod stretches;
+mod symbol;
 
 use std::sync::Arc;
 
@@ -42,6 +43,12 @@ impl Segment {
     #[must_use]
     pub const fn is_sure(&self) -> bool {
         self.margin >= SURE
+    }
+
+    /// Not certain enough to act on, yet worth telling to whoever asks.
+    #[must_use]
+    pub const fn is_likely(&self) -> bool {
+        self.margin * 2 >= SURE
     }
 
     /// That the chord has a seventh, or none, is certain enough to act on.

@@ -1,7 +1,8 @@
 //! `workspace/didChangeConfiguration`: what the user sets in the editor.
 //!
 //! ```json
-//! { "partwright": { "style": "chorale", "inlayHints": { "barNumbers": true, "intervals": false } } }
+//! { "partwright": { "style": "chorale",
+//!     "inlayHints": { "barNumbers": true, "intervals": false, "chords": true } } }
 //! ```
 
 use std::sync::Arc;
@@ -30,6 +31,7 @@ fn settings(value: &Value) -> Settings {
         style: style.filter(|name| !name.is_empty()).map(str::to_owned),
         bar_numbers: hint("barNumbers").unwrap_or(usual.bar_numbers),
         intervals: hint("intervals").unwrap_or(usual.intervals),
+        chords: hint("chords").unwrap_or(usual.chords),
     }
 }
 

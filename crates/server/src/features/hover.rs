@@ -1,8 +1,9 @@
 //! `textDocument/hover`: what sounds under the cursor, and how it got there.
 
+mod chord;
+
 use std::fmt::Write;
 
-use partwright_check::harmony::SURE;
 use partwright_check::{Checked, Finding};
 use partwright_rules::{Discord, PairMove, Sounding, Style, entry};
 use partwright_score::{Interval, Score, Sound, Time, Voice, show_time};
@@ -208,7 +209,7 @@ fn on_part(checked: &Checked, offset: usize, page: &Page) -> Option<(Span, Strin
         dissonances(&mut page, Sounding { piece, index }, voice);
         // The older styles know no chords.
         if matches!(checked.strictness.style, Style::Free | Style::Chorale) {
-            chord(&mut page, Sounding { piece, index });
+            chord::chord(&mut page, Sounding { piece, index });
         }
     }
     Some((span, page.text))
@@ -267,32 +268,6 @@ fn dissonances(page: &mut Page, sounding: Sounding<'_>, voice: usize) {
         page.paragraph(&format!("{}.", lines.remove(0)));
         page.list(&lines);
     }
-}
-
-/// The chord as it is inferred, and what does not belong to it; nothing where that is a guess.
-fn chord(page: &mut Page, sounding: Sounding<'_>) {
-    let Sounding { piece, index } = sounding;
-    let harmony = piece.analysis.harmony(piece.score, piece.texture);
-    let Some(segment) = harmony.at(index).filter(|s| s.margin * 2 >= SURE) else {
-        return;
-    };
-    let mut line = format!("Chord: {}", page.strong(&segment.chord.name()));
-    if let Some(key) = segment.key {
-        let _ = write!(line, ", in {}", key.name());
-    }
-    if segment.margin < SURE {
-        line.push_str(" (not sure)");
-    }
-    let beside = piece.texture.sounding(index).filter_map(|voice| {
-        let pitch = sounding.pitch(voice)?;
-        let belongs = segment.chord.tone(pitch).is_some();
-        (!belongs).then(|| format!("{pitch} in {}", piece.name(voice)))
-    });
-    let beside: Vec<String> = beside.collect();
-    if !beside.is_empty() {
-        let _ = write!(line, "; set aside: {}", beside.join(", "));
-    }
-    page.paragraph(&format!("{line}."));
 }
 
 fn pair<'a>(sounding: Sounding<'a>, a: usize, b: usize) -> Option<PairMove<'a>> {

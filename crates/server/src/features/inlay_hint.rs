@@ -1,9 +1,11 @@
 //! `textDocument/inlayHint`: the numbers of bars at the end of each system's first row, where no
-//! column moves; and, where the user wants them, the intervals over the bass behind the notes.
+//! column moves; and, where the user wants them, the intervals over the bass behind the notes, and
+//! the names of chords in the lowest row.
 
-use partwright_check::Checked;
+use partwright_check::{Checked, fifths};
+use partwright_score::Time;
 use partwright_sheet::Span;
-use tower_lsp::lsp_types::{InlayHint, InlayHintLabel, Range};
+use tower_lsp::lsp_types::{InlayHint, InlayHintLabel, InlayHintTooltip, Range};
 
 use crate::convert;
 use crate::documents::Outcome;
@@ -25,26 +27,29 @@ pub(crate) fn hints(
         let span = span.range();
         span.start <= range.end && range.start <= span.end
     };
-    let mut found: Vec<(usize, String)> = Vec::new();
+    let mut found: Vec<Hint> = Vec::new();
     for system in systems(checked).iter().filter(|system| within(system.span)) {
         if settings.bar_numbers
             && let Some((_, label)) = system.rows.first()
         {
             let line = text.line_from(label.start as usize);
-            found.push((line.end, system.name(checked).to_lowercase()));
+            found.push(Hint::plain(line.end, system.name(checked).to_lowercase()));
         }
         if settings.intervals {
             intervals(system, checked, &mut found);
         }
+        if settings.chords {
+            chords(system, checked, &mut found);
+        }
     }
-    found.retain(|(at, _)| range.start <= *at && *at <= range.end);
-    found.sort_by_key(|(at, _)| *at);
-    let one = |(at, label)| InlayHint {
-        position: convert::range(text, Span::new(at, at), agreed.columns).start,
-        label: InlayHintLabel::String(label),
+    found.retain(|hint| range.start <= hint.at && hint.at <= range.end);
+    found.sort_by_key(|hint| hint.at);
+    let one = |hint: Hint| InlayHint {
+        position: convert::range(text, Span::new(hint.at, hint.at), agreed.columns).start,
+        label: InlayHintLabel::String(hint.label),
         kind: None,
         text_edits: None,
-        tooltip: None,
+        tooltip: hint.more.map(InlayHintTooltip::String),
         padding_left: Some(true),
         padding_right: None,
         data: None,
@@ -52,18 +57,76 @@ pub(crate) fn hints(
     Some(found.into_iter().map(one).collect())
 }
 
+/// One hint: where in the text, what it says, and what it says to the mouse.
+struct Hint {
+    at: usize,
+    label: String,
+    more: Option<String>,
+}
+
+impl Hint {
+    fn plain(at: usize, label: String) -> Hint {
+        Hint {
+            at,
+            label,
+            more: None,
+        }
+    }
+}
+
+/// The stretch of time a system covers.
+fn extent(system: &System, checked: &Checked) -> Option<(Time, Time)> {
+    let score = &checked.reading.score;
+    let bars = system.bars.clone().filter_map(|bar| score.bars.get(bar));
+    bars.map(|bar| (bar.onset, bar.onset + bar.length))
+        .reduce(|(from, until), (onset, end)| (from.min(onset), until.max(end)))
+}
+
+/// In the lowest row, behind what stands where a chord begins: its name as on a lead sheet, a
+/// question mark where it is likely and no more, nothing where it would be a guess.
+fn chords(system: &System, checked: &Checked, found: &mut Vec<Hint>) {
+    let Some((from, until)) = extent(system, checked) else {
+        return;
+    };
+    let Some(&(row, _)) = system.rows.last() else {
+        return;
+    };
+    let piece = checked.piece();
+    for chord in piece.chords().skip_while(|chord| chord.until() <= from) {
+        let onset = chord.onset().max(from);
+        if onset >= until {
+            break;
+        }
+        let segment = chord.segment;
+        let Some(span) = checked
+            .reading
+            .span_at(row, onset)
+            .filter(|_| segment.is_likely())
+        else {
+            continue;
+        };
+        let bass = piece.texture.bass(segment.first).and_then(|bass| {
+            let pitch = piece.texture.pitch(piece.score, segment.first, bass)?;
+            segment.chord.tone(pitch).map(|_| fifths(pitch))
+        });
+        let doubt = if segment.is_sure() { "" } else { "?" };
+        let key = segment
+            .key
+            .map_or(String::new(), |key| format!(", in {}", key.name()));
+        found.push(Hint {
+            at: span.end as usize,
+            label: format!("{}{doubt}", segment.chord.symbol(bass)),
+            more: Some(format!("{}{key}", segment.chord.name())),
+        });
+    }
+}
+
 /// Behind every note that is struck over another bass note: the size of the interval between,
 /// octaves taken away down to a tenth, as in figures.
-fn intervals(system: &System, checked: &Checked, found: &mut Vec<(usize, String)>) {
+fn intervals(system: &System, checked: &Checked, found: &mut Vec<Hint>) {
     let (reading, texture) = (&checked.reading, &checked.texture);
     let score = &reading.score;
-    let bars = system.bars.clone().filter_map(|bar| score.bars.get(bar));
-    let ends =
-        |(from, until), (onset, end)| (std::cmp::min(from, onset), std::cmp::max(until, end));
-    let Some((from, until)) = bars
-        .map(|bar| (bar.onset, bar.onset + bar.length))
-        .reduce(ends)
-    else {
+    let Some((from, until)) = extent(system, checked) else {
         return;
     };
     for &(voice, _) in &system.rows {
@@ -84,7 +147,7 @@ fn intervals(system: &System, checked: &Checked, found: &mut Vec<(usize, String)
             let size = (pitch.step - bass.step).abs() + 1;
             // 8 stays 8, 10 stays 10; 11 and up are told within the octave.
             let size = if size > 10 { (size - 2) % 7 + 2 } else { size };
-            found.push((span.end as usize, size.to_string()));
+            found.push(Hint::plain(span.end as usize, size.to_string()));
         }
     }
 }
