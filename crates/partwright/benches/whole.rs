@@ -9,6 +9,7 @@ mod generated;
 
 use divan::Bencher;
 use divan::counter::BytesCount;
+use partwright_check::harmony::Harmony;
 use partwright_check::{Analysis, Checked, Wishes};
 use partwright_rules::{FAMILIES, Strictness, Style};
 use partwright_score::Texture;
@@ -67,6 +68,35 @@ fn analysis(bencher: Bencher<'_, '_>, bars: usize) {
     bencher
         .counter(BytesCount::of_str(&text))
         .bench(|| Analysis::of(score, texture));
+}
+
+/// Chords and keys, read from nothing.
+#[divan::bench(args = BARS)]
+fn harmony(bencher: Bencher<'_, '_>, bars: usize) {
+    let text = generated::sheet(bars, 1);
+    let checked = Checked::text(&text, &Wishes::default());
+    let (score, texture) = (&checked.reading.score, &checked.texture);
+    let dissonances = checked.analysis.dissonances();
+    bencher
+        .counter(BytesCount::of_str(&text))
+        .bench(|| Harmony::of(score, texture, dissonances));
+}
+
+/// The same where one note was changed, and the rest is known.
+#[divan::bench(args = BARS)]
+fn harmony_again(bencher: Bencher<'_, '_>, bars: usize) {
+    let text = generated::sheet(bars, 1);
+    let checked = Checked::text(&text, &Wishes::default());
+    let place = text.len() / 2 + text[text.len() / 2..].find(" G").unwrap_or(0) + 1;
+    let mut typed = text.clone();
+    typed.replace_range(place..=place, "A");
+    let after = checked.again(&typed, &Wishes::default());
+    let harmony = checked.analysis.harmony(&checked.reading.score, &checked.texture);
+    let (score, texture) = (&after.reading.score, &after.texture);
+    let dissonances = after.analysis.dissonances();
+    bencher
+        .counter(BytesCount::of_str(&text))
+        .bench(|| Harmony::again(score, texture, dissonances, Some(harmony)));
 }
 
 #[divan::bench(args = BARS)]
