@@ -2,7 +2,7 @@
 
 use std::fmt::Write;
 
-use partwright_check::harmony::{SURE, segment_at};
+use partwright_check::harmony::segment_at;
 use partwright_check::{Checked, Finding};
 use partwright_rules::{Discord, PairMove, Sounding, Style, entry};
 use partwright_score::{Interval, Score, Sound, Time, Voice, show_time};
@@ -274,14 +274,14 @@ fn chord(page: &mut Page, sounding: Sounding<'_>) {
     let Sounding { piece, index } = sounding;
     let dissonances = piece.analysis.dissonances();
     let found = segment_at(piece.score, piece.texture, dissonances, index);
-    let Some(segment) = found.filter(|s| s.margin * 2 >= SURE) else {
+    let Some(segment) = found.filter(|s| s.is_likely()) else {
         return;
     };
     let mut line = format!("Chord: {}", page.strong(&segment.chord.name()));
     if let Some(key) = segment.key {
         let _ = write!(line, ", in {}", key.name());
     }
-    if segment.margin < SURE {
+    if !segment.is_sure() {
         line.push_str(" (not sure)");
     }
     let beside = piece.texture.sounding(index).filter_map(|voice| {
