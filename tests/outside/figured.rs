@@ -6,8 +6,8 @@
 use std::collections::BTreeMap;
 
 use partwright_check::Analysis;
-use partwright_check::harmony::{Segment, segments};
-use partwright_score::{Pitch, Texture, Time, ZERO};
+use partwright_check::harmony::segments;
+use partwright_score::{Pitch, Texture, Time, ZERO, show_time};
 use roxmltree::{Document, Node, ParsingOptions};
 
 use crate::scores::{folder, set};
@@ -109,7 +109,7 @@ fn continuo(document: &Document<'_>) -> Vec<Figured> {
 
 /// Where the roots that figures allow lie, in steps above the bass; none where they tell no root:
 /// a bass note that is itself suspended, a lone fourth, a pedal.
-fn roots(here: &[Figure], next: Option<&[Figure]>) -> Vec<i32> {
+fn roots(here: &[Figure], next: Option<&[Figure]>, sounds: &dyn Fn(i32) -> bool) -> Vec<i32> {
     let has = |figures: &[Figure], number: u8| figures.iter().any(|f| f.number == Some(number));
     let is_third =
         |figures: &[Figure]| has(figures, 3) || figures.iter().any(|f| f.number.is_none());
@@ -128,7 +128,7 @@ fn roots(here: &[Figure], next: Option<&[Figure]>) -> Vec<i32> {
     if is(&[6, 4, 3]) {
         return vec![3];
     }
-    if is(&[6, 4, 2]) || is(&[4, 2]) || (is(&[4]) && raised(4)) {
+    if is(&[6, 4, 2]) || is(&[4, 2]) || (is(&[4]) && (raised(4) || sounds(6))) {
         return vec![1];
     }
     if has(here, 2) {
@@ -148,18 +148,23 @@ fn roots(here: &[Figure], next: Option<&[Figure]>) -> Vec<i32> {
         };
     }
     if has(here, 7) {
-        // A seventh that falls to a sixth over the same note is a suspension.
+        // A seventh that falls to a sixth over the same note is suspended, or passes through it.
         let falls = next.is_some_and(|next| has(next, 6));
-        return if falls { vec![5] } else { vec![0] };
+        return if falls { vec![5, 0] } else { vec![0] };
     }
     if has(here, 6) {
         return vec![5];
     }
-    // A diminished fifth alone may mean the sixth as well.
-    if is(&[5]) && raised(5) {
+    // A diminished fifth means the sixth as well.
+    if is(&[5]) && (raised(5) || sounds(-6)) {
         return vec![0, 5];
     }
     vec![0]
+}
+
+/// A pitch's place among the fifths.
+fn fifths(pitch: Pitch) -> i32 {
+    [0, 2, 4, -1, 1, 3, 5][usize::from(pitch.letter())] + 7 * i32::from(pitch.sign)
 }
 
 /// The letter of a place among the fifths.
@@ -208,24 +213,27 @@ fn the_roots_agree_with_the_figured_bass() {
         let found = segments(&piece.score, &texture, analysis.dissonances());
         for (i, here) in figured.iter().enumerate() {
             let next = figured.get(i + 1).filter(|next| next.note == here.note);
-            let roots = roots(&here.figures, next.map(|next| &next.figures[..]));
+            let k = texture.sounding_at(here.at).unwrap();
+            let pitches = || {
+                let voices = texture.sounding(k);
+                voices.filter_map(|voice| texture.pitch(&piece.score, k, voice))
+            };
+            let bass = texture.bass(k);
+            let bass = bass.and_then(|voice| texture.pitch(&piece.score, k, voice));
+            // The continuo may go its own way for a moment, or alone.
+            let Some(bass) = bass.filter(|bass| letter_of(*bass) == here.bass) else {
+                count.other_bass += 1;
+                continue;
+            };
+            let sounds = |above: i32| pitches().any(|p| fifths(p) - fifths(bass) == above);
+            let roots = roots(&here.figures, next.map(|next| &next.figures[..]), &sounds);
+            let Some(segment) = found.iter().find(|s| s.first <= k && k < s.end) else {
+                continue;
+            };
             if roots.is_empty() {
                 count.no_root += 1;
                 continue;
             }
-            let segment = texture.sounding_at(here.at).and_then(|k| {
-                let bass = texture.bass(k)?;
-                let pitch = texture.pitch(&piece.score, k, bass)?;
-                let segment = found
-                    .iter()
-                    .find(|s: &&Segment| s.first <= k && k < s.end)?;
-                (letter_of(pitch) == here.bass).then_some(segment)
-            });
-            // The continuo goes its own way for a moment.
-            let Some(segment) = segment else {
-                count.other_bass += 1;
-                continue;
-            };
             let own = letter(segment.chord.root);
             let agrees = roots.iter().any(|root| (here.bass + root) % 7 == own);
             count.compared += 1;
@@ -239,12 +247,20 @@ fn the_roots_agree_with_the_figured_bass() {
             band.1 += 1;
             if show && !agrees {
                 println!(
-                    "{name} {} over {}: {:?}, ours {} margin {}",
+                    "{name} bar {} beat {}: {} over {bass}, ours {} margin {}, {}",
                     piece.score.place(here.at).bar,
-                    here.bass,
-                    here.figures,
+                    show_time(piece.score.place(here.at).beat),
+                    here.figures
+                        .iter()
+                        .map(|f| format!(
+                            "{}{} ",
+                            f.number.map_or(String::new(), |n| n.to_string()),
+                            f.sign.clone().unwrap_or_default()
+                        ))
+                        .collect::<String>(),
                     segment.chord.name(),
-                    segment.margin
+                    segment.margin,
+                    pitches().map(|p| format!("{p} ")).collect::<String>()
                 );
             }
         }

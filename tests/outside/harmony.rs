@@ -5,7 +5,7 @@ use std::fmt::Write as _;
 use std::path::Path;
 
 use partwright_check::Analysis;
-use partwright_check::harmony::{LocalKey, SURE, SURE_OF_SEVENTH, Segment, segment_at, segments};
+use partwright_check::harmony::{LocalKey, SURE, Segment, segment_at, segments};
 use partwright_score::{Pitch, Score, Texture, Time};
 use serde_json::Value;
 
@@ -220,7 +220,7 @@ fn page(places: &[Place]) -> String {
         }
         text.push('\n');
     }
-    writeln!(text, "\n## What is acted on\n\nFrom a margin of {SURE} on; for the seventh {SURE_OF_SEVENTH} beside it.\n\n| | moments | all | tuned on | held back |\n| --- | --- | --- | --- | --- |").unwrap();
+    writeln!(text, "\n## What is acted on\n\nFrom a margin of {SURE} on.\n\n| | moments | all | tuned on | held back |\n| --- | --- | --- | --- | --- |").unwrap();
     for (name, sure, says) in ACTED_ON {
         let (n, of) = counted(places, says, &|p| sure(&p.segment));
         let (t, tuned) = counted(places, says, &|p| sure(&p.segment) && p.is_tuned);
@@ -271,6 +271,7 @@ fn the_inferred_harmony_agrees_with_the_analysts() {
     let least: [(Says, usize); 3] = LEAST;
     for (says, least) in least {
         let (n, _) = counted(&places, says, &|_| true);
+        println!("outside: {n} agree");
         assert!(n >= least, "{n} of {least}");
     }
     for (name, sure, says) in ACTED_ON {

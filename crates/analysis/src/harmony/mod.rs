@@ -19,7 +19,7 @@ use decode::{Found, Search};
 use keys::Home;
 use segments::Slice;
 
-pub use certainty::{SURE, SURE_OF_SEVENTH};
+pub use certainty::SURE;
 pub use chord::{Chord, Quality};
 pub use keys::LocalKey;
 
