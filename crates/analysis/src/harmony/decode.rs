@@ -8,7 +8,7 @@
 use super::SURE;
 use super::chord::{Chord, Quality};
 use super::keys::{LocalKey, strangeness};
-use super::segments::{Cost, QUARTER, Slice};
+use super::segments::{Cost, QUARTER, Slice, Tone};
 
 /// How many notes of a sonority must be of the chord for it to be sure: two fit several chords.
 const ENOUGH: usize = 3;
@@ -146,12 +146,10 @@ impl<'a> Search<'a> {
         let all = || self.states.iter().zip(through);
         let (&chord, &own) = all().min_by_key(|(_, cost)| **cost)?;
         let none = through.last().copied().unwrap_or(0);
-        let sounding = slice.tones.iter();
-        let of_it = sounding.filter(|t| chord.quality.tones().contains(&(t.place - chord.root)));
-        let most = if of_it.count() < ENOUGH {
-            SURE - 1
-        } else {
+        let most = if is_heard(slice, chord) {
             QUARTER * 100
+        } else {
+            SURE - 1
         };
         let margin = |differs: &dyn Fn(Chord) -> bool| {
             let others = all().filter(|(state, _)| differs(**state));
@@ -168,6 +166,22 @@ impl<'a> Search<'a> {
             seventh_margin: margin(&|other| other.quality.has_seventh() != quality.has_seventh()),
         })
     }
+}
+
+/// Three voices sound notes of the chord, and its root and third are among those or meant by
+/// others: an open fifth has no quality, whatever the key would make of it.
+fn is_heard(slice: &Slice, chord: Chord) -> bool {
+    let tones = chord.quality.tones();
+    let index = |place: i32| tones.iter().position(|t| *t == place - chord.root);
+    let own = |tone: &Tone| index(tone.place);
+    let meant = |tone: &Tone| own(tone).or_else(|| tone.stands_for.and_then(index));
+    let has = |which: usize| slice.tones.iter().any(|tone| meant(tone) == Some(which));
+    let count = slice
+        .tones
+        .iter()
+        .filter(|tone| own(tone).is_some())
+        .count();
+    count >= ENOUGH && has(0) && has(1)
 }
 
 fn sum(a: &[Cost], b: &[Cost]) -> Row {

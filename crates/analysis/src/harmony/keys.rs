@@ -47,6 +47,9 @@ const CADENCE: Cost = 30;
 const CADENCE_AT_FERMATA: Cost = 100;
 const TURN: Cost = 5;
 
+/// How far among the fifths a chord of a key lies from its tonic: the leading note's lies furthest.
+const REACH: i32 = 5;
+
 /// A note that is none of the key, and the raised third of minor, in hundredths of its length.
 const FOREIGN: Cost = 40;
 const RAISED_THIRD: Cost = 10;
@@ -181,7 +184,7 @@ pub(super) fn keys(
             }
         })
         .collect();
-    let states: Vec<State> = (low - 1..=high + 1)
+    let states: Vec<State> = (low - REACH..=high + REACH)
         .flat_map(|tonic| [false, true].map(|minor| LocalKey { tonic, minor }))
         .map(|key| State {
             key,
