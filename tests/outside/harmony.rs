@@ -1,6 +1,6 @@
 //! Chords and keys inferred, beside the analyses of human readers.
 
-use std::collections::BTreeSet;
+use std::collections::{BTreeMap, BTreeSet};
 use std::fmt::Write as _;
 use std::path::Path;
 
@@ -278,14 +278,40 @@ fn the_inferred_harmony_agrees_with_the_analysts() {
         let (n, of) = counted(&places, says, &|p| sure(&p.segment));
         assert!(n * 50 >= of * 49, "{name}: {n} of {of}");
     }
+    let lines = places
+        .iter()
+        .filter(|place| place.segment.is_sure() && !place.triad)
+        .map(|place| {
+            let ours = place.segment.chord.name();
+            let (piece, bar, words) = (&place.piece, place.bar, &place.words);
+            format!("- {piece}, bar {bar}, {words}, ours {ours}, ")
+        });
+    let verdicts = read_places(lines);
+    println!("outside: surer chords that are not the analyst's, read: {verdicts:?}");
     if std::fs::read_to_string(&path).ok().as_deref() != Some(&text) {
         std::fs::write(&path, &text).unwrap();
         panic!("{} was stale; it is rewritten", path.display());
     }
 }
 
+/// How the disagreements we are sure of were judged in the music: each must stand among the places
+/// read.
+pub(crate) fn read_places(lines: impl Iterator<Item = String>) -> BTreeMap<&'static str, usize> {
+    const VERDICTS: [&str; 3] = ["ours right", "both arguable", "theirs right"];
+    let path = Path::new(env!("CARGO_MANIFEST_DIR")).join("tests/outside/places/harmony.md");
+    let page = std::fs::read_to_string(path).unwrap();
+    let mut counts = BTreeMap::new();
+    for line in lines {
+        let read = page.lines().find_map(|read| read.strip_prefix(&line));
+        let verdict = read.and_then(|rest| VERDICTS.into_iter().find(|v| rest.starts_with(v)));
+        let verdict = verdict.unwrap_or_else(|| panic!("not read yet: {line}"));
+        *counts.entry(verdict).or_default() += 1;
+    }
+    counts
+}
+
 /// Roots, chords and keys that are the analysts'.
-const LEAST: [(Says, usize); 3] = [(|p| p.root, 2290), (|p| p.chord, 2270), (|p| p.key, 2165)];
+const LEAST: [(Says, usize); 3] = [(|p| p.root, 2296), (|p| p.chord, 2278), (|p| p.key, 2172)];
 
 #[test]
 fn transposed_music_has_the_same_harmony() {
