@@ -146,7 +146,7 @@ fn roots(here: &[Figure], next: Option<&[Figure]>, sounds: &dyn Fn(i32) -> bool)
         return if has(here, 6) { vec![5] } else { vec![0] };
     }
     if has(here, 4) {
-        let resolves = next.is_some_and(|next| is_third(next));
+        let resolves = next.is_some_and(is_third);
         return match (has(here, 6), resolves) {
             // A cadential six-four is read both ways.
             (true, true) => vec![3, 0],

@@ -51,7 +51,9 @@ fn cost(slice: &Slice, chord: Chord) -> Cost {
             *slot = true;
         }
     }
-    let missing = [130, 70, 10, 240];
+    // Two voices leave a root out more easily than four.
+    let root = if slice.tones.len() < ENOUGH { 70 } else { 130 };
+    let missing = [root, 70, 10, 240];
     for (index, weight) in missing.iter().enumerate().take(tones.len()) {
         if present.get(index) == Some(&false) {
             total += slice.length * weight / 100;

@@ -278,7 +278,7 @@ fn chord(page: &mut Page, sounding: Sounding<'_>) {
         return;
     };
     let mut line = format!("Chord: {}", page.strong(&segment.chord.name()));
-    if let Some(key) = segment.key {
+    if let Some(key) = segment.key.filter(|_| segment.key_is_likely()) {
         let _ = write!(line, ", in {}", key.name());
     }
     if !segment.is_sure() {
