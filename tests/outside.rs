@@ -9,6 +9,8 @@
 mod beats;
 #[path = "outside/consecutives.rs"]
 mod consecutives;
+#[path = "outside/figured.rs"]
+mod figured;
 #[path = "outside/figures.rs"]
 mod figures;
 #[path = "outside/harmony.rs"]

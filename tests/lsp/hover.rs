@@ -42,7 +42,7 @@ Source: J. J. Fux, Gradus ad Parnassum (1725), Book II, the four rules of motion
 
 Other pairs: alto and bass parallel.
 
-Chord: **A minor**; key: C major."
+Chord: **A minor**."
     );
     let answer = document.hover(&mut client, &document.at("E -"));
     let line = document.at("E -")["line"].clone();
@@ -65,7 +65,7 @@ fn the_first_note_has_no_motion() {
     let text = document.hover_text(&mut client, "G3");
     assert_eq!(
         text,
-        "**G3** · bass · bar 1, beat 1\n\n- soprano D5: perfect twelfth above\n- alto B4: major tenth above\n\nChord: **G major**; key: C major."
+        "**G3** · bass · bar 1, beat 1\n\n- soprano D5: perfect twelfth above\n- alto B4: major tenth above\n\nChord: **G major**."
     );
     client.goodbye();
 }

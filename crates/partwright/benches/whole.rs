@@ -91,7 +91,9 @@ fn harmony_again(bencher: Bencher<'_, '_>, bars: usize) {
     let mut typed = text.clone();
     typed.replace_range(place..=place, "A");
     let after = checked.again(&typed, &Wishes::default());
-    let harmony = checked.analysis.harmony(&checked.reading.score, &checked.texture);
+    let harmony = checked
+        .analysis
+        .harmony(&checked.reading.score, &checked.texture);
     let (score, texture) = (&after.reading.score, &after.texture);
     let dissonances = after.analysis.dissonances();
     bencher

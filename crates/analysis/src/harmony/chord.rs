@@ -24,11 +24,19 @@ pub enum Quality {
     HalfDiminishedSeventh,
     /// Diminished seventh chord.
     DiminishedSeventh,
+    /// Augmented sixth, Italian: over the raised fourth degree, here its root, a diminished third
+    /// and a diminished fifth. In C minor F#, Ab, C; Ab is the bass.
+    ItalianSixth,
+    /// Augmented sixth, German: the Italian with a diminished seventh. In C minor F#, Ab, C, Eb.
+    GermanSixth,
+    /// Augmented sixth, French: over the second degree a major third, a diminished fifth and a
+    /// minor seventh. In C minor D, F#, Ab, C.
+    FrenchSixth,
 }
 
 impl Quality {
     /// Every quality, triads first.
-    pub const ALL: [Quality; 9] = [
+    pub const ALL: [Quality; 12] = [
         Quality::Major,
         Quality::Minor,
         Quality::Diminished,
@@ -38,6 +46,9 @@ impl Quality {
         Quality::MinorSeventh,
         Quality::HalfDiminishedSeventh,
         Quality::DiminishedSeventh,
+        Quality::ItalianSixth,
+        Quality::GermanSixth,
+        Quality::FrenchSixth,
     ];
 
     /// Its notes as places among the fifths from the root: root, third, fifth, seventh.
@@ -53,16 +64,35 @@ impl Quality {
             Quality::MinorSeventh => &[0, -3, 1, -2],
             Quality::HalfDiminishedSeventh => &[0, -3, -6, -2],
             Quality::DiminishedSeventh => &[0, -3, -6, -9],
+            Quality::ItalianSixth => &[0, -10, -6],
+            Quality::GermanSixth => &[0, -10, -6, -9],
+            Quality::FrenchSixth => &[0, 4, -6, -2],
         }
     }
 
-    /// The triad in it.
+    /// It has a seventh. (Over the root; the French and the German sixth have one that way.)
+    #[must_use]
+    pub const fn has_seventh(self) -> bool {
+        self.tones().len() > 3
+    }
+
+    /// An augmented sixth: the root's third or fifth lies flat, as the lower note of that sixth.
+    #[must_use]
+    pub const fn is_augmented_sixth(self) -> bool {
+        matches!(
+            self,
+            Quality::ItalianSixth | Quality::GermanSixth | Quality::FrenchSixth
+        )
+    }
+
+    /// The triad in it: what stands under the seventh. The French sixth has none but itself.
     #[must_use]
     pub const fn triad(self) -> Quality {
         match self {
             Quality::DominantSeventh | Quality::MajorSeventh => Quality::Major,
             Quality::MinorSeventh => Quality::Minor,
             Quality::HalfDiminishedSeventh | Quality::DiminishedSeventh => Quality::Diminished,
+            Quality::GermanSixth => Quality::ItalianSixth,
             triad => triad,
         }
     }
@@ -80,6 +110,9 @@ impl Quality {
             Quality::MinorSeventh => "minor seventh",
             Quality::HalfDiminishedSeventh => "half-diminished seventh",
             Quality::DiminishedSeventh => "diminished seventh",
+            Quality::ItalianSixth => "Italian sixth",
+            Quality::GermanSixth => "German sixth",
+            Quality::FrenchSixth => "French sixth",
         }
     }
 }
@@ -94,10 +127,20 @@ pub struct Chord {
 }
 
 impl Chord {
-    /// `G dominant seventh`, `A minor`.
+    /// `G dominant seventh`, `A minor`; an augmented sixth by its usual bass: `Ab German sixth`.
     #[must_use]
     pub fn name(self) -> String {
-        format!("{} {}", named(self.root), self.quality.name())
+        format!("{} {}", named(self.called_by()), self.quality.name())
+    }
+
+    /// The place of the note it is called by: the root, or the usual bass of an augmented sixth.
+    pub(super) const fn called_by(self) -> i32 {
+        let under = match self.quality {
+            Quality::ItalianSixth | Quality::GermanSixth => -10,
+            Quality::FrenchSixth => -6,
+            _ => 0,
+        };
+        self.root + under
     }
 
     /// Which of its notes a pitch is: 0 the root, 1 the third, 2 the fifth, 3 the seventh.

@@ -2,31 +2,58 @@
 //!
 //! Dynamic programming (Viterbi): a state a chord, a column a sonority. Both directions are kept,
 //! so that for each sonority the cost of the best way through every chord is known, and with it how
-//! much dearer the best other root is.
+//! much dearer the best other answer is. One more state is no chord at all: where that is nearly
+//! as cheap, no answer is sure.
 
+use super::SURE;
 use super::chord::{Chord, Quality};
-use super::segments::{Cost, QUARTER, Slice};
+use super::keys::{LocalKey, strangeness};
+use super::segments::{Cost, QUARTER, Slice, Tone};
+
+/// How many notes of a sonority must be of the chord for it to be sure: two fit several chords.
+const ENOUGH: usize = 3;
+
+/// What a sonority costs under no chord, in hundredths of its length.
+const NO_CHORD: Cost = 250;
+
+/// How much of a chord's strangeness in the key counts against it, in hundredths.
+const PULL: Cost = 30;
+
+/// The chord of one sonority.
+#[derive(Clone, Copy, Debug)]
+pub(super) struct Found {
+    pub chord: Chord,
+    /// What the best chord on another root costs more.
+    pub root_margin: Cost,
+    /// What the best chord of another root or triad costs more.
+    pub margin: Cost,
+    /// What the best chord costs more that has a seventh where this has none, or the reverse.
+    pub seventh_margin: Cost,
+}
 
 /// What a chord lacks or leaves out in a sonority.
 fn cost(slice: &Slice, chord: Chord) -> Cost {
     let tones = chord.quality.tones();
+    let index = |place: i32| tones.iter().position(|t| *t == place - chord.root);
     let mut present = [false; 4];
     let mut total = 0;
     for tone in &slice.tones {
-        let place = tone.place - chord.root;
-        match tones.iter().position(|t| *t == place) {
-            Some(index) => {
-                if let Some(slot) = present.get_mut(index) {
-                    *slot = true;
-                }
-                if tone.is_bass {
-                    total += slice.length * [0, 5, 45, 20].get(index).copied().unwrap_or(0) / 100;
-                }
+        let own = index(tone.place);
+        match own {
+            Some(own) if tone.is_bass => {
+                total += slice.length * [0, 5, 45, 20].get(own).copied().unwrap_or(0) / 100;
             }
+            Some(_) => {}
             None => total += tone.aside,
         }
+        let meant = own.or_else(|| tone.stands_for.and_then(index));
+        if let Some(slot) = meant.and_then(|meant| present.get_mut(meant)) {
+            *slot = true;
+        }
     }
-    let missing = [110, 70, 12, 120];
+    // Two voices leave a root out more easily than four.
+    let root = if slice.tones.len() < ENOUGH { 70 } else { 130 };
+    let missing = [root, 70, 10, 240];
     for (index, weight) in missing.iter().enumerate().take(tones.len()) {
         if present.get(index) == Some(&false) {
             total += slice.length * weight / 100;
@@ -34,82 +61,145 @@ fn cost(slice: &Slice, chord: Chord) -> Cost {
     }
     let prior = match chord.quality {
         Quality::Major | Quality::Minor => 0,
-        Quality::DominantSeventh => 8,
-        Quality::MinorSeventh => 14,
-        Quality::Diminished => 20,
-        Quality::HalfDiminishedSeventh | Quality::MajorSeventh => 22,
+        Quality::DominantSeventh => 10,
+        Quality::Diminished | Quality::MajorSeventh => 20,
         Quality::DiminishedSeventh => 25,
+        Quality::HalfDiminishedSeventh => 45,
+        Quality::ItalianSixth | Quality::GermanSixth | Quality::FrenchSixth => 45,
+        Quality::MinorSeventh => 50,
         Quality::Augmented => 60,
     };
     total + slice.length * prior / 100
 }
 
-/// The chord of each sonority, with what the best other root would cost more.
-pub(super) fn chords(slices: &[Slice]) -> Vec<Option<(Chord, Cost)>> {
-    let states = states(slices);
-    if states.is_empty() {
-        return vec![None; slices.len()];
-    }
-    let n = states.len();
-    let local: Vec<Vec<Cost>> = slices
-        .iter()
-        .map(|slice| {
-            if slice.tones.is_empty() {
-                vec![0; n]
-            } else {
-                states.iter().map(|chord| cost(slice, *chord)).collect()
-            }
-        })
-        .collect();
-    // The cost of the best way up to each column, that column counted.
-    let mut forward: Vec<Vec<Cost>> = Vec::with_capacity(slices.len());
-    for (column, slice) in local.iter().zip(slices) {
-        let row = match forward.last() {
-            None => column.clone(),
-            Some(before) => step(before, slice.change, column),
-        };
-        forward.push(row);
-    }
-    let mut out = vec![None; slices.len()];
-    let mut behind: Vec<Cost> = vec![0; n];
-    for (k, slice) in slices.iter().enumerate().rev() {
-        let Some(ahead) = forward.get(k) else {
-            continue;
-        };
-        let through: Vec<Cost> = ahead.iter().zip(&behind).map(|(a, b)| a + b).collect();
-        if !slice.tones.is_empty() {
-            let best = (0..n).min_by_key(|&s| through.get(s));
-            if let Some(chord) = best.and_then(|s| states.get(s)) {
-                let own = best.and_then(|s| through.get(s)).copied().unwrap_or(0);
-                let others = states.iter().zip(&through);
-                let other = others
-                    .filter(|(state, _)| state.root != chord.root)
-                    .map(|(_, cost)| *cost)
-                    .min();
-                let margin = other.map_or(QUARTER * 100, |other| other - own);
-                if let Some(slot) = out.get_mut(k) {
-                    *slot = Some((*chord, margin));
-                }
-            }
-        }
-        // What lies behind the column before this one: this column's own cost counted.
-        let column = local.get(k).map_or(&[][..], |c| c);
-        let with: Vec<Cost> = column.iter().zip(&behind).map(|(a, b)| a + b).collect();
-        let cheapest = with.iter().min().copied().unwrap_or(0);
-        behind = with
-            .iter()
-            .map(|stay| (*stay).min(cheapest + slice.change))
-            .collect();
-    }
-    out
+/// A row of costs: one a chord, and at the end that of no chord.
+type Row = Vec<Cost>;
+
+/// The chords of a run of sonorities, and what each would cost in each by itself.
+pub(super) struct Search<'a> {
+    slices: &'a [Slice],
+    states: Vec<Chord>,
+    local: Vec<Row>,
 }
 
-fn step(before: &[Cost], change: Cost, column: &[Cost]) -> Vec<Cost> {
-    let cheapest = before.iter().min().copied().unwrap_or(0);
-    before
+impl<'a> Search<'a> {
+    pub(super) fn new(slices: &'a [Slice]) -> Search<'a> {
+        let states = states(slices);
+        let row = |slice: &Slice| -> Row {
+            if slice.tones.is_empty() {
+                return vec![0; states.len() + 1];
+            }
+            let chords = states.iter().map(|chord| cost(slice, *chord));
+            chords.chain([slice.length * NO_CHORD / 100]).collect()
+        };
+        let local = slices.iter().map(row).collect();
+        Search {
+            slices,
+            states,
+            local,
+        }
+    }
+
+    /// The chord of each sonority, in the key of each where one is known.
+    pub(super) fn chords(&self, keys: &[Option<LocalKey>]) -> Vec<Option<Found>> {
+        if self.states.is_empty() {
+            return vec![None; self.slices.len()];
+        }
+        let local: Vec<Row> = (0..self.slices.len())
+            .map(|k| self.in_key(k, keys.get(k).copied().flatten()))
+            .collect();
+        // The cost of the best way up to each column, that column counted.
+        let mut forward: Vec<Row> = Vec::with_capacity(local.len());
+        for (column, slice) in local.iter().zip(self.slices) {
+            let row = match forward.last() {
+                None => column.clone(),
+                Some(before) => sum(&step(before, slice), column),
+            };
+            forward.push(row);
+        }
+        let mut out = vec![None; local.len()];
+        // The cost of the best way from each column on, that column not counted.
+        let mut behind: Row = vec![0; self.states.len() + 1];
+        let columns = forward.iter().zip(&local).zip(self.slices).zip(&mut out);
+        for (((ahead, column), slice), slot) in columns.rev() {
+            if !slice.tones.is_empty() {
+                *slot = self.found(slice, &sum(ahead, &behind));
+            }
+            behind = step(&sum(column, &behind), slice);
+        }
+        out
+    }
+
+    fn in_key(&self, k: usize, key: Option<LocalKey>) -> Row {
+        let mut row = self.local.get(k).cloned().unwrap_or_default();
+        let (Some(key), Some(slice)) = (key, self.slices.get(k)) else {
+            return row;
+        };
+        if !slice.tones.is_empty() {
+            for (cost, chord) in row.iter_mut().zip(&self.states) {
+                *cost += strangeness(*chord, key) * slice.length / 100 * PULL / 100;
+            }
+        }
+        row
+    }
+
+    /// The best chord of a sonority by what the best way through each costs.
+    fn found(&self, slice: &Slice, through: &[Cost]) -> Option<Found> {
+        let all = || self.states.iter().zip(through);
+        let (&chord, &own) = all().min_by_key(|(_, cost)| **cost)?;
+        let none = through.last().copied().unwrap_or(0);
+        let most = if is_heard(slice, chord) {
+            QUARTER * 100
+        } else {
+            SURE - 1
+        };
+        let margin = |differs: &dyn Fn(Chord) -> bool| {
+            let others = all().filter(|(state, _)| differs(**state));
+            let other = others.map(|(_, cost)| *cost).min();
+            (other.unwrap_or(none).min(none) - own).clamp(0, most)
+        };
+        let quality = chord.quality;
+        Some(Found {
+            chord,
+            root_margin: margin(&|other| other.root != chord.root),
+            margin: margin(&|other| {
+                other.root != chord.root || other.quality.triad() != quality.triad()
+            }),
+            seventh_margin: margin(&|other| other.quality.has_seventh() != quality.has_seventh()),
+        })
+    }
+}
+
+/// Three voices sound notes of the chord, and its root and third are among those or meant by
+/// others: an open fifth has no quality, whatever the key would make of it.
+fn is_heard(slice: &Slice, chord: Chord) -> bool {
+    let tones = chord.quality.tones();
+    let index = |place: i32| tones.iter().position(|t| *t == place - chord.root);
+    let own = |tone: &Tone| index(tone.place);
+    let meant = |tone: &Tone| own(tone).or_else(|| tone.stands_for.and_then(index));
+    let has = |which: usize| slice.tones.iter().any(|tone| meant(tone) == Some(which));
+    let count = slice
+        .tones
         .iter()
-        .zip(column)
-        .map(|(stay, own)| (*stay).min(cheapest + change) + own)
+        .filter(|tone| own(tone).is_some())
+        .count();
+    count >= ENOUGH && has(0) && has(1)
+}
+
+fn sum(a: &[Cost], b: &[Cost]) -> Row {
+    a.iter().zip(b).map(|(a, b)| a + b).collect()
+}
+
+/// The least of staying, changing what stands over the root, and changing the chord.
+fn step(before: &[Cost], slice: &Slice) -> Row {
+    let least = |of: &[Cost]| of.iter().min().copied().unwrap_or(0);
+    let change = least(before) + slice.change;
+    let roots = before.chunks(Quality::ALL.len());
+    roots
+        .flat_map(|root| {
+            let most = change.min(least(root) + slice.same_root);
+            root.iter().map(move |stay| (*stay).min(most))
+        })
         .collect()
 }
 

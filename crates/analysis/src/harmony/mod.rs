@@ -3,6 +3,7 @@
 //! Nothing here is taken for truth: each answer says how much dearer the next best would be, and
 //! rules stay silent where that is little.
 
+mod certainty;
 mod chord;
 mod decode;
 mod keys;
@@ -15,9 +16,13 @@ use std::sync::Arc;
 use partwright_score::{Score, Texture};
 
 use crate::figures::Dissonance;
+
+use decode::{Found, Search};
+use keys::Home;
 use segments::Slice;
 use stretches::Stretch;
 
+pub use certainty::SURE;
 pub use chord::{Chord, Quality};
 pub use keys::LocalKey;
 
@@ -31,42 +36,18 @@ pub struct Segment {
     /// The chord.
     pub chord: Chord,
     /// Hundredths of a quarter note by which the best chord on another root is dearer.
+    pub root_margin: i64,
+    /// The same of the best chord on another root or with another triad.
     pub margin: i64,
+    /// The same of the best chord that has a seventh where this has none, or the reverse.
+    pub seventh_margin: i64,
     /// The local key.
     pub key: Option<LocalKey>,
-    /// Its length in hundredths of a quarter note.
+    /// Hundredths of a quarter note by which the best other key is dearer.
+    pub key_margin: i64,
+    /// Its length in hundredths of a quarter note, long sonorities cut short.
     weight: i64,
 }
-
-impl Segment {
-    /// Root and triad are certain enough to act on.
-    #[must_use]
-    pub const fn is_sure(&self) -> bool {
-        self.margin >= SURE
-    }
-
-    /// Not certain enough to act on, yet worth telling to whoever asks.
-    #[must_use]
-    pub const fn is_likely(&self) -> bool {
-        self.margin * 2 >= SURE
-    }
-
-    /// That the chord has a seventh, or none, is certain enough to act on.
-    #[must_use]
-    pub const fn seventh_is_sure(&self) -> bool {
-        self.is_sure()
-    }
-
-    /// The local key is certain enough to act on.
-    #[must_use]
-    pub const fn key_is_sure(&self) -> bool {
-        self.is_sure() && self.key.is_some()
-    }
-}
-
-/// From this margin on nineteen roots in twenty are what an analyst says; below the half of it a
-/// third is not, and nothing is said.
-pub const SURE: i64 = 100;
 
 /// How many sonorities to either side settle a chord and its key: what is further off changed
 /// nothing in 2,448 places of the chorales.
@@ -75,9 +56,9 @@ pub const SURROUNDINGS: usize = 64;
 /// What one sonority is read as.
 #[derive(Clone, Copy, Debug)]
 struct Read {
-    chord: Chord,
-    margin: i64,
+    found: Found,
     key: Option<LocalKey>,
+    key_margin: i64,
     length: i64,
 }
 
@@ -140,28 +121,66 @@ impl Harmony {
     }
 }
 
-/// Runs of one chord and key.
+/// Runs of one chord.
 fn gather(reads: impl Iterator<Item = Option<Read>>) -> Vec<Segment> {
     let mut list: Vec<Segment> = Vec::new();
     for (k, read) in reads.enumerate() {
         let Some(read) = read else { continue };
+        let found = read.found;
         match list.last_mut() {
-            Some(last) if last.end == k && last.chord == read.chord => {
+            Some(last) if last.end == k && last.chord == found.chord => {
                 last.end = k + 1;
                 last.weight += read.length;
-                last.margin = last.margin.max(read.margin);
+                last.root_margin = last.root_margin.max(found.root_margin);
+                last.margin = last.margin.max(found.margin);
+                last.seventh_margin = last.seventh_margin.max(found.seventh_margin);
             }
             _ => list.push(Segment {
                 first: k,
                 end: k + 1,
-                chord: read.chord,
-                margin: read.margin,
+                chord: found.chord,
+                root_margin: found.root_margin,
+                margin: found.margin,
+                seventh_margin: found.seventh_margin,
                 key: read.key,
+                key_margin: read.key_margin,
                 weight: read.length,
             }),
         }
     }
     list
+}
+
+/// Reads a run of sonorities by itself: the chords, their keys, and both again, now that a chord
+/// can be asked whether it is strange in its key.
+fn read(slices: &[Slice], home: Option<Home>) -> Vec<Option<Read>> {
+    let search = Search::new(slices);
+    let first = in_keys(search.chords(&[]), slices, home);
+    let keys: Vec<Option<LocalKey>> = first.iter().map(|read| (*read)?.key).collect();
+    in_keys(search.chords(&keys), slices, home)
+}
+
+fn in_keys(found: Vec<Option<Found>>, slices: &[Slice], home: Option<Home>) -> Vec<Option<Read>> {
+    let both = found.into_iter().zip(slices);
+    let mut reads: Vec<Option<Read>> = both
+        .map(|(found, slice)| {
+            Some(Read {
+                found: found?,
+                key: None,
+                key_margin: 0,
+                length: slice.length,
+            })
+        })
+        .collect();
+    let list = gather(reads.iter().copied());
+    for (segment, (key, margin)) in list.iter().zip(keys::keys(home, &list, slices)) {
+        let own = segment.first..segment.end;
+        for read in reads.get_mut(own).unwrap_or_default().iter_mut().flatten() {
+            read.key = Some(key);
+            read.key_margin = margin;
+        }
+    }
+    reads
 }
 
 /// Reads a score in one go, however long: what [`Harmony`] must agree with.
@@ -170,28 +189,4 @@ pub fn in_one_go(score: &Score, texture: &Texture, dissonances: &[Dissonance]) -
     let all = 0..texture.sonorities().len();
     let slices = segments::slices(score, texture, dissonances, all);
     gather(read(&slices, keys::home(score)).into_iter())
-}
-
-/// Reads a run of sonorities by itself.
-fn read(slices: &[Slice], home: Option<LocalKey>) -> Vec<Option<Read>> {
-    let found = decode::chords(slices).into_iter().zip(slices);
-    let mut reads: Vec<Option<Read>> = found
-        .map(|(found, slice)| {
-            let (chord, margin) = found?;
-            Some(Read {
-                chord,
-                margin,
-                key: None,
-                length: slice.length,
-            })
-        })
-        .collect();
-    let list = gather(reads.iter().copied());
-    for (segment, key) in list.iter().zip(keys::keys(home, &list)) {
-        let own = segment.first..segment.end;
-        for read in reads.get_mut(own).unwrap_or_default().iter_mut().flatten() {
-            read.key = key;
-        }
-    }
-    reads
 }

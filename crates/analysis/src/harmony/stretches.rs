@@ -10,7 +10,7 @@ use std::sync::Arc;
 
 use partwright_score::{Score, Texture};
 
-use super::keys::LocalKey;
+use super::keys::Home;
 use super::segments::{Slice, slices};
 use super::{Read, SURROUNDINGS, read};
 use crate::figures::Dissonance;
@@ -35,7 +35,7 @@ pub(super) fn stretches(
     score: &Score,
     texture: &Texture,
     dissonances: &[Dissonance],
-    home: Option<LocalKey>,
+    home: Option<Home>,
     earlier: &[Arc<Stretch>],
 ) -> Vec<Arc<Stretch>> {
     let known: HashMap<(u64, u64), &Arc<Stretch>> = earlier
@@ -83,7 +83,7 @@ fn bounds(score: &Score, texture: &Texture) -> Vec<Range<usize>> {
 }
 
 /// Two hashes of everything the reading depends on.
-fn mark(around: &[Slice], before: usize, length: usize, home: Option<LocalKey>) -> (u64, u64) {
+fn mark(around: &[Slice], before: usize, length: usize, home: Option<Home>) -> (u64, u64) {
     let one = |salt: u8| {
         let mut hasher = DefaultHasher::new();
         (salt, before, length, home).hash(&mut hasher);

@@ -17,10 +17,13 @@ impl Chord {
             Quality::MinorSeventh => "m7",
             Quality::HalfDiminishedSeventh => "m7b5",
             Quality::DiminishedSeventh => "dim7",
+            Quality::ItalianSixth => " It6",
+            Quality::GermanSixth => " Ger6",
+            Quality::FrenchSixth => " Fr6",
         };
-        let under = bass.filter(|&bass| bass != self.root);
+        let under = bass.filter(|&bass| bass != self.called_by());
         let under = under.map_or(String::new(), |bass| format!("/{}", named(bass)));
-        format!("{}{quality}{under}", named(self.root))
+        format!("{}{quality}{under}", named(self.called_by()))
     }
 }
 
@@ -36,6 +39,7 @@ mod tests {
             (chord(3, Quality::MinorSeventh), Some(4), "Am7/E"),
             (chord(6, Quality::HalfDiminishedSeventh), None, "F#m7b5"),
             (chord(-2, Quality::MajorSeventh), Some(-2), "Bbmaj7"),
+            (chord(6, Quality::GermanSixth), Some(-4), "Ab Ger6"),
         ] {
             assert_eq!(chord.symbol(bass), symbol);
         }

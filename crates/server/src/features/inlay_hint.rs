@@ -112,6 +112,7 @@ fn chords(system: &System, checked: &Checked, found: &mut Vec<Hint>) {
         let doubt = if segment.is_sure() { "" } else { "?" };
         let key = segment
             .key
+            .filter(|_| segment.key_is_likely())
             .map_or(String::new(), |key| format!(", in {}", key.name()));
         found.push(Hint {
             at: span.end as usize,

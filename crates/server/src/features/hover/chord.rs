@@ -18,7 +18,7 @@ pub(super) fn chord(page: &mut Page, sounding: Sounding<'_>) {
     if !segment.is_sure() {
         line.push_str(", likely but not certain");
     }
-    if let Some(key) = segment.key {
+    if let Some(key) = segment.key.filter(|_| segment.key_is_likely()) {
         let doubt = if segment.key_is_sure() {
             ""
         } else {
