@@ -79,6 +79,8 @@ type Row = Vec<Cost>;
 pub(super) struct Search<'a> {
     slices: &'a [Slice],
     states: Vec<Chord>,
+    /// How many states each root has, in their order.
+    groups: Vec<usize>,
     local: Vec<Row>,
 }
 
@@ -93,9 +95,12 @@ impl<'a> Search<'a> {
             chords.chain([slice.length * NO_CHORD / 100]).collect()
         };
         let local = slices.iter().map(row).collect();
+        let groups = states.chunk_by(|a, b| a.root == b.root);
+        let groups = groups.map(<[Chord]>::len).collect();
         Search {
             slices,
             states,
+            groups,
             local,
         }
     }
@@ -113,7 +118,7 @@ impl<'a> Search<'a> {
         for (column, slice) in local.iter().zip(self.slices) {
             let row = match forward.last() {
                 None => column.clone(),
-                Some(before) => sum(&step(before, slice), column),
+                Some(before) => sum(&step(before, slice, &self.groups), column),
             };
             forward.push(row);
         }
@@ -125,7 +130,7 @@ impl<'a> Search<'a> {
             if !slice.tones.is_empty() {
                 *slot = self.found(slice, &sum(ahead, &behind));
             }
-            behind = step(&sum(column, &behind), slice);
+            behind = step(&sum(column, &behind), slice, &self.groups);
         }
         out
     }
@@ -190,17 +195,21 @@ fn sum(a: &[Cost], b: &[Cost]) -> Row {
     a.iter().zip(b).map(|(a, b)| a + b).collect()
 }
 
-/// The least of staying, changing what stands over the root, and changing the chord.
-fn step(before: &[Cost], slice: &Slice) -> Row {
+/// The least of staying, changing what stands over the root, and changing the chord; `groups` are
+/// the numbers of chords on each root.
+fn step(before: &[Cost], slice: &Slice, groups: &[usize]) -> Row {
     let least = |of: &[Cost]| of.iter().min().copied().unwrap_or(0);
     let change = least(before) + slice.change;
-    let roots = before.chunks(Quality::ALL.len());
-    roots
-        .flat_map(|root| {
-            let most = change.min(least(root) + slice.same_root);
-            root.iter().map(move |stay| (*stay).min(most))
-        })
-        .collect()
+    let mut row = Row::with_capacity(before.len());
+    let mut rest = before;
+    for &length in groups {
+        let (root, others) = rest.split_at(length.min(rest.len()));
+        let most = change.min(least(root) + slice.same_root);
+        row.extend(root.iter().map(|stay| (*stay).min(most)));
+        rest = others;
+    }
+    row.extend(rest.iter().map(|stay| (*stay).min(change)));
+    row
 }
 
 /// Every chord on a root that sounds somewhere, or could stand between two that do.
