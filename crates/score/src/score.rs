@@ -2,9 +2,7 @@
 
 use std::borrow::Cow;
 
-use crate::{
-    Bar, BarPlace, Key, Metre, Pitch, StatedChord, StatedFigures, Time, Voice, ZERO,
-};
+use crate::{Bar, BarPlace, Key, Metre, Pitch, StatedChord, StatedFigures, Time, Voice, ZERO};
 
 /// What a voice does for a while.
 #[derive(Clone, Copy, Debug, PartialEq, Eq, Hash)]
