@@ -24,7 +24,7 @@ pub use style::{Number, Override, STYLES, Setting, Strictness, Style};
 pub use view::{
     Crossing, Direct, Discord, HighPoint, LastMove, Level, Line, LineMove, Minim, MinorDegree,
     Numbers, Over, PairMove, ParallelRun, Passage, Passing, Piece, Quick, Run, SixFive, Sounding,
-    Stretch, Stroke, Succession, Tessitura, Together, Value,
+    StatedHarmony, Stranger, Stretch, Stroke, Succession, Tessitura, Together, Value,
 };
 
 /// What every rule file needs.
@@ -41,6 +41,6 @@ pub mod prelude {
     pub use crate::style::{Setting, Style, allow, fault, remark, weakness};
     pub use crate::view::{
         Direct, Discord, LastMove, Level, Line, LineMove, MinorDegree, Numbers, Over, PairMove,
-        ParallelRun, Passage, Piece, Sounding, Stroke, Succession,
+        ParallelRun, Passage, Piece, Sounding, StatedHarmony, Stroke, Succession,
     };
 }

@@ -6,6 +6,7 @@
 
 use super::chord::{Chord, Quality};
 use super::segments::{Cost, QUARTER, Slice};
+use super::stated::Said;
 
 /// What a chord lacks or leaves out in a sonority.
 fn cost(slice: &Slice, chord: Chord) -> Cost {
@@ -45,20 +46,22 @@ fn cost(slice: &Slice, chord: Chord) -> Cost {
 }
 
 /// The chord of each sonority, with what the best other root would cost more.
-pub(super) fn chords(slices: &[Slice]) -> Vec<Option<(Chord, Cost)>> {
-    let states = states(slices);
+pub(super) fn chords(slices: &[Slice], said: &Said) -> Vec<Option<(Chord, Cost)>> {
+    let states = said.among(states(slices));
     if states.is_empty() {
         return vec![None; slices.len()];
     }
     let n = states.len();
     let local: Vec<Vec<Cost>> = slices
         .iter()
-        .map(|slice| {
+        .enumerate()
+        .map(|(k, slice)| {
             if slice.tones.is_empty() {
-                vec![0; n]
-            } else {
-                states.iter().map(|chord| cost(slice, *chord)).collect()
+                return vec![0; n];
             }
+            let mut costs: Vec<Cost> = states.iter().map(|chord| cost(slice, *chord)).collect();
+            said.bind(k, &states, &mut costs);
+            costs
         })
         .collect();
     // The cost of the best way up to each column, that column counted.

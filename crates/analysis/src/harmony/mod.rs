@@ -1,12 +1,13 @@
 //! Chords and keys, inferred from the notes.
 //!
 //! Nothing here is taken for truth: each answer says how much dearer the next best would be, and
-//! rules stay silent where that is little.
+//! rules stay silent where that is little. Where the composer states the harmony, that is taken.
 
 mod chord;
 mod decode;
 mod keys;
 mod segments;
+mod stated;
 
 use std::ops::Range;
 
@@ -16,6 +17,7 @@ use crate::figures::Dissonance;
 
 pub use chord::{Chord, Quality};
 pub use keys::LocalKey;
+pub use stated::stated;
 
 /// A run of sonorities under one chord.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
@@ -30,6 +32,8 @@ pub struct Segment {
     pub margin: i64,
     /// The local key.
     pub key: Option<LocalKey>,
+    /// The chord is what the composer states, and the key with it where that is told.
+    pub stated: bool,
     /// Its length in hundredths of a quarter note.
     weight: i64,
 }
@@ -71,15 +75,24 @@ fn stretch(
     range: Range<usize>,
 ) -> Vec<Segment> {
     let from = range.start;
+    let said = stated::Said::of(score, texture, range.clone());
     let slices = segments::slices(score, texture, dissonances, range);
     let mut list: Vec<Segment> = Vec::new();
-    for (k, (found, slice)) in decode::chords(&slices).into_iter().zip(&slices).enumerate() {
+    for (k, (found, slice)) in decode::chords(&slices, &said)
+        .into_iter()
+        .zip(&slices)
+        .enumerate()
+    {
         let Some((chord, margin)) = found else {
             continue;
         };
+        let here = said.at(k);
+        let (stated, key) = (here.is_some(), here.and_then(|(_, key)| key));
         let k = from + k;
         match list.last_mut() {
-            Some(last) if last.end == k && last.chord == chord => {
+            Some(last)
+                if (last.end, last.chord, last.stated, last.key) == (k, chord, stated, key) =>
+            {
                 last.end = k + 1;
                 last.weight += slice.length;
                 last.margin = last.margin.max(margin);
@@ -89,7 +102,8 @@ fn stretch(
                 end: k + 1,
                 chord,
                 margin,
-                key: None,
+                key,
+                stated,
                 weight: slice.length,
             }),
         }
@@ -98,7 +112,7 @@ fn stretch(
     let home = (from == 0).then(|| keys::home(score)).flatten();
     let keys = keys::keys(home, &list);
     for (segment, key) in list.iter_mut().zip(keys) {
-        segment.key = key;
+        segment.key = segment.key.or(key);
     }
     list
 }
