@@ -131,7 +131,7 @@ fn ornaments_are_no_disagreement() {
     assert_eq!(four(held, "harmony | I - V -"), [""; 0]);
     assert_eq!(four(held, "figures | _ _ 4 3"), [""; 0]);
     // A sixth over the root that comes down under the same chord disagrees with no note.
-    let sixth = ["G4 - A4 G4", "E4 - E -", "C4 - C -", "C3 - C -"];
+    let sixth = ["C5 - A4 G4", "E4 - E -", "C4 - C -", "C3 - C -"];
     assert_eq!(four(sixth, "harmony | I - - -"), [""; 0]);
     // With the same chord stated anew it is the same.
     assert_eq!(four(sixth, "harmony | I - I I"), [""; 0]);
@@ -147,6 +147,12 @@ fn a_pedal_under_stated_chords_is_no_disagreement() {
     let pedal = ["G5 F G G", "E5 C D E", "C5 A4 B C5", "C3 - - -"];
     let text = four(pedal, "harmony | I IV V I");
     assert_eq!(text, [""; 0]);
+    // A bass that moves on with the chord is none.
+    let late = ["G5 F D G", "E5 C B4 E5", "C5 A4 G C5", "F3 C - E"];
+    one(
+        &four(late, "harmony | _ _ V I6"),
+        &["C3 in voice B is no note of V in C major (G B D)"],
+    );
 }
 
 #[test]

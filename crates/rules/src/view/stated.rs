@@ -109,7 +109,8 @@ impl<'a> StatedHarmony<'a> {
                 let known = list
                     .iter()
                     .any(|s| (s.voice, s.note) == (of.voice, of.note));
-                let excused = self.has_figure(of) || (few && self.goes_by_step(of));
+                let steps = few && self.goes_by_step(of);
+                let excused = steps || self.has_figure(of) || self.is_pedal(of, there);
                 if !known && !excused {
                     list.push(of);
                 }
@@ -233,6 +234,14 @@ impl<'a> StatedHarmony<'a> {
                     && reading.figure != Figure::DiminishedFifth
             })
         })
+    }
+
+    /// The lowest note, held on from before the chord until after it: a pedal, whichever note of
+    /// its dissonances was read as the figure.
+    fn is_pedal(&self, of: Stranger, there: Sounding<'a>) -> bool {
+        let note = self.note(of.voice, of.note);
+        there.bass() == Some(of.voice)
+            && note.is_some_and(|n| n.onset < self.chord.from && n.end() > self.chord.until)
     }
 
     /// An ornament that disagrees with no other note: weak between two steps, held over and left
