@@ -14,6 +14,8 @@ pub struct StatedHarmony<'a> {
     /// Its first sonority that sounds with it, and one past its last.
     first: usize,
     end: usize,
+    /// The sonorities under it and its neighbours on the same root: V goes on in V7.
+    run: (usize, usize),
 }
 
 /// A note in the way of a stated chord.
@@ -57,9 +59,23 @@ impl<'a> Piece<'a> {
                 chord,
                 first,
                 end,
+                run: (first, end),
             })
         });
-        list.collect()
+        let mut list: Vec<StatedHarmony<'_>> = list.collect();
+        let mut before: Option<(i32, Time, usize)> = None;
+        for of in &mut list {
+            let follows = before.filter(|b| (b.0, b.1) == (of.chord.root, of.chord.from));
+            of.run.0 = follows.map_or(of.first, |b| b.2);
+            before = Some((of.chord.root, of.chord.until, of.run.0));
+        }
+        let mut after: Option<(i32, Time, usize)> = None;
+        for of in list.iter_mut().rev() {
+            let leads = after.filter(|a| (a.0, a.1) == (of.chord.root, of.chord.until));
+            of.run.1 = leads.map_or(of.end, |a| a.2);
+            after = Some((of.chord.root, of.chord.from, of.run.1));
+        }
+        list
     }
 }
 
@@ -103,8 +119,8 @@ impl<'a> StatedHarmony<'a> {
         let mut list: Vec<Stranger> = Vec::new();
         for there in self.soundings() {
             let outside = self.outside(there);
-            // Where most of a chord is beside it, steps alone do not make ornaments.
-            let few = outside.len() * 2 <= there.parts();
+            // Where most of a chord is beside it on the beat, steps alone do not make ornaments.
+            let few = there.is_off_beat() || outside.len() * 2 <= there.parts();
             for of in outside {
                 let known = list
                     .iter()
@@ -167,15 +183,16 @@ impl<'a> StatedHarmony<'a> {
         (other && self.chord.tones.contains(&place)).then(|| (named(wanted), first))
     }
 
-    /// The root or third that three voices or more never sound under it, and that no ornament
-    /// stands for: what it is, and its name.
+    /// The root or third that three voices or more never sound under it, nor under its neighbours
+    /// on the same root, and that no ornament stands for: what it is, and its name.
     #[must_use]
     pub fn lacking(&self) -> Option<(&'static str, String)> {
         if !self.soundings().any(|there| there.parts() >= 3) {
             return None;
         }
         let sounded = |place: i32| {
-            self.soundings().any(|there| {
+            let mut run = (self.run.0..self.run.1).map(|index| self.piece.sounding(index));
+            run.any(|there| {
                 let mut voices = self.piece.texture.sounding(there.index);
                 voices.any(|v| there.pitch(v).is_some_and(|pitch| fifths(pitch) == place))
             })

@@ -2,9 +2,10 @@
 
 use std::fmt::Write;
 
-use partwright_check::harmony::{SURE, segment_at};
+use partwright_check::harmony::{SURE, segment_at, stated};
 use partwright_check::{Checked, Finding};
 use partwright_rules::{Discord, PairMove, Sounding, Style, entry};
+use partwright_score::fifths::named;
 use partwright_score::{Interval, Score, Sound, Time, Voice, show_time};
 use partwright_sheet::Span;
 use partwright_space::Motion;
@@ -34,6 +35,7 @@ pub(crate) fn hover(outcome: &Outcome, position: Position, agreed: Agreed) -> Op
         .or_else(|| on_bar_line(checked, offset, &page))
         .or_else(|| on_label(checked, text, offset, &page))
         .or_else(|| on_part(checked, offset, &page))
+        .or_else(|| on_stated(checked, offset, &page))
         .or_else(|| on_finding(checked, offset, &page))?;
     let kind = if agreed.markdown {
         MarkupKind::Markdown
@@ -214,6 +216,30 @@ fn on_part(checked: &Checked, offset: usize, page: &Page) -> Option<(Span, Strin
     Some((span, page.text))
 }
 
+/// On a chord or on figures that are stated: what notes they mean.
+fn on_stated(checked: &Checked, offset: usize, page: &Page) -> Option<(Span, String)> {
+    let reading = &checked.reading;
+    let chords = reading.harmony.iter().filter(|item| item.chord.is_some());
+    let chords = chords.map(|item| (item.at, item.span));
+    let stacks = reading.figures.iter().filter(|item| !item.stack.is_empty());
+    let stacks = stacks.map(|item| (item.at, item.span));
+    let (at, span) = chords
+        .chain(stacks)
+        .find(|(_, span)| covers(*span, offset))?;
+    let stated = stated(&reading.score, &checked.texture);
+    let chord = stated.iter().find(|chord| chord.from == at)?;
+    let mut line = format!("{} · {}", page.strong(&chord.written), chord.notes());
+    if let Some(bass) = chord.bass {
+        let _ = write!(line, ", {} in the bass", named(bass));
+    }
+    if let Some(key) = chord.key {
+        let _ = write!(line, " · {} {}", named(key.tonic), key.mode.name());
+    }
+    let mut page = page.clone();
+    page.paragraph(&line);
+    Some((span, page.text))
+}
+
 /// The other voices, and the motion of every pair into the sonority.
 fn around(page: &mut Page, sounding: Sounding<'_>, voice: usize) {
     let Sounding { piece, index } = sounding;
@@ -281,7 +307,9 @@ fn chord(page: &mut Page, sounding: Sounding<'_>) {
     if let Some(key) = segment.key {
         let _ = write!(line, ", in {}", key.name());
     }
-    if segment.margin < SURE {
+    if segment.stated {
+        line.push_str(" (stated)");
+    } else if segment.margin < SURE {
         line.push_str(" (not sure)");
     }
     let beside = piece.texture.sounding(index).filter_map(|voice| {
