@@ -123,6 +123,26 @@ fn the_root_or_third_may_not_be_left_out_but_the_fifth_may() {
 }
 
 #[test]
+fn a_chord_that_goes_on_in_another_form_keeps_its_notes() {
+    let passing = ["D5 - C5 -", "B4 - C5 -", "G4.F4 - E4 -", "B3 - C4 -"];
+    assert_eq!(four(passing, "harmony | V6.V65 - I -"), [""; 0]);
+}
+
+#[test]
+fn a_melody_alone_has_no_bass_and_lacks_nothing() {
+    let melody = |row| {
+        says(&format!(
+            "key C major\nmetre 2/4\nS | E5 G | C5 - ||\nharmony | {row} ||\n"
+        ))
+    };
+    assert_eq!(melody("I6/4 V7 | I -"), [""; 0]);
+    one(
+        &melody("I ii | I -"),
+        &["G5 in S is no note of ii in C major (D F A)"],
+    );
+}
+
+#[test]
 fn ornaments_are_no_disagreement() {
     let figured = ["E5 D.C D -", "C5 B4.A B -", "G4 - G -.F", "C3 - G3 -"];
     assert_eq!(four(figured, "harmony | I - V V7"), [""; 0]);

@@ -166,12 +166,12 @@ impl<'a> StatedHarmony<'a> {
     }
 
     /// The bass under it from beginning to end is another of its notes than the one its figures
-    /// tell: that one by name, and the note that stands there.
+    /// tell: that one by name, and the note that stands there. One voice alone has no bass.
     #[must_use]
     pub fn other_bass(&self) -> Option<(String, Stranger)> {
         let wanted = self.chord.bass?;
         let basses = self.soundings().filter_map(|there| {
-            let voice = there.bass()?;
+            let voice = there.bass().filter(|_| there.parts() >= 2)?;
             let note = self.piece.texture.note(there.index, voice)?;
             let at = there.onset().max(self.chord.from);
             let place = fifths(there.pitch(voice)?);
