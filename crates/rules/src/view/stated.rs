@@ -16,6 +16,8 @@ pub struct StatedHarmony<'a> {
     end: usize,
     /// The sonorities under it and its neighbours on the same root: V goes on in V7.
     run: (usize, usize),
+    /// When these begin and end.
+    lasts: (Time, Time),
 }
 
 /// A note in the way of a stated chord.
@@ -56,6 +58,7 @@ impl<'a> Piece<'a> {
             let sounds = over.iter().any(|s| s.sounding != 0);
             (is_written && sounds).then_some(StatedHarmony {
                 piece: self,
+                lasts: (chord.from, chord.until),
                 chord,
                 first,
                 end,
@@ -63,23 +66,34 @@ impl<'a> Piece<'a> {
             })
         });
         let mut list: Vec<StatedHarmony<'_>> = list.collect();
-        let mut before: Option<(i32, Time, usize)> = None;
-        for of in &mut list {
-            let follows = before.filter(|b| (b.0, b.1) == (of.chord.root, of.chord.from));
-            of.run.0 = follows.map_or(of.first, |b| b.2);
-            before = Some((of.chord.root, of.chord.until, of.run.0));
+        for k in 1..list.len() {
+            let (before, after) = list.split_at_mut(k);
+            if let (Some(last), Some(of)) = (before.last(), after.first_mut())
+                && last.goes_on_in(of)
+            {
+                of.run.0 = last.run.0;
+                of.lasts.0 = last.lasts.0;
+            }
         }
-        let mut after: Option<(i32, Time, usize)> = None;
-        for of in list.iter_mut().rev() {
-            let leads = after.filter(|a| (a.0, a.1) == (of.chord.root, of.chord.until));
-            of.run.1 = leads.map_or(of.end, |a| a.2);
-            after = Some((of.chord.root, of.chord.from, of.run.1));
+        for k in (1..list.len()).rev() {
+            let (before, after) = list.split_at_mut(k);
+            if let (Some(of), Some(next)) = (before.last_mut(), after.first())
+                && of.goes_on_in(next)
+            {
+                of.run.1 = next.run.1;
+                of.lasts.1 = next.lasts.1;
+            }
         }
         list
     }
 }
 
 impl<'a> StatedHarmony<'a> {
+    /// The next chord follows at once on the same root.
+    fn goes_on_in(&self, next: &StatedHarmony<'_>) -> bool {
+        (self.chord.root, self.chord.until) == (next.chord.root, next.chord.from)
+    }
+
     /// As it is written, with its key and notes: `V7 in G major (D F# A C)`.
     #[must_use]
     pub fn words(&self) -> String {
@@ -269,7 +283,8 @@ impl<'a> StatedHarmony<'a> {
             return false;
         };
         // What lasts as long as the chord leaves it no room.
-        if here.onset <= self.chord.from && here.end() >= self.chord.until {
+        let (from, until) = self.lasts;
+        if here.onset <= from && here.end() >= until {
             return false;
         }
         let (before, after) = (at(of.note.checked_sub(1)), at(of.note.checked_add(1)));
@@ -283,7 +298,7 @@ impl<'a> StatedHarmony<'a> {
         let held = here.onset < self.chord.from;
         let settles = after.is_some_and(|after| {
             let place = after.sound.pitch().map(fifths);
-            after.onset < self.chord.until && place.is_some_and(|place| self.belongs(place))
+            after.onset < until && place.is_some_and(|place| self.belongs(place))
         });
         let cell = self.piece.cell_at(here.onset);
         let is_short = cell.is_some_and(|cell| here.length < cell);
