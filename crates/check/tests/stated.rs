@@ -155,6 +155,16 @@ fn ornaments_are_no_disagreement() {
     assert_eq!(four(sixth, "harmony | I - - -"), [""; 0]);
     // With the same chord stated anew it is the same.
     assert_eq!(four(sixth, "harmony | I - I I"), [""; 0]);
+    // A suspension that resolves with the next chord.
+    let under = "harmony | I - IV viio6";
+    for soprano in ["G4 - - F4", "G4 - G4 F4"] {
+        let rows = [soprano, "E4 - C4 D", "C4 - A3 B", "C3 - F3 D"];
+        assert_eq!(four(rows, under), [""; 0]);
+    }
+    one(
+        &four(["G4 - G4 B4", "E4 - C4 D", "C4 - A3 B", "C3 - F3 D"], under),
+        &["G4 in S is no note of IV in C major (F A C)"],
+    );
     // That stays to the end of the chord it does not belong to.
     one(
         &four(sixth, "harmony | I - I _"),

@@ -275,27 +275,36 @@ impl<'a> StatedHarmony<'a> {
             && note.is_some_and(|n| n.onset < self.chord.from && n.end() > self.chord.until)
     }
 
-    /// An ornament that disagrees with no other note: weak between two steps, held over and left
-    /// by step, on its way by step to a note of the chord, an anticipation, or a short escape.
+    /// An ornament, whatever it disagrees with: weak between two steps, held over and left by step,
+    /// on its way by step to a note of the chord, an anticipation, or short and left or reached by
+    /// step.
     fn goes_by_step(&self, of: Stranger) -> bool {
         let at = |index: Option<usize>| self.note(of.voice, index?);
         let Some(here) = at(Some(of.note)) else {
             return false;
         };
+        let (before, after) = (at(of.note.checked_sub(1)), at(of.note.checked_add(1)));
+        // A chromatic semitone is a step too.
+        let step = |other: Option<&Note>| {
+            let (a, b) = (other?.sound.pitch()?, here.sound.pitch()?);
+            let letters = (a.step - b.step).abs();
+            Some(letters.max(i16::from(a.sign != b.sign && letters == 0)))
+        };
+        let (came, went) = (step(before), step(after));
+        let held = here.onset < self.chord.from;
+        // Prepared and down by step: a suspension, wherever it is resolved.
+        let falls = after.and_then(|after| after.sound.pitch()?.step.checked_add(1));
+        let falls = falls.is_some() && falls == here.sound.pitch().map(|pitch| pitch.step);
+        if falls && (held || came == Some(0)) {
+            return true;
+        }
         // What lasts as long as the chord leaves it no room.
         let (from, until) = self.lasts;
         if here.onset <= from && here.end() >= until {
             return false;
         }
-        let (before, after) = (at(of.note.checked_sub(1)), at(of.note.checked_add(1)));
-        let step = |other: Option<&Note>| {
-            let (a, b) = (other?.sound.pitch()?, here.sound.pitch()?);
-            Some((a.step - b.step).abs())
-        };
-        let (came, went) = (step(before), step(after));
         let level = |note: &Note| self.piece.score.level(note.onset);
         let is_weak = before.is_some_and(|before| level(here) > level(before));
-        let held = here.onset < self.chord.from;
         let settles = after.is_some_and(|after| {
             let place = after.sound.pitch().map(fifths);
             after.onset < until && place.is_some_and(|place| self.belongs(place))
@@ -304,7 +313,7 @@ impl<'a> StatedHarmony<'a> {
         let is_short = cell.is_some_and(|cell| here.length < cell);
         match (came, went) {
             (Some(1), Some(1)) if is_weak => true,
-            (_, Some(1)) => held || settles,
+            (_, Some(1)) => held || settles || (is_weak && is_short),
             (_, Some(0)) => is_weak && is_short,
             (Some(1), _) => is_weak && is_short,
             _ => false,
