@@ -4,7 +4,7 @@
 
 use partwright_score::fifths::named;
 use partwright_score::{FigureSign, Mode, Score};
-use partwright_sheet::Sheet;
+use partwright_sheet::{Heading, Sheet, write};
 use proptest::prelude::*;
 
 /// The score of a row of chords, one a beat, in a key.
@@ -265,4 +265,14 @@ proptest! {
             prop_assert_eq!(there.bass, here.bass.map(|bass| bass + up));
         }
     }
+}
+
+#[test]
+fn a_score_written_out_says_that_its_chords_stay_behind() {
+    let score = row("key C major", &["I", "V7"]);
+    let written = write(&score, &Heading::default());
+    let says = written.left_behind.concat();
+    assert!(says.contains("Stated chords"), "{says}");
+    let again = Sheet::read(&written.text).lower(&written.text).score;
+    assert_eq!(again.voices, score.voices);
 }
