@@ -61,7 +61,7 @@ pub(crate) fn transposed(score: &Score, steps: i16, semitones: i32) -> Score {
         places.for_each(|place| *place += up);
         chord.root += up;
         chord.bass = chord.bass.map(|bass| bass + up);
-        for key in &mut chord.key {
+        if let Some(key) = &mut chord.key {
             key.tonic += up;
         }
     }
