@@ -25,6 +25,8 @@ mod judged;
 mod rewrite;
 #[path = "outside/scores.rs"]
 mod scores;
+#[path = "outside/stated.rs"]
+mod stated;
 #[path = "outside/table.rs"]
 mod table;
 #[path = "outside/treatise.rs"]

@@ -59,6 +59,31 @@ Chord: **A minor**."
 }
 
 #[test]
+fn a_stated_chord_tells_its_notes() {
+    let mut client = Client::ready();
+    let text = "key G major\nmetre 2/4\nS | B4 A | B4 - ||\nB | G3 F# | G3 - ||\nfigures | _ _ | 5/3 - ||\nharmony | I V65 | _ ||\n";
+    let document = open(&mut client, text);
+    assert_eq!(
+        document.hover_text(&mut client, "V65"),
+        "**V6/5** · D F# A C, F# in the bass · G major"
+    );
+    assert_eq!(
+        document.hover_text(&mut client, "I V65"),
+        "**I** · G B D · G major"
+    );
+    assert_eq!(
+        document.hover_text(&mut client, "5/3"),
+        "**5/3** · G B D, G in the bass"
+    );
+    let note = document.hover_text(&mut client, "A | B4");
+    assert!(
+        note.ends_with("Chord: **D dominant seventh**, in G major (stated)."),
+        "{note}"
+    );
+    client.goodbye();
+}
+
+#[test]
 fn the_first_note_has_no_motion() {
     let mut client = Client::ready();
     let document = open(&mut client, CHOIR);

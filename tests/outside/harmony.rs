@@ -14,12 +14,12 @@ use crate::invariance::transposed;
 use crate::scores::{Piece, lines, set};
 
 /// What an analyst says of a moment.
-struct Event {
-    at: Time,
+pub(crate) struct Event {
+    pub(crate) at: Time,
     root: i32,
-    classes: Vec<i32>,
+    pub(crate) classes: Vec<i32>,
     key: (i32, bool),
-    words: String,
+    pub(crate) words: String,
 }
 
 fn number(value: &Value) -> Option<i32> {
@@ -32,7 +32,7 @@ fn beat(text: &str) -> Time {
     Time::new(halves.next().unwrap(), halves.next().unwrap_or(1))
 }
 
-fn event(score: &Score, row: &Value) -> Option<Event> {
+pub(crate) fn event(score: &Score, row: &Value) -> Option<Event> {
     let number_of_bar = row[0].as_u64()?;
     let bar = score
         .bars
@@ -55,7 +55,7 @@ fn event(score: &Score, row: &Value) -> Option<Event> {
 }
 
 /// A place among the fifths as a pitch class.
-fn class(place: i32) -> i32 {
+pub(crate) fn class(place: i32) -> i32 {
     (place * 7).rem_euclid(12)
 }
 

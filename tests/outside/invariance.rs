@@ -54,6 +54,17 @@ pub(crate) fn transposed(score: &Score, steps: i16, semitones: i32) -> Score {
             *tonic = moved(*tonic);
         }
     }
+    // Letters and semitones tell how far that is among the fifths: a fifth is 4 and 7.
+    let up = 7 * semitones - 12 * i32::from(steps);
+    for chord in &mut score.harmony {
+        let places = chord.tones.iter_mut().chain(&mut chord.beside);
+        places.for_each(|place| *place += up);
+        chord.root += up;
+        chord.bass = chord.bass.map(|bass| bass + up);
+        if let Some(key) = &mut chord.key {
+            key.tonic += up;
+        }
+    }
     score
 }
 

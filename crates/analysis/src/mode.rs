@@ -6,6 +6,8 @@
 
 use partwright_score::{Key, Mode, Pitch, Score, Time};
 
+pub use partwright_score::fifths::{fifths, named};
+
 /// A final with its mode.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
 pub struct Final {
@@ -56,18 +58,6 @@ pub fn of_cantus(score: &Score) -> Option<Final> {
     })
 }
 
-/// The name of a letter and sign at a place among the fifths: `C`, `F#`, `Bb`.
-#[must_use]
-pub fn named(place: i32) -> String {
-    let letters = ["F", "C", "G", "D", "A", "E", "B"];
-    let letter = usize::try_from((place + 1).rem_euclid(7)).unwrap_or(0);
-    let signs = (place + 1).div_euclid(7);
-    let sign = if signs < 0 { "b" } else { "#" };
-    let count = usize::try_from(signs.abs()).unwrap_or(0);
-    let letter = letters.get(letter).copied().unwrap_or_default();
-    format!("{letter}{}", sign.repeat(count))
-}
-
 /// The signature that most notes of a score fit, as a number of flats; negative for sharps, and
 /// the smallest where several fit as many.
 #[must_use]
@@ -90,32 +80,8 @@ pub fn likely_flats(score: &Score) -> i32 {
         .unwrap_or(0)
 }
 
-/// A letter and sign by its place among the fifths: 0 for C, 1 for G, -1 for F, 6 for F#.
-#[must_use]
-pub fn fifths(pitch: Pitch) -> i32 {
-    let natural = match pitch.letter() {
-        0 => 0,
-        1 => 2,
-        2 => 4,
-        3 => -1,
-        4 => 1,
-        5 => 3,
-        _ => 5,
-    };
-    natural + 7 * i32::from(pitch.sign)
-}
-
 fn flats_of(tonic: Pitch, mode: Mode) -> i32 {
-    let place = match mode {
-        Mode::Lydian => -1,
-        Mode::Major | Mode::Ionian => 0,
-        Mode::Mixolydian => 1,
-        Mode::Dorian => 2,
-        Mode::Minor | Mode::Aeolian => 3,
-        Mode::Phrygian => 4,
-        Mode::Locrian => 5,
-    };
-    place - fifths(tonic)
+    mode.natural_final() - fifths(tonic)
 }
 
 impl Final {

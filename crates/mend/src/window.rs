@@ -56,8 +56,14 @@ fn cut(score: &Score, start: Time, end: Time) -> Score {
         .bars
         .iter()
         .filter(|bar| bar.onset + bar.length > start && bar.onset < end);
+    // What is stated over a part of the stretch only would miss the notes that were cut off.
+    let within = |from: Time, until: Time| from >= start && until <= end;
+    let harmony = score.harmony.iter().filter(|c| within(c.from, c.until));
+    let figures = score.figures.iter().filter(|f| within(f.from, f.until));
     Score {
         voices: voices.collect(),
+        harmony: harmony.cloned().collect(),
+        figures: figures.cloned().collect(),
         bars: bars.cloned().collect(),
         equal: score.equal.clone(),
         metres: score.metres.clone(),

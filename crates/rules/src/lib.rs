@@ -24,7 +24,8 @@ pub use style::{Number, Override, STYLES, Setting, Strictness, Style};
 pub use view::{
     Chord, Crossing, Direct, Discord, HighPoint, LastMove, Level, Line, LineMove, Member, Minim,
     MinorDegree, Numbers, Over, PairMove, ParallelRun, Passage, Passing, Piece, Quick, Run,
-    SixFive, Sounding, Stretch, Stroke, Succession, Tessitura, Together, Tone, Value,
+    SixFive, Sounding, StatedHarmony, Stranger, Stretch, Stroke, Succession, Tessitura, Together,
+    Tone, Value,
 };
 
 /// What every rule file needs.
@@ -42,6 +43,7 @@ pub mod prelude {
     pub use crate::style::{Setting, Style, allow, fault, remark, weakness};
     pub use crate::view::{
         Chord, Direct, Discord, LastMove, Level, Line, LineMove, Member, MinorDegree, Numbers,
-        Over, PairMove, ParallelRun, Passage, Piece, Sounding, Stroke, Succession, Tone,
+        Over, PairMove, ParallelRun, Passage, Piece, Sounding, StatedHarmony, Stroke, Succession,
+        Tone,
     };
 }

@@ -160,6 +160,8 @@ pub mod spacing;
 pub mod species_cadence;
 #[path = "rules/species/species_rhythm.rs"]
 pub mod species_rhythm;
+#[path = "rules/harmony/stated_harmony.rs"]
+pub mod stated_harmony;
 #[path = "rules/dissonance/suspension_chain.rs"]
 pub mod suspension_chain;
 #[path = "rules/dissonance/suspension_kind.rs"]
@@ -235,6 +237,7 @@ pub(crate) static FILES: &[File] = &[
     file!("dissonance", suspension_resolution),
     file!("dissonance", upper_clash),
     file!("harmony", leading_note_doubled),
+    file!("harmony", stated_harmony),
     file!("line", augmented_interval),
     file!("line", broken_chord),
     file!("line", chromatic_semitone),

@@ -49,6 +49,20 @@ impl Mode {
         }
     }
 
+    /// The place among the fifths of its final where nothing is signed: D dorian is 2.
+    #[must_use]
+    pub const fn natural_final(self) -> i32 {
+        match self {
+            Mode::Lydian => -1,
+            Mode::Major | Mode::Ionian => 0,
+            Mode::Mixolydian => 1,
+            Mode::Dorian => 2,
+            Mode::Minor | Mode::Aeolian => 3,
+            Mode::Phrygian => 4,
+            Mode::Locrian => 5,
+        }
+    }
+
     /// The mode of that name, or `None`.
     #[must_use]
     pub fn named(name: &str) -> Option<Mode> {

@@ -6,12 +6,14 @@
 //! how it got there ([`PairStep`]).
 
 mod bar;
+pub mod fifths;
 mod interval;
 mod key;
 mod kind;
 mod metre;
 mod pitch;
 mod score;
+mod stated;
 mod texture;
 mod time;
 mod voice;
@@ -23,6 +25,7 @@ pub use kind::{Compass, KINDS, Kind};
 pub use metre::{Metre, MetreError};
 pub use pitch::{Pitch, PitchError};
 pub use score::{Change, Note, Score, Sound};
+pub use stated::{FigureSign, StatedChord, StatedFigure, StatedFigures, StatedKey};
 pub use texture::{Pair, PairStep, Sonority, Texture};
 pub use time::{Time, ZERO, show_time};
 pub use voice::Voice;

@@ -2,7 +2,7 @@
 
 use std::borrow::Cow;
 
-use crate::{Bar, BarPlace, Key, Metre, Pitch, Time, Voice, ZERO};
+use crate::{Bar, BarPlace, Key, Metre, Pitch, StatedChord, StatedFigures, Time, Voice, ZERO};
 
 /// What a voice does for a while.
 #[derive(Clone, Copy, Debug, PartialEq, Eq, Hash)]
@@ -100,6 +100,10 @@ pub struct Score {
     pub bars: Vec<Bar>,
     /// Stated keys, each from a moment on; empty where none is stated.
     pub keys: Vec<Change<Key>>,
+    /// Chords that are stated, in order of time; none overlap.
+    pub harmony: Vec<StatedChord>,
+    /// Figures over the bass, in order of time; none overlap.
+    pub figures: Vec<StatedFigures>,
     /// The style the sheet names.
     pub style: Option<String>,
 }

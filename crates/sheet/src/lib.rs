@@ -22,6 +22,7 @@ mod lookup;
 mod lower;
 mod music;
 mod near;
+mod numerals;
 mod parts;
 mod position;
 mod problem;

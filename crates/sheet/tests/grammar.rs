@@ -150,7 +150,9 @@ fn the_reader_takes_what_the_grammar_derives() {
             Ok(()),
             "seed {seed}: {text:?}"
         );
-        let problems = unread(text);
+        // Keys are not steered: numerals without one are well written.
+        let mut problems = unread(text);
+        problems.retain(|problem| !problem.message.starts_with("No key is stated"));
         if problems.is_empty() {
             clean += 1;
             deriver.count(&sentence);

@@ -31,6 +31,9 @@ pub(super) struct Found {
     pub seventh_margin: Cost,
 }
 
+/// What another chord costs where one is stated: more than any music can make up for.
+const AGAINST: Cost = QUARTER * 1_000_000;
+
 /// What a chord lacks or leaves out in a sonority.
 fn cost(slice: &Slice, chord: Chord) -> Cost {
     let tones = chord.quality.tones();
@@ -91,8 +94,19 @@ impl<'a> Search<'a> {
             if slice.tones.is_empty() {
                 return vec![0; states.len() + 1];
             }
-            let chords = states.iter().map(|chord| cost(slice, *chord));
-            chords.chain([slice.length * NO_CHORD / 100]).collect()
+            let said = slice
+                .said
+                .map(|(chord, _)| chord)
+                .filter(|c| states.contains(c));
+            let against = |state: &Chord| match said {
+                Some(said) if said != *state => AGAINST,
+                _ => 0,
+            };
+            let chords = states
+                .iter()
+                .map(|chord| cost(slice, *chord) + against(chord));
+            let none = said.map_or(slice.length * NO_CHORD / 100, |_| AGAINST);
+            chords.chain([none]).collect()
         };
         let local = slices.iter().map(row).collect();
         let groups = states.chunk_by(|a, b| a.root == b.root);
@@ -153,7 +167,7 @@ impl<'a> Search<'a> {
         let all = || self.states.iter().zip(through);
         let (&chord, &own) = all().min_by_key(|(_, cost)| **cost)?;
         let none = through.last().copied().unwrap_or(0);
-        let most = if is_heard(slice, chord) {
+        let most = if slice.said.is_some() || is_heard(slice, chord) {
             QUARTER * 100
         } else {
             SURE - 1
@@ -214,7 +228,9 @@ fn step(before: &[Cost], slice: &Slice, groups: &[usize]) -> Row {
 
 /// Every chord on a root that sounds somewhere, or could stand between two that do.
 fn states(slices: &[Slice]) -> Vec<Chord> {
-    let places = slices.iter().flat_map(|s| s.tones.iter().map(|t| t.place));
+    let sounding = slices.iter().flat_map(|s| s.tones.iter().map(|t| t.place));
+    let said = slices.iter().filter_map(|s| Some(s.said?.0.root));
+    let places = sounding.chain(said);
     let (mut low, mut high) = (i32::MAX, i32::MIN);
     for place in places {
         low = low.min(place);

@@ -8,6 +8,7 @@ mod chord;
 mod decode;
 mod keys;
 mod segments;
+mod stated;
 mod stretches;
 mod symbol;
 
@@ -25,6 +26,7 @@ use stretches::Stretch;
 pub use certainty::SURE;
 pub use chord::{Chord, Quality};
 pub use keys::LocalKey;
+pub use stated::stated;
 
 /// A run of sonorities under one chord.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
@@ -45,6 +47,8 @@ pub struct Segment {
     pub key: Option<LocalKey>,
     /// Hundredths of a quarter note by which the best other key is dearer.
     pub key_margin: i64,
+    /// The composer states it: its chord, and its key where the row names one.
+    pub stated: bool,
     /// Its length in hundredths of a quarter note, long sonorities cut short.
     weight: i64,
 }
@@ -59,6 +63,7 @@ struct Read {
     found: Found,
     key: Option<LocalKey>,
     key_margin: i64,
+    stated: bool,
     length: i64,
 }
 
@@ -128,7 +133,11 @@ fn gather(reads: impl Iterator<Item = Option<Read>>) -> Vec<Segment> {
         let Some(read) = read else { continue };
         let found = read.found;
         match list.last_mut() {
-            Some(last) if last.end == k && last.chord == found.chord => {
+            Some(last)
+                if last.end == k
+                    && (last.chord, last.stated) == (found.chord, read.stated)
+                    && (last.key == read.key || !read.stated) =>
+            {
                 last.end = k + 1;
                 last.weight += read.length;
                 last.root_margin = last.root_margin.max(found.root_margin);
@@ -144,6 +153,7 @@ fn gather(reads: impl Iterator<Item = Option<Read>>) -> Vec<Segment> {
                 seventh_margin: found.seventh_margin,
                 key: read.key,
                 key_margin: read.key_margin,
+                stated: read.stated,
                 weight: read.length,
             }),
         }
@@ -168,6 +178,7 @@ fn in_keys(found: Vec<Option<Found>>, slices: &[Slice], home: Option<Home>) -> V
                 found: found?,
                 key: None,
                 key_margin: 0,
+                stated: slice.said.is_some(),
                 length: slice.length,
             })
         })
@@ -178,6 +189,11 @@ fn in_keys(found: Vec<Option<Found>>, slices: &[Slice], home: Option<Home>) -> V
         for read in reads.get_mut(own).unwrap_or_default().iter_mut().flatten() {
             read.key = Some(key);
             read.key_margin = margin;
+        }
+    }
+    for (read, slice) in reads.iter_mut().zip(slices) {
+        if let (Some(read), Some((_, Some(key)))) = (read, slice.said) {
+            (read.key, read.key_margin) = (Some(key), SURE * 100);
         }
     }
     reads

@@ -5,6 +5,9 @@ use std::ops::Range;
 
 use partwright_score::{Note, Pitch, Score, Texture, Time};
 
+use super::chord::Chord;
+use super::keys::LocalKey;
+use super::stated::said;
 use crate::figures::{Dissonance, Figure};
 use crate::mode::fifths;
 
@@ -44,6 +47,8 @@ pub(super) struct Slice {
     pub same_root: Cost,
     /// A fermata stands on a note that sounds.
     pub fermata: bool,
+    /// The chord that is stated here, and its key.
+    pub said: Option<(Chord, Option<LocalKey>)>,
 }
 
 /// What the dissonances of a stretch say of its notes, by voice and note.
@@ -97,6 +102,7 @@ pub(super) fn slices(
     stretch: Range<usize>,
 ) -> Vec<Slice> {
     let known = Known::of(found, &stretch);
+    let from = stretch.start;
     let sonorities = texture.sonorities();
     let mut slices = Vec::with_capacity(stretch.len());
     for k in stretch {
@@ -155,8 +161,10 @@ pub(super) fn slices(
             change,
             same_root,
             fermata,
+            said: None,
         });
     }
+    said(score, texture, from, &mut slices);
     slices
 }
 

@@ -17,6 +17,7 @@ mod piece;
 mod rhythm;
 mod shape;
 mod sounding;
+mod stated;
 mod vocal;
 
 use partwright_analysis::harmony::Segment;
@@ -33,10 +34,11 @@ pub use pair::Direct;
 pub use piece::{Crossing, Passage};
 pub use rhythm::{Minim, Over, Quick, Stroke};
 pub use shape::{HighPoint, Passing, Stretch};
+pub use stated::{StatedHarmony, Stranger};
 pub use vocal::Value;
 
 /// A score with its texture, and what was read in it.
-#[derive(Clone, Copy)]
+#[derive(Clone, Copy, Debug)]
 pub struct Piece<'a> {
     /// The score.
     pub score: &'a Score,

@@ -4,8 +4,10 @@ mod chord;
 
 use std::fmt::Write;
 
+use partwright_check::harmony::stated;
 use partwright_check::{Checked, Finding};
 use partwright_rules::{Discord, PairMove, Sounding, Style, entry};
+use partwright_score::fifths::named;
 use partwright_score::{Interval, Score, Sound, Time, Voice, show_time};
 use partwright_sheet::Span;
 use partwright_space::Motion;
@@ -35,6 +37,7 @@ pub(crate) fn hover(outcome: &Outcome, position: Position, agreed: Agreed) -> Op
         .or_else(|| on_bar_line(checked, offset, &page))
         .or_else(|| on_label(checked, text, offset, &page))
         .or_else(|| on_part(checked, offset, &page))
+        .or_else(|| on_stated(checked, offset, &page))
         .or_else(|| on_finding(checked, offset, &page))?;
     let kind = if agreed.markdown {
         MarkupKind::Markdown
@@ -212,6 +215,30 @@ fn on_part(checked: &Checked, offset: usize, page: &Page) -> Option<(Span, Strin
             chord::chord(&mut page, Sounding { piece, index });
         }
     }
+    Some((span, page.text))
+}
+
+/// On a chord or on figures that are stated: what notes they mean.
+fn on_stated(checked: &Checked, offset: usize, page: &Page) -> Option<(Span, String)> {
+    let reading = &checked.reading;
+    let chords = reading.harmony.iter().filter(|item| item.chord.is_some());
+    let chords = chords.map(|item| (item.at, item.span));
+    let stacks = reading.figures.iter().filter(|item| !item.stack.is_empty());
+    let stacks = stacks.map(|item| (item.at, item.span));
+    let (at, span) = chords
+        .chain(stacks)
+        .find(|(_, span)| covers(*span, offset))?;
+    let stated = stated(&reading.score, &checked.texture);
+    let chord = stated.iter().find(|chord| chord.from == at)?;
+    let mut line = format!("{} · {}", page.strong(&chord.written), chord.notes());
+    if let Some(bass) = chord.bass {
+        let _ = write!(line, ", {} in the bass", named(bass));
+    }
+    if let Some(key) = chord.key {
+        let _ = write!(line, " · {} {}", named(key.tonic), key.mode.name());
+    }
+    let mut page = page.clone();
+    page.paragraph(&line);
     Some((span, page.text))
 }
 

@@ -19,6 +19,8 @@ pub(super) struct Lane<T> {
     items: Vec<Item<T>>,
     /// What was stated last could not be read.
     spoilt: bool,
+    /// Every key in front of a part, whatever the part is.
+    keys: Vec<(Moment, Span)>,
 }
 
 struct Item<T> {
@@ -32,6 +34,7 @@ impl<T> Default for Lane<T> {
         Lane {
             items: Vec::new(),
             spoilt: false,
+            keys: Vec::new(),
         }
     }
 }
@@ -123,9 +126,16 @@ impl<T> Lane<T> {
             let span = Span::new((part.start + here.base()) as usize, here.end(text, *part));
             (span, text.get(span.range()).unwrap_or_default())
         };
+        if let Some((span, _)) = key.map(written) {
+            self.keys.push((grid.moment(cell, 0, 1), span));
+        }
         for (index, part) in timed.iter().enumerate() {
             let at = grid.moment(cell, index, of);
             let (span, body) = written(part);
+            // A key without its numeral.
+            if part.kind() == PartKind::Spoilt && body.ends_with(':') {
+                self.keys.push((at, span));
+            }
             match part.kind() {
                 PartKind::Hold => {
                     if !self.holds() {
@@ -153,6 +163,12 @@ impl<T> Lane<T> {
                 }
             }
         }
+    }
+
+    /// The keys in front of parts, taken out.
+    pub(super) fn keys(&mut self) -> Vec<(Time, Span)> {
+        let keys = std::mem::take(&mut self.keys);
+        keys.into_iter().map(|(at, key)| (at.time(), key)).collect()
     }
 
     pub(super) fn finish<U>(

@@ -11,6 +11,7 @@ mod labels;
 mod lane;
 mod music;
 mod reports;
+mod stated;
 mod under;
 mod words;
 

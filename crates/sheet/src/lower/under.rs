@@ -8,6 +8,7 @@ use super::Lowering;
 use super::bars::{GridBar, Plan, SystemPlan, bar_of};
 use super::flow::Moment;
 use super::lane::Lane;
+use super::stated::stated;
 use super::words::Singing;
 use crate::harmony::{chord, key_prefix, stack};
 use crate::lines::RowKind;
@@ -44,6 +45,7 @@ pub(super) fn under(lowering: &mut Lowering<'_>, plan: &Plan) {
             }
         }
     }
+    let keys = harmony.keys();
     let end = Moment::of(plan.grid.last().map_or(0, |bar| bar.onset));
     lowering.reading.harmony = harmony.finish(end, |at, length, span, value| {
         let (key, chord) = value.map_or((None, None), |(key, chord)| (key, Some(chord)));
@@ -61,6 +63,7 @@ pub(super) fn under(lowering: &mut Lowering<'_>, plan: &Plan) {
         stack: value.unwrap_or_default(),
         span,
     });
+    stated(lowering, &keys);
 }
 
 /// A row under the notes.

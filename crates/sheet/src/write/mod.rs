@@ -75,6 +75,9 @@ pub fn write(score: &Score, heading: &Heading) -> Written {
             score.voices.get(MOST_VOICES).map_or("", |v| &v.label)
         ));
     }
+    if !score.harmony.is_empty() || !score.figures.is_empty() {
+        left.tell("Stated chords and figures have no rows here.".to_owned());
+    }
     let mut music = music::music(score, &mut left);
     let measures = measures::measures(score, &mut music, &mut left);
     let labels = names::labels(&score.voices);

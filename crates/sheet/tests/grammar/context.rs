@@ -16,7 +16,7 @@ pub(crate) struct Kind {
 }
 
 /// All kinds.
-pub(crate) const KINDS: [Kind; 9] = [
+pub(crate) const KINDS: [Kind; 10] = [
     Kind {
         reason: "1: whether an octave figure carries over depends on the notes before",
         words: &[],
@@ -140,6 +140,16 @@ pub(crate) const KINDS: [Kind; 9] = [
             "no syllable fits",
             "Figures stand the highest first",
         ],
+    },
+    Kind {
+        reason: "10: whether a key is in force",
+        words: &[],
+        cases: &[
+            "numerals without a key",
+            "numerals before the first key in the row",
+            "numerals where the sheet says there is no key",
+        ],
+        messages: &["No key is stated here"],
     },
 ];
 

@@ -34,7 +34,7 @@ pub(crate) const GAPS: [&str; 27] = [
     "S | G4{} |",
     "S | G4 {}",
     "S | G4 |\nwords S | {} |",
-    "S | G4 |\nharmony | {} |",
+    "key G major\nS | G4 |\nharmony | {} |",
     "S | G4 |\nfigures | {} |",
 ];
 

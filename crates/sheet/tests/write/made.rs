@@ -435,6 +435,7 @@ pub(crate) fn wild() -> impl Strategy<Value = Made> {
                     keys,
                     equal: vec![vec![0, 0], vec![9, 1, 2], vec![0, 1]],
                     style: Some("a b".to_owned()),
+                    ..Score::default()
                 },
                 heading: Heading {
                     title: Some("\r\n|x // \\".to_owned()),

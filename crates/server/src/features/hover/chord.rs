@@ -15,7 +15,9 @@ pub(super) fn chord(page: &mut Page, sounding: Sounding<'_>) {
         return;
     };
     let mut line = format!("Chord: {}", page.strong(&segment.chord.name()));
-    if !segment.is_sure() {
+    if segment.stated {
+        line.push_str(" (stated)");
+    } else if !segment.is_sure() {
         line.push_str(", likely but not certain");
     }
     if let Some(key) = segment.key.filter(|_| segment.key_is_likely()) {
