@@ -255,6 +255,19 @@ impl<'a> PairMove<'a> {
         self.step.after().is_some_and(|gap| gap.semitones == 0)
     }
 
+    /// In three parts or more, the upper voice rises by step into a unison with the bass, which leaps
+    /// up a fourth or a fifth: the leading note at a close.
+    #[must_use]
+    pub fn closes_into_unison(&self) -> bool {
+        self.parts() >= 3
+            && self.is_in_unison_after()
+            && self.steps(self.pair.upper)
+            && self.rises(self.pair.upper)
+            && self.rises(self.pair.lower)
+            && self.is_with_bass() == Some(true)
+            && self.bass_leaps_fourth_or_fifth()
+    }
+
     /// The case that fits, of those for the last chord, for the outer voices, and for a pair
     /// with an inner voice.
     #[must_use]
@@ -311,10 +324,26 @@ impl<'a> PairMove<'a> {
         }
     }
 
-    /// A change of position in one chord of three parts or more is no arrival.
+    /// A change of position in one chord of three parts or more is no arrival, whatever passes
+    /// between the beats.
     #[must_use]
     pub fn only_changes_position(&self) -> bool {
-        self.parts() >= 3 && self.sounding.may_keep_chord()
+        let there = self.sounding;
+        self.parts() >= 3 && (there.may_keep_chord() || there.may_keep_chord_since_beat())
+    }
+
+    /// It arrives on a beat from a note between beats that one of the two reached by step.
+    #[must_use]
+    pub fn leaves_ornament(&self) -> bool {
+        let Some(before) = self.sounding.neighbour(-1).filter(|s| s.is_off_beat()) else {
+            return false;
+        };
+        let piece = self.sounding.piece;
+        !self.sounding.is_off_beat()
+            && [self.pair.upper, self.pair.lower].into_iter().any(|voice| {
+                let moved = piece.texture.displacement(piece.score, before.index, voice);
+                moved.is_some_and(|gap| Interval(gap).size() == 1)
+            })
     }
 
     /// The fifth of a pair of horns: from a sixth or third by a step in the upper voice, and on

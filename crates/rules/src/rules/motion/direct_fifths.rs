@@ -94,6 +94,7 @@ pub const RULE: Rule = Rule {
         &OUTER,
         &THREE_OUTER,
         &THREE_INNER,
+        &ORNAMENT,
     ],
     numbers: &[],
     sources: &[
@@ -182,6 +183,25 @@ static THREE_INNER: Case = Case {
     )],
 };
 
+static ORNAMENT: Case = Case {
+    name: "ornament",
+    when: "between the outer voices, the upper one leaping, where one of the two leaves an ornament between beats that it reached by step",
+    settings: &[
+        weakness(
+            Style::Free,
+            "as for parallels that an unaccented ornament makes (Dahn 2016)",
+        ),
+        allow(
+            Style::Motet,
+            "ornaments excuse nothing: told as without them",
+        ),
+        allow(
+            Style::Species1,
+            "ornaments excuse nothing: told as without them",
+        ),
+    ],
+};
+
 fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
     if !step.is_direct(Family::Fifth) {
         return;
@@ -195,6 +215,7 @@ fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
         Direct::TwoParts => &TWO_PARTS,
         Direct::TwoPartsStep if found.style() == Style::Motet && step.is_horn_fifth() => return,
         Direct::TwoPartsStep => &TWO_PARTS_STEP,
+        Direct::ThreeOuter | Direct::Outer if !strict && step.leaves_ornament() => &ORNAMENT,
         Direct::ThreeOuter => &THREE_OUTER,
         Direct::ThreeInner => &THREE_INNER,
         Direct::Outer => &OUTER,
