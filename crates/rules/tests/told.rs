@@ -40,7 +40,7 @@ fn one_fact_is_told_by_one_rule() {
         ),
         (
             "species-1",
-            "S | F4 C5 |\nB | D4 G4 |",
+            "S | E4 A4 |\nB | D4 F4 |",
             "overlap",
             "similar-leaps",
         ),
