@@ -328,22 +328,23 @@ impl<'a> PairMove<'a> {
     /// between the beats.
     #[must_use]
     pub fn only_changes_position(&self) -> bool {
-        let there = self.sounding;
-        self.parts() >= 3 && (there.may_keep_chord() || there.may_keep_chord_since_beat())
+        self.parts() >= 3 && self.sounding.may_only_change_position()
     }
 
-    /// It arrives on a beat from a note between beats that one of the two reached by step.
+    /// It arrives on a beat from a note between beats that one of the two reached by step, or by a
+    /// chromatic semitone.
     #[must_use]
     pub fn leaves_ornament(&self) -> bool {
-        let Some(before) = self.sounding.neighbour(-1).filter(|s| s.is_off_beat()) else {
-            return false;
-        };
         let piece = self.sounding.piece;
+        let between = std::iter::successors(self.sounding.neighbour(-1), |s| s.neighbour(-1))
+            .take_while(|there| there.is_off_beat());
+        let voices = [self.pair.upper, self.pair.lower];
+        let mut moves = between.flat_map(|there| {
+            let moved = move |v| piece.texture.displacement(piece.score, there.index, v);
+            voices.map(moved).into_iter().flatten()
+        });
         !self.sounding.is_off_beat()
-            && [self.pair.upper, self.pair.lower].into_iter().any(|voice| {
-                let moved = piece.texture.displacement(piece.score, before.index, voice);
-                moved.is_some_and(|gap| Interval(gap).size() == 1)
-            })
+            && moves.any(|gap| gap.semitones != 0 && Interval(gap).size() <= 1)
     }
 
     /// The fifth of a pair of horns: from a sixth or third by a step in the upper voice, and on

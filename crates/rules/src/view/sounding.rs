@@ -228,10 +228,16 @@ impl<'a> Sounding<'a> {
         }
     }
 
+    /// The chord may be the one before, or but for what passes between the beats the one of the beat
+    /// before.
+    #[must_use]
+    pub fn may_only_change_position(self) -> bool {
+        self.may_keep_chord() || self.may_keep_chord_since_beat()
+    }
+
     /// It comes on a beat after ornaments between beats, each reached by step, and the chord may be
     /// the one of the beat before.
-    #[must_use]
-    pub fn may_keep_chord_since_beat(self) -> bool {
+    fn may_keep_chord_since_beat(self) -> bool {
         if self.is_off_beat() || self.parts() < 3 {
             return false;
         }

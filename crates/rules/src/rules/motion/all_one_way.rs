@@ -99,7 +99,7 @@ static BASS: Case = Case {
 };
 
 fn check(there: &Sounding<'_>, found: &mut Found<'_>) {
-    if there.parts() < 3 || there.may_keep_chord() {
+    if there.parts() < 3 || there.may_only_change_position() {
         return;
     }
     let Some(rising) = there.all_move_one_way() else {

@@ -34,6 +34,18 @@
 //! //     ^ direct fifths (weakness): S and A
 //! ```
 //!
+//! Where the upper voice leaps from an ornament between beats, it is a weakness:
+//!
+//! ```voices
+//! style chorale
+//!
+//! S | D5.Eb5 C5 |
+//! //         ^^ direct fifths (weakness): S and B
+//! A | F4     F4 |
+//! T | Bb3    A3 |
+//! B | Bb3    F3 |
+//! ```
+//!
 //! # Passes
 //!
 //! The upper voice moves by step:
@@ -56,6 +68,17 @@
 //! A | E4 A4 |
 //! T | C4 D4 |
 //! B | F3 D3 |
+//! ```
+//!
+//! Nor where the chord only changes its position, whatever passes between the beats:
+//!
+//! ```voices
+//! style chorale
+//!
+//! S | D5     A4  |
+//! A | A4     F#4 |
+//! T | D4     D4  |
+//! B | F#3.E3 D3  |
 //! ```
 //!
 //! Nor where a voice lies above the upper of the two, whatever its place in the score:

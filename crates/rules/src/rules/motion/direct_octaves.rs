@@ -23,6 +23,18 @@
 //! //     ^^ direct octaves: S and B
 //! ```
 //!
+//! Where the upper voice leaps from an ornament between beats, it is a weakness:
+//!
+//! ```voices
+//! style chorale
+//!
+//! S | E4.F4 D4 |
+//! //        ^^ direct octaves (weakness): S and B
+//! A | C#4   A3 |
+//! T | A3    F3 |
+//! B | A3    D3 |
+//! ```
+//!
 //! # Passes
 //!
 //! The upper voice moves by step, as at every cadence:
