@@ -127,7 +127,7 @@ fn a_client_that_can_be_asked_is_asked() {
 
 #[test]
 fn the_style_that_is_set_goes_before_the_sheets_own() {
-    let text = "style chorale\n\nS | G5 F |\nA | C4 D |\nT | C4 A3 |\nB | C3 D |\n";
+    let text = "style chorale\n\nS | G5 F |\nA | B4 C5 |\nT | B3 D4 |\nB | B2 C3 |\n";
     let mut client = Client::ready();
     let document = Document::open(&mut client, "file:///a.voices", text);
     let chorale = document.findings(&mut client);

@@ -77,7 +77,7 @@ fn a_stated_chord_tells_its_notes() {
     );
     let note = document.hover_text(&mut client, "A | B4");
     assert!(
-        note.ends_with("Chord: **D dominant seventh**, in G major (stated)."),
+        note.ends_with("Chord: **D dominant seventh** (stated); key: G major."),
         "{note}"
     );
     client.goodbye();

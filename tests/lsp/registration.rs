@@ -58,12 +58,12 @@ fn a_client_that_refuses_to_watch_files_keeps_the_settings() {
     client.refuse(&files);
     grant(&mut client, &settings);
     // Soprano and tenor lie too far apart for a chorale, and for no other style.
-    let text = "S | G5 F |\nA | C4 D |\nT | C4 A3 |\nB | C3 D |\n";
+    let text = "S | G5 F |\nA | B4 C5 |\nT | B3 D4 |\nB | B2 C3 |\n";
     Document::open(&mut client, "file:///a.voices", text);
-    until(&mut client, 2);
+    until(&mut client, 1);
     let style = json!({ "settings": { "partwright": { "style": "chorale" } } });
     client.notify(SETTINGS, style);
-    until(&mut client, 3);
+    until(&mut client, 2);
     assert!(client.asked.is_empty(), "{:?}", client.asked);
     client.goodbye();
 }

@@ -45,6 +45,18 @@ pub(crate) fn set(name: &str) -> Option<Vec<Piece>> {
     )
 }
 
+/// The chorales of both sets, over the sixteen-foot bass they were sung with.
+pub(crate) fn chorales() -> Option<Vec<Piece>> {
+    let (nba, dcml) = (set("chorales-nba")?, set("chorales-dcml")?);
+    let mut chorales: Vec<Piece> = nba.into_iter().chain(dcml).collect();
+    for piece in &mut chorales {
+        if let Some(bass) = piece.score.voices.last_mut() {
+            bass.sixteen_foot = true;
+        }
+    }
+    Some(chorales)
+}
+
 fn time(numerator: &Value, denominator: &Value) -> Time {
     Time::new(numerator.as_i64().unwrap(), denominator.as_i64().unwrap())
 }

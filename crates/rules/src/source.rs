@@ -218,6 +218,13 @@ pub const BACH_CHORALES: Source = source(
     0,
     Known::Counted,
 );
+/// Counts in the chorales whose every place was read beside the rules.
+pub const CHORALES_READ: Source = source(
+    "",
+    "156 four-part chorales of J. S. Bach, 2,487 bars",
+    0,
+    Known::Counted,
+);
 /// Counts in vocal polyphony of the 16th century.
 pub const RENAISSANCE_WORKS: Source = source(
     "",

@@ -34,10 +34,17 @@ fn lines_are_judged_by_the_letter_of_the_rule() {
         // A bass that falls a seventh for a step up, and one that rises.
         ("S | A4 G4 |\nB | F3 G2 |", &[]),
         ("S | A4 G4 |\nB | G2 F3 |", &["seventh-leap"]),
+        ("style chorale\n\nS | A4 G4 |\nB | F3 G2 |", &[]),
         (
-            "style chorale\n\nS | A4 G4 |\nB | F3 G2 |",
+            "style chorale\n\nS | A4 G4 |\nB | G2 F3 |",
             &["seventh-leap"],
         ),
+        // In a chorale a sixth falls as it rises, a major one does not.
+        ("style chorale\n\nS | C5 E4 F4 |", &[]),
+        ("style chorale\n\nS | C5 Eb4 F4 |", &["sixth-leap"]),
+        // After a fourth its line may go on; after a fifth it turns back.
+        ("style chorale\n\nS | D4 G4 A4 B4 |", &[]),
+        ("style chorale\n\nS | C4 G4 A4 B4 |", &["leap-unrecovered"]),
         // Octaves count in the bass of a chorale, sixths do not.
         (
             "style chorale\n\nS | D5 E5 F5 |\nB | D3 D4 E4 |",

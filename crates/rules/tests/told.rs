@@ -39,8 +39,8 @@ fn one_fact_is_told_by_one_rule() {
             "similar-leaps",
         ),
         (
-            "chorale",
-            "S | E4 A |\nA | C4 F |\nB | E3 D |",
+            "species-1",
+            "S | E4 A4 |\nB | D4 F4 |",
             "overlap",
             "similar-leaps",
         ),

@@ -2,7 +2,7 @@
 
 use partwright_analysis::figures::{Held, Near, near_suspension};
 use partwright_analysis::{Dissonance, Figure};
-use partwright_score::{Interval, Note, Time, ZERO};
+use partwright_score::{Interval, Note, Pitch, Time, ZERO};
 
 use super::{Discord, Sounding};
 
@@ -88,6 +88,36 @@ impl<'a> Discord<'a> {
         self.dissonance.reading.is_none() && self.near_suspension().is_none()
     }
 
+    /// No chord of thirds, up to a seventh chord, holds the two notes together with what else sounds
+    /// and is no ornament or suspension: neither can belong to the harmony.
+    #[must_use]
+    pub fn fits_no_chord(&self) -> bool {
+        let there = self.sounding();
+        let texture = self.piece.texture;
+        let Some(sonority) = there.sonority() else {
+            return false;
+        };
+        let from = sonority.onset - Time::new(2, 1);
+        let explained = |voice: usize| {
+            let note = texture.note(there.index, voice);
+            let list = self.piece.analysis.dissonances();
+            let first = list.partition_point(|d| d.at < from);
+            list.iter()
+                .skip(first)
+                .take_while(|d| d.at <= sonority.onset + Time::new(1, 1))
+                .any(|d| {
+                    d.reading
+                        .is_some_and(|r| r.voice == voice && Some(r.note) == note)
+                })
+        };
+        let pitches: Vec<_> = texture
+            .sounding(there.index)
+            .filter(|&voice| !explained(voice))
+            .filter_map(|voice| there.pitch(voice))
+            .collect();
+        !fits_thirds(&pitches)
+    }
+
     /// Both notes are struck where they begin to disagree.
     #[must_use]
     pub fn is_struck_together(&self) -> bool {
@@ -161,4 +191,16 @@ impl<'a> Discord<'a> {
             text(self.other())
         )
     }
+}
+
+/// The letters are part of a stack of four thirds, and no letter has two signs.
+fn fits_thirds(pitches: &[Pitch]) -> bool {
+    let consistent = pitches.iter().all(|a| {
+        pitches
+            .iter()
+            .all(|b| a.letter() != b.letter() || a.sign == b.sign)
+    });
+    let letters: u8 = pitches.iter().fold(0, |set, p| set | 1 << p.letter());
+    let chord = |root: usize| -> u8 { (0..4).map(|third| 1 << ((root + 2 * third) % 7)).sum() };
+    consistent && (0..7).any(|root| letters & !chord(root) == 0)
 }

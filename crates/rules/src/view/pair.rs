@@ -255,6 +255,19 @@ impl<'a> PairMove<'a> {
         self.step.after().is_some_and(|gap| gap.semitones == 0)
     }
 
+    /// In three parts or more, the upper voice rises by step into a unison with the bass, which leaps
+    /// up a fourth or a fifth: the leading note at a close.
+    #[must_use]
+    pub fn closes_into_unison(&self) -> bool {
+        self.parts() >= 3
+            && self.is_in_unison_after()
+            && self.steps(self.pair.upper)
+            && self.rises(self.pair.upper)
+            && self.rises(self.pair.lower)
+            && self.is_with_bass() == Some(true)
+            && self.bass_leaps_fourth_or_fifth()
+    }
+
     /// The case that fits, of those for the last chord, for the outer voices, and for a pair
     /// with an inner voice.
     #[must_use]
@@ -311,10 +324,27 @@ impl<'a> PairMove<'a> {
         }
     }
 
-    /// A change of position in one chord of three parts or more is no arrival.
+    /// A change of position in one chord of three parts or more is no arrival, whatever passes
+    /// between the beats.
     #[must_use]
     pub fn only_changes_position(&self) -> bool {
-        self.parts() >= 3 && self.sounding.may_keep_chord()
+        self.parts() >= 3 && self.sounding.may_only_change_position()
+    }
+
+    /// It arrives on a beat from a note between beats that one of the two reached by step, or by a
+    /// chromatic semitone.
+    #[must_use]
+    pub fn leaves_ornament(&self) -> bool {
+        let piece = self.sounding.piece;
+        let between = std::iter::successors(self.sounding.neighbour(-1), |s| s.neighbour(-1))
+            .take_while(|there| there.is_off_beat());
+        let voices = [self.pair.upper, self.pair.lower];
+        let mut moves = between.flat_map(|there| {
+            let moved = move |v| piece.texture.displacement(piece.score, there.index, v);
+            voices.map(moved).into_iter().flatten()
+        });
+        !self.sounding.is_off_beat()
+            && moves.any(|gap| gap.semitones != 0 && Interval(gap).size() <= 1)
     }
 
     /// The fifth of a pair of horns: from a sixth or third by a step in the upper voice, and on

@@ -90,6 +90,14 @@ impl<'a> Piece<'a> {
         passages
     }
 
+    /// A passage takes in a beat, and does not lie between two.
+    #[must_use]
+    pub fn is_on_a_beat(self, passage: &Passage) -> bool {
+        let lasts = passage.until - passage.from;
+        (passage.first..passage.end).any(|k| !self.sounding(k).is_off_beat())
+            || self.cell_at(passage.from).is_none_or(|cell| lasts >= cell)
+    }
+
     /// The sonorities in order.
     pub fn soundings(self) -> impl Iterator<Item = Sounding<'a>> {
         (0..self.texture.sonorities().len()).map(move |index| Sounding { piece: self, index })

@@ -218,14 +218,20 @@ impl<'a> Line<'a> {
     }
 
     /// The phrases that end with a fermata or a breath of this voice: where each begins and ends.
+    /// What a rest cuts off without a mark is left out.
     #[must_use]
     pub fn marked_phrases(&self) -> Vec<(Time, Time)> {
         let notes = self.declared().map_or(&[][..], |v| &v.notes);
         let mut from = notes.first().map(|note| note.onset);
         let mut phrases = Vec::new();
-        for note in notes.iter().filter(|note| note.ends_phrase()) {
-            phrases.extend(from.map(|from| (from, note.end())));
-            from = Some(note.end());
+        for note in notes {
+            // A rest ends a phrase too; one without a mark may be no phrase at all.
+            if note.ends_phrase() {
+                phrases.extend(from.map(|from| (from, note.end())));
+            }
+            if note.ends_phrase() || note.sound.pitch().is_none() {
+                from = Some(note.end());
+            }
         }
         phrases
     }

@@ -92,6 +92,17 @@ impl<'a> Sounding<'a> {
         gap.is_some_and(|gap| Interval(gap).size() > steps)
     }
 
+    /// Two neighbours above the lowest voice in the score stand further apart than a number of
+    /// scale steps.
+    #[must_use]
+    pub fn has_wide_neighbours(self, steps: i32) -> bool {
+        let pairs = self.piece.texture.pairs().iter();
+        let lowest = self.outer().map(|outer| outer.lower);
+        pairs
+            .filter(|&&pair| Some(pair.lower) != lowest && self.are_neighbours(pair))
+            .any(|&pair| self.is_wider_than(pair, steps))
+    }
+
     /// Every voice sounds on both sides of the step, moves, and all move the same way: whether
     /// upward. `None` otherwise, and across the end of a phrase.
     #[must_use]
@@ -110,6 +121,21 @@ impl<'a> Sounding<'a> {
         });
         let first = ways.next()??;
         ways.all(|way| way == Some(first)).then_some(first)
+    }
+
+    /// The lowest voice leaps a fifth or an octave into it, and the highest in the score moves by
+    /// step.
+    #[must_use]
+    pub fn bass_leaps_under_step(self) -> bool {
+        let moved = |voice| {
+            let gap = self
+                .piece
+                .texture
+                .displacement(self.piece.score, self.index, voice)?;
+            Some(Interval(gap).size())
+        };
+        let top = self.outer().and_then(|outer| moved(outer.upper));
+        top == Some(1) && matches!(self.bass().and_then(moved), Some(4 | 7))
     }
 
     /// The voices go in sixth chords: over the lowest a third and a sixth, before and after.
@@ -202,13 +228,49 @@ impl<'a> Sounding<'a> {
         }
     }
 
+    /// The chord may be the one before, or but for what passes between the beats the one of the beat
+    /// before.
+    #[must_use]
+    pub fn may_only_change_position(self) -> bool {
+        self.may_keep_chord() || self.may_keep_chord_since_beat()
+    }
+
+    /// It comes on a beat after ornaments between beats, each reached by step, and the chord may be
+    /// the one of the beat before.
+    fn may_keep_chord_since_beat(self) -> bool {
+        if self.is_off_beat() || self.parts() < 3 {
+            return false;
+        }
+        let texture = self.piece.texture;
+        let ornamental = |there: &Sounding<'_>| {
+            texture.sounding(there.index).all(|voice| {
+                let moved = texture.displacement(self.piece.score, there.index, voice);
+                moved.is_some_and(|gap| Interval(gap).size() <= 1)
+            })
+        };
+        let mut there = self;
+        while let Some(before) = there.neighbour(-1) {
+            if !before.is_off_beat() {
+                return there.index < self.index && self.fits_one_chord_with(before, 4);
+            }
+            if !ornamental(&before) {
+                return false;
+            }
+            there = before;
+        }
+        false
+    }
+
     /// This sonority and the one before fit into one chord of so many notes, a third apart; two
     /// whole major or minor triads on different roots never do.
     #[must_use]
     pub fn fits_one_chord(self, notes: usize) -> bool {
-        let Some(before) = self.neighbour(-1) else {
-            return false;
-        };
+        self.neighbour(-1)
+            .is_some_and(|before| self.fits_one_chord_with(before, notes))
+    }
+
+    /// The same with another sonority.
+    fn fits_one_chord_with(self, before: Sounding<'_>, notes: usize) -> bool {
         let (mut signs, mut letters) = ([None; 7], [0_u8; 2]);
         for (there, letters) in [before, self].into_iter().zip(&mut letters) {
             for voice in there.piece.texture.sounding(there.index) {

@@ -35,11 +35,23 @@
 //!
 //! # Does not apply
 //!
+//! In free writing, and in a chorale by an octave, which only moves the note before to another
+//! register:
+//!
 //! ```voices
 //! style free
 //!
 //! S | C5 - | F5 E5 |
 //! B | A3 - | C4 -  |
+//! ```
+//!
+//! ```voices
+//! style chorale
+//!
+//! S | E5 - | F#5 - |
+//! A | A4 - | A4  - |
+//! T | E4 - | D4  - |
+//! B | C3 - | C4 B3 |
 //! ```
 //!
 //! # What to do
@@ -77,6 +89,11 @@ fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
     let Some(Figure::Appoggiatura) = discord.figure() else {
         return;
     };
+    let style = found.style();
+    let is_octave = discord.steps_into().is_some_and(|steps| steps.abs() == 7);
+    if is_octave && !style.is_species() && style != Style::Motet {
+        return;
+    }
     let case = &ORDINARY;
     found.dissonance(case, discord, || {
         format!(

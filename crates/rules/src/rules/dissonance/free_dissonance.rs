@@ -53,6 +53,18 @@
 //! C | C4 - - - | B3 - - - | C4 - - - |
 //! ```
 //!
+//! In a chorale, where not even a seventh chord holds the notes together:
+//!
+//! ```voices
+//! style chorale
+//!
+//! S | C5 G5 C5 |
+//! //     ^^ free dissonance: S and B
+//! A | G4 A4 G4 |
+//! T | E4 C4 E4 |
+//! B | C3 F3 C3 |
+//! ```
+//!
 //! # Passes
 //!
 //! ```voices
@@ -67,11 +79,22 @@
 //!
 //! # Does not apply
 //!
+//! In free writing, and in a chorale where the notes make a seventh chord:
+//!
 //! ```voices
 //! style free
 //!
 //! S | C5 - F5 - | A4 - - - |
 //! B | A3 - C4 - | F3 - - - |
+//! ```
+//!
+//! ```voices
+//! style chorale
+//!
+//! S | C5 E5 E5 |
+//! A | G4 A4 G4 |
+//! T | E4 C4 C4 |
+//! B | C3 F3 C3 |
 //! ```
 //!
 //! # What to do
@@ -83,11 +106,13 @@ use crate::prelude::*;
 /// The rule.
 pub const RULE: Rule = Rule {
     looks: Looks::Dissonances(check),
-    cases: &[&ORDINARY, &LEAP, &FOURTH, &FIRST],
+    cases: &[&ORDINARY, &LEAP, &FOURTH, &FIRST, &NO_CHORD],
     numbers: &[],
     sources: &[
         source::FUX,
         source::GROVE.at("Strict Counterpoint"),
+        source::CHORALES_READ
+            .at("16 places in no chord, most of them suspensions struck again or left by leap"),
         source::LEHMANN.at("lesson I"),
         source::OPEN_MUSIC_THEORY,
         source::FUX_FIGURES.at("none in 75 figures"),
@@ -176,6 +201,21 @@ static FIRST: Case = Case {
     ],
 };
 
+static NO_CHORD: Case = Case {
+    name: "no-chord",
+    when: "in a sonority that makes no triad or seventh chord, ornaments and suspensions left out; in strict styles as the other cases",
+    settings: &[
+        allow(
+            Style::Free,
+            "chords of the ninth and more are at home there",
+        ),
+        fault(
+            Style::Chorale,
+            "what is no figure is a fault, and this is no chord either (Grove; 16 places in 156 chorales)",
+        ),
+    ],
+};
+
 fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
     let style = found.style_of(&[discord.dissonant().0]);
     if style == Style::Species1 && discord.is_over_bass() && discord.suspension().is_some() {
@@ -194,7 +234,10 @@ fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
     }
     let leap = |steps: Option<i32>| steps.is_some_and(|steps| steps.abs() >= 2);
     let (into, out) = (leap(discord.steps_into()), leap(discord.steps_out()));
-    let case = if discord.is_fourth_over_bass() {
+    let mixed = !style.is_species() && style != Style::Motet;
+    let case = if mixed && discord.fits_no_chord() {
+        &NO_CHORD
+    } else if discord.is_fourth_over_bass() {
         &FOURTH
     } else if into || out {
         &LEAP
@@ -208,8 +251,13 @@ fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
             (false, true) => (", left by leap", "Leave it by step"),
             (false, false) => ("", "Move it to a weaker moment"),
         };
+        let chord = if std::ptr::eq(case, &NO_CHORD) {
+            ", and no triad or seventh chord holds both"
+        } else {
+            ""
+        };
         format!(
-            "Free dissonance: {}{how}. {advice}, or make it consonant.",
+            "Free dissonance: {}{how}{chord}. {advice}, or make it consonant.",
             discord.words()
         )
     });

@@ -15,6 +15,18 @@
 //! B | E3 - - - | C4 - - - | A3 - - - |
 //! ```
 //!
+//! In a chorale, where no seventh chord holds the notes together:
+//!
+//! ```voices
+//! style chorale
+//!
+//! S | C5 Eb5 C5 |
+//! //     ^^^ upper clash (weakness): S and A
+//! A | G4 E4  G4 |
+//! T | C4 C4  C4 |
+//! B | C3 C3  C3 |
+//! ```
+//!
 //! # Passes
 //!
 //! The fifth is held and goes down to make room for the sixth:
@@ -47,7 +59,7 @@ use crate::prelude::*;
 /// The rule.
 pub const RULE: Rule = Rule {
     looks: Looks::Dissonances(check),
-    cases: &[&ORDINARY],
+    cases: &[&ORDINARY, &NO_CHORD],
     numbers: &[],
     sources: &[source::LEHMANN.at("lesson XIII")],
 };
@@ -72,11 +84,33 @@ static ORDINARY: Case = Case {
     ],
 };
 
+static NO_CHORD: Case = Case {
+    name: "no-chord",
+    when: "the same in a sonority that makes no triad or seventh chord, ornaments and suspensions left out; in strict styles as elsewhere",
+    settings: &[
+        allow(
+            Style::Free,
+            "chords of the ninth and more are at home there",
+        ),
+        weakness(
+            Style::Chorale,
+            "upper voices agree, or are notes of one chord",
+        ),
+    ],
+};
+
 fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
     if !discord.is_unexplained() || discord.is_over_bass() {
         return;
     }
-    found.dissonance(&ORDINARY, discord, || {
+    let style = found.style();
+    let mixed = !style.is_species() && style != Style::Motet;
+    let case = if mixed && discord.fits_no_chord() {
+        &NO_CHORD
+    } else {
+        &ORDINARY
+    };
+    found.dissonance(case, discord, || {
         format!(
             "Upper clash: {}. Prepare one of them, or let them agree.",
             discord.words()

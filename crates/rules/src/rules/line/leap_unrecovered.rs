@@ -45,13 +45,20 @@
 //!
 //! # Does not apply
 //!
-//! In the bass of three parts and more, octaves apart, in free writing, and where a phrase ends:
+//! In the bass of three parts and more, octaves apart, in free writing, where a phrase ends, and in
+//! a chorale after a fourth:
 //!
 //! ```voices
 //! style chorale
 //!
 //! S | E4 C5^ D5 |
 //! B | A2 E3  F3 |
+//! ```
+//!
+//! ```voices
+//! style chorale
+//!
+//! S | D4 G4 A4 B4 |
 //! ```
 //!
 //! # What to do
@@ -63,14 +70,16 @@ use crate::prelude::*;
 /// The rule.
 pub const RULE: Rule = Rule {
     looks: Looks::Lines(check),
-    cases: &[&LARGE, &OCTAVE, &SMALL],
+    cases: &[&LARGE, &OCTAVE, &FIFTH, &FOURTH],
     numbers: &[],
     sources: &[
         source::OPEN_MUSIC_THEORY,
+        source::COLAROS.looser("only leaps beyond a fourth"),
         source::JEPPESEN,
         source::RENAISSANCE_WORKS
             .at("octaves turned back: 46 of 52 in Palestrina, 802 of 871 in other sacred music and songs, 698 of 763 in madrigals")
             .looser("one in ten goes on"),
+        source::CHORALES_READ.at("upper voices after a fourth: back 957, on for two steps 133, most of these from an upbeat"),
         source::FUX_FIGURES.at("10 leaps of a fifth or more not turned back, in 44 figures"),
     ],
 };
@@ -100,14 +109,28 @@ static OCTAVE: Case = Case {
     ],
 };
 
-static SMALL: Case = Case {
-    name: "fourth-or-fifth",
-    when: "a fourth or fifth after which the line goes on the same way for two steps, or leaps on out of a triad",
+static FIFTH: Case = Case {
+    name: "fifth",
+    when: "a fifth after which the line goes on the same way for two steps, or leaps on out of a triad",
     settings: &[
         allow(Style::Free, "a matter of taste"),
         weakness(Style::Chorale, "handbooks ask for it (Open Music Theory)"),
         weakness(Style::Motet, "handbooks ask for it (Jeppesen, from memory)"),
         weakness(Style::Species1, "Fux turns back after all but ten leaps"),
+    ],
+};
+
+static FOURTH: Case = Case {
+    name: "fourth",
+    when: "the same of a fourth",
+    settings: &[
+        allow(Style::Free, "a matter of taste"),
+        allow(
+            Style::Chorale,
+            "asked only of leaps beyond a fourth (Colaros)",
+        ),
+        weakness(Style::Motet, "handbooks ask for it (Jeppesen, from memory)"),
+        weakness(Style::Species1, "handbooks ask for it (Open Music Theory)"),
     ],
 };
 
@@ -125,7 +148,8 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
             size if bass && size != 7 => continue,
             7 => &OCTAVE,
             5.. => &LARGE,
-            3 | 4 => &SMALL,
+            4 => &FIFTH,
+            3 => &FOURTH,
             _ => continue,
         };
         let Some(next) = line.after(i) else { continue };

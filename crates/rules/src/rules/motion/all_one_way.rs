@@ -25,7 +25,8 @@
 //!
 //! # Does not apply
 //!
-//! A chain of sixth chords, and a chord that may be the same:
+//! A chain of sixth chords, a chord that may be the same, and in a chorale a bass that leaps a
+//! fifth under a step in the highest voice, as at every close:
 //!
 //! ```voices
 //! style chorale
@@ -43,6 +44,15 @@
 //! B | C3 G3 |
 //! ```
 //!
+//! ```voices
+//! style chorale
+//!
+//! S | D5 C5 |
+//! A | B4 G4 |
+//! T | G4 E4 |
+//! B | G3 C3 |
+//! ```
+//!
 //! # What to do
 //!
 //! Let one voice stay or move the other way; most often the bass.
@@ -52,9 +62,15 @@ use crate::prelude::*;
 /// The rule.
 pub const RULE: Rule = Rule {
     looks: Looks::Sonorities(check),
-    cases: &[&ORDINARY],
+    cases: &[&ORDINARY, &BASS],
     numbers: &[],
-    sources: &[source::KOSTKA_PAYNE, source::PROUT_HARMONY],
+    sources: &[
+        source::KOSTKA_PAYNE,
+        source::PROUT_HARMONY,
+        source::CHORALES_READ.at(
+            "where the upper voices go one way outside one chord, a bass that steps goes with them 33 times and against them 465",
+        ),
+    ],
 };
 
 static ORDINARY: Case = Case {
@@ -68,8 +84,22 @@ static ORDINARY: Case = Case {
     ],
 };
 
+static BASS: Case = Case {
+    name: "bass",
+    when: "the same where the bass leaps a fifth, or an octave, and the highest voice moves by step",
+    settings: &[
+        allow(Style::Free, "a matter of taste"),
+        allow(
+            Style::Chorale,
+            "the close (direct octaves allow it): over a bass that leaps a fifth the three upper voices, going one way, go with it 210 times and against it 6 (156 chorales); an octave, 23 and 7",
+        ),
+        weakness(Style::Motet, "as over any other bass"),
+        weakness(Style::Species1, "as over any other bass"),
+    ],
+};
+
 fn check(there: &Sounding<'_>, found: &mut Found<'_>) {
-    if there.parts() < 3 || there.may_keep_chord() {
+    if there.parts() < 3 || there.may_only_change_position() {
         return;
     }
     let Some(rising) = there.all_move_one_way() else {
@@ -79,7 +109,12 @@ fn check(there: &Sounding<'_>, found: &mut Found<'_>) {
         return;
     }
     let voices: Vec<usize> = there.piece.texture.sounding(there.index).collect();
-    found.sonority(&ORDINARY, &voices, there.onset(), || {
+    let case = if there.bass_leaps_under_step() {
+        &BASS
+    } else {
+        &ORDINARY
+    };
+    found.sonority(case, &voices, there.onset(), || {
         let way = if rising { "up" } else { "down" };
         format!(
             "All one way: {} all move {way} together. Let one of them stay or move the other way.",

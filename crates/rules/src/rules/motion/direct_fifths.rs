@@ -34,6 +34,18 @@
 //! //     ^ direct fifths (weakness): S and A
 //! ```
 //!
+//! Where the upper voice leaps from an ornament between beats, it is a weakness:
+//!
+//! ```voices
+//! style chorale
+//!
+//! S | D5.Eb5 C5 |
+//! //         ^^ direct fifths (weakness): S and B
+//! A | F4     F4 |
+//! T | Bb3    A3 |
+//! B | Bb3    F3 |
+//! ```
+//!
 //! # Passes
 //!
 //! The upper voice moves by step:
@@ -56,6 +68,17 @@
 //! A | E4 A4 |
 //! T | C4 D4 |
 //! B | F3 D3 |
+//! ```
+//!
+//! Nor where the chord only changes its position, whatever passes between the beats:
+//!
+//! ```voices
+//! style chorale
+//!
+//! S | D5     A4  |
+//! A | A4     F#4 |
+//! T | D4     D4  |
+//! B | F#3.E3 D3  |
 //! ```
 //!
 //! Nor where a voice lies above the upper of the two, whatever its place in the score:
@@ -94,6 +117,7 @@ pub const RULE: Rule = Rule {
         &OUTER,
         &THREE_OUTER,
         &THREE_INNER,
+        &ORNAMENT,
     ],
     numbers: &[],
     sources: &[
@@ -182,6 +206,25 @@ static THREE_INNER: Case = Case {
     )],
 };
 
+static ORNAMENT: Case = Case {
+    name: "ornament",
+    when: "between the outer voices, the upper one leaping, where one of the two leaves an ornament between beats that it reached by step",
+    settings: &[
+        weakness(
+            Style::Free,
+            "as for parallels that an unaccented ornament makes (Dahn 2016)",
+        ),
+        allow(
+            Style::Motet,
+            "ornaments excuse nothing: told as without them",
+        ),
+        allow(
+            Style::Species1,
+            "ornaments excuse nothing: told as without them",
+        ),
+    ],
+};
+
 fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
     if !step.is_direct(Family::Fifth) {
         return;
@@ -195,6 +238,7 @@ fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
         Direct::TwoParts => &TWO_PARTS,
         Direct::TwoPartsStep if found.style() == Style::Motet && step.is_horn_fifth() => return,
         Direct::TwoPartsStep => &TWO_PARTS_STEP,
+        Direct::ThreeOuter | Direct::Outer if !strict && step.leaves_ornament() => &ORNAMENT,
         Direct::ThreeOuter => &THREE_OUTER,
         Direct::ThreeInner => &THREE_INNER,
         Direct::Outer => &OUTER,

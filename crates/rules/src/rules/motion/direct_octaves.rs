@@ -23,6 +23,18 @@
 //! //     ^^ direct octaves: S and B
 //! ```
 //!
+//! Where the upper voice leaps from an ornament between beats, it is a weakness:
+//!
+//! ```voices
+//! style chorale
+//!
+//! S | E4.F4 D4 |
+//! //        ^^ direct octaves (weakness): S and B
+//! A | C#4   A3 |
+//! T | A3    F3 |
+//! B | A3    D3 |
+//! ```
+//!
 //! # Passes
 //!
 //! The upper voice moves by step, as at every cadence:
@@ -62,6 +74,7 @@ pub const RULE: Rule = Rule {
         &OUTER,
         &THREE_OUTER,
         &THREE_INNER,
+        &ORNAMENT,
     ],
     numbers: &[],
     sources: &[
@@ -146,6 +159,25 @@ static THREE_INNER: Case = Case {
     )],
 };
 
+static ORNAMENT: Case = Case {
+    name: "ornament",
+    when: "between the outer voices, the upper one leaping, where one of the two leaves an ornament between beats that it reached by step",
+    settings: &[
+        weakness(
+            Style::Free,
+            "as for parallels that an unaccented ornament makes (Dahn 2016)",
+        ),
+        allow(
+            Style::Motet,
+            "ornaments excuse nothing: told as without them",
+        ),
+        allow(
+            Style::Species1,
+            "ornaments excuse nothing: told as without them",
+        ),
+    ],
+};
+
 fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
     if !step.is_direct(Family::Octave) || step.is_in_unison_after() {
         return;
@@ -158,6 +190,7 @@ fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
     let case = match step.direct() {
         Direct::TwoParts => &TWO_PARTS,
         Direct::TwoPartsStep => &TWO_PARTS_STEP,
+        Direct::ThreeOuter | Direct::Outer if !strict && step.leaves_ornament() => &ORNAMENT,
         Direct::ThreeOuter => &THREE_OUTER,
         Direct::ThreeInner => &THREE_INNER,
         Direct::Outer => &OUTER,

@@ -9,7 +9,7 @@
 //!
 //! S | E4 B |
 //! A | C4 F |
-//! //     ^ overlap (weakness): S and A
+//! //     ^ overlap (remark): S and A
 //! B | C3 D |
 //! ```
 //!
@@ -25,7 +25,8 @@
 //!
 //! # Does not apply
 //!
-//! The chord may well be the same, only its notes change place:
+//! The chord may well be the same, only its notes change place; nor a leading note that meets the
+//! bass at a close:
 //!
 //! ```voices
 //! style chorale
@@ -33,6 +34,14 @@
 //! S | E4 C5 |
 //! A | C4 G4 |
 //! B | C3 E3 |
+//! ```
+//!
+//! ```voices
+//! style chorale
+//!
+//! S | D5 E5 |
+//! T | B3 C4 |
+//! B | G3 C4 |
 //! ```
 //!
 //! # What to do
@@ -52,6 +61,9 @@ pub const RULE: Rule = Rule {
         source::BACH_CHORALES
             .at("some 1,536 between neighbours")
             .looser("common in inner voices"),
+        source::CHORALES_READ.looser(
+            "91 of 412 pairs of neighbours that leap the same way, outside one chord; had the leaps nothing to do with the room left, 119",
+        ),
     ],
 };
 
@@ -60,15 +72,16 @@ static ORDINARY: Case = Case {
     when: "between neighbouring voices, both ends uncrossed, not from a unison",
     settings: &[
         allow(Style::Free, "too common to be worth a word"),
-        weakness(
+        remark(
             Style::Chorale,
-            "handbooks warn of it; the chorales have some 1,500",
+            "handbooks warn of it; the chorales take it nearly as often as chance would (91 places; 119)",
         ),
         weakness(Style::Species1, "handbooks warn of it (Open Music Theory)"),
     ],
 };
 
 fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
+    let strict = found.style().is_species();
     if !step.step.overlaps()
         || step.is_in_unison_before()
         || !step.sounding.are_neighbours(step.pair)
@@ -80,7 +93,8 @@ fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
         step.is_with_bass() == Some(true) && step.size_of_move(step.foot()) == Some(7);
     if bass_changes_octave
         || score.are_equal(step.pair.upper, step.pair.lower)
-        || step.sounding.may_keep_chord()
+        || step.sounding.may_only_change_position()
+        || (!strict && step.closes_into_unison())
     {
         return;
     }

@@ -23,7 +23,7 @@
 //!
 //! # Does not apply
 //!
-//! In a motet, where an inner voice takes part:
+//! In a motet or a chorale, where an inner voice takes part:
 //!
 //! ```voices
 //! style motet
@@ -69,6 +69,9 @@ pub const RULE: Rule = Rule {
         source::RENAISSANCE_WORKS.looser(
             "with an inner voice, in three parts or more, 1,467 pairs leap the same way and 1,366 apart",
         ),
+        source::CHORALES_READ.looser(
+            "with an inner voice, outside one chord and the bass's fourths and fifths, 441 pairs leap the same way and 233 apart; the outer voices 33 and 26",
+        ),
     ],
 };
 
@@ -88,7 +91,10 @@ static INNER: Case = Case {
     when: "the same where an inner voice takes part",
     settings: &[
         allow(Style::Free, "a matter of taste"),
-        weakness(Style::Chorale, "handbooks warn of it"),
+        allow(
+            Style::Chorale,
+            "inner voices that leap go the same way oftener than not: 441 pairs against 233 (156 chorales)",
+        ),
         allow(
             Style::Motet,
             "inner voices that leap go the same way as often as not (314 works)",
@@ -111,7 +117,11 @@ const MORE: [&str; 7] = [
 fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
     let (top, foot) = (step.top(), step.foot());
     let same_way = matches!(step.motion(), Some(Motion::Parallel | Motion::Similar));
-    if !same_way || !step.leaps(top) || !step.leaps(foot) || step.sounding.may_keep_chord() {
+    if !same_way
+        || !step.leaps(top)
+        || !step.leaps(foot)
+        || step.sounding.may_only_change_position()
+    {
         return;
     }
     // The perfect interval they leap into says more, and so does one voice leaping beyond the
