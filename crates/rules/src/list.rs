@@ -52,6 +52,8 @@ pub mod direct_unisons;
 pub mod dissonance_into_perfect;
 #[path = "rules/dissonance/double_neighbour.rs"]
 pub mod double_neighbour;
+#[path = "rules/harmony/doubling.rs"]
+pub mod doubling;
 #[path = "rules/motion/downbeat_consecutives.rs"]
 pub mod downbeat_consecutives;
 #[path = "rules/species/eighth_notes.rs"]
@@ -72,6 +74,8 @@ pub mod free_dissonance;
 pub mod high_point_repeated;
 #[path = "rules/line/high_points_together.rs"]
 pub mod high_points_together;
+#[path = "rules/harmony/incomplete_chord.rs"]
+pub mod incomplete_chord;
 #[path = "rules/harmony/leading_note_doubled.rs"]
 pub mod leading_note_doubled;
 #[path = "rules/line/leap_across_bar.rs"]
@@ -146,12 +150,16 @@ pub mod resolution_sounding;
 pub mod retardation;
 #[path = "rules/motion/running_imperfects.rs"]
 pub mod running_imperfects;
+#[path = "rules/harmony/seventh_doubled.rs"]
+pub mod seventh_doubled;
 #[path = "rules/line/seventh_leap.rs"]
 pub mod seventh_leap;
 #[path = "rules/motion/similar_leaps.rs"]
 pub mod similar_leaps;
 #[path = "rules/dissonance/six_five_exchange.rs"]
 pub mod six_five_exchange;
+#[path = "rules/harmony/six_four_doubling.rs"]
+pub mod six_four_doubling;
 #[path = "rules/line/sixth_leap.rs"]
 pub mod sixth_leap;
 #[path = "rules/sonority/spacing.rs"]
@@ -234,7 +242,11 @@ pub(crate) static FILES: &[File] = &[
     file!("dissonance", suspension_preparation),
     file!("dissonance", suspension_resolution),
     file!("dissonance", upper_clash),
+    file!("harmony", doubling),
+    file!("harmony", incomplete_chord),
     file!("harmony", leading_note_doubled),
+    file!("harmony", seventh_doubled),
+    file!("harmony", six_four_doubling),
     file!("line", augmented_interval),
     file!("line", broken_chord),
     file!("line", chromatic_semitone),

@@ -265,6 +265,12 @@ impl<'a> Chord<'a> {
         degree(self.key()?, self.segment.chord.root)
     }
 
+    /// The degree of a note in the local key, as [`Chord::degree`] tells the root's.
+    #[must_use]
+    pub fn degree_of(&self, pitch: Pitch) -> Option<u8> {
+        degree(self.key()?, fifths(pitch))
+    }
+
     /// The tonic it leads to: a fifth below a major triad or dominant seventh, a semitone above
     /// the root of a diminished chord.
     #[must_use]

@@ -13,6 +13,19 @@
 //! B | C3 F3 |
 //! ```
 //!
+//! Worst of all between two chords in root position a step apart:
+//!
+//! ```voices
+//! style chorale
+//! key C major
+//!
+//! S | A4 B4 |
+//! //     ^^ all one way (weakness): S and A and T and B
+//! A | F4 G4 |
+//! T | C4 D4 |
+//! B | F3 G3 |
+//! ```
+//!
 //! # Passes
 //!
 //! ```voices
@@ -52,9 +65,14 @@ use crate::prelude::*;
 /// The rule.
 pub const RULE: Rule = Rule {
     looks: Looks::Sonorities(check),
-    cases: &[&ORDINARY],
+    cases: &[&ORDINARY, &ROOT_STEP],
     numbers: &[],
-    sources: &[source::KOSTKA_PAYNE, source::PROUT_HARMONY],
+    sources: &[
+        source::KOSTKA_PAYNE,
+        source::PROUT_HARMONY,
+        source::OPEN_MUSIC_THEORY,
+        source::BUTTERFIELD,
+    ],
 };
 
 static ORDINARY: Case = Case {
@@ -63,6 +81,17 @@ static ORDINARY: Case = Case {
     settings: &[
         allow(Style::Free, "a matter of taste"),
         weakness(Style::Chorale, "handbooks warn of it (Prout, from memory)"),
+        weakness(Style::Motet, "handbooks warn of it"),
+        weakness(Style::Species1, "handbooks warn of it"),
+    ],
+};
+
+static ROOT_STEP: Case = Case {
+    name: "root-step",
+    when: "the same between two chords in root position whose roots are a step apart",
+    settings: &[
+        weakness(Style::Free, "the upper parts should go against the bass"),
+        weakness(Style::Chorale, "the upper parts should go against the bass"),
         weakness(Style::Motet, "handbooks warn of it"),
         weakness(Style::Species1, "handbooks warn of it"),
     ],
@@ -79,10 +108,17 @@ fn check(there: &Sounding<'_>, found: &mut Found<'_>) {
         return;
     }
     let voices: Vec<usize> = there.piece.texture.sounding(there.index).collect();
-    found.sonority(&ORDINARY, &voices, there.onset(), || {
+    let by_root_step = there.steps_between_roots();
+    let case = if by_root_step { &ROOT_STEP } else { &ORDINARY };
+    found.sonority(case, &voices, there.onset(), || {
         let way = if rising { "up" } else { "down" };
+        let mend = if by_root_step {
+            "Two chords in root position a step apart: let the upper voices go against the bass."
+        } else {
+            "Let one of them stay or move the other way."
+        };
         format!(
-            "All one way: {} all move {way} together. Let one of them stay or move the other way.",
+            "All one way: {} all move {way} together. {mend}",
             there.piece.names(&voices)
         )
     });

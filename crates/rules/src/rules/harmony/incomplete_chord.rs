@@ -1,0 +1,116 @@
+//! A chord lacks a note that it cannot do without.
+//!
+//! Why: the fifth of a chord in root position may go; without the third the chord is neither major nor minor, and an inverted chord lacks body.
+//!
+//! # Fails
+//!
+//! ```voices
+//! style chorale
+//! key C major
+//! metre 4/4
+//!
+//! S | C5 - D5 - | C5 - - - |
+//! //       ^ incomplete chord: S and A and T and B
+//! A | E4 - F4 - | E4 - - - |
+//! T | G3 - G3 - | G3 - - - |
+//! B | C3 - G2 - | C3 - - - |
+//! ```
+//!
+//! # Passes
+//!
+//! ```voices
+//! style chorale
+//! key C major
+//! metre 4/4
+//!
+//! S | C5 - B4 - | C5 - - - |
+//! A | E4 - F4 - | E4 - - - |
+//! T | G3 - G3 - | G3 - - - |
+//! B | C3 - G2 - | C3 - - - |
+//! ```
+//!
+//! # Does not apply
+//!
+//! At a close the root may be there three times, and the fifth not at all:
+//!
+//! ```voices
+//! style chorale
+//! key C major
+//! metre 4/4
+//!
+//! S | C5 - B4 - | C5 - - - |
+//! A | E4 - D4 - | C4 - - - |
+//! T | G3 - F3 - | E3 - - - |
+//! B | C3 - G2 - | C3 - - - |
+//! ```
+//!
+//! # What to do
+//!
+//! Let one of the voices that double take the note that is missing.
+
+use crate::prelude::*;
+
+/// The rule.
+pub const RULE: Rule = Rule {
+    looks: Looks::Chords(check),
+    cases: &[&THIRD, &INVERTED],
+    numbers: &[],
+    sources: &[
+        source::ADVANCED_PLACEMENT.at("question 6"),
+        source::OPEN_MUSIC_THEORY,
+    ],
+};
+
+static THIRD: Case = Case {
+    name: "",
+    when: "in four parts or more, a chord without its third as long as it lasts, a beat at least; not where the missing third is told of by itself, nor where a voice enters or ends its phrase",
+    settings: &[
+        fault(Style::Free, "only the fifth may go"),
+        fault(Style::Chorale, "only the fifth may go"),
+        allow(Style::Motet, "the missing third is told of by itself"),
+        allow(Style::Species1, "the missing third is told of by itself"),
+    ],
+};
+
+static INVERTED: Case = Case {
+    name: "inverted",
+    when: "in four parts or more, a triad that stays inverted and lacks its root or its fifth as long as it lasts",
+    settings: &[
+        weakness(Style::Free, "only in root position may the fifth go"),
+        weakness(Style::Chorale, "only in root position may the fifth go"),
+        allow(Style::Motet, "the style counts intervals, not chords"),
+        allow(Style::Species1, "the style counts intervals, not chords"),
+    ],
+};
+
+fn check(chord: &Chord<'_>, found: &mut Found<'_>) {
+    let Some(there) = chord.settled().filter(|there| there.parts() >= 4) else {
+        return;
+    };
+    let (case, tone) = if chord.lacks(Tone::Third) {
+        (&THIRD, Tone::Third)
+    } else if chord.has_seventh() || !chord.stays_inverted() {
+        return;
+    } else if chord.lacks(Tone::Fifth) {
+        (&INVERTED, Tone::Fifth)
+    } else if chord.lacks(Tone::Root) {
+        (&INVERTED, Tone::Root)
+    } else {
+        return;
+    };
+    let told = |s: Sounding<'_>| found.is_told_of_sonority("third-missing", &s);
+    let ends = chord.soundings().any(Sounding::opens_or_closes);
+    if tone == Tone::Third && (ends || chord.soundings().any(told)) {
+        return;
+    }
+    let voices: Vec<usize> = there.piece.texture.sounding(there.index).collect();
+    found.sonority(case, &voices, there.onset(), || {
+        format!(
+            "Incomplete chord: {} have no {} of {}, its {}. Give it to a voice that doubles.",
+            there.piece.names(&voices),
+            chord.note_name(tone).unwrap_or_default(),
+            chord.name(),
+            tone.name(),
+        )
+    });
+}
