@@ -308,7 +308,7 @@ impl<'a> Chord<'a> {
     }
 }
 
-fn degree(key: LocalKey, place: i32) -> Option<u8> {
+pub(super) fn degree(key: LocalKey, place: i32) -> Option<u8> {
     let major = [0, 2, 4, -1, 1, 3, 5];
     let minor = [0, 2, -3, -1, 1, -4, -2];
     let scale = if key.minor { minor } else { major };

@@ -1,8 +1,10 @@
 //! Which notes of a chord two voices have, and which none has.
 
 use partwright_analysis::harmony::Quality;
+use partwright_analysis::mode::fifths;
 use partwright_score::{Interval, Pitch};
 
+use super::chord::degree;
 use super::{Chord, Member, Piece, Sounding, Tone};
 
 /// The notes of a voice to either side that a sequence is looked for in.
@@ -36,12 +38,12 @@ impl<'a> Chord<'a> {
     /// What it doubles in four parts or more, if that can be minded and is no leading note.
     #[must_use]
     pub fn doubling(&self) -> Option<Doubled<'a>> {
-        let settled = self.settled().filter(|there| there.parts() >= 4)?;
-        let bass = settled.bass()?;
-        let lowest = self.member(settled.index, bass)?.tone;
-        let judge = |members: &[Member]| {
+        self.settled().filter(|there| there.parts() >= 4)?;
+        let judge = |there: Sounding<'a>, members: &[Member]| {
             let first = members.first()?;
             let (tone, pitch) = (first.tone, first.pitch);
+            let bass = there.bass()?;
+            let lowest = self.member(there.index, bass)?.tone;
             let in_bass = members.iter().any(|m| m.voice == bass);
             if self.is_leading_note(pitch) {
                 return None;
@@ -67,7 +69,7 @@ impl<'a> Chord<'a> {
             .into_iter()
             .filter_map(|tone| self.doubled(tone))
             .find_map(|(there, members)| {
-                let what = judge(&members)?;
+                let what = judge(there, &members)?;
                 Some(Doubled {
                     what,
                     there,
@@ -129,11 +131,17 @@ impl<'a> Chord<'a> {
         (members.len() >= 2 && !self.is_in_sequence(there, &members)).then_some((there, members))
     }
 
-    /// It goes to its tonic, and two voices close there by steps in contrary motion.
+    /// It goes to its tonic, and one of these voices closes there with another into an octave or
+    /// a unison, by steps in contrary motion; it is no such close itself.
     #[must_use]
-    pub fn goes_to_close(&self) -> bool {
+    pub fn closes_with(&self, members: &[Member]) -> bool {
+        let first = self.soundings().next();
+        if first.is_some_and(Sounding::closes_by_steps) {
+            return false;
+        }
         let close = self.resolves_to().and_then(|next| next.soundings().next());
-        close.is_some_and(Sounding::closes_by_steps)
+        let closing = |voice| close.is_some_and(|close| close.closes_by_steps_in(voice));
+        members.iter().any(|member| closing(member.voice))
     }
 
     /// The voice keeps to this note of the chord for a beat, in whatever octave.
@@ -149,19 +157,50 @@ impl<'a> Chord<'a> {
         })
     }
 
-    /// As long as it lasts no voice has this note of it; it settles, so that nothing stands in
-    /// for the note.
+    /// Where two independent voices or more have its seventh together over or under its root,
+    /// three parts sounding; not where all of them pass through by step, and a voice that has
+    /// the note from before the chord until after it stands apart.
+    #[must_use]
+    pub fn seventh_doubled(&self) -> Option<(Sounding<'a>, Vec<Member>)> {
+        let (there, mut members) = self.doubled(Tone::Seventh)?;
+        let has_root = self.members(there).iter().any(|m| m.tone == Tone::Root);
+        members.retain(|member| !self.is_held_through(member));
+        let passing = members.iter().all(|member| self.passes(member));
+        (has_root && there.parts() >= 3 && members.len() >= 2 && !passing)
+            .then_some((there, members))
+    }
+
+    /// The voice has the note from before the chord until after it.
+    fn is_held_through(&self, member: &Member) -> bool {
+        let notes = self.piece.score.voices.get(member.voice).map(|v| &v.notes);
+        let own = self.piece.texture.note(member.sonority, member.voice);
+        let note = notes.zip(own).and_then(|(notes, own)| notes.get(own));
+        note.is_some_and(|note| note.onset < self.onset() && self.until() < note.end())
+    }
+
+    /// As long as it lasts no voice has this note of it, nor right before or after in another
+    /// chord on its root; it settles, so that nothing stands in for the note.
     #[must_use]
     pub fn lacks(&self, tone: Tone) -> bool {
-        let has = |there: Sounding<'a>| {
+        let on_root = |other: &Chord<'a>| other.segment.chord.root == self.segment.chord.root;
+        let known = |there: Sounding<'a>| there.sonority().is_some_and(|s| s.unknown == 0);
+        let beside = [self.before(), self.next()];
+        let mut beside = beside.into_iter().flatten().filter(on_root);
+        self.settled().is_some()
+            && self.soundings().all(known)
+            && !self.has(tone)
+            && !beside.any(|other| other.has(tone))
+    }
+
+    /// A voice has this note of it at some time.
+    fn has(&self, tone: Tone) -> bool {
+        self.soundings().any(|there| {
             let mut voices = self.piece.texture.sounding(there.index);
             voices.any(|voice| {
                 self.member(there.index, voice)
                     .is_some_and(|member| member.tone == tone)
             })
-        };
-        let known = |there: &Sounding<'a>| there.sonority().is_some_and(|s| s.unknown == 0);
-        self.settled().is_some() && self.soundings().all(|there| known(&there) && !has(there))
+        })
     }
 
     /// It is inverted from beginning to end.
@@ -179,11 +218,16 @@ impl<'a> Chord<'a> {
         self.quality().tones().len() == 4
     }
 
-    /// A note of it that the scale of the local key has not; in minor the raised seventh belongs
-    /// to the scale. `false` where the key is not sure.
+    /// A note of it that the scale has not, of the key to both sides of it where that is the
+    /// same, else of its own; in minor the raised seventh belongs to the scale. `false` where the
+    /// key is not sure.
     #[must_use]
     pub fn is_altered(&self, pitch: Pitch) -> bool {
-        self.key().is_some() && self.degree_of(pitch).is_none()
+        let before = self.before().and_then(|chord| chord.key());
+        let after = self.next().and_then(|chord| chord.key());
+        let around = before.filter(|_| before == after);
+        let key = around.or_else(|| self.key());
+        key.is_some_and(|key| degree(key, fifths(pitch)).is_none())
     }
 
     /// The voice goes through a note by step, the same way in and out.

@@ -283,6 +283,9 @@ fn chord(page: &mut Page, sounding: Sounding<'_>) {
     if segment.margin < SURE {
         line.push_str(" (not sure)");
     }
+    if let Some(cadence) = sounding.chord().and_then(|chord| chord.cadence()) {
+        let _ = write!(line, "; {}", cadence.name());
+    }
     let beside = piece.texture.sounding(index).filter_map(|voice| {
         let pitch = sounding.pitch(voice)?;
         let belongs = segment.chord.tone(pitch).is_some();

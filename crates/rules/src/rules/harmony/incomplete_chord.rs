@@ -63,7 +63,7 @@ pub const RULE: Rule = Rule {
 
 static THIRD: Case = Case {
     name: "",
-    when: "in four parts or more, a chord without its third as long as it lasts, a beat at least; not where the missing third is told of by itself, nor where a voice enters or ends its phrase",
+    when: "in four parts or more, a chord without its third as long as it lasts, a beat at least, and its bass does not pass through by step; not where the missing third is told of by itself, nor where a voice enters or ends its phrase",
     settings: &[
         fault(Style::Free, "only the fifth may go"),
         fault(Style::Chorale, "only the fifth may go"),
@@ -74,7 +74,7 @@ static THIRD: Case = Case {
 
 static INVERTED: Case = Case {
     name: "inverted",
-    when: "in four parts or more, a triad that stays inverted and lacks its root or its fifth as long as it lasts",
+    when: "in four parts or more, a triad that stays inverted and lacks its root or its fifth as long as it lasts, and its bass does not pass through by step",
     settings: &[
         weakness(Style::Free, "only in root position may the fifth go"),
         weakness(Style::Chorale, "only in root position may the fifth go"),
@@ -87,6 +87,9 @@ fn check(chord: &Chord<'_>, found: &mut Found<'_>) {
     let Some(there) = chord.settled().filter(|there| there.parts() >= 4) else {
         return;
     };
+    if there.bass_passes() {
+        return;
+    }
     let (case, tone) = if chord.lacks(Tone::Third) {
         (&THIRD, Tone::Third)
     } else if chord.has_seventh() || !chord.stays_inverted() {

@@ -79,7 +79,7 @@ pub const RULE: Rule = Rule {
 
 static ORDINARY: Case = Case {
     name: "",
-    when: "two independent voices have the third of a dominant, or the root of a diminished chord on the leading note, of the key or of the chord that follows, together for a beat, and the chord goes to a close; not in a sequence, nor where one of them comes down through it by step",
+    when: "two independent voices have the third of a dominant, or the root of a diminished chord on the leading note, of the key or of the chord that follows, together for a beat, and one of them goes to a close, by steps in contrary motion with another voice; not in a sequence, nor where one of them comes down through it by step",
     settings: &[
         weakness(Style::Free, "instruments may cover it"),
         fault(Style::Chorale, "both would rise in octaves"),
@@ -89,7 +89,7 @@ static ORDINARY: Case = Case {
 
 static ELSEWHERE: Case = Case {
     name: "elsewhere",
-    when: "the same where the chord goes to no close",
+    when: "the same where neither goes to a close",
     settings: &[
         weakness(Style::Free, "instruments may cover it"),
         fault(Style::Chorale, "both would rise in octaves"),
@@ -105,7 +105,7 @@ fn check(chord: &Chord<'_>, found: &mut Found<'_>) {
         return;
     };
     let Some(first) = leading.first() else { return };
-    let case = if chord.goes_to_close() {
+    let case = if chord.closes_with(&leading) {
         &ORDINARY
     } else {
         &ELSEWHERE

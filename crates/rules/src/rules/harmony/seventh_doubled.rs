@@ -60,7 +60,7 @@ pub const RULE: Rule = Rule {
 
 static ORDINARY: Case = Case {
     name: "",
-    when: "in three parts or more, two independent voices have the seventh together for a beat, on the beat",
+    when: "in three parts or more, two independent voices have the seventh together for a beat, on the beat, and the root sounds; not where both pass through by step, nor a voice that has the note from before the chord until after it",
     settings: &[
         weakness(Style::Free, "instruments may cover it"),
         fault(Style::Chorale, "both would fall in octaves"),
@@ -76,8 +76,7 @@ fn check(chord: &Chord<'_>, found: &mut Found<'_>) {
     if !chord.seventh_is_sure() {
         return;
     }
-    let doubled = chord.doubled(Tone::Seventh);
-    let Some((there, members)) = doubled.filter(|(there, _)| there.parts() >= 3) else {
+    let Some((there, members)) = chord.seventh_doubled() else {
         return;
     };
     let Some(first) = members.first() else { return };
