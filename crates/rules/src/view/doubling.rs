@@ -116,9 +116,13 @@ impl<'a> Chord<'a> {
 
     /// Where two independent voices or more have its leading note together, three parts sounding;
     /// not in a sequence, nor where but one is left when those that come down through it are
-    /// taken away.
+    /// taken away, nor on a tonic that does not go on as a dominant.
     #[must_use]
     pub fn leading_note_doubled(&self) -> Option<(Sounding<'a>, Vec<Member>)> {
+        // A tonic with its third raised is at rest, unless it goes on as a dominant does.
+        if self.degree() == Some(1) && self.resolves_to().is_none() {
+            return None;
+        }
         let leading = |members: &[Member]| {
             let first = members.first();
             first.is_some_and(|first| self.is_leading_note(first.pitch))
@@ -132,16 +136,26 @@ impl<'a> Chord<'a> {
     }
 
     /// It goes to its tonic, and one of these voices closes there with another into an octave or
-    /// a unison, by steps in contrary motion; it is no such close itself.
+    /// a unison, by steps in contrary motion; it is no such close itself, nor does one of them enter with
+    /// it after silence.
     #[must_use]
     pub fn closes_with(&self, members: &[Member]) -> bool {
         let first = self.soundings().next();
-        if first.is_some_and(Sounding::closes_by_steps) {
+        let closed = first.is_some_and(Sounding::closes_by_steps);
+        if closed || members.iter().any(|member| self.enters(member)) {
             return false;
         }
         let close = self.resolves_to().and_then(|next| next.soundings().next());
         let closing = |voice| close.is_some_and(|close| close.closes_by_steps_in(voice));
         members.iter().any(|member| closing(member.voice))
+    }
+
+    /// The voice comes to its note from silence.
+    fn enters(&self, member: &Member) -> bool {
+        let notes = self.piece.score.voices.get(member.voice).map(|v| &v.notes);
+        let own = self.piece.texture.note(member.sonority, member.voice);
+        let before = own.and_then(|own| notes?.get(own.checked_sub(1)?));
+        before.is_none_or(|note| note.sound.pitch().is_none())
     }
 
     /// The voice keeps to this note of the chord for a beat, in whatever octave.

@@ -107,7 +107,7 @@ static THIRD: Case = Case {
         allow(Style::Free, "only a leading note may not be doubled"),
         allow(
             Style::Chorale,
-            "only a leading note may not be doubled: 232 of 2,918 triads in root position in the chorales double the third, most often the sixth degree after a dominant and the tonic",
+            "only a leading note may not be doubled: in the chorales 226 of 2,918 triads in root position double another third, 26 of 40 on the sixth degree after a dominant",
         ),
     ],
 };

@@ -58,6 +58,7 @@ pub const RULE: Rule = Rule {
     sources: &[
         source::ADVANCED_PLACEMENT.at("question 6: half the credit"),
         source::OPEN_MUSIC_THEORY,
+        source::CHORALES_HERE.at("six-fours of a beat and more, in four parts"),
     ],
 };
 
@@ -66,7 +67,10 @@ static ORDINARY: Case = Case {
     when: "in four parts, a beat on the beat of fourths, sixths and octaves over the bass, of which the fourth or the sixth is doubled, and the bass does not pass through by step",
     settings: &[
         allow(Style::Free, "instruments may cover it"),
-        weakness(Style::Chorale, "the bass is its steady note"),
+        weakness(
+            Style::Chorale,
+            "the bass is its steady note: 28 of 29 in the chorales double it, 19 of 22 in passing",
+        ),
         allow(Style::Motet, "a fourth over the bass is told of by itself"),
         allow(
             Style::Species1,

@@ -19,11 +19,11 @@
 //! style chorale
 //! key C major
 //!
-//! S | A4 B4 |
+//! S | C4 F4 |
 //! //     ^^ all one way (weakness): S and A and T and B
-//! A | F4 G4 |
-//! T | C4 D4 |
-//! B | F3 G3 |
+//! A | G3 D4 |
+//! T | E3 A3 |
+//! B | C3 D3 |
 //! ```
 //!
 //! # Passes
@@ -88,7 +88,7 @@ static ORDINARY: Case = Case {
 
 static ROOT_STEP: Case = Case {
     name: "root-step",
-    when: "the same between two chords in root position whose roots are a step apart",
+    when: "the same between two chords in root position whose roots are a step apart, and no parallels are told of",
     settings: &[
         weakness(Style::Free, "the upper parts should go against the bass"),
         weakness(Style::Chorale, "the upper parts should go against the bass"),
@@ -108,7 +108,12 @@ fn check(there: &Sounding<'_>, found: &mut Found<'_>) {
         return;
     }
     let voices: Vec<usize> = there.piece.texture.sounding(there.index).collect();
-    let by_root_step = there.steps_between_roots();
+    // Parallels with it are told by themselves.
+    let parallels = ["parallel-fifths", "parallel-octaves", "parallel-unisons"];
+    let by_root_step = there.steps_between_roots()
+        && !there
+            .moves(false)
+            .any(|step| found.is_told_of_pair(&parallels, &step));
     let case = if by_root_step { &ROOT_STEP } else { &ORDINARY };
     found.sonority(case, &voices, there.onset(), || {
         let way = if rising { "up" } else { "down" };
