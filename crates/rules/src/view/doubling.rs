@@ -160,11 +160,11 @@ impl<'a> Chord<'a> {
 
     /// The voice keeps to this note of the chord for a beat, in whatever octave.
     fn is_held_a_beat(&self, member: &Member) -> bool {
-        let Some(cell) = self.piece.cell_at(member.onset) else {
+        let from = self.piece.sounding(member.sonority).onset();
+        let Some(cell) = self.piece.cell_at(from) else {
             return false;
         };
-        let from = self.piece.sounding(member.sonority).onset();
-        let over = self.soundings().skip_while(|s| s.onset() < from);
+        let over = (member.sonority..self.segment.end).map(|k| self.piece.sounding(k));
         over.take_while(|s| s.onset() < from + cell).all(|s| {
             self.member(s.index, member.voice)
                 .is_some_and(|there| there.tone == member.tone)
