@@ -84,6 +84,21 @@ fn a_stated_chord_tells_its_notes() {
 }
 
 #[test]
+fn the_chord_that_closes_a_phrase_names_the_close() {
+    let mut client = Client::ready();
+    let document = open(
+        &mut client,
+        "style chorale\nkey C major\nmetre 4/4\n\nS | E5 - D5 - | C5 - - - ||\nA | G4 - F4 - | E4 - - - ||\nT | C4 - B3 - | G3 - - - ||\nB | C3 - G3 - | C3 - - - ||\n",
+    );
+    let close = document.hover_text(&mut client, "C5 - - -");
+    let ending = "Chord: **C major**; key: C major; perfect authentic cadence.";
+    assert!(close.ends_with(ending), "{close}");
+    let inside = document.hover_text(&mut client, "D5 -");
+    assert!(!inside.contains("cadence"), "{inside}");
+    client.goodbye();
+}
+
+#[test]
 fn the_first_note_has_no_motion() {
     let mut client = Client::ready();
     let document = open(&mut client, CHOIR);

@@ -18,6 +18,8 @@ pub mod beat_consecutives;
 pub mod broken_chord;
 #[path = "rules/species/cantus.rs"]
 pub mod cantus;
+#[path = "rules/harmony/chord_doubling.rs"]
+pub mod chord_doubling;
 #[path = "rules/line/chromatic_semitone.rs"]
 pub mod chromatic_semitone;
 #[path = "rules/dissonance/clash_together.rs"]
@@ -72,6 +74,8 @@ pub mod free_dissonance;
 pub mod high_point_repeated;
 #[path = "rules/line/high_points_together.rs"]
 pub mod high_points_together;
+#[path = "rules/harmony/incomplete_chord.rs"]
+pub mod incomplete_chord;
 #[path = "rules/harmony/leading_note_doubled.rs"]
 pub mod leading_note_doubled;
 #[path = "rules/line/leap_across_bar.rs"]
@@ -146,12 +150,16 @@ pub mod resolution_sounding;
 pub mod retardation;
 #[path = "rules/motion/running_imperfects.rs"]
 pub mod running_imperfects;
+#[path = "rules/harmony/seventh_doubled.rs"]
+pub mod seventh_doubled;
 #[path = "rules/line/seventh_leap.rs"]
 pub mod seventh_leap;
 #[path = "rules/motion/similar_leaps.rs"]
 pub mod similar_leaps;
 #[path = "rules/dissonance/six_five_exchange.rs"]
 pub mod six_five_exchange;
+#[path = "rules/harmony/six_four_doubling.rs"]
+pub mod six_four_doubling;
 #[path = "rules/line/sixth_leap.rs"]
 pub mod sixth_leap;
 #[path = "rules/sonority/spacing.rs"]
@@ -236,7 +244,11 @@ pub(crate) static FILES: &[File] = &[
     file!("dissonance", suspension_preparation),
     file!("dissonance", suspension_resolution),
     file!("dissonance", upper_clash),
+    file!("harmony", chord_doubling),
+    file!("harmony", incomplete_chord),
     file!("harmony", leading_note_doubled),
+    file!("harmony", seventh_doubled),
+    file!("harmony", six_four_doubling),
     file!("harmony", stated_harmony),
     file!("line", augmented_interval),
     file!("line", broken_chord),

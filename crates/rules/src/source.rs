@@ -289,13 +289,6 @@ pub const AARDEN_VON_HIPPEL: Source = source(
 pub const FEEZELL: Source = source("Feezell", "Chromatic part-writing", 0, Known::Read);
 /// Voice-leading guidelines.
 pub const WIELAND: Source = source("Wieland", "More voice-leading guidelines", 0, Known::Read);
-/// Counts in the chorales that the developers' share of scores holds.
-pub const CHORALES_HERE: Source = source(
-    "",
-    "156 four-part chorales of J. S. Bach",
-    0,
-    Known::Counted,
-);
 /// What the trade agrees on.
 pub const COMMON_PRACTICE: Source = source("", "common practice", 0, Known::FromMemory);
 /// The definition of our own notation.

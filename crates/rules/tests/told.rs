@@ -81,6 +81,12 @@ fn one_fact_is_told_by_one_rule() {
             "long-dissonance",
             "neighbour-note",
         ),
+        (
+            "chorale",
+            "key C major\nmetre 4/4\n\nS | C5 - D5 - | C5 - - - |\nA | E4 - D4 - | E4 - - - |\nT | G3 - G3 - | G3 - - - |\nB | C3 - G2 - | C3 - - - |",
+            "third-missing",
+            "incomplete-chord",
+        ),
     ] {
         let rules = told(style, sheet, None);
         assert!(rules.contains(&speaks), "{sheet}: {rules:?}");

@@ -14,6 +14,12 @@ impl Segment {
         self.margin >= SURE
     }
 
+    /// The root is certain enough to act on, though the third may be missing.
+    #[must_use]
+    pub const fn root_is_sure(&self) -> bool {
+        self.root_margin >= SURE
+    }
+
     /// Not certain enough to act on, yet worth telling to whoever asks: nine in ten agree.
     #[must_use]
     pub const fn is_likely(&self) -> bool {

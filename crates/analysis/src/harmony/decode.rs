@@ -167,42 +167,60 @@ impl<'a> Search<'a> {
         let all = || self.states.iter().zip(through);
         let (&chord, &own) = all().min_by_key(|(_, cost)| **cost)?;
         let none = through.last().copied().unwrap_or(0);
-        let most = if slice.said.is_some() || is_heard(slice, chord) {
-            QUARTER * 100
-        } else {
-            SURE - 1
+        let most = |is_heard: bool| {
+            if slice.said.is_some() || is_heard {
+                QUARTER * 100
+            } else {
+                SURE - 1
+            }
         };
-        let margin = |differs: &dyn Fn(Chord) -> bool| {
+        let heard = Heard::of(slice, chord);
+        let margin = |most: Cost, differs: &dyn Fn(Chord) -> bool| {
             let others = all().filter(|(state, _)| differs(**state));
             let other = others.map(|(_, cost)| *cost).min();
             (other.unwrap_or(none).min(none) - own).clamp(0, most)
         };
+        let (root, whole) = (most(heard.root), most(heard.whole));
         let quality = chord.quality;
         Some(Found {
             chord,
-            root_margin: margin(&|other| other.root != chord.root),
-            margin: margin(&|other| {
+            root_margin: margin(root, &|other| other.root != chord.root),
+            margin: margin(whole, &|other| {
                 other.root != chord.root || other.quality.triad() != quality.triad()
             }),
-            seventh_margin: margin(&|other| other.quality.has_seventh() != quality.has_seventh()),
+            seventh_margin: margin(whole, &|other| {
+                other.quality.has_seventh() != quality.has_seventh()
+            }),
         })
     }
 }
 
-/// Three voices sound notes of the chord, and its root and third are among those or meant by
-/// others: an open fifth has no quality, whatever the key would make of it.
-fn is_heard(slice: &Slice, chord: Chord) -> bool {
-    let tones = chord.quality.tones();
-    let index = |place: i32| tones.iter().position(|t| *t == place - chord.root);
-    let own = |tone: &Tone| index(tone.place);
-    let meant = |tone: &Tone| own(tone).or_else(|| tone.stands_for.and_then(index));
-    let has = |which: usize| slice.tones.iter().any(|tone| meant(tone) == Some(which));
-    let count = slice
-        .tones
-        .iter()
-        .filter(|tone| own(tone).is_some())
-        .count();
-    count >= ENOUGH && has(0) && has(1)
+/// What of a chord is heard in a sonority.
+struct Heard {
+    /// Three voices sound notes of the chord, and its root is among those or meant by others.
+    root: bool,
+    /// Its third too: an open fifth has no quality, whatever the key would make of it.
+    whole: bool,
+}
+
+impl Heard {
+    fn of(slice: &Slice, chord: Chord) -> Heard {
+        let tones = chord.quality.tones();
+        let index = |place: i32| tones.iter().position(|t| *t == place - chord.root);
+        let own = |tone: &Tone| index(tone.place);
+        let meant = |tone: &Tone| own(tone).or_else(|| tone.stands_for.and_then(index));
+        let has = |which: usize| slice.tones.iter().any(|tone| meant(tone) == Some(which));
+        let count = slice
+            .tones
+            .iter()
+            .filter(|tone| own(tone).is_some())
+            .count();
+        let root = count >= ENOUGH && has(0);
+        Heard {
+            root,
+            whole: root && has(1),
+        }
+    }
 }
 
 fn sum(a: &[Cost], b: &[Cost]) -> Row {

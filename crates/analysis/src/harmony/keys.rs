@@ -30,13 +30,25 @@ impl LocalKey {
 pub(super) struct Home {
     /// Major or minor by its third.
     key: LocalKey,
-    /// The lowest place among the fifths of its seven notes.
-    lowest: i32,
+    /// The lowest place among the fifths of the seven notes of an old mode.
+    lowest: Option<i32>,
+    /// The music begins here: a stretch from inside the score need not set out from it.
+    opens: bool,
+}
+
+impl Home {
+    /// The same for music that begins the score, or does not.
+    pub(super) fn at_start(self, opens: bool) -> Home {
+        Home { opens, ..self }
+    }
 }
 
 /// Leaving a key costs more than a strange quarter note; after a fermata less.
 const CHANGE: Cost = QUARTER * 6 / 5;
 const CHANGE_AFTER_FERMATA: Cost = QUARTER;
+
+/// That the composer says so is worth as much for the key of the sheet.
+const STATED: Cost = 20;
 
 /// A long chord is no more evidence than this.
 const LONGEST: Cost = QUARTER * 11 / 10;
@@ -188,7 +200,9 @@ pub(super) fn keys(
         .flat_map(|tonic| [false, true].map(|minor| LocalKey { tonic, minor }))
         .map(|key| State {
             key,
-            lowest: home.filter(|home| home.key == key).map(|home| home.lowest),
+            lowest: home
+                .filter(|home| home.key == key)
+                .and_then(|home| home.lowest),
         })
         .collect();
     let local: Vec<Vec<Cost>> = (0..reached.len())
@@ -214,11 +228,17 @@ pub(super) fn keys(
     let start: Vec<Cost> = states
         .iter()
         .map(|state| match home {
-            Some(home) if home.key != state.key => CHANGE,
+            Some(home) if home.opens && home.key != state.key => CHANGE,
             _ => 0,
         })
         .collect();
-    best(&states, &start, &local, &changes)
+    let mut keys = best(&states, &start, &local, &changes);
+    for (key, margin) in &mut keys {
+        if home.is_some_and(|home| home.key == *key) {
+            *margin += STATED;
+        }
+    }
+    keys
 }
 
 /// The cheapest key of each column, and what the best other one costs more.
@@ -276,6 +296,7 @@ pub(super) fn home(score: &Score) -> Option<Home> {
     let tonic = fifths(tonic);
     Some(Home {
         key: LocalKey { tonic, minor },
-        lowest: tonic - below,
+        lowest: (!matches!(mode, Mode::Major | Mode::Minor)).then_some(tonic - below),
+        opens: true,
     })
 }

@@ -47,7 +47,7 @@ pub(super) fn stretches(
         let from = range.start.saturating_sub(SURROUNDINGS);
         let end = all.len().min(range.end + SURROUNDINGS);
         let around = all.get(from..end).unwrap_or_default();
-        let home = home.filter(|_| from == 0);
+        let home = home.map(|home| home.at_start(from == 0));
         let mark = mark(around, range.start - from, range.len(), home);
         if let Some(same) = known.get(&mark) {
             return Arc::clone(same);

@@ -126,12 +126,14 @@ impl<'a> Chord<'a> {
         (before.segment.end == self.segment.first).then_some(before)
     }
 
-    /// The next chord, if both are sure and no voice ends its phrase between.
+    /// The next chord, if it is on another root, both are sure and no voice ends its phrase
+    /// between.
     #[must_use]
     pub fn goes_to(&self) -> Option<Chord<'a>> {
         let next = self
             .next()
-            .filter(|next| self.is_sure() && next.is_sure())?;
+            .filter(|next| self.is_sure() && next.is_sure())
+            .filter(|next| next.segment.chord.root != self.segment.chord.root)?;
         let mut steps = self.piece.texture.steps(next.segment.first);
         (!steps.any(|(_, step)| step.across_phrase())).then_some(next)
     }
@@ -265,6 +267,12 @@ impl<'a> Chord<'a> {
         degree(self.key()?, self.segment.chord.root)
     }
 
+    /// The degree of a note in the local key, as [`Chord::degree`] tells the root's.
+    #[must_use]
+    pub fn degree_of(&self, pitch: Pitch) -> Option<u8> {
+        degree(self.key()?, fifths(pitch))
+    }
+
     /// The tonic it leads to: a fifth below a major triad or dominant seventh, a semitone above
     /// the root of a diminished chord.
     #[must_use]
@@ -302,7 +310,7 @@ impl<'a> Chord<'a> {
     }
 }
 
-fn degree(key: LocalKey, place: i32) -> Option<u8> {
+pub(super) fn degree(key: LocalKey, place: i32) -> Option<u8> {
     let major = [0, 2, 4, -1, 1, 3, 5];
     let minor = [0, 2, -3, -1, 1, -4, -2];
     let scale = if key.minor { minor } else { major };

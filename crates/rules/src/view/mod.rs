@@ -3,10 +3,12 @@
 //! These views only read what `partwright_score` laid out, and put it into a musician's words.
 
 mod account;
+mod cadence;
 mod chord;
 mod close;
 mod degree;
 mod discord;
+mod doubling;
 mod ending;
 mod figure;
 mod held;
@@ -24,8 +26,10 @@ use partwright_analysis::harmony::Segment;
 use partwright_analysis::{Analysis, Dissonance};
 use partwright_score::{Pair, PairStep, Score, Texture};
 
+pub use cadence::Cadence;
 pub use chord::{Member, Tone};
 pub use degree::{MinorDegree, Tessitura};
+pub use doubling::{Doubled, Doubling};
 pub use ending::LastMove;
 pub use held::{Numbers, SixFive, Together};
 pub use levels::{Level, ParallelRun, Succession};

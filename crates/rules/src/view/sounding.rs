@@ -343,12 +343,15 @@ impl<'a> Sounding<'a> {
     /// Two voices arrive by steps in contrary motion on an octave or a unison, as at a close.
     #[must_use]
     pub fn closes_by_steps(self) -> bool {
-        self.moves(false).any(|step| {
-            step.motion() == Some(Motion::Contrary)
-                && step.after().and_then(|i| i.0.family()) == Some(Family::Octave)
-                && step.steps(step.pair.upper)
-                && step.steps(step.pair.lower)
-        })
+        self.moves(false).any(|step| step.closes_by_steps())
+    }
+
+    /// The same, this voice one of the two.
+    #[must_use]
+    pub fn closes_by_steps_in(self, voice: usize) -> bool {
+        let own = |step: &PairMove<'_>| step.pair.upper == voice || step.pair.lower == voice;
+        self.moves(false)
+            .any(|step| own(&step) && step.closes_by_steps())
     }
 
     /// It begins a bar or a half of one.
@@ -393,5 +396,15 @@ impl<'a> Sounding<'a> {
             Some(s.level > score.metres.get(bar.metre as usize)?.beat_level())
         });
         beat.unwrap_or(false)
+    }
+}
+
+impl PairMove<'_> {
+    /// By steps in contrary motion into an octave or a unison.
+    fn closes_by_steps(&self) -> bool {
+        self.motion() == Some(Motion::Contrary)
+            && self.after().and_then(|i| i.0.family()) == Some(Family::Octave)
+            && self.steps(self.pair.upper)
+            && self.steps(self.pair.lower)
     }
 }

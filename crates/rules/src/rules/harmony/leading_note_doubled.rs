@@ -44,6 +44,19 @@
 //! B | C4 - A3 - | G3 - C3 - |
 //! ```
 //!
+//! Nor where one of the two only comes down through it:
+//!
+//! ```voices
+//! style chorale
+//! key C major
+//! metre 4/4
+//!
+//! S | C5 - B4 A4 | G4 - - - |
+//! A | E4 - D4 -  | E4 - - - |
+//! T | G3 - B3 -  | C4 - - - |
+//! B | C3 - G2 -  | C3 - - - |
+//! ```
+//!
 //! # What to do
 //!
 //! Give one of the two the root or the fifth of the chord.
@@ -53,7 +66,7 @@ use crate::prelude::*;
 /// The rule.
 pub const RULE: Rule = Rule {
     looks: Looks::Chords(check),
-    cases: &[&ORDINARY],
+    cases: &[&ORDINARY, &ELSEWHERE],
     numbers: &[],
     sources: &[
         source::ADVANCED_PLACEMENT.at("question 6"),
@@ -66,7 +79,7 @@ pub const RULE: Rule = Rule {
 
 static ORDINARY: Case = Case {
     name: "",
-    when: "two independent voices have the third of a dominant, or the root of a diminished chord on the leading note, of the key or of the chord that follows",
+    when: "two independent voices have the third of a dominant, or the root of a diminished chord on the leading note, of the key or of the chord that follows, together for a beat, and one of them goes to a close, by steps in contrary motion with another voice; not in a sequence, nor where one of them comes down through it by step",
     settings: &[
         weakness(Style::Free, "instruments may cover it"),
         fault(Style::Chorale, "both would rise in octaves"),
@@ -74,20 +87,31 @@ static ORDINARY: Case = Case {
     ],
 };
 
+static ELSEWHERE: Case = Case {
+    name: "elsewhere",
+    when: "the same where neither goes to a close",
+    settings: &[
+        weakness(Style::Free, "instruments may cover it"),
+        fault(Style::Chorale, "both would rise in octaves"),
+        allow(
+            Style::Motet,
+            "away from a close the modes know no leading note",
+        ),
+    ],
+};
+
 fn check(chord: &Chord<'_>, found: &mut Found<'_>) {
-    let Some(there) = chord.plain().filter(|there| there.parts() >= 3) else {
+    let Some((there, leading)) = chord.leading_note_doubled() else {
         return;
     };
-    let leading = chord
-        .members(there)
-        .into_iter()
-        .filter(|m| chord.is_leading_note(m.pitch));
-    let leading: Vec<Member> = leading.collect();
-    let [first, _, ..] = leading.as_slice() else {
-        return;
+    let Some(first) = leading.first() else { return };
+    let case = if chord.closes_with(&leading) {
+        &ORDINARY
+    } else {
+        &ELSEWHERE
     };
     let voices: Vec<usize> = leading.iter().map(|m| m.voice).collect();
-    found.sonority(&ORDINARY, &voices, there.onset(), || {
+    found.sonority(case, &voices, there.onset(), || {
         format!(
             "Leading note doubled: {} both have {} of {}. Give one of them another note of the chord.",
             there.piece.names(&voices),

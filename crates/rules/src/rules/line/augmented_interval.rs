@@ -12,6 +12,21 @@
 //! //         ^^ augmented interval: S
 //! ```
 //!
+//! Where the dominant of minor turns aside to the sixth degree, the leading note must not fall with
+//! the others:
+//!
+//! ```voices
+//! style chorale
+//! key A minor
+//! metre 4/4
+//!
+//! S | C5 - B4 - | A4 - - - |
+//! A | A4 - G#4 - | F4 - - - |
+//! //               ^^ augmented interval: A
+//! T | E4 - E4 - | C4 - - - |
+//! B | A3 - E3 - | F3 - - - |
+//! ```
+//!
 //! In open score writing it is a weakness:
 //!
 //! ```voices
@@ -68,7 +83,7 @@ pub const RULE: Rule = Rule {
     numbers: &[],
     sources: &[
         source::LEHMANN.at("lesson I"),
-        source::OPEN_MUSIC_THEORY,
+        source::OPEN_MUSIC_THEORY.at("the deceptive cadence in minor"),
         source::PROUT_HARMONY.at("ch. IV"),
     ],
 };

@@ -13,6 +13,19 @@
 //! B | C3 F3 |
 //! ```
 //!
+//! Worst of all between two chords in root position a step apart:
+//!
+//! ```voices
+//! style chorale
+//! key C major
+//!
+//! S | C4 F4 |
+//! //     ^^ all one way (weakness): S and A and T and B
+//! A | G3 D4 |
+//! T | E3 A3 |
+//! B | C3 D3 |
+//! ```
+//!
 //! # Passes
 //!
 //! ```voices
@@ -62,7 +75,7 @@ use crate::prelude::*;
 /// The rule.
 pub const RULE: Rule = Rule {
     looks: Looks::Sonorities(check),
-    cases: &[&ORDINARY, &BASS],
+    cases: &[&ORDINARY, &BASS, &ROOT_STEP],
     numbers: &[],
     sources: &[
         source::KOSTKA_PAYNE,
@@ -70,6 +83,8 @@ pub const RULE: Rule = Rule {
         source::CHORALES_READ.at(
             "where the upper voices go one way outside one chord, a bass that steps goes with them 33 times and against them 465",
         ),
+        source::OPEN_MUSIC_THEORY,
+        source::BUTTERFIELD,
     ],
 };
 
@@ -98,6 +113,17 @@ static BASS: Case = Case {
     ],
 };
 
+static ROOT_STEP: Case = Case {
+    name: "root-step",
+    when: "the same between two chords in root position whose roots are a step apart, and no parallels are told of",
+    settings: &[
+        weakness(Style::Free, "the upper parts should go against the bass"),
+        weakness(Style::Chorale, "the upper parts should go against the bass"),
+        weakness(Style::Motet, "handbooks warn of it"),
+        weakness(Style::Species1, "handbooks warn of it"),
+    ],
+};
+
 fn check(there: &Sounding<'_>, found: &mut Found<'_>) {
     if there.parts() < 3 || there.may_only_change_position() {
         return;
@@ -109,15 +135,28 @@ fn check(there: &Sounding<'_>, found: &mut Found<'_>) {
         return;
     }
     let voices: Vec<usize> = there.piece.texture.sounding(there.index).collect();
-    let case = if there.bass_leaps_under_step() {
+    // Parallels with it are told by themselves.
+    let parallels = ["parallel-fifths", "parallel-octaves", "parallel-unisons"];
+    let by_root_step = there.steps_between_roots()
+        && !there
+            .moves(false)
+            .any(|step| found.is_told_of_pair(&parallels, &step));
+    let case = if by_root_step {
+        &ROOT_STEP
+    } else if there.bass_leaps_under_step() {
         &BASS
     } else {
         &ORDINARY
     };
     found.sonority(case, &voices, there.onset(), || {
         let way = if rising { "up" } else { "down" };
+        let mend = if by_root_step {
+            "Two chords in root position a step apart: let the upper voices go against the bass."
+        } else {
+            "Let one of them stay or move the other way."
+        };
         format!(
-            "All one way: {} all move {way} together. Let one of them stay or move the other way.",
+            "All one way: {} all move {way} together. {mend}",
             there.piece.names(&voices)
         )
     });

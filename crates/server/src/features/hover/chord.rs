@@ -28,6 +28,9 @@ pub(super) fn chord(page: &mut Page, sounding: Sounding<'_>) {
         };
         let _ = write!(line, "; key: {}{doubt}", key.name());
     }
+    if let Some(cadence) = sounding.chord().and_then(|chord| chord.cadence()) {
+        let _ = write!(line, "; {}", cadence.name());
+    }
     let beside = piece.texture.sounding(index).filter_map(|voice| {
         let pitch = sounding.pitch(voice)?;
         let belongs = segment.chord.tone(pitch).is_some();
