@@ -41,7 +41,8 @@ pub mod prelude {
     pub use crate::source::{self, Source};
     pub use crate::style::{Setting, Style, allow, fault, remark, weakness};
     pub use crate::view::{
-        Chord, Direct, Discord, LastMove, Level, Line, LineMove, Member, MinorDegree, Numbers,
-        Over, PairMove, ParallelRun, Passage, Piece, Sounding, Stroke, Succession, Tone,
+        Chord, CrossRelation, Direct, Discord, LastMove, Level, Line, LineMove, Member,
+        MinorDegree, Numbers, Over, PairMove, ParallelRun, Passage, Piece, SixFour, SixFourUse,
+        SixFourWant, Sounding, Stroke, Succession, Tone,
     };
 }

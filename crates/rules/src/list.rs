@@ -34,6 +34,8 @@ pub mod consonant_fourth;
 pub mod contrary_fifths;
 #[path = "rules/motion/contrary_octaves.rs"]
 pub mod contrary_octaves;
+#[path = "rules/harmony/cross_relation.rs"]
+pub mod cross_relation;
 #[path = "rules/motion/crossing.rs"]
 pub mod crossing;
 #[path = "rules/motion/delayed_consecutives.rs"]
@@ -152,6 +154,8 @@ pub mod seventh_leap;
 pub mod similar_leaps;
 #[path = "rules/dissonance/six_five_exchange.rs"]
 pub mod six_five_exchange;
+#[path = "rules/harmony/six_four.rs"]
+pub mod six_four;
 #[path = "rules/line/sixth_leap.rs"]
 pub mod sixth_leap;
 #[path = "rules/sonority/spacing.rs"]
@@ -234,7 +238,9 @@ pub(crate) static FILES: &[File] = &[
     file!("dissonance", suspension_preparation),
     file!("dissonance", suspension_resolution),
     file!("dissonance", upper_clash),
+    file!("harmony", cross_relation),
     file!("harmony", leading_note_doubled),
+    file!("harmony", six_four),
     file!("line", augmented_interval),
     file!("line", broken_chord),
     file!("line", chromatic_semitone),

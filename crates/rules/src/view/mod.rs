@@ -4,6 +4,7 @@
 
 mod account;
 mod chord;
+mod chord_moves;
 mod close;
 mod degree;
 mod discord;
@@ -24,6 +25,7 @@ use partwright_analysis::{Analysis, Dissonance};
 use partwright_score::{Pair, PairStep, Score, Texture};
 
 pub use chord::{Member, Tone};
+pub use chord_moves::{CrossRelation, SixFour, SixFourUse, SixFourWant};
 pub use degree::{MinorDegree, Tessitura};
 pub use ending::LastMove;
 pub use held::{Numbers, SixFive, Together};

@@ -314,7 +314,7 @@ impl<'a> PairMove<'a> {
     /// A change of position in one chord of three parts or more is no arrival.
     #[must_use]
     pub fn only_changes_position(&self) -> bool {
-        self.parts() >= 3 && self.sounding.may_keep_chord()
+        self.parts() >= 3 && self.sounding.keeps_chord()
     }
 
     /// The fifth of a pair of horns: from a sixth or third by a step in the upper voice, and on

@@ -74,8 +74,10 @@ impl<'a> Piece<'a> {
                 struck & (1 << pair.upper | 1 << pair.lower) != 0 && !there.is_off_beat();
             match passages.last_mut() {
                 Some(last) if last.end == index => {
+                    // Struck again, or in another position, a chord is the same.
+                    let is_another = is_chord && there.unchanged_chord() != Some(true);
                     last.end = index + 1;
-                    last.chords += usize::from(is_chord);
+                    last.chords += usize::from(is_another);
                     last.until = until;
                 }
                 _ => passages.push(Passage {

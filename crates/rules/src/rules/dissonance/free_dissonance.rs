@@ -90,6 +90,8 @@ pub const RULE: Rule = Rule {
         source::GROVE.at("Strict Counterpoint"),
         source::LEHMANN.at("lesson I"),
         source::OPEN_MUSIC_THEORY,
+        source::HUTCHINSON.at("sec. 28.2"),
+        source::COLAROS,
         source::FUX_FIGURES.at("none in 75 figures"),
     ],
 };
@@ -98,13 +100,13 @@ static ORDINARY: Case = Case {
     name: "",
     when: "reached and left by step, but on a strong moment, or not at all",
     settings: &[
-        allow(
+        weakness(
             Style::Free,
-            "a note may belong to the chord: judged with the harmony",
+            "strange to the chord, and no ornament (Hutchinson, sec. 28.2)",
         ),
-        allow(
+        fault(
             Style::Chorale,
-            "a note may belong to the chord: judged with the harmony",
+            "strange to the chord, and no ornament (Hutchinson, sec. 28.2)",
         ),
         fault(
             Style::Motet,
@@ -121,13 +123,13 @@ static LEAP: Case = Case {
     name: "leap",
     when: "reached or left by leap",
     settings: &[
-        allow(
+        weakness(
             Style::Free,
-            "a note may belong to the chord: judged with the harmony",
+            "strange to the chord, and no ornament leaps so (Grove)",
         ),
-        allow(
+        fault(
             Style::Chorale,
-            "a note may belong to the chord: judged with the harmony",
+            "strange to the chord, and no ornament leaps so (Grove)",
         ),
         fault(
             Style::Motet,
@@ -144,13 +146,13 @@ static FOURTH: Case = Case {
     name: "fourth",
     when: "a fourth over the lowest voice",
     settings: &[
-        allow(
+        weakness(
             Style::Free,
-            "it may belong to the chord: judged with the harmony",
+            "strange to the chord (Open Music Theory; Colaros)",
         ),
-        allow(
+        fault(
             Style::Chorale,
-            "it may belong to the chord: judged with the harmony",
+            "strange to the chord (Open Music Theory; Colaros)",
         ),
         fault(
             Style::Motet,
@@ -189,11 +191,15 @@ fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
     }
     // A held note that lacks something of a suspension is told by the rules of suspensions, a
     // clash among upper voices by a rule of its own.
-    if !discord.is_unexplained() || !discord.is_over_bass() {
+    let Some((accused, None)) = discord.accused(style) else {
+        return;
+    };
+    if !discord.is_over_bass() {
         return;
     }
     let leap = |steps: Option<i32>| steps.is_some_and(|steps| steps.abs() >= 2);
-    let (into, out) = (leap(discord.steps_into()), leap(discord.steps_out()));
+    let into = leap(discord.steps_into(accused));
+    let out = leap(discord.steps_out(accused));
     let case = if discord.is_fourth_over_bass() {
         &FOURTH
     } else if into || out {
@@ -201,7 +207,7 @@ fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
     } else {
         &ORDINARY
     };
-    found.dissonance(case, discord, || {
+    found.accused(case, discord, accused, || {
         let (how, advice) = match (into, out) {
             (true, true) => (", reached and left by leap", "Reach and leave it by step"),
             (true, false) => (", reached by leap", "Reach it by step"),
@@ -210,7 +216,7 @@ fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
         };
         format!(
             "Free dissonance: {}{how}. {advice}, or make it consonant.",
-            discord.words()
+            discord.words_of(accused)
         )
     });
 }

@@ -56,13 +56,9 @@ static ORDINARY: Case = Case {
     name: "",
     when: "a second or a seventh among upper voices, and no figure accounts for it",
     settings: &[
-        allow(
+        weakness(
             Style::Free,
-            "a seventh chord, or a ninth: judged with the harmony",
-        ),
-        allow(
-            Style::Chorale,
-            "a seventh chord, or a ninth: judged with the harmony",
+            "where one of the two is strange to the chord (Lehmann, lesson XIII)",
         ),
         fault(Style::Motet, "upper voices agree with each other"),
         fault(
@@ -73,13 +69,18 @@ static ORDINARY: Case = Case {
 };
 
 fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
-    if !discord.is_unexplained() || discord.is_over_bass() {
+    let Some((accused, None)) = discord.accused(found.style()) else {
+        return;
+    };
+    // With chords, a note that comes and goes by step over a bass it agrees with is an ornament.
+    let steps = discord.comes_and_goes_by_step(accused);
+    if discord.is_over_bass() || (found.style().has_chords() && steps) {
         return;
     }
-    found.dissonance(&ORDINARY, discord, || {
+    found.accused(&ORDINARY, discord, accused, || {
         format!(
             "Upper clash: {}. Prepare one of them, or let them agree.",
-            discord.words()
+            discord.words_of(accused)
         )
     });
 }

@@ -69,7 +69,7 @@ static ORDINARY: Case = Case {
 };
 
 fn check(there: &Sounding<'_>, found: &mut Found<'_>) {
-    if there.parts() < 3 || there.may_keep_chord() {
+    if there.parts() < 3 || there.keeps_chord() {
         return;
     }
     let Some(rising) = there.all_move_one_way() else {
