@@ -17,6 +17,7 @@ mod pair;
 mod piece;
 mod rhythm;
 mod shape;
+mod six_four;
 mod sounding;
 mod vocal;
 
@@ -25,7 +26,7 @@ use partwright_analysis::{Analysis, Dissonance};
 use partwright_score::{Pair, PairStep, Score, Texture};
 
 pub use chord::{Member, Tone};
-pub use chord_moves::{CrossRelation, SixFour, SixFourUse, SixFourWant};
+pub use chord_moves::CrossRelation;
 pub use degree::{MinorDegree, Tessitura};
 pub use ending::LastMove;
 pub use held::{Numbers, SixFive, Together};
@@ -35,6 +36,7 @@ pub use pair::Direct;
 pub use piece::{Crossing, Passage};
 pub use rhythm::{Minim, Over, Quick, Stroke};
 pub use shape::{HighPoint, Passing, Stretch};
+pub use six_four::{SixFour, SixFourUse, SixFourWant};
 pub use vocal::Value;
 
 /// A score with its texture, and what was read in it.

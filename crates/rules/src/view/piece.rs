@@ -28,8 +28,8 @@ pub struct Passage {
     pub first: usize,
     /// One past its last sonority.
     pub end: usize,
-    /// How many chords it holds: sonorities in which one of the voices strikes on a beat, at
-    /// least one.
+    /// How many chords it holds: sonorities in which one of the voices strikes on a beat, but
+    /// not more of a sure chord, at least one.
     pub chords: usize,
     /// Where it begins.
     pub from: Time,

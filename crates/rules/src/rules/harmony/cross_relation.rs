@@ -53,12 +53,16 @@ use crate::prelude::*;
 /// The rule.
 pub const RULE: Rule = Rule {
     looks: Looks::Pairs(check),
-    cases: &[&ORDINARY, &OUTER, &BETWEEN],
+    cases: &[&ORDINARY, &OUTER, &BETWEEN, &OUTER_BETWEEN],
     numbers: &[],
     sources: &[
         source::NAVY.at("chapter 17"),
         source::FEEZELL,
         source::GROVE.at("False Relation"),
+        source::CHORALES_HERE.at("24, none between the outer voices"),
+        source::RENAISSANCE_WORKS
+            .at("101 with nothing between, 325 with a note between")
+            .looser("a note between excuses it"),
     ],
 };
 
@@ -82,7 +86,7 @@ static OUTER: Case = Case {
         weakness(Style::Free, "handbooks warn of it (Feezell)"),
         fault(
             Style::Chorale,
-            "plainest between the outer voices (Navy, chapter 17)",
+            "plainest between the outer voices (Navy, chapter 17); none in 156 chorales",
         ),
         fault(
             Style::Motet,
@@ -94,14 +98,30 @@ static OUTER: Case = Case {
 
 static BETWEEN: Case = Case {
     name: "between",
-    when: "the same with another note of the first voice between, within a beat",
+    when: "two forms with another note of the first voice between, within a beat",
     settings: &[
         weakness(Style::Free, "handbooks warn of it (Feezell)"),
-        weakness(
-            Style::Chorale,
-            "of nine between outer voices in the chorales eight have a note between",
+        allow(
+            Style::Motet,
+            "325 times in 314 works, against 101 with nothing between",
         ),
-        allow(Style::Motet, "as good as every madrigal has it at a close"),
+        allow(Style::Species1, "its lines keep to the mode"),
+    ],
+};
+
+static OUTER_BETWEEN: Case = Case {
+    name: "outer-between",
+    when: "the same between the outer voices",
+    settings: &[
+        weakness(Style::Free, "handbooks warn of it (Feezell)"),
+        fault(
+            Style::Chorale,
+            "plainest between the outer voices (Navy, chapter 17); none in 156 chorales",
+        ),
+        allow(
+            Style::Motet,
+            "325 times in 314 works, against 101 with nothing between",
+        ),
         allow(Style::Species1, "its lines keep to the mode"),
     ],
 };
@@ -117,7 +137,8 @@ fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
         return;
     }
     let case = match (relation.between, step.is_outer()) {
-        (true, _) => &BETWEEN,
+        (true, true) => &OUTER_BETWEEN,
+        (true, false) => &BETWEEN,
         (false, true) => &OUTER,
         (false, false) => &ORDINARY,
     };

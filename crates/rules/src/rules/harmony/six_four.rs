@@ -121,17 +121,16 @@ fn check(there: &Sounding<'_>, found: &mut Found<'_>) {
     };
     let piece = there.piece;
     let voices: Vec<usize> = piece.texture.sounding(there.index).collect();
-    let name = |voice| piece.name(voice);
     match chord.use_of() {
         SixFourUse::Bare
             if found.style().has_chords() || !found.is_told_of_fourth(there, &FOURTHS) =>
         {
             found.sonority(&ORDINARY, &voices, there.onset(), || {
                 format!(
-                    "Six-four: {} stands over its fifth, {} in {}, for no reason of the four (cadential, passing, over a held bass, broken). Put the chord in another position, or let the bass come and go by step.",
+                    "Six-four: {} stands over its fifth, {} in {}, neither cadential nor passing, nor over a held bass, nor broken. Put the chord in another position, or let the bass come and go by step.",
                     chord.name(),
                     chord.bass_text(),
-                    name(chord.bass)
+                    piece.name(chord.bass)
                 )
             });
         }
@@ -148,34 +147,7 @@ fn check(there: &Sounding<'_>, found: &mut Found<'_>) {
                 _ => &CADENTIAL,
             };
             found.sonority(case, &voices, there.onset(), || {
-                let text = match want {
-                    SixFourWant::FourthLeaps(v) => {
-                        format!("its fourth, in {}, leaps. Let it go down by step", name(v))
-                    }
-                    SixFourWant::FourthStrays(v) => format!(
-                        "its fourth, in {}, does not go down. Let it go down by step",
-                        name(v)
-                    ),
-                    SixFourWant::SixthStrays(v) => format!(
-                        "its sixth, in {}, does not go down by step. Let it do so",
-                        name(v)
-                    ),
-                    SixFourWant::FourthReached(v) => format!(
-                        "its fourth, in {}, is reached by leap. Prepare it, or reach it by step",
-                        name(v)
-                    ),
-                    SixFourWant::Weak => {
-                        "it is weaker than its dominant. Move it to a stronger beat".to_owned()
-                    }
-                    SixFourWant::FromDominant => {
-                        "it comes from the dominant it leads to. Put another chord before it"
-                            .to_owned()
-                    }
-                    SixFourWant::BassNotDoubled => {
-                        "its bass is not doubled. Double the bass".to_owned()
-                    }
-                };
-                format!("Six-four before the dominant: {text}.")
+                format!("Six-four before the dominant: {}.", want.text(piece))
             });
         }
         _ => {}
