@@ -52,11 +52,11 @@ fn the_six_four_before_the_dominant() {
                 WEAK,
                 WEAK,
             ),
-            // The fourth is reached by leap: in a chorale the appoggiatura tells it.
+            // The fourth is reached by leap: the appoggiatura tells it, where it is minded.
             (
                 "C5 - A4 - | C5 - B4 - | C5 - - - / E4 - F4 - | E4 - D4 - | E4 - - - / A3 - C4 - | G3 - G3 - | G3 - - - / A2 - F3 - | G3 - G2 - | C3 - - -",
                 None,
-                WEAK,
+                None,
             ),
             // The fourth is doubled, and not the bass.
             (

@@ -11,7 +11,7 @@ pub enum SixFourUse {
     Cadential,
     /// The bass comes and goes by step.
     Passing,
-    /// The bass was there before.
+    /// The bass was there before, or stays.
     Pedal,
     /// The chord stands in another position beside it.
     Arpeggiated,
@@ -133,6 +133,9 @@ impl<'a> SixFour<'a> {
         if self.dominant().is_some() {
             return SixFourUse::Cadential;
         }
+        if self.bass_stays() {
+            return SixFourUse::Pedal;
+        }
         if self.stands_otherwise() {
             return SixFourUse::Arpeggiated;
         }
@@ -146,6 +149,12 @@ impl<'a> SixFour<'a> {
     fn bass_is_held(&self) -> bool {
         let note = self.there.held_note(self.bass);
         note.is_some_and(|(_, note)| note.onset < self.there.onset())
+    }
+
+    /// The chord goes on to another over the same note of the bass.
+    fn bass_stays(&self) -> bool {
+        let next = self.after().and_then(|next| next.pitch(self.bass));
+        next.is_some() && next == self.there.pitch(self.bass)
     }
 
     /// Beside it, before or after, the bass has another note of the same triad.

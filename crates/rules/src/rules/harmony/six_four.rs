@@ -55,7 +55,7 @@ use crate::prelude::*;
 /// The rule.
 pub const RULE: Rule = Rule {
     looks: Looks::Sonorities(check),
-    cases: &[&ORDINARY, &CADENTIAL, &LEAPS],
+    cases: &[&ORDINARY, &CADENTIAL, &REACHED, &LEAPS],
     numbers: &[],
     sources: &[
         source::KOSTKA_PAYNE.at("ch. 9"),
@@ -82,9 +82,23 @@ static ORDINARY: Case = Case {
 
 static CADENTIAL: Case = Case {
     name: "cadential",
-    when: "before the dominant on its bass: weaker than that, or after it; the fourth or the sixth not going down by step, the fourth reached by leap, or, in four parts, the bass not doubled",
+    when: "before the dominant on its bass: weaker than that, or after it; the fourth or the sixth not going down by step, or, in four parts, the bass not doubled",
     settings: &[
         weakness(Style::Free, "the cadential six-four (Open Music Theory)"),
+        allow(Style::Motet, "the style has no such chord"),
+        allow(Style::Species1, "told as a dissonance"),
+    ],
+};
+
+static REACHED: Case = Case {
+    name: "cadential-reached",
+    when: "the same, and its fourth is reached by leap",
+    settings: &[
+        allow(Style::Free, "an appoggiatura, which is free there"),
+        weakness(
+            Style::Chorale,
+            "a common tone or a step leads to it (Colaros)",
+        ),
         allow(Style::Motet, "the style has no such chord"),
         allow(Style::Species1, "told as a dissonance"),
     ],
@@ -144,6 +158,7 @@ fn check(there: &Sounding<'_>, found: &mut Found<'_>) {
             }
             let case = match want {
                 SixFourWant::FourthLeaps(_) => &LEAPS,
+                SixFourWant::FourthReached(_) => &REACHED,
                 _ => &CADENTIAL,
             };
             found.sonority(case, &voices, there.onset(), || {
