@@ -146,6 +146,51 @@ fn a_note_that_the_chord_has_needs_no_figure() {
 }
 
 #[test]
+fn a_note_strange_to_the_chord_is_told() {
+    // D was strange to C major, and still is as the bass moves.
+    holds(
+        "suspension-preparation",
+        &[(
+            "C5 - - - | C5 - - - | C5 - - - / E4 - - D4.D4 | D4 - A4 - | E4 - - - / G3 - - - | G3 - - - | G3 - - - / C3 - - - | E3 - - - | C3 - - -",
+            FAULT,
+            WEAK,
+        )],
+    );
+    // B and A leave C major together, a second apart; B and D do so a third apart.
+    holds(
+        "clash-together",
+        &[
+            (
+                "E5 - C5.B4 C5 | E5 - - - / G4 - G4.A4 G4 | G4 - - - / G3 - - - | G3 - - - / C3 - - - | C3 - - -",
+                WEAK,
+                WEAK,
+            ),
+            (
+                "E5 - E5.D5 E5 | E5 - - - / C5 - C5.B4 C5 | C5 - - - / G3 - - - | G3 - - - / C3 - - - | C3 - - -",
+                None,
+                None,
+            ),
+        ],
+    );
+    // Ab is a sixth over C, and clashes with G; it comes and goes by leap, or by step.
+    holds(
+        "upper-clash",
+        &[
+            (
+                "E5 - - - | E5 - - - / C5 - - E5.Ab4 | C5 - - - / G3 - - - | G3 - - - / C3 - - - | C3 - - -",
+                WEAK,
+                WEAK,
+            ),
+            (
+                "E5 - - - | E5 - - - / C5 - - G4.Ab4 | G4 - - - / G3 - - - | G3 - - - / C3 - - - | C3 - - -",
+                None,
+                None,
+            ),
+        ],
+    );
+}
+
+#[test]
 fn a_cross_relation_is_of_two_voices() {
     holds(
         "cross-relation",

@@ -61,7 +61,7 @@ pub const RULE: Rule = Rule {
 
 static ORDINARY: Case = Case {
     name: "",
-    when: "in a second, a seventh or a ninth",
+    when: "in a second, a seventh or a ninth; where chords are heard, only two notes strange to the sure chord",
     settings: &[
         weakness(
             Style::Free,

@@ -98,7 +98,7 @@ pub const RULE: Rule = Rule {
 
 static ORDINARY: Case = Case {
     name: "",
-    when: "reached and left by step, but on a strong moment, or not at all",
+    when: "reached and left by step, but on a strong moment, or not at all; where chords are heard, in every case only a note strange to the sure chord",
     settings: &[
         weakness(
             Style::Free,

@@ -65,7 +65,7 @@ static SHORT: Case = Case {
 
 static MISSING: Case = Case {
     name: "missing",
-    when: "the note was dissonant before",
+    when: "the note was dissonant before; where chords are heard, only one strange to the chord of both moments",
     settings: &[
         weakness(
             Style::Free,

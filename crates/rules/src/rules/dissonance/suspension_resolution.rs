@@ -56,7 +56,7 @@ pub const RULE: Rule = Rule {
 
 static ORDINARY: Case = Case {
     name: "",
-    when: "it leaps, goes up otherwise, or stays",
+    when: "it leaps, goes up otherwise, or stays; where chords are heard, only a note strange to the chord that reaches its resolution by no short way round",
     settings: &[
         allow(Style::Free, "asked of strict lines and of the chorale"),
         fault(Style::Chorale, "unless the held note belongs to the chord"),

@@ -54,7 +54,7 @@ pub const RULE: Rule = Rule {
 
 static ORDINARY: Case = Case {
     name: "",
-    when: "a second or a seventh among upper voices, and no figure accounts for it",
+    when: "a second or a seventh among upper voices, and no figure accounts for it; where chords are heard, only a note strange to the sure chord that comes or goes by leap",
     settings: &[
         weakness(
             Style::Free,
