@@ -212,6 +212,28 @@ fn a_cross_relation_is_of_two_voices() {
                 None,
                 None,
             ),
+            // The Neapolitan sixth goes to the dominant; to G minor it would not.
+            (
+                "Db5 - B4 - | C5 - - - / F4 - G4 - | G4 - - - / Ab3 - D4 - | E4 - - - / F3 - G3 - | C3 - - -",
+                None,
+                None,
+            ),
+            (
+                "Db5 - Bb4 - | C5 - - - / F4 - G4 - | G4 - - - / Ab3 - D4 - | E4 - - - / F3 - G3 - | C3 - - -",
+                WEAK,
+                WEAK,
+            ),
+            // F# belongs to a diminished seventh chord; then to a seventh chord on D.
+            (
+                "A4 - C5 - | Bb4 - - - / F4 - Eb4 - | D4 - - - / A3 - A3 - | G3 - - - / D3 - F#3 - | G3 - - -",
+                None,
+                None,
+            ),
+            (
+                "A4 - C5 - | Bb4 - - - / F4 - D4 - | D4 - - - / A3 - A3 - | G3 - - - / D3 - F#3 - | G3 - - -",
+                WEAK,
+                WEAK,
+            ),
             // The voice that has the second form had the first itself.
             (
                 "A4 - A4 - | G4 - - - / D4 - D4 - | E4 - - - / A3 - A3 - | C4 - - - / F#3 - F3 - | E3 - - -",
