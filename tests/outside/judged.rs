@@ -108,6 +108,12 @@ const CASES: &[(&str, &str, &str, Verdict)] = &[
         Clean("motion"),
     ),
     (
+        "cross relation",
+        "chorale",
+        "a | A4 A4 | / b | F#4 D4 | / c | D3 F3 |",
+        Bad("cross-relation"),
+    ),
+    (
         "crossing",
         "chorale",
         "a | D4 E | / b | C4 F |",

@@ -165,13 +165,24 @@ impl<'a> Found<'a> {
         discord: &Discord<'_>,
         message: impl FnOnce() -> String,
     ) {
-        let (voice, other) = (discord.dissonant().0, discord.other().0);
+        self.accused(case, discord, discord.dissonant(), message);
+    }
+
+    /// The same about one of the two notes that is not the struck one, or the held one.
+    pub fn accused(
+        &mut self,
+        case: &'static Case,
+        discord: &Discord<'_>,
+        accused: (usize, usize),
+        message: impl FnOnce() -> String,
+    ) {
+        let (voice, other) = (accused.0, discord.dissonance.other(accused.0).0);
         let Some(severity) = self.severity_of(case, &[voice]) else {
             return;
         };
         let at = discord.dissonance.at;
         let mut related = vec![(Role::With, Spot { voice: other, at })];
-        let note = discord.note(discord.dissonant());
+        let note = discord.note(accused);
         if let Some(note) = note.filter(|note| note.onset < at) {
             related.push((
                 Role::Struck,

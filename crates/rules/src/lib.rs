@@ -42,8 +42,8 @@ pub mod prelude {
     pub use crate::source::{self, Source};
     pub use crate::style::{Setting, Style, allow, fault, remark, weakness};
     pub use crate::view::{
-        Chord, Direct, Discord, Doubling, LastMove, Level, Line, LineMove, Member, MinorDegree,
-        Numbers, Over, PairMove, ParallelRun, Passage, Piece, Sounding, StatedHarmony, Stroke,
-        Succession, Tone,
+        Chord, CrossRelation, Direct, Discord, Doubling, LastMove, Level, Line, LineMove, Member,
+        MinorDegree, Numbers, Over, PairMove, ParallelRun, Passage, Piece, SixFour, SixFourUse,
+        SixFourWant, Sounding, StatedHarmony, Stroke, Succession, Tone,
     };
 }

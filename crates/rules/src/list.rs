@@ -36,6 +36,8 @@ pub mod consonant_fourth;
 pub mod contrary_fifths;
 #[path = "rules/motion/contrary_octaves.rs"]
 pub mod contrary_octaves;
+#[path = "rules/harmony/cross_relation.rs"]
+pub mod cross_relation;
 #[path = "rules/motion/crossing.rs"]
 pub mod crossing;
 #[path = "rules/motion/delayed_consecutives.rs"]
@@ -158,6 +160,8 @@ pub mod seventh_leap;
 pub mod similar_leaps;
 #[path = "rules/dissonance/six_five_exchange.rs"]
 pub mod six_five_exchange;
+#[path = "rules/harmony/six_four.rs"]
+pub mod six_four;
 #[path = "rules/harmony/six_four_doubling.rs"]
 pub mod six_four_doubling;
 #[path = "rules/line/sixth_leap.rs"]
@@ -245,9 +249,11 @@ pub(crate) static FILES: &[File] = &[
     file!("dissonance", suspension_resolution),
     file!("dissonance", upper_clash),
     file!("harmony", chord_doubling),
+    file!("harmony", cross_relation),
     file!("harmony", incomplete_chord),
     file!("harmony", leading_note_doubled),
     file!("harmony", seventh_doubled),
+    file!("harmony", six_four),
     file!("harmony", six_four_doubling),
     file!("harmony", stated_harmony),
     file!("line", augmented_interval),

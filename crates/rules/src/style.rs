@@ -118,6 +118,12 @@ impl Style {
             .find(|style| style.species() == Some(species))
     }
 
+    /// Its dissonances are judged by the chord they stand in.
+    #[must_use]
+    pub const fn has_chords(self) -> bool {
+        matches!(self, Style::Free | Style::Chorale)
+    }
+
     /// Whether it is one of the five species.
     #[must_use]
     pub const fn is_species(self) -> bool {

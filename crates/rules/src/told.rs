@@ -67,6 +67,18 @@ impl Found<'_> {
         !found.is_empty()
     }
 
+    /// One of the rules has a word on a fourth over the lowest voice that begins here.
+    #[must_use]
+    pub fn is_told_of_fourth(&self, there: &Sounding<'_>, rules: &[&str]) -> bool {
+        let piece = there.piece;
+        let mut all = piece.analysis.dissonances_at(there.index).iter();
+        all.any(|dissonance| {
+            let discord = Discord { piece, dissonance };
+            let tells = |rule: &&str| self.is_told_of_dissonance(rule, &discord);
+            discord.is_fourth_over_bass() && rules.iter().any(tells)
+        })
+    }
+
     /// The notes of a line on which one of the rules has a word, by their onsets, sorted.
     #[must_use]
     pub fn told_on_line(&self, rules: &[&str], line: &Line<'_>) -> Vec<Time> {

@@ -87,6 +87,18 @@ fn one_fact_is_told_by_one_rule() {
             "third-missing",
             "incomplete-chord",
         ),
+        (
+            "chorale",
+            "metre 4/4\n\nS | C5 - A4 - | C5 - B4 - | C5 - - - ||\nA | E4 - F4 - | E4 - D4 - | E4 - - - ||\nT | A3 - C4 - | G3 - G3 - | G3 - - - ||\nB | A2 - F3 - | G3 - G2 - | C3 - - - ||",
+            "appoggiatura",
+            "six-four",
+        ),
+        (
+            "motet",
+            "metre 4/4\n\nS | C5 - C5 - | D5 - B4 - | C5 - - - ||\nA | E4 - E4 - | F4 - G4 - | G4 - - - ||\nT | A3 - C4 - | A3 - D4 - | E4 - - - ||\nB | A2 - G3 - | D3 - G2 - | C3 - - - ||",
+            "free-dissonance",
+            "six-four",
+        ),
     ] {
         let rules = told(style, sheet, None);
         assert!(rules.contains(&speaks), "{sheet}: {rules:?}");

@@ -143,6 +143,13 @@ impl Chord {
         self.root + under
     }
 
+    /// The letter of its root, 0 for C to 6 for B.
+    #[must_use]
+    pub fn root_letter(self) -> u8 {
+        // Each fifth up is four letters on.
+        u8::try_from((self.root * 4).rem_euclid(7)).unwrap_or(0)
+    }
+
     /// Which of its notes a pitch is: 0 the root, 1 the third, 2 the fifth, 3 the seventh.
     #[must_use]
     pub fn tone(self, pitch: Pitch) -> Option<usize> {

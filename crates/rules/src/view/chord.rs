@@ -71,13 +71,25 @@ impl<'a> Piece<'a> {
 }
 
 impl<'a> Sounding<'a> {
-    /// The chord here, where it is sure.
+    /// The chord here, where it is sure; or where its root is, and it goes on from a sure chord on
+    /// that root; or where it lies between two such, as under ornaments, the chord itself.
     #[must_use]
     pub fn chord(self) -> Option<Chord<'a>> {
         let piece = self.piece;
         let harmony = piece.analysis.harmony(piece.score, piece.texture);
-        let index = harmony.index_at(self.index)?;
-        piece.chord(index).filter(|chord| chord.is_sure())
+        let here = piece.chord(harmony.index_at(self.index)?)?;
+        if here.is_sure() {
+            return Some(here);
+        }
+        let root = here.segment.chord.root;
+        let on_root = |chord: &Chord<'_>| chord.is_sure() && chord.segment.chord.root == root;
+        let before = here.before().filter(on_root)?;
+        if here.segment.root_is_sure() {
+            return Some(here);
+        }
+        here.next()
+            .is_some_and(|next| on_root(&next))
+            .then_some(before)
     }
 }
 

@@ -5,6 +5,7 @@ use partwright_analysis::{Dissonance, Figure};
 use partwright_score::{Interval, Note, Pitch, Time, ZERO};
 
 use super::{Discord, Sounding};
+use crate::style::Style;
 
 impl<'a> Discord<'a> {
     /// What the note is, if a figure explains it.
@@ -46,18 +47,23 @@ impl<'a> Discord<'a> {
         self.piece.score.voices.get(voice)?.notes.get(note)
     }
 
-    /// The move into the dissonant note, in scale steps; `None` where nothing leads to it.
+    /// The move into a note, in scale steps; `None` where nothing leads to it.
     #[must_use]
-    pub fn steps_into(&self) -> Option<i32> {
-        let (voice, note) = self.dissonant();
+    pub fn steps_into(&self, (voice, note): (usize, usize)) -> Option<i32> {
         self.steps((voice, note.checked_sub(1)?), (voice, note))
     }
 
     /// The move out of it.
     #[must_use]
-    pub fn steps_out(&self) -> Option<i32> {
-        let (voice, note) = self.dissonant();
+    pub fn steps_out(&self, (voice, note): (usize, usize)) -> Option<i32> {
         self.steps((voice, note), (voice, note + 1))
+    }
+
+    /// A note is reached and left by step.
+    #[must_use]
+    pub fn comes_and_goes_by_step(&self, of: (usize, usize)) -> bool {
+        let step = |steps: Option<i32>| steps.map(i32::abs) == Some(1);
+        step(self.steps_into(of)) && step(self.steps_out(of))
     }
 
     fn steps(&self, from: (usize, usize), to: (usize, usize)) -> Option<i32> {
@@ -82,16 +88,107 @@ impl<'a> Discord<'a> {
         near_suspension(self.piece.score, self.piece.texture, self.dissonance)
     }
 
+    /// The note that the harmony accuses: the chord is sure, the other note belongs to it and this
+    /// one does not, and no figure accounts for it, here or against another voice.
+    #[must_use]
+    pub fn foreign(&self) -> Option<(usize, usize)> {
+        if self.dissonance.reading.is_some() {
+            return None;
+        }
+        let chord = self.sounding().chord()?;
+        let strange = |of: &(usize, usize)| {
+            let pitch = self.note(*of).and_then(|note| note.sound.pitch());
+            pitch.is_some_and(|pitch| !chord.may_have(pitch))
+        };
+        let [a, b] = self.dissonance.notes();
+        let accused = match (strange(&a), strange(&b)) {
+            (true, false) => a,
+            (false, true) => b,
+            _ => return None,
+        };
+        (!self.is_figure_elsewhere(accused)).then_some(accused)
+    }
+
+    /// A figure accounts for a note in one of the dissonances that it makes.
+    fn is_figure_elsewhere(&self, (voice, note): (usize, usize)) -> bool {
+        let Some(end) = self.note((voice, note)).map(Note::end) else {
+            return false;
+        };
+        let from = self.note((voice, note)).map_or(ZERO, |note| note.onset);
+        let all = self.piece.analysis.dissonances();
+        let first = all.partition_point(|d| d.at < from);
+        let during = all.iter().skip(first).take_while(|d| d.at < end);
+        let mut readings = during.filter_map(|d| d.reading);
+        readings.any(|reading| (reading.voice, reading.note) == (voice, note))
+    }
+
+    /// The note that no figure accounts for, and what a held one lacks of a suspension; in styles
+    /// with chords only one that the sure chord does not have.
+    #[must_use]
+    pub fn accused(&self, style: Style) -> Option<((usize, usize), Option<Near>)> {
+        if !style.has_chords() {
+            let unexplained = self.dissonance.reading.is_none();
+            return unexplained.then(|| (self.dissonant(), self.near_suspension()));
+        }
+        let accused = self.foreign()?;
+        let near = self.near().filter(|(_, held)| *held == accused);
+        let near = near.map(|(near, _)| near);
+        let excused = match near {
+            Some(Near::Preparation) => self.belonged_before(accused),
+            Some(Near::Resolution) => self.resolves_round(accused),
+            _ => false,
+        };
+        (!excused).then_some((accused, near))
+    }
+
+    /// A held note was one of the chord before, or may have been: what prepares it.
+    fn belonged_before(&self, of: (usize, usize)) -> bool {
+        let pitch = self.note(of).and_then(|note| note.sound.pitch());
+        let before = self.sounding().neighbour(-1).and_then(Sounding::chord);
+        before
+            .zip(pitch)
+            .is_none_or(|(chord, pitch)| chord.may_have(pitch))
+    }
+
+    /// It goes to its resolution by way of a few short notes, as far round as it may be.
+    fn resolves_round(&self, (voice, note): (usize, usize)) -> bool {
+        let beat = self.piece.cell_at(self.dissonance.at).unwrap_or(ZERO);
+        let short = |n: usize| {
+            let between = self.note((voice, n));
+            between.is_some_and(|note| note.length < beat)
+        };
+        let resolves = |n: usize| self.steps((voice, note), (voice, n)) == Some(-1);
+        (note + 1..note + 6)
+            .take_while(|&n| n == note + 1 || short(n - 1))
+            .any(resolves)
+    }
+
     /// No figure accounts for it, and no note is held that lacks something of a suspension.
     #[must_use]
     pub fn is_unexplained(&self) -> bool {
         self.dissonance.reading.is_none() && self.near_suspension().is_none()
     }
 
+    /// The dissonant note is one of the sure chord.
+    #[must_use]
+    pub fn is_of_chord(&self) -> bool {
+        let there = self.sounding();
+        let chord = there.chord();
+        chord.is_some_and(|chord| chord.member(there.index, self.dissonant().0).is_some())
+    }
+
+    /// No figure accounts for it, the chord is not sure, and can be none.
+    #[must_use]
+    pub fn is_in_no_chord(&self, style: Style) -> bool {
+        style.has_chords()
+            && self.is_unexplained()
+            && self.sounding().chord().is_none()
+            && self.fits_no_chord()
+    }
+
     /// No chord of thirds, up to a seventh chord, holds the two notes together with what else sounds
     /// and is no ornament or suspension: neither can belong to the harmony.
-    #[must_use]
-    pub fn fits_no_chord(&self) -> bool {
+    fn fits_no_chord(&self) -> bool {
         let there = self.sounding();
         let texture = self.piece.texture;
         let Some(sonority) = there.sonority() else {
@@ -179,6 +276,12 @@ impl<'a> Discord<'a> {
     /// `D5 in soprano makes a major ninth with C4 in bass`.
     #[must_use]
     pub fn words(&self) -> String {
+        self.words_of(self.dissonant())
+    }
+
+    /// The same, told of one of the two notes.
+    #[must_use]
+    pub fn words_of(&self, accused: (usize, usize)) -> String {
         let text = |of: (usize, usize)| {
             let pitch = self.note(of).and_then(|note| note.sound.pitch());
             let pitch = pitch.map(|p| p.to_string()).unwrap_or_default();
@@ -186,9 +289,9 @@ impl<'a> Discord<'a> {
         };
         format!(
             "{} makes {} with {}",
-            text(self.dissonant()),
+            text(accused),
             Interval(self.dissonance.gap).spoken(),
-            text(self.other())
+            text(self.dissonance.other(accused.0))
         )
     }
 }

@@ -314,7 +314,7 @@ impl Sounding<'_> {
     /// but fourths, sixths and octaves, both of the first there. The voices that double the
     /// fourth or the sixth, none where the bass is doubled.
     #[must_use]
-    pub fn six_four(self) -> Option<Vec<usize>> {
+    pub fn six_four_doubles(self) -> Option<Vec<usize>> {
         let bass = self.bass().filter(|_| self.parts() >= 4)?;
         let cell = self.piece.cell_at(self.onset())?;
         if self.is_off_beat() || self.piece.end_of(self.index) - self.onset() < cell {

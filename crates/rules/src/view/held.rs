@@ -266,6 +266,18 @@ impl Discord<'_> {
             })
     }
 
+    /// The chord is sure, and neither the dissonant note nor what another voice has here belongs
+    /// to it.
+    #[must_use]
+    pub fn leaves_sure_chord(&self, other: usize) -> bool {
+        let there = self.sounding();
+        let strange = |voice| {
+            let chord = there.chord().zip(there.pitch(voice));
+            chord.is_some_and(|(chord, pitch)| !chord.may_have(pitch))
+        };
+        strange(self.dissonant().0) && strange(other)
+    }
+
     fn clash(&self, pair: Pair) -> Option<Together> {
         let (texture, k) = (self.piece.texture, self.dissonance.sonority);
         let step = texture.step(k, pair.upper, pair.lower)?;

@@ -5,6 +5,7 @@
 mod account;
 mod cadence;
 mod chord;
+mod chord_moves;
 mod close;
 mod degree;
 mod discord;
@@ -18,6 +19,7 @@ mod pair;
 mod piece;
 mod rhythm;
 mod shape;
+mod six_four;
 mod sounding;
 mod stated;
 mod vocal;
@@ -28,6 +30,7 @@ use partwright_score::{Pair, PairStep, Score, Texture};
 
 pub use cadence::Cadence;
 pub use chord::{Member, Tone};
+pub use chord_moves::CrossRelation;
 pub use degree::{MinorDegree, Tessitura};
 pub use doubling::{Doubled, Doubling};
 pub use ending::LastMove;
@@ -38,6 +41,7 @@ pub use pair::Direct;
 pub use piece::{Crossing, Passage};
 pub use rhythm::{Minim, Over, Quick, Stroke};
 pub use shape::{HighPoint, Passing, Stretch};
+pub use six_four::{SixFour, SixFourUse, SixFourWant};
 pub use stated::{StatedHarmony, Stranger};
 pub use vocal::Value;
 

@@ -328,7 +328,7 @@ impl<'a> PairMove<'a> {
     /// between the beats.
     #[must_use]
     pub fn only_changes_position(&self) -> bool {
-        self.parts() >= 3 && self.sounding.may_only_change_position()
+        self.parts() >= 3 && self.sounding.keeps_chord()
     }
 
     /// It arrives on a beat from a note between beats that one of the two reached by step, or by a

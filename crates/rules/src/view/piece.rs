@@ -28,8 +28,8 @@ pub struct Passage {
     pub first: usize,
     /// One past its last sonority.
     pub end: usize,
-    /// How many chords it holds: sonorities in which one of the voices strikes on a beat, at
-    /// least one.
+    /// How many chords it holds: sonorities in which one of the voices strikes on a beat, but
+    /// not more of a sure chord, at least one.
     pub chords: usize,
     /// Where it begins.
     pub from: Time,
@@ -74,8 +74,10 @@ impl<'a> Piece<'a> {
                 struck & (1 << pair.upper | 1 << pair.lower) != 0 && !there.is_off_beat();
             match passages.last_mut() {
                 Some(last) if last.end == index => {
+                    // Struck again, or in another position, a chord is the same.
+                    let is_another = is_chord && there.unchanged_chord() != Some(true);
                     last.end = index + 1;
-                    last.chords += usize::from(is_chord);
+                    last.chords += usize::from(is_another);
                     last.until = until;
                 }
                 _ => passages.push(Passage {

@@ -90,8 +90,10 @@ fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
         return;
     };
     let style = found.style();
-    let is_octave = discord.steps_into().is_some_and(|steps| steps.abs() == 7);
-    if is_octave && !style.is_species() && style != Style::Motet {
+    // A note of the chord is no ornament, however it came; an octave is the same note again.
+    let into = discord.steps_into(discord.dissonant());
+    let is_octave = into.is_some_and(|steps| steps.abs() == 7);
+    if style.has_chords() && (is_octave || discord.is_of_chord()) {
         return;
     }
     let case = &ORDINARY;

@@ -61,11 +61,11 @@ pub const RULE: Rule = Rule {
 
 static ORDINARY: Case = Case {
     name: "",
-    when: "in a second, a seventh or a ninth",
+    when: "in a second, a seventh or a ninth; where chords are heard, only two notes strange to the sure chord",
     settings: &[
-        allow(
+        weakness(
             Style::Free,
-            "one of the two may belong to the chord: judged with the harmony",
+            "unless one of the two belongs to the chord (Hutchinson, sec. 28.2)",
         ),
         fault(Style::Motet, "the two must agree with each other"),
         fault(
@@ -91,6 +91,9 @@ fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
     let Some(together) = discord.together().filter(|t| !t.is_lawful_fourth) else {
         return;
     };
+    if found.style().has_chords() && !discord.leaves_sure_chord(together.voice) {
+        return;
+    }
     let case = if together.is_fourth {
         &FOURTH
     } else {

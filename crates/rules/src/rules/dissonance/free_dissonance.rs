@@ -115,21 +115,23 @@ pub const RULE: Rule = Rule {
             .at("16 places in no chord, most of them suspensions struck again or left by leap"),
         source::LEHMANN.at("lesson I"),
         source::OPEN_MUSIC_THEORY,
+        source::HUTCHINSON.at("sec. 28.2"),
+        source::COLAROS,
         source::FUX_FIGURES.at("none in 75 figures"),
     ],
 };
 
 static ORDINARY: Case = Case {
     name: "",
-    when: "reached and left by step, but on a strong moment, or not at all",
+    when: "reached and left by step, but on a strong moment, or not at all; where chords are heard, in every case only a note strange to the sure chord",
     settings: &[
-        allow(
+        weakness(
             Style::Free,
-            "a note may belong to the chord: judged with the harmony",
+            "strange to the chord, and no ornament (Hutchinson, sec. 28.2)",
         ),
-        allow(
+        fault(
             Style::Chorale,
-            "a note may belong to the chord: judged with the harmony",
+            "strange to the chord, and no ornament (Hutchinson, sec. 28.2)",
         ),
         fault(
             Style::Motet,
@@ -146,13 +148,13 @@ static LEAP: Case = Case {
     name: "leap",
     when: "reached or left by leap",
     settings: &[
-        allow(
+        weakness(
             Style::Free,
-            "a note may belong to the chord: judged with the harmony",
+            "strange to the chord, and no ornament leaps so (Grove)",
         ),
-        allow(
+        fault(
             Style::Chorale,
-            "a note may belong to the chord: judged with the harmony",
+            "strange to the chord, and no ornament leaps so (Grove)",
         ),
         fault(
             Style::Motet,
@@ -169,13 +171,13 @@ static FOURTH: Case = Case {
     name: "fourth",
     when: "a fourth over the lowest voice",
     settings: &[
-        allow(
+        weakness(
             Style::Free,
-            "it may belong to the chord: judged with the harmony",
+            "strange to the chord (Open Music Theory; Colaros)",
         ),
-        allow(
+        fault(
             Style::Chorale,
-            "it may belong to the chord: judged with the harmony",
+            "strange to the chord (Open Music Theory; Colaros)",
         ),
         fault(
             Style::Motet,
@@ -229,13 +231,18 @@ fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
     }
     // A held note that lacks something of a suspension is told by the rules of suspensions, a
     // clash among upper voices by a rule of its own.
-    if !discord.is_unexplained() || !discord.is_over_bass() {
+    let (accused, is_strange) = match discord.accused(style) {
+        Some((accused, None)) => (accused, true),
+        None if discord.is_in_no_chord(style) => (discord.dissonant(), false),
+        _ => return,
+    };
+    if !discord.is_over_bass() {
         return;
     }
     let leap = |steps: Option<i32>| steps.is_some_and(|steps| steps.abs() >= 2);
-    let (into, out) = (leap(discord.steps_into()), leap(discord.steps_out()));
-    let mixed = !style.is_species() && style != Style::Motet;
-    let case = if mixed && discord.fits_no_chord() {
+    let into = leap(discord.steps_into(accused));
+    let out = leap(discord.steps_out(accused));
+    let case = if !is_strange {
         &NO_CHORD
     } else if discord.is_fourth_over_bass() {
         &FOURTH
@@ -244,7 +251,7 @@ fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
     } else {
         &ORDINARY
     };
-    found.dissonance(case, discord, || {
+    found.accused(case, discord, accused, || {
         let (how, advice) = match (into, out) {
             (true, true) => (", reached and left by leap", "Reach and leave it by step"),
             (true, false) => (", reached by leap", "Reach it by step"),
@@ -258,7 +265,7 @@ fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
         };
         format!(
             "Free dissonance: {}{how}{chord}. {advice}, or make it consonant.",
-            discord.words()
+            discord.words_of(accused)
         )
     });
 }

@@ -177,7 +177,10 @@ fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
         &DOWNBEAT
     } else if !strict && discord.is_shorter_than_quarter() {
         &QUICK
-    } else if !strict && discord.is_shorter_than_beat() && discord.steps_into() == Some(-1) {
+    } else if !strict
+        && discord.is_shorter_than_beat()
+        && discord.steps_into(discord.dissonant()) == Some(-1)
+    {
         &DESCENDING
     } else {
         &ACCENTED

@@ -120,7 +120,7 @@ static COMPANY: Case = Case {
     name: "company",
     when: "in three parts and more, 7-6 and 9-8 without a third, 4-3 without a fifth or an octave",
     settings: &[
-        allow(Style::Free, "judged with the harmony"),
+        allow(Style::Free, "the harmony says what is wanted"),
         weakness(
             Style::Species1,
             "as in the three- and four-part figures of Fux",

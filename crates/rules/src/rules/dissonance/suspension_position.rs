@@ -56,7 +56,7 @@ static ORDINARY: Case = Case {
     when: "the dissonance is weaker than the resolution",
     settings: &[
         allow(Style::Free, "a syncopated line is free"),
-        allow(Style::Chorale, "judged with the harmony"),
+        fault(Style::Chorale, "unless the held note belongs to the chord"),
         fault(
             Style::Motet,
             "dissonance on the strong minim, resolution on the weak one",
@@ -69,7 +69,8 @@ static ORDINARY: Case = Case {
 };
 
 fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
-    if discord.near_suspension() != Some(Near::Position) {
+    let accused = discord.accused(found.style());
+    if accused.is_none_or(|(_, near)| near != Some(Near::Position)) {
         return;
     }
     found.dissonance(&ORDINARY, discord, || {

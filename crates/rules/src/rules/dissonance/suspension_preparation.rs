@@ -65,18 +65,25 @@ static SHORT: Case = Case {
 
 static MISSING: Case = Case {
     name: "missing",
-    when: "the note was dissonant before",
+    when: "the note was dissonant before; where chords are heard, only one strange to the chord of both moments",
     settings: &[
-        allow(Style::Free, "judged with the harmony"),
-        allow(Style::Chorale, "judged with the harmony"),
+        weakness(
+            Style::Free,
+            "a held note strange to the chord was consonant before (Grove; Open Music Theory)",
+        ),
+        fault(
+            Style::Chorale,
+            "only a note of the chord needs no preparation",
+        ),
         fault(Style::Motet, "the preparation is a consonance"),
         fault(Style::Species1, "the preparation is a consonance"),
     ],
 };
 
 fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
+    let accused = discord.accused(found.style());
     let is_short = discord.suspension().is_some_and(|held| held.is_short());
-    let (case, lacks) = if discord.near_suspension() == Some(Near::Preparation) {
+    let (case, lacks) = if accused.is_some_and(|(_, near)| near == Some(Near::Preparation)) {
         (&MISSING, "is dissonant before that")
     } else if is_short {
         (&SHORT, "is prepared for less time than it lasts")

@@ -56,16 +56,10 @@ pub const RULE: Rule = Rule {
 
 static ORDINARY: Case = Case {
     name: "",
-    when: "it leaps, goes up otherwise, or stays",
+    when: "it leaps, goes up otherwise, or stays; where chords are heard, only a note strange to the chord that reaches its resolution by no short way round",
     settings: &[
-        allow(
-            Style::Free,
-            "a held note may belong to the chord: judged with the harmony",
-        ),
-        allow(
-            Style::Chorale,
-            "a held note may belong to the chord: judged with the harmony",
-        ),
+        allow(Style::Free, "asked of strict lines and of the chorale"),
+        fault(Style::Chorale, "unless the held note belongs to the chord"),
         fault(Style::Motet, "suspensions go down by step"),
         fault(
             Style::Species1,
@@ -75,7 +69,8 @@ static ORDINARY: Case = Case {
 };
 
 fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
-    if discord.near_suspension() != Some(Near::Resolution) {
+    let accused = discord.accused(found.style());
+    if accused.is_none_or(|(_, near)| near != Some(Near::Resolution)) {
         return;
     }
     found.dissonance(&ORDINARY, discord, || {

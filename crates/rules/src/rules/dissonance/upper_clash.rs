@@ -66,15 +66,11 @@ pub const RULE: Rule = Rule {
 
 static ORDINARY: Case = Case {
     name: "",
-    when: "a second or a seventh among upper voices, and no figure accounts for it",
+    when: "a second or a seventh among upper voices, and no figure accounts for it; where chords are heard, only a note strange to the sure chord that comes or goes by leap",
     settings: &[
-        allow(
+        weakness(
             Style::Free,
-            "a seventh chord, or a ninth: judged with the harmony",
-        ),
-        allow(
-            Style::Chorale,
-            "a seventh chord, or a ninth: judged with the harmony",
+            "where one of the two is strange to the chord (Lehmann, lesson XIII)",
         ),
         fault(Style::Motet, "upper voices agree with each other"),
         fault(
@@ -100,20 +96,21 @@ static NO_CHORD: Case = Case {
 };
 
 fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
-    if !discord.is_unexplained() || discord.is_over_bass() {
+    let (accused, is_strange) = match discord.accused(found.style()) {
+        Some((accused, None)) => (accused, true),
+        None if discord.is_in_no_chord(found.style()) => (discord.dissonant(), false),
+        _ => return,
+    };
+    // With chords, a note that comes and goes by step over a bass it agrees with is an ornament.
+    let steps = discord.comes_and_goes_by_step(accused);
+    if discord.is_over_bass() || (is_strange && found.style().has_chords() && steps) {
         return;
     }
-    let style = found.style();
-    let mixed = !style.is_species() && style != Style::Motet;
-    let case = if mixed && discord.fits_no_chord() {
-        &NO_CHORD
-    } else {
-        &ORDINARY
-    };
-    found.dissonance(case, discord, || {
+    let case = if is_strange { &ORDINARY } else { &NO_CHORD };
+    found.accused(case, discord, accused, || {
         format!(
             "Upper clash: {}. Prepare one of them, or let them agree.",
-            discord.words()
+            discord.words_of(accused)
         )
     });
 }

@@ -80,10 +80,10 @@ static ORDINARY: Case = Case {
 };
 
 fn check(there: &Sounding<'_>, found: &mut Found<'_>) {
-    let Some(voices) = there.six_four().filter(|voices| voices.len() > 1) else {
+    let Some(voices) = there.six_four_doubles().filter(|voices| voices.len() > 1) else {
         return;
     };
-    if there.bass_passes() {
+    if there.bass_passes() || found.is_told_of_sonority("six-four", there) {
         return;
     }
     found.sonority(&ORDINARY, &voices, there.onset(), || {

@@ -122,8 +122,8 @@ fn check(line: &Line<'_>, found: &mut Found<'_>) {
         let one_chord = || {
             let there = line.sounding_at(step);
             match found.style() {
-                Style::Free => there.is_some_and(|s| s.parts() >= 2 && s.fits_one_chord(4)),
-                Style::Chorale => there.is_some_and(|s| s.parts() >= 3 && s.fits_one_chord(4)),
+                Style::Free => there.is_some_and(|s| s.keeps_chord_under_leap(2)),
+                Style::Chorale => there.is_some_and(|s| s.keeps_chord_under_leap(3)),
                 _ => false,
             }
         };

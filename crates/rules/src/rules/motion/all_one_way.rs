@@ -125,7 +125,7 @@ static ROOT_STEP: Case = Case {
 };
 
 fn check(there: &Sounding<'_>, found: &mut Found<'_>) {
-    if there.parts() < 3 || there.may_only_change_position() {
+    if there.parts() < 3 || there.keeps_chord() {
         return;
     }
     let Some(rising) = there.all_move_one_way() else {

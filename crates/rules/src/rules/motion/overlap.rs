@@ -93,7 +93,7 @@ fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
         step.is_with_bass() == Some(true) && step.size_of_move(step.foot()) == Some(7);
     if bass_changes_octave
         || score.are_equal(step.pair.upper, step.pair.lower)
-        || step.sounding.may_only_change_position()
+        || step.sounding.keeps_chord()
         || (!strict && step.closes_into_unison())
     {
         return;

@@ -130,7 +130,7 @@ static OFF_BEAT: Case = Case {
 
 static ANTICIPATION: Case = Case {
     name: "anticipation",
-    when: "an upper voice anticipates by a step down the note it strikes next, over an inner voice that passes down, the lowest voice taking no part",
+    when: "an upper voice anticipates by a step down the note it strikes next, over an inner voice that passes down, the lowest voice taking no part, over a dominant that goes to its tonic as far as the harmony is sure",
     settings: &[
         allow(Style::Free, "the figure is unobjectionable (Dahn 2016)"),
         remark(
@@ -150,7 +150,7 @@ static ANTICIPATION: Case = Case {
 
 static AUGMENTED_SIXTH: Case = Case {
     name: "augmented-sixth",
-    when: "an augmented sixth with a fifth opens, both voices of the fifths falling a semitone, not both outer",
+    when: "an augmented sixth with a fifth opens, both voices of the fifths falling a semitone, not both outer, to a dominant or a six-four on it as far as the harmony is sure",
     settings: &[
         allow(
             Style::Free,
@@ -166,9 +166,9 @@ fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
     if step.consecutive() != Some(Consecutive::Same(Family::Fifth)) || step.step.keeps_classes() {
         return;
     }
-    let case = if step.is_anticipation_at_cadence() {
+    let case = if step.is_anticipation_at_cadence() && step.may_be_over_dominant() {
         &ANTICIPATION
-    } else if !step.is_outer() && step.opens_augmented_sixth() {
+    } else if !step.is_outer() && step.opens_augmented_sixth() && step.may_reach_dominant() {
         &AUGMENTED_SIXTH
     } else if step.may_be_ornament() {
         &OFF_BEAT

@@ -117,11 +117,7 @@ const MORE: [&str; 7] = [
 fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
     let (top, foot) = (step.top(), step.foot());
     let same_way = matches!(step.motion(), Some(Motion::Parallel | Motion::Similar));
-    if !same_way
-        || !step.leaps(top)
-        || !step.leaps(foot)
-        || step.sounding.may_only_change_position()
-    {
+    if !same_way || !step.leaps(top) || !step.leaps(foot) || step.sounding.keeps_chord() {
         return;
     }
     // The perfect interval they leap into says more, and so does one voice leaping beyond the
