@@ -22,9 +22,10 @@ pub use rule::{Case, FAMILIES, Looks, NumberOf, Rule, Severity};
 pub use source::Source;
 pub use style::{Number, Override, STYLES, Setting, Strictness, Style};
 pub use view::{
-    Chord, Crossing, Direct, Discord, HighPoint, LastMove, Level, Line, LineMove, Member, Minim,
-    MinorDegree, Numbers, Over, PairMove, ParallelRun, Passage, Passing, Piece, Quick, Run,
-    SixFive, Sounding, Stretch, Stroke, Succession, Tessitura, Together, Tone, Value,
+    Altered, Chord, Crossing, Direct, Discord, HighPoint, LastMove, Leaving, Level, Line, LineMove,
+    Member, Minim, MinorDegree, Numbers, Over, PairMove, ParallelRun, Passage, Passing, Piece,
+    Quick, Reached, Run, SixFive, Sounding, Stretch, Stroke, Succession, Tessitura, Together, Tone,
+    Value,
 };
 
 /// What every rule file needs.
@@ -41,7 +42,8 @@ pub mod prelude {
     pub use crate::source::{self, Source};
     pub use crate::style::{Setting, Style, allow, fault, remark, weakness};
     pub use crate::view::{
-        Chord, Direct, Discord, LastMove, Level, Line, LineMove, Member, MinorDegree, Numbers,
-        Over, PairMove, ParallelRun, Passage, Piece, Sounding, Stroke, Succession, Tone,
+        Altered, Chord, Direct, Discord, LastMove, Leaving, Level, Line, LineMove, Member,
+        MinorDegree, Numbers, Over, PairMove, ParallelRun, Passage, Piece, Reached, Sounding,
+        Stroke, Succession, Tone,
     };
 }

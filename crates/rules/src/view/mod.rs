@@ -3,7 +3,9 @@
 //! These views only read what `partwright_score` laid out, and put it into a musician's words.
 
 mod account;
+mod altered;
 mod chord;
+mod chord_moves;
 mod close;
 mod degree;
 mod discord;
@@ -23,7 +25,9 @@ use partwright_analysis::harmony::Segment;
 use partwright_analysis::{Analysis, Dissonance};
 use partwright_score::{Pair, PairStep, Score, Texture};
 
+pub use altered::Altered;
 pub use chord::{Member, Tone};
+pub use chord_moves::{Leaving, Reached};
 pub use degree::{MinorDegree, Tessitura};
 pub use ending::LastMove;
 pub use held::{Numbers, SixFive, Together};
