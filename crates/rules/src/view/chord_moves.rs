@@ -71,12 +71,13 @@ impl<'a> Chord<'a> {
         self.seventh_is_sure() && has(Tone::Third) && has(Tone::Seventh)
     }
 
-    /// The root sounds beside another note of the chord, struck on a beat.
+    /// The root sounds beside another note of the chord, and one of the two was struck on a beat.
     #[must_use]
     pub fn has_root_beside(&self, member: &Member) -> bool {
         let members = self.members(self.piece.sounding(member.sonority));
         let mut others = members.iter().filter(|m| m.voice != member.voice);
-        others.any(|m| m.tone == Tone::Root && !self.piece.is_off_beat(m.onset))
+        let struck_on_beat = |m: &Member| !self.piece.is_off_beat(m.onset);
+        others.any(|m| m.tone == Tone::Root && (struck_on_beat(m) || struck_on_beat(member)))
     }
 
     /// The same root in the next chord: no change of harmony.

@@ -66,6 +66,8 @@ pub const RULE: Rule = Rule {
         source::BACH_CHORALES.at(
             "of 245 in the soprano at cadences 226 rise; inside at fermatas 747 fall and 271 rise",
         ),
+        source::CHORALES_HERE
+            .at("of 167 in the soprano 156 rise; inside at fermatas 139 fall a third and 58 rise"),
     ],
 };
 
