@@ -56,9 +56,15 @@ fn cut(score: &Score, start: Time, end: Time) -> Score {
         .bars
         .iter()
         .filter(|bar| bar.onset + bar.length > start && bar.onset < end);
+    let mut bars: Vec<_> = bars.cloned().collect();
+    // Rules about whole phrases wait for the end of a piece: what closes is cut so that it closes.
+    let closes = score.bars.last().is_some_and(|bar| bar.section_end);
+    if let Some(last) = bars.last_mut().filter(|_| closes) {
+        last.section_end = true;
+    }
     Score {
         voices: voices.collect(),
-        bars: bars.cloned().collect(),
+        bars,
         equal: score.equal.clone(),
         metres: score.metres.clone(),
         keys: score.keys.clone(),

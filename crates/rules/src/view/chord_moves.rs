@@ -208,12 +208,13 @@ impl<'a> Leaving<'a> {
         self.gap().steps == 0 && !self.stays()
     }
 
-    /// The lowest voice may put a step into another octave.
+    /// Scale steps, up or down. A step put into another octave is a step: the leap it makes is
+    /// told for itself.
     fn steps(&self) -> i32 {
         let gap = self.gap().steps;
         match gap.rem_euclid(7) {
-            1 if self.departure().bass() == Some(self.voice()) => 1,
-            6 if self.departure().bass() == Some(self.voice()) => -1,
+            1 => 1,
+            6 => -1,
             _ => gap,
         }
     }
