@@ -21,6 +21,8 @@ mod hurts;
 mod invariance;
 #[path = "outside/judged.rs"]
 mod judged;
+#[path = "outside/moves.rs"]
+mod moves;
 #[path = "outside/rewrite.rs"]
 mod rewrite;
 #[path = "outside/scores.rs"]

@@ -132,6 +132,18 @@ const CASES: &[(&str, &str, &str, Verdict)] = &[
         Fault("direct-fifths"),
     ),
     (
+        "leading note falling in the soprano",
+        "chorale",
+        "key C major/s | B4 G4 | / a | D4 E4 | / t | G3 G3 | / b | G3 C3 |",
+        Fault("leading-note-resolution"),
+    ),
+    (
+        "inner leading note falls, outer octave by step",
+        "chorale",
+        "key C major/s | D5 C | / a | B4 G4 | / t | F4 E4 | / b | G3 C3 |",
+        Clean("harmony"),
+    ),
+    (
         "unequal fifths rising over tenths",
         "chorale",
         "s | F4 G4 | / a | B3 C4 | / b | D3 E3 |",

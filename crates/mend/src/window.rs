@@ -60,11 +60,17 @@ fn cut(score: &Score, start: Time, end: Time) -> Score {
     let within = |from: Time, until: Time| from >= start && until <= end;
     let harmony = score.harmony.iter().filter(|c| within(c.from, c.until));
     let figures = score.figures.iter().filter(|f| within(f.from, f.until));
+    let mut bars: Vec<_> = bars.cloned().collect();
+    // Rules about whole phrases wait for the end of a piece: what closes is cut so that it closes.
+    let closes = score.bars.last().is_some_and(|bar| bar.section_end);
+    if let Some(last) = bars.last_mut().filter(|_| closes) {
+        last.section_end = true;
+    }
     Score {
         voices: voices.collect(),
         harmony: harmony.cloned().collect(),
         figures: figures.cloned().collect(),
-        bars: bars.cloned().collect(),
+        bars,
         equal: score.equal.clone(),
         metres: score.metres.clone(),
         keys: score.keys.clone(),

@@ -22,10 +22,10 @@ pub use rule::{Case, FAMILIES, Looks, NumberOf, Rule, Severity};
 pub use source::Source;
 pub use style::{Number, Override, STYLES, Setting, Strictness, Style};
 pub use view::{
-    Cadence, Chord, Crossing, Direct, Discord, Doubled, Doubling, HighPoint, LastMove, Level, Line,
-    LineMove, Member, Minim, MinorDegree, Numbers, Over, PairMove, ParallelRun, Passage, Passing,
-    Piece, Quick, Run, SixFive, Sounding, StatedHarmony, Stranger, Stretch, Stroke, Succession,
-    Tessitura, Together, Tone, Value,
+    Altered, Cadence, Chord, Crossing, Direct, Discord, Doubled, Doubling, HighPoint, LastMove,
+    Leaving, Level, Line, LineMove, Member, Minim, MinorDegree, Numbers, Over, PairMove,
+    ParallelRun, Passage, Passing, Piece, Quick, Reached, Run, SixFive, Sounding, StatedHarmony,
+    Stranger, Stretch, Stroke, Succession, Tessitura, Together, Tone, Value,
 };
 
 /// What every rule file needs.
@@ -42,8 +42,9 @@ pub mod prelude {
     pub use crate::source::{self, Source};
     pub use crate::style::{Setting, Style, allow, fault, remark, weakness};
     pub use crate::view::{
-        Chord, CrossRelation, Direct, Discord, Doubling, LastMove, Level, Line, LineMove, Member,
-        MinorDegree, Numbers, Over, PairMove, ParallelRun, Passage, Piece, SixFour, SixFourUse,
-        SixFourWant, Sounding, StatedHarmony, Stroke, Succession, Tone,
+        Altered, Chord, CrossRelation, Direct, Discord, Doubling, LastMove, Leaving, Level, Line,
+        LineMove, Member, MinorDegree, Numbers, Over, PairMove, ParallelRun, Passage, Piece,
+        Reached, SixFour, SixFourUse, SixFourWant, Sounding, StatedHarmony, Stroke, Succession,
+        Tone,
     };
 }

@@ -4,12 +4,16 @@ use crate::catalogue::File;
 
 #[path = "rules/motion/all_one_way.rs"]
 pub mod all_one_way;
+#[path = "rules/harmony/altered_note_resolution.rs"]
+pub mod altered_note_resolution;
 #[path = "rules/dissonance/anticipation.rs"]
 pub mod anticipation;
 #[path = "rules/dissonance/appoggiatura.rs"]
 pub mod appoggiatura;
 #[path = "rules/line/augmented_interval.rs"]
 pub mod augmented_interval;
+#[path = "rules/harmony/augmented_sixth.rs"]
+pub mod augmented_sixth;
 #[path = "rules/motion/barline_consecutives.rs"]
 pub mod barline_consecutives;
 #[path = "rules/motion/beat_consecutives.rs"]
@@ -28,6 +32,8 @@ pub mod clash_together;
 pub mod closing_approach;
 #[path = "rules/cadence/closing_interval.rs"]
 pub mod closing_interval;
+#[path = "rules/harmony/common_tone.rs"]
+pub mod common_tone;
 #[path = "rules/range/compass.rs"]
 pub mod compass;
 #[path = "rules/dissonance/consonant_fourth.rs"]
@@ -80,6 +86,8 @@ pub mod high_points_together;
 pub mod incomplete_chord;
 #[path = "rules/harmony/leading_note_doubled.rs"]
 pub mod leading_note_doubled;
+#[path = "rules/harmony/leading_note_resolution.rs"]
+pub mod leading_note_resolution;
 #[path = "rules/line/leap_across_bar.rs"]
 pub mod leap_across_bar;
 #[path = "rules/line/leap_beyond_octave.rs"]
@@ -150,12 +158,18 @@ pub mod repeated_note;
 pub mod resolution_sounding;
 #[path = "rules/dissonance/retardation.rs"]
 pub mod retardation;
+#[path = "rules/harmony/retrogression.rs"]
+pub mod retrogression;
 #[path = "rules/motion/running_imperfects.rs"]
 pub mod running_imperfects;
+#[path = "rules/harmony/seventh_approach.rs"]
+pub mod seventh_approach;
 #[path = "rules/harmony/seventh_doubled.rs"]
 pub mod seventh_doubled;
 #[path = "rules/line/seventh_leap.rs"]
 pub mod seventh_leap;
+#[path = "rules/harmony/seventh_resolution.rs"]
+pub mod seventh_resolution;
 #[path = "rules/motion/similar_leaps.rs"]
 pub mod similar_leaps;
 #[path = "rules/dissonance/six_five_exchange.rs"]
@@ -194,6 +208,8 @@ pub mod third_missing;
 pub mod too_many_leaps;
 #[path = "rules/line/tritone_outline.rs"]
 pub mod tritone_outline;
+#[path = "rules/harmony/tritone_resolution.rs"]
+pub mod tritone_resolution;
 #[path = "rules/motion/unequal_fifths.rs"]
 pub mod unequal_fifths;
 #[path = "rules/sonority/unison_inside.rs"]
@@ -248,14 +264,22 @@ pub(crate) static FILES: &[File] = &[
     file!("dissonance", suspension_preparation),
     file!("dissonance", suspension_resolution),
     file!("dissonance", upper_clash),
+    file!("harmony", altered_note_resolution),
+    file!("harmony", augmented_sixth),
     file!("harmony", chord_doubling),
+    file!("harmony", common_tone),
     file!("harmony", cross_relation),
     file!("harmony", incomplete_chord),
     file!("harmony", leading_note_doubled),
+    file!("harmony", leading_note_resolution),
+    file!("harmony", retrogression),
+    file!("harmony", seventh_approach),
     file!("harmony", seventh_doubled),
+    file!("harmony", seventh_resolution),
     file!("harmony", six_four),
     file!("harmony", six_four_doubling),
     file!("harmony", stated_harmony),
+    file!("harmony", tritone_resolution),
     file!("line", augmented_interval),
     file!("line", broken_chord),
     file!("line", chromatic_semitone),

@@ -8,7 +8,7 @@ use crate::catalogue::entry;
 use crate::finding::Finding;
 use crate::found::Found;
 use crate::rule::Looks;
-use crate::view::{Discord, Line, PairMove, Sounding};
+use crate::view::{Chord, Discord, Line, PairMove, Sounding};
 
 /// The rules that tell of a leap for itself.
 const LEAPS: [&str; 5] = [
@@ -77,6 +77,20 @@ impl Found<'_> {
             let tells = |rule: &&str| self.is_told_of_dissonance(rule, &discord);
             discord.is_fourth_over_bass() && rules.iter().any(tells)
         })
+    }
+
+    /// The voices of which one of the rules has a word as they leave a chord.
+    #[must_use]
+    pub fn told_of_chord(&self, rules: &[&str], chord: &Chord<'_>) -> Vec<usize> {
+        let on_chord = |rule: &&str| {
+            self.ask(rule, |looks, found| {
+                if let Looks::Chords(check) = looks {
+                    check(chord, found);
+                }
+            })
+        };
+        let told = rules.iter().flat_map(on_chord);
+        told.flat_map(|finding| finding.voices).collect()
     }
 
     /// The notes of a line on which one of the rules has a word, by their onsets, sorted.

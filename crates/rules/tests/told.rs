@@ -88,16 +88,28 @@ fn one_fact_is_told_by_one_rule() {
             "incomplete-chord",
         ),
         (
-            "chorale",
-            "metre 4/4\n\nS | C5 - A4 - | C5 - B4 - | C5 - - - ||\nA | E4 - F4 - | E4 - D4 - | E4 - - - ||\nT | A3 - C4 - | G3 - G3 - | G3 - - - ||\nB | A2 - F3 - | G3 - G2 - | C3 - - - ||",
-            "appoggiatura",
-            "six-four",
-        ),
-        (
             "motet",
             "metre 4/4\n\nS | C5 - C5 - | D5 - B4 - | C5 - - - ||\nA | E4 - E4 - | F4 - G4 - | G4 - - - ||\nT | A3 - C4 - | A3 - D4 - | E4 - - - ||\nB | A2 - G3 - | D3 - G2 - | C3 - - - ||",
             "free-dissonance",
             "six-four",
+        ),
+        (
+            "chorale",
+            "key C major\nmetre 4/4\n\nS | C5 - B4 - | E5 - - - |\nA | G4 - F4 - | E4 - - - |\nT | E4 - D4 - | C4 - - - |\nB | C3 - G3 - | C3 - - - |",
+            "leading-note-resolution",
+            "tritone-resolution",
+        ),
+        (
+            "chorale",
+            "key C major\nmetre 4/4\n\nS | C5 - B4 - | C5 - - - |\nA | G4 - F4 - | C4 - - - |\nT | E4 - D4 - | E4 - - - |\nB | C3 - G3 - | C3 - - - |",
+            "seventh-resolution",
+            "tritone-resolution",
+        ),
+        (
+            "chorale",
+            "key C major\nmetre 4/4\n\nS | E5 - C5 - | C#5 - A4 - | A4 - B4 - | C5 - - - |\nA | G4 - E4 - | E4 - F4 - | F4 - D4 - | E4 - - - |\nT | C4 - A3 - | A3 - D4 - | C4 - G3 - | G3 - - - |\nB | C3 - A2 - | A2 - D3 - | F3 - G3 - | C3 - - - |",
+            "leading-note-resolution",
+            "altered-note-resolution",
         ),
     ] {
         let rules = told(style, sheet, None);

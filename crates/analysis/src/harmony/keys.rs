@@ -48,7 +48,10 @@ const CHANGE: Cost = QUARTER * 6 / 5;
 const CHANGE_AFTER_FERMATA: Cost = QUARTER;
 
 /// That the composer says so is worth as much for the key of the sheet.
-const STATED: Cost = 20;
+const STATED: Cost = 30;
+
+/// Going back to it is cheaper than going elsewhere, in hundredths.
+const HOMEWARD: Cost = 60;
 
 /// A long chord is no more evidence than this.
 const LONGEST: Cost = QUARTER * 11 / 10;
@@ -232,7 +235,7 @@ pub(super) fn keys(
             _ => 0,
         })
         .collect();
-    let mut keys = best(&states, &start, &local, &changes);
+    let mut keys = best(home, &states, &start, &local, &changes);
     for (key, margin) in &mut keys {
         if home.is_some_and(|home| home.key == *key) {
             *margin += STATED;
@@ -243,21 +246,40 @@ pub(super) fn keys(
 
 /// The cheapest key of each column, and what the best other one costs more.
 fn best(
+    home: Option<Home>,
     states: &[State],
     start: &[Cost],
     local: &[Vec<Cost>],
     changes: &[Cost],
 ) -> Vec<(LocalKey, Cost)> {
     let sum = |a: &[Cost], b: &[Cost]| a.iter().zip(b).map(|(a, b)| a + b).collect();
-    let step = |from: &[Cost], change: Cost| -> Vec<Cost> {
-        let most = from.iter().min().copied().unwrap_or(0) + change;
-        from.iter().map(|stay| (*stay).min(most)).collect()
+    let home = home.and_then(|home| states.iter().position(|state| state.key == home.key));
+    let back = |at: usize, change: Cost| {
+        if home == Some(at) {
+            change * HOMEWARD / 100
+        } else {
+            change
+        }
+    };
+    // Up to a column: staying, or the cheapest way to change into each key.
+    let into = |from: &[Cost], change: Cost| -> Vec<Cost> {
+        let least = from.iter().min().copied().unwrap_or(0);
+        let keys = from.iter().enumerate();
+        keys.map(|(at, stay)| (*stay).min(least + back(at, change)))
+            .collect()
+    };
+    // From a column on: staying, or whatever key is cheapest to change into.
+    let out_of = |to: &[Cost], change: Cost| -> Vec<Cost> {
+        let keys = to.iter().enumerate();
+        let least = keys.map(|(at, cost)| cost + back(at, change)).min();
+        let most = least.unwrap_or(0);
+        to.iter().map(|stay| (*stay).min(most)).collect()
     };
     let mut forward: Vec<Vec<Cost>> = Vec::with_capacity(local.len());
     for (column, change) in local.iter().zip(changes) {
         let row = match forward.last() {
             None => sum(start, column),
-            Some(before) => sum(&step(before, *change), column),
+            Some(before) => sum(&into(before, *change), column),
         };
         forward.push(row);
     }
@@ -271,7 +293,7 @@ fn best(
             let other = others.map(|(_, cost)| *cost).min();
             keys.push((key, other.map_or(QUARTER * 100, |other| other - own)));
         }
-        behind = step(&sum(column, &behind), *change);
+        behind = out_of(&sum(column, &behind), *change);
     }
     keys.reverse();
     keys

@@ -138,12 +138,28 @@ impl<'a> Chord<'a> {
         (before.segment.end == self.segment.first).then_some(before)
     }
 
+    /// One past the last sonority over its root: what stands over the root may become doubtful
+    /// before the chord is left.
+    pub(super) fn end_on_root(&self) -> usize {
+        let root = self.segment.chord.root;
+        let mut end = self.segment.end;
+        let mut after = self.next();
+        while let Some(next) = after.filter(|n| n.segment.chord.root == root && !n.is_sure()) {
+            end = next.segment.end;
+            after = next.next();
+        }
+        end
+    }
+
     /// The next chord, if it is on another root, both are sure and no voice ends its phrase
     /// between.
     #[must_use]
     pub fn goes_to(&self) -> Option<Chord<'a>> {
-        let next = self
-            .next()
+        let end = self.end_on_root();
+        let after = std::iter::successors(self.next(), Chord::next);
+        let next = after
+            .take_while(|next| next.segment.first <= end)
+            .find(|next| next.segment.first == end)
             .filter(|next| self.is_sure() && next.is_sure())
             .filter(|next| next.segment.chord.root != self.segment.chord.root)?;
         let mut steps = self.piece.texture.steps(next.segment.first);
@@ -217,7 +233,7 @@ impl<'a> Chord<'a> {
     /// The last note of it that a voice has.
     #[must_use]
     pub fn last_of(&self, voice: usize) -> Option<Member> {
-        let mut all = (self.segment.first..self.segment.end).rev();
+        let mut all = (self.segment.first..self.end_on_root()).rev();
         all.find_map(|k| self.member(k, voice))
     }
 
@@ -308,14 +324,17 @@ impl<'a> Chord<'a> {
 
     /// Whether a pitch is the leading note of the chord: the third of a dominant, or the root of a
     /// diminished chord, in the local key; or of one applied to another degree, which a dominant
-    /// seventh or a note strange to the key tells.
+    /// seventh or a note strange to the key tells, or, where no key is sure, that it goes to a
+    /// minor tonic.
     #[must_use]
     pub fn is_leading_note(&self, pitch: Pitch) -> bool {
         let Some(tonic) = self.leads_to().filter(|tonic| fifths(pitch) == tonic + 5) else {
             return false;
         };
         let Some(key) = self.key() else {
-            return self.quality() == Quality::DominantSeventh && self.seventh_is_sure();
+            let minor = |next: Chord<'_>| next.quality().triad() == Quality::Minor;
+            return (self.quality() == Quality::DominantSeventh && self.seventh_is_sure())
+                || self.resolves_to().is_some_and(minor);
         };
         let is_dominant = self.quality() == Quality::DominantSeventh && self.seventh_is_sure();
         key.tonic == tonic || is_dominant || degree(key, fifths(pitch)).is_none()

@@ -54,7 +54,9 @@ impl<'a> Chord<'a> {
                         tone == Tone::Fifth && members.iter().any(|member| self.passes(member));
                     (tone != Tone::Third && !passing).then_some(Doubling::DiminishedUpper)
                 }
-                (_, Tone::Third | Tone::Fifth) if self.is_altered(pitch) => Some(Doubling::Altered),
+                (_, Tone::Third | Tone::Fifth) if self.is_strange_to_key(pitch) => {
+                    Some(Doubling::Altered)
+                }
                 (Quality::Major | Quality::Minor, Tone::Root) if tone == Tone::Third => {
                     Some(Doubling::ThirdOfRootPosition)
                 }
@@ -245,7 +247,7 @@ impl<'a> Chord<'a> {
     /// same, else of its own; in minor the raised seventh belongs to the scale. `false` where the
     /// key is not sure.
     #[must_use]
-    pub fn is_altered(&self, pitch: Pitch) -> bool {
+    pub fn is_strange_to_key(&self, pitch: Pitch) -> bool {
         let before = self.before().and_then(|chord| chord.key());
         let after = self.next().and_then(|chord| chord.key());
         let around = before.filter(|_| before == after);

@@ -3,6 +3,7 @@
 //! These views only read what `partwright_score` laid out, and put it into a musician's words.
 
 mod account;
+mod altered;
 mod cadence;
 mod chord;
 mod chord_moves;
@@ -22,12 +23,14 @@ mod shape;
 mod six_four;
 mod sounding;
 mod stated;
+mod tendency;
 mod vocal;
 
 use partwright_analysis::harmony::Segment;
 use partwright_analysis::{Analysis, Dissonance};
 use partwright_score::{Pair, PairStep, Score, Texture};
 
+pub use altered::Altered;
 pub use cadence::Cadence;
 pub use chord::{Member, Tone};
 pub use chord_moves::CrossRelation;
@@ -43,6 +46,7 @@ pub use rhythm::{Minim, Over, Quick, Stroke};
 pub use shape::{HighPoint, Passing, Stretch};
 pub use six_four::{SixFour, SixFourUse, SixFourWant};
 pub use stated::{StatedHarmony, Stranger};
+pub use tendency::{Leaving, Reached};
 pub use vocal::Value;
 
 /// A score with its texture, and what was read in it.
