@@ -208,11 +208,9 @@ fn two_voices_and_unisons_are_never_sure() {
 }
 
 #[test]
-fn silence_has_no_chord_and_a_note_is_not_sure_of_one() {
+fn silence_and_a_single_note_have_no_chord() {
     assert!(read("", &["_ _ _ _", "_ _ _ _"]).is_empty());
-    let found = read("", &["C4 _ _ _", "_ _ _ _"]);
-    assert_eq!(found.len(), 1);
-    nothing_is_sure(&found);
+    assert!(read("", &["C4 _ _ _", "_ _ _ _"]).is_empty());
     let empty = Score::default();
     assert!(in_one_go(&empty, &Texture::of(&empty), &[]).is_empty());
 }

@@ -8,16 +8,17 @@
 use super::SURE;
 use super::chord::{Chord, Quality};
 use super::keys::{LocalKey, strangeness};
-use super::segments::{Cost, QUARTER, Slice, Tone};
-
-/// How many notes of a sonority must be of the chord for it to be sure: two fit several chords.
-const ENOUGH: usize = 3;
+use super::segments::{Cost, QUARTER, Slice};
+use super::weigh::Weights;
 
 /// What a sonority costs under no chord, in hundredths of its length.
 const NO_CHORD: Cost = 250;
 
 /// How much of a chord's strangeness in the key counts against it, in hundredths.
 const PULL: Cost = 30;
+
+/// What another chord costs where one is stated: more than any music can make up for.
+const AGAINST: Cost = QUARTER * 1_000_000;
 
 /// The chord of one sonority.
 #[derive(Clone, Copy, Debug)]
@@ -31,235 +32,186 @@ pub(super) struct Found {
     pub seventh_margin: Cost,
 }
 
-/// What another chord costs where one is stated: more than any music can make up for.
-const AGAINST: Cost = QUARTER * 1_000_000;
-
-/// What a chord lacks or leaves out in a sonority.
-fn cost(slice: &Slice, chord: Chord) -> Cost {
-    let tones = chord.quality.tones();
-    let index = |place: i32| tones.iter().position(|t| *t == place - chord.root);
-    let mut present = [false; 4];
-    let mut total = 0;
-    for tone in &slice.tones {
-        let own = index(tone.place);
-        match own {
-            Some(own) if tone.is_bass => {
-                total += slice.length * [0, 5, 45, 20].get(own).copied().unwrap_or(0) / 100;
-            }
-            Some(_) => {}
-            None => total += tone.aside,
-        }
-        let meant = own.or_else(|| tone.stands_for.and_then(index));
-        if let Some(slot) = meant.and_then(|meant| present.get_mut(meant)) {
-            *slot = true;
-        }
-    }
-    // Two voices leave a root out more easily than four.
-    let root = if slice.tones.len() < ENOUGH { 70 } else { 130 };
-    let missing = [root, 70, 10, 240];
-    for (index, weight) in missing.iter().enumerate().take(tones.len()) {
-        if present.get(index) == Some(&false) {
-            total += slice.length * weight / 100;
-        }
-    }
-    let prior = match chord.quality {
-        Quality::Major | Quality::Minor => 0,
-        Quality::DominantSeventh => 10,
-        Quality::Diminished | Quality::MajorSeventh => 20,
-        Quality::DiminishedSeventh => 25,
-        Quality::HalfDiminishedSeventh => 45,
-        Quality::ItalianSixth | Quality::GermanSixth | Quality::FrenchSixth => 45,
-        Quality::MinorSeventh => 50,
-        Quality::Augmented => 60,
-    };
-    total + slice.length * prior / 100
-}
-
-/// A row of costs: one a chord, and at the end that of no chord.
-type Row = Vec<Cost>;
-
 /// The chords of a run of sonorities, and what each would cost in each by itself.
 pub(super) struct Search<'a> {
     slices: &'a [Slice],
+    weights: Vec<Weights<'a>>,
+    /// Those on one root stand together.
     states: Vec<Chord>,
     /// How many states each root has, in their order.
     groups: Vec<usize>,
-    local: Vec<Row>,
+    /// Row after row: one cost a chord, and at the end that of no chord.
+    local: Vec<Cost>,
 }
 
 impl<'a> Search<'a> {
     pub(super) fn new(slices: &'a [Slice]) -> Search<'a> {
-        let states = states(slices);
-        let row = |slice: &Slice| -> Row {
+        let weights: Vec<Weights<'a>> = slices.iter().map(Weights::of).collect();
+        let states = states(slices, &weights);
+        let mut local = Vec::with_capacity(slices.len() * (states.len() + 1));
+        for (slice, weights) in slices.iter().zip(&weights) {
             if slice.tones.is_empty() {
-                return vec![0; states.len() + 1];
+                local.resize(local.len() + states.len() + 1, 0);
+                continue;
             }
-            let said = slice
-                .said
-                .map(|(chord, _)| chord)
-                .filter(|c| states.contains(c));
-            let against = |state: &Chord| match said {
-                Some(said) if said != *state => AGAINST,
+            let said = slice.said.map(|(chord, _)| chord);
+            let said = said.filter(|chord| states.contains(chord));
+            let against = |state: Chord| match said {
+                Some(said) if said != state => AGAINST,
                 _ => 0,
             };
-            let chords = states
-                .iter()
-                .map(|chord| cost(slice, *chord) + against(chord));
-            let none = said.map_or(slice.length * NO_CHORD / 100, |_| AGAINST);
-            chords.chain([none]).collect()
-        };
-        let local = slices.iter().map(row).collect();
+            local.extend(
+                states
+                    .iter()
+                    .map(|&chord| weights.cost(chord) + against(chord)),
+            );
+            local.push(said.map_or(slice.length * NO_CHORD / 100, |_| AGAINST));
+        }
         let groups = states.chunk_by(|a, b| a.root == b.root);
         let groups = groups.map(<[Chord]>::len).collect();
         Search {
             slices,
+            weights,
             states,
             groups,
             local,
         }
     }
 
+    fn width(&self) -> usize {
+        self.states.len() + 1
+    }
+
     /// The chord of each sonority, in the key of each where one is known.
     pub(super) fn chords(&self, keys: &[Option<LocalKey>]) -> Vec<Option<Found>> {
-        if self.states.is_empty() {
+        let n = self.width();
+        if n == 1 {
             return vec![None; self.slices.len()];
         }
-        let local: Vec<Row> = (0..self.slices.len())
-            .map(|k| self.in_key(k, keys.get(k).copied().flatten()))
-            .collect();
+        let local = self.in_keys(keys);
         // The cost of the best way up to each column, that column counted.
-        let mut forward: Vec<Row> = Vec::with_capacity(local.len());
-        for (column, slice) in local.iter().zip(self.slices) {
-            let row = match forward.last() {
-                None => column.clone(),
-                Some(before) => sum(&step(before, slice, &self.groups), column),
-            };
-            forward.push(row);
-        }
-        let mut out = vec![None; local.len()];
-        // The cost of the best way from each column on, that column not counted.
-        let mut behind: Row = vec![0; self.states.len() + 1];
-        let columns = forward.iter().zip(&local).zip(self.slices).zip(&mut out);
-        for (((ahead, column), slice), slot) in columns.rev() {
-            if !slice.tones.is_empty() {
-                *slot = self.found(slice, &sum(ahead, &behind));
+        let mut forward: Vec<Cost> = Vec::with_capacity(local.len());
+        let mut row: Vec<Cost> = vec![0; n];
+        for ((k, column), slice) in local.chunks_exact(n).enumerate().zip(self.slices) {
+            if k > 0 {
+                self.step(&mut row, slice);
             }
-            behind = step(&sum(column, &behind), slice, &self.groups);
+            add(&mut row, column);
+            forward.extend_from_slice(&row);
+        }
+        let mut out = vec![None; self.slices.len()];
+        // The cost of the best way from each column on, that column not counted.
+        let mut behind: Vec<Cost> = vec![0; n];
+        let columns = forward.chunks_exact(n).zip(local.chunks_exact(n));
+        let columns = columns
+            .zip(self.slices.iter().zip(&self.weights))
+            .zip(&mut out);
+        for (((ahead, column), (slice, weights)), slot) in columns.rev() {
+            if !slice.tones.is_empty() {
+                row.copy_from_slice(ahead);
+                add(&mut row, &behind);
+                *slot = self.found(slice, weights, &row);
+            }
+            add(&mut behind, column);
+            self.step(&mut behind, slice);
         }
         out
     }
 
-    fn in_key(&self, k: usize, key: Option<LocalKey>) -> Row {
-        let mut row = self.local.get(k).cloned().unwrap_or_default();
-        let (Some(key), Some(slice)) = (key, self.slices.get(k)) else {
-            return row;
-        };
-        if !slice.tones.is_empty() {
-            for (cost, chord) in row.iter_mut().zip(&self.states) {
-                *cost += strangeness(*chord, key) * slice.length / 100 * PULL / 100;
+    /// What each chord costs by itself, its strangeness in the key counted.
+    fn in_keys(&self, keys: &[Option<LocalKey>]) -> Vec<Cost> {
+        let mut local = self.local.clone();
+        // A key holds for many sonorities, and asks the same of each chord.
+        let mut known: Option<(LocalKey, Vec<Cost>)> = None;
+        let rows = local.chunks_exact_mut(self.width()).zip(self.slices);
+        for ((row, slice), key) in rows.zip(keys) {
+            let Some(key) = key.filter(|_| !slice.tones.is_empty()) else {
+                continue;
+            };
+            if known.as_ref().is_none_or(|(before, _)| *before != key) {
+                let strange = self.states.iter().map(|chord| strangeness(*chord, key));
+                known = Some((key, strange.collect()));
+            }
+            let strange = known.iter().flat_map(|(_, strange)| strange);
+            for (cost, strange) in row.iter_mut().zip(strange) {
+                *cost += strange * slice.length / 100 * PULL / 100;
             }
         }
-        row
+        local
     }
 
     /// The best chord of a sonority by what the best way through each costs.
-    fn found(&self, slice: &Slice, through: &[Cost]) -> Option<Found> {
+    fn found(&self, slice: &Slice, weights: &Weights<'_>, through: &[Cost]) -> Option<Found> {
         let all = || self.states.iter().zip(through);
         let (&chord, &own) = all().min_by_key(|(_, cost)| **cost)?;
         let none = through.last().copied().unwrap_or(0);
-        let most = |is_heard: bool| {
-            if slice.said.is_some() || is_heard {
+        let quality = chord.quality;
+        let (mut root, mut triad, mut seventh) = (none, none, none);
+        for (state, &cost) in all() {
+            if state.root != chord.root {
+                root = root.min(cost);
+            }
+            if state.root != chord.root || state.quality.triad() != quality.triad() {
+                triad = triad.min(cost);
+            }
+            if state.quality.has_seventh() != quality.has_seventh() {
+                seventh = seventh.min(cost);
+            }
+        }
+        let heard = weights.heard(chord);
+        let margin = |other: Cost, is_heard: bool| {
+            let most = if slice.said.is_some() || is_heard {
                 QUARTER * 100
             } else {
                 SURE - 1
-            }
+            };
+            (other - own).clamp(0, most)
         };
-        let heard = Heard::of(slice, chord);
-        let margin = |most: Cost, differs: &dyn Fn(Chord) -> bool| {
-            let others = all().filter(|(state, _)| differs(**state));
-            let other = others.map(|(_, cost)| *cost).min();
-            (other.unwrap_or(none).min(none) - own).clamp(0, most)
-        };
-        let (root, whole) = (most(heard.root), most(heard.whole));
-        let quality = chord.quality;
         Some(Found {
             chord,
-            root_margin: margin(root, &|other| other.root != chord.root),
-            margin: margin(whole, &|other| {
-                other.root != chord.root || other.quality.triad() != quality.triad()
-            }),
-            seventh_margin: margin(whole, &|other| {
-                other.quality.has_seventh() != quality.has_seventh()
-            }),
+            root_margin: margin(root, heard.root),
+            margin: margin(triad, heard.whole),
+            seventh_margin: margin(seventh, heard.whole),
         })
     }
-}
 
-/// What of a chord is heard in a sonority.
-struct Heard {
-    /// Three voices sound notes of the chord, and its root is among those or meant by others.
-    root: bool,
-    /// Its third too: an open fifth has no quality, whatever the key would make of it.
-    whole: bool,
-}
-
-impl Heard {
-    fn of(slice: &Slice, chord: Chord) -> Heard {
-        let tones = chord.quality.tones();
-        let index = |place: i32| tones.iter().position(|t| *t == place - chord.root);
-        let own = |tone: &Tone| index(tone.place);
-        let meant = |tone: &Tone| own(tone).or_else(|| tone.stands_for.and_then(index));
-        let has = |which: usize| slice.tones.iter().any(|tone| meant(tone) == Some(which));
-        let count = slice
-            .tones
-            .iter()
-            .filter(|tone| own(tone).is_some())
-            .count();
-        let root = count >= ENOUGH && has(0);
-        Heard {
-            root,
-            whole: root && has(1),
+    /// The least of staying, changing what stands over the root, and changing the chord.
+    fn step(&self, row: &mut [Cost], slice: &Slice) {
+        let least = |of: &[Cost]| of.iter().min().copied().unwrap_or(0);
+        let change = least(row) + slice.change;
+        let mut rest = row;
+        // No chord at all is a group of its own.
+        for &length in self.groups.iter().chain(&[1]) {
+            let (group, others) = rest.split_at_mut(length.min(rest.len()));
+            let most = change.min(least(group) + slice.same_root);
+            for cost in group {
+                *cost = (*cost).min(most);
+            }
+            rest = others;
         }
     }
 }
 
-fn sum(a: &[Cost], b: &[Cost]) -> Row {
-    a.iter().zip(b).map(|(a, b)| a + b).collect()
-}
-
-/// The least of staying, changing what stands over the root, and changing the chord; `groups` are
-/// the numbers of chords on each root.
-fn step(before: &[Cost], slice: &Slice, groups: &[usize]) -> Row {
-    let least = |of: &[Cost]| of.iter().min().copied().unwrap_or(0);
-    let change = least(before) + slice.change;
-    let mut row = Row::with_capacity(before.len());
-    let mut rest = before;
-    for &length in groups {
-        let (root, others) = rest.split_at(length.min(rest.len()));
-        let most = change.min(least(root) + slice.same_root);
-        row.extend(root.iter().map(|stay| (*stay).min(most)));
-        rest = others;
+fn add(to: &mut [Cost], what: &[Cost]) {
+    for (to, what) in to.iter_mut().zip(what) {
+        *to += what;
     }
-    row.extend(rest.iter().map(|stay| (*stay).min(change)));
-    row
 }
 
-/// Every chord on a root that sounds somewhere, or could stand between two that do.
-fn states(slices: &[Slice]) -> Vec<Chord> {
-    let sounding = slices.iter().flat_map(|s| s.tones.iter().map(|t| t.place));
-    let said = slices.iter().filter_map(|s| Some(s.said?.0.root));
-    let places = sounding.chain(said);
+/// Every chord whose root and third are somewhere heard together, and what is stated.
+fn states(slices: &[Slice], weights: &[Weights<'_>]) -> Vec<Chord> {
+    let places = slices.iter().flat_map(|s| s.tones.iter());
+    let places = places.flat_map(|tone| tone.stands_for.into_iter().chain([tone.place]));
     let (mut low, mut high) = (i32::MAX, i32::MIN);
-    for place in places {
+    let said: Vec<Chord> = slices.iter().filter_map(|s| Some(s.said?.0)).collect();
+    for place in places.chain(said.iter().map(|chord| chord.root)) {
         low = low.min(place);
         high = high.max(place);
     }
-    if low > high {
-        return Vec::new();
-    }
     // Signs beyond double ones are noise.
     let roots = low.max(-15)..=high.min(19);
-    roots
-        .flat_map(|root| Quality::ALL.map(|quality| Chord { root, quality }))
-        .collect()
+    let chords = roots.flat_map(|root| Quality::ALL.map(|quality| Chord { root, quality }));
+    let mut chords: Vec<Chord> = chords.collect();
+    chords.retain(|chord| said.contains(chord) || weights.iter().any(|w| w.has_body(*chord)));
+    chords
 }

@@ -11,6 +11,7 @@ mod segments;
 mod stated;
 mod stretches;
 mod symbol;
+mod weigh;
 
 use std::sync::Arc;
 
