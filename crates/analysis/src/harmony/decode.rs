@@ -5,11 +5,13 @@
 //! much dearer the best other answer is. One more state is no chord at all: where that is nearly
 //! as cheap, no answer is sure.
 
+use std::collections::BTreeSet;
+
 use super::SURE;
 use super::chord::{Chord, Quality};
 use super::keys::{LocalKey, strangeness};
 use super::segments::{Cost, QUARTER, Slice};
-use super::weigh::Weights;
+use super::weigh::{Weights, body};
 
 /// What a sonority costs under no chord, in hundredths of its length.
 const NO_CHORD: Cost = 250;
@@ -211,7 +213,12 @@ fn states(slices: &[Slice], weights: &[Weights<'_>]) -> Vec<Chord> {
     // Signs beyond double ones are noise.
     let roots = low.max(-15)..=high.min(19);
     let chords = roots.flat_map(|root| Quality::ALL.map(|quality| Chord { root, quality }));
+    let heard: BTreeSet<u64> = weights.iter().map(Weights::all_meant).collect();
+    let is_heard = |chord: &Chord| {
+        let body = body(*chord);
+        heard.iter().any(|heard| heard & body == body)
+    };
     let mut chords: Vec<Chord> = chords.collect();
-    chords.retain(|chord| said.contains(chord) || weights.iter().any(|w| w.has_body(*chord)));
+    chords.retain(|chord| said.contains(chord) || is_heard(chord));
     chords
 }

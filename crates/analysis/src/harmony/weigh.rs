@@ -1,7 +1,7 @@
 //! What a chord leaves out and lacks in one sonority.
 
 use super::chord::{Chord, Quality};
-use super::segments::{Cost, Slice, Tone};
+use super::segments::{Cost, Slice};
 
 /// How many notes of a sonority must be of the chord for it to be sure: two fit several chords.
 const ENOUGH: usize = 3;
@@ -18,6 +18,8 @@ pub(super) struct Weights<'a> {
     aside: [Cost; 2 * REACH as usize],
     /// The places that sound, a bit each.
     sounding: u64,
+    /// The places of notes that stand for others, and of those others.
+    stand_ins: Vec<(u64, u64)>,
     /// The place of the lowest note.
     bass: Option<i32>,
 }
@@ -30,6 +32,18 @@ fn bit(place: i32) -> u64 {
         .unwrap_or(0)
 }
 
+/// The places of a chord, a bit each.
+fn places(chord: Chord) -> u64 {
+    let tones = chord.quality.tones().iter();
+    tones.fold(0, |bits, tone| bits | bit(chord.root + tone))
+}
+
+/// The places of its root and third: where they are not heard it is never sure.
+pub(super) fn body(chord: Chord) -> u64 {
+    let tones = chord.quality.tones().iter().take(2);
+    tones.fold(0, |bits, tone| bits | bit(chord.root + tone))
+}
+
 impl<'a> Weights<'a> {
     pub(super) fn of(slice: &'a Slice) -> Weights<'a> {
         let mut weights = Weights {
@@ -37,6 +51,7 @@ impl<'a> Weights<'a> {
             all: 0,
             aside: [0; 2 * REACH as usize],
             sounding: 0,
+            stand_ins: Vec::new(),
             bass: None,
         };
         for tone in &slice.tones {
@@ -49,32 +64,22 @@ impl<'a> Weights<'a> {
             if tone.is_bass {
                 weights.bass = Some(tone.place);
             }
+            if let Some(other) = tone.stands_for {
+                weights.stand_ins.push((bit(tone.place), bit(other)));
+            }
         }
         weights
     }
 
-    /// The places of a chord, a bit each.
-    fn places(chord: Chord) -> u64 {
-        let tones = chord.quality.tones().iter();
-        tones.fold(0, |bits, tone| bits | bit(chord.root + tone))
-    }
-
     /// The chord's places that sound, or are meant by a note that is none of it.
-    fn meant(&self, chord: Chord) -> u64 {
-        let own = Weights::places(chord);
-        let strange = |tone: &&Tone| bit(tone.place) & own == 0;
-        let others = self.slice.tones.iter().filter(strange);
-        let stands_for = others.filter_map(|tone| tone.stands_for);
-        stands_for.fold(self.sounding & own, |bits, place| bits | (bit(place) & own))
+    fn meant(&self, own: u64) -> u64 {
+        let strange = self.stand_ins.iter().filter(|(from, _)| from & own == 0);
+        strange.fold(self.sounding & own, |bits, (_, to)| bits | (to & own))
     }
 
-    /// Its root and third sound or are meant: without them it is never sure.
-    pub(super) fn has_body(&self, chord: Chord) -> bool {
-        let [root, third, ..] = chord.quality.tones() else {
-            return false;
-        };
-        let body = bit(chord.root + root) | bit(chord.root + third);
-        self.meant(chord) & body == body
+    /// All that sounds or may be meant.
+    pub(super) fn all_meant(&self) -> u64 {
+        self.meant(u64::MAX) | self.stand_ins.iter().fold(0, |bits, (_, to)| bits | to)
     }
 
     /// What a chord lacks or leaves out.
@@ -87,7 +92,7 @@ impl<'a> Weights<'a> {
         };
         let missing = [root, 70, 10, 240];
         let bass = [0, 5, 45, 20];
-        let present = self.meant(chord);
+        let present = self.meant(places(chord));
         let mut aside = self.all;
         let mut share = prior(chord.quality);
         let tones = chord.quality.tones().iter().zip(missing).zip(bass);
@@ -110,14 +115,14 @@ impl<'a> Weights<'a> {
 
     /// What of a chord is heard.
     pub(super) fn heard(&self, chord: Chord) -> Heard {
-        let own = Weights::places(chord);
+        let own = places(chord);
         let mut voices = self.slice.tones.iter();
         let enough = voices
             .by_ref()
             .filter(|tone| bit(tone.place) & own != 0)
             .count()
             >= ENOUGH;
-        let meant = self.meant(chord);
+        let meant = self.meant(own);
         let has = |tone: usize| {
             let tone = chord.quality.tones().get(tone);
             tone.is_some_and(|tone| meant & bit(chord.root + tone) != 0)
