@@ -137,7 +137,7 @@ impl State {
 }
 
 /// What speaks for a key in one segment: its chord, how it came, its notes.
-fn cost(state: &State, before: Option<&Reached>, here: &Reached, slices: &[Slice]) -> Cost {
+fn cost(state: &State, before: Option<&Reached>, here: &Reached) -> Cost {
     let key = state.key;
     let chord = here.segment.chord;
     let mut cost = state.strangeness(chord) * here.segment.weight.min(LONGEST) / 100;
@@ -161,11 +161,9 @@ fn cost(state: &State, before: Option<&Reached>, here: &Reached, slices: &[Slice
             cost -= TURN;
         }
     }
-    for slice in slices {
-        let foreign = slice.tones.iter().map(|tone| state.foreign(tone.place));
-        cost += foreign.map(|f| slice.length * f / 100).sum::<Cost>();
-    }
-    cost
+    let foreign = here.notes.iter();
+    let foreign = foreign.map(|(place, length)| length * state.foreign(*place) / 100);
+    cost + foreign.sum::<Cost>()
 }
 
 /// A segment with how it stands.
@@ -173,6 +171,29 @@ struct Reached<'a> {
     segment: &'a Segment,
     in_root_position: bool,
     fermata: bool,
+    /// Its notes by place, and how long each sounds in all voices.
+    notes: Vec<(i32, Cost)>,
+}
+
+impl Reached<'_> {
+    fn of<'a>(segment: &'a Segment, slices: &[Slice]) -> Reached<'a> {
+        let own = slices.get(segment.first..segment.end).unwrap_or_default();
+        let mut notes: Vec<(i32, Cost)> = Vec::new();
+        let mut in_root_position = false;
+        for (slice, tone) in own.iter().flat_map(|s| s.tones.iter().map(move |t| (s, t))) {
+            in_root_position |= tone.is_bass && tone.place == segment.chord.root;
+            match notes.iter_mut().find(|(place, _)| *place == tone.place) {
+                Some((_, length)) => *length += slice.length,
+                None => notes.push((tone.place, slice.length)),
+            }
+        }
+        Reached {
+            segment,
+            in_root_position,
+            fermata: own.iter().any(|slice| slice.fermata),
+            notes,
+        }
+    }
 }
 
 /// The key of each segment of a run of slices, setting out from the stated one where there is one,
@@ -186,19 +207,7 @@ pub(super) fn keys(
     let (Some(low), Some(high)) = (roots().min(), roots().max()) else {
         return Vec::new();
     };
-    let of = |segment: &Segment| slices.get(segment.first..segment.end).unwrap_or_default();
-    let reached: Vec<Reached> = segments
-        .iter()
-        .map(|segment| {
-            let root = segment.chord.root;
-            let mut tones = of(segment).iter().flat_map(|slice| &slice.tones);
-            Reached {
-                segment,
-                in_root_position: tones.any(|tone| tone.is_bass && tone.place == root),
-                fermata: of(segment).iter().any(|slice| slice.fermata),
-            }
-        })
-        .collect();
+    let reached: Vec<Reached> = segments.iter().map(|s| Reached::of(s, slices)).collect();
     let states: Vec<State> = (low - REACH..=high + REACH)
         .flat_map(|tonic| [false, true].map(|minor| LocalKey { tonic, minor }))
         .map(|key| State {
@@ -212,8 +221,7 @@ pub(super) fn keys(
         .filter_map(|i| {
             let here = reached.get(i)?;
             let before = i.checked_sub(1).and_then(|i| reached.get(i));
-            let own = of(here.segment);
-            let costs = states.iter().map(|state| cost(state, before, here, own));
+            let costs = states.iter().map(|state| cost(state, before, here));
             Some(costs.collect())
         })
         .collect();
