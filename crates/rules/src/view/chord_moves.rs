@@ -123,12 +123,12 @@ impl Sounding<'_> {
         let (index, struck) = self.held_note(to)?;
         let second = struck.sound.pitch().filter(|_| struck.onset == onset)?;
         let letter = |note: &Note| note.sound.pitch().filter(|p| p.letter() == second.letter());
-        let beat = self.piece.cell_at(onset).unwrap_or(ZERO);
         let (now, sounding) = self.held_note(from)?;
         if letter(sounding).is_some() {
             return None;
         }
         let notes = &self.piece.score.voices.get(from)?.notes;
+        let beat = self.cell().unwrap_or(ZERO);
         let is_near = |note: &&Note| note.end() == onset || note.onset + beat >= onset;
         let recent = notes.get(..now)?.iter().rev().take_while(is_near);
         let mut unbroken = recent.take_while(|n| n.sound.pitch().is_some() && !n.ends_phrase());

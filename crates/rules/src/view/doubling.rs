@@ -98,7 +98,7 @@ impl<'a> Chord<'a> {
     /// A beat and more of it is left, and no voice is unknown.
     fn lasts_a_beat_from(&self, there: Sounding<'_>) -> bool {
         let known = there.sonority().is_some_and(|s| s.unknown == 0);
-        let cell = self.piece.cell_at(there.onset());
+        let cell = there.cell();
         known && cell.is_some_and(|cell| there.onset() + cell <= self.until())
     }
 
@@ -108,10 +108,14 @@ impl<'a> Chord<'a> {
     #[must_use]
     pub fn doubled(&self, tone: Tone) -> Option<(Sounding<'a>, Vec<Member>)> {
         self.soundings()
-            .filter(|there| !there.is_off_beat() && self.lasts_a_beat_from(*there))
+            .filter(|there| !there.is_off_beat())
             .find_map(|there| {
                 let mut members = self.members(there);
-                members.retain(|member| member.tone == tone && self.is_held_a_beat(member));
+                members.retain(|member| member.tone == tone);
+                if members.len() < 2 || !self.lasts_a_beat_from(there) {
+                    return None;
+                }
+                members.retain(|member| self.is_held_a_beat(member));
                 (members.len() >= 2 && !there.is_in_octave_passage(2)).then_some((there, members))
             })
     }
@@ -162,8 +166,9 @@ impl<'a> Chord<'a> {
 
     /// The voice keeps to this note of the chord for a beat, in whatever octave.
     fn is_held_a_beat(&self, member: &Member) -> bool {
-        let from = self.piece.sounding(member.sonority).onset();
-        let Some(cell) = self.piece.cell_at(from) else {
+        let there = self.piece.sounding(member.sonority);
+        let from = there.onset();
+        let Some(cell) = there.cell() else {
             return false;
         };
         let over = (member.sonority..self.segment.end).map(|k| self.piece.sounding(k));
@@ -318,7 +323,7 @@ impl Sounding<'_> {
     #[must_use]
     pub fn six_four_doubles(self) -> Option<Vec<usize>> {
         let bass = self.bass().filter(|_| self.parts() >= 4)?;
-        let cell = self.piece.cell_at(self.onset())?;
+        let cell = self.cell()?;
         if self.is_off_beat() || self.piece.end_of(self.index) - self.onset() < cell {
             return None;
         }

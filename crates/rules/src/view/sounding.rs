@@ -1,6 +1,6 @@
 //! One sonority, and the step into it.
 
-use partwright_score::{Interval, Note, Pair, Pitch, Sonority, Time, ZERO};
+use partwright_score::{Interval, Metre, Note, Pair, Pitch, Sonority, Time, ZERO};
 use partwright_space::{Family, Motion};
 
 use super::{PairMove, Sounding};
@@ -334,10 +334,7 @@ impl<'a> Sounding<'a> {
         };
         let lasts = self.piece.end_of(self.index) - self.onset();
         texture.sounding(self.index).all(is_perfect)
-            && self
-                .piece
-                .cell_at(self.onset())
-                .is_some_and(|cell| lasts >= cell)
+            && self.cell().is_some_and(|cell| lasts >= cell)
     }
 
     /// Two voices arrive by steps in contrary motion on an octave or a unison, as at a close.
@@ -387,15 +384,23 @@ impl<'a> Sounding<'a> {
         self.sonority().map_or(ZERO, |s| s.onset)
     }
 
+    fn metre(self) -> Option<&'a Metre> {
+        let score = self.piece.score;
+        let bar = score.bars.get(self.sonority()?.bar as usize)?;
+        score.metres.get(bar.metre as usize)
+    }
+
+    /// The length of a beat's cell, in whole notes.
+    #[must_use]
+    pub fn cell(self) -> Option<Time> {
+        Some(self.metre()?.cell())
+    }
+
     /// It begins between beats.
     #[must_use]
     pub fn is_off_beat(self) -> bool {
-        let score = self.piece.score;
-        let beat = self.sonority().and_then(|s| {
-            let bar = score.bars.get(s.bar as usize)?;
-            Some(s.level > score.metres.get(bar.metre as usize)?.beat_level())
-        });
-        beat.unwrap_or(false)
+        let metre = self.sonority().zip(self.metre());
+        metre.is_some_and(|(sonority, metre)| sonority.level > metre.beat_level())
     }
 }
 

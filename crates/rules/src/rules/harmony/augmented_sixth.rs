@@ -70,8 +70,8 @@ static ORDINARY: Case = Case {
 };
 
 fn check(step: &PairMove<'_>, found: &mut Found<'_>) {
-    let opens = step.opens_augmented_sixth_here() || step.may_be_ornament();
-    if !step.leaves_augmented_sixth() || opens {
+    if !step.leaves_augmented_sixth() || step.opens_augmented_sixth_here() || step.may_be_ornament()
+    {
         return;
     }
     found.pair(&ORDINARY, step, || {
