@@ -10,8 +10,8 @@ use std::collections::BTreeSet;
 use super::SURE;
 use super::chord::{Chord, Quality};
 use super::keys::{LocalKey, strangeness};
-use super::segments::{Cost, QUARTER, Slice};
-use super::weigh::{Weights, body};
+use super::slices::{Cost, QUARTER, Slice};
+use super::weigh::{Weights, bodies};
 
 /// What a sonority costs under no chord, in hundredths of its length.
 const NO_CHORD: Cost = 250;
@@ -200,7 +200,7 @@ fn add(to: &mut [Cost], what: &[Cost]) {
     }
 }
 
-/// Every chord whose root and third are somewhere heard together, and what is stated.
+/// Every chord of which enough is somewhere heard together, and what is stated.
 fn states(slices: &[Slice], weights: &[Weights<'_>]) -> Vec<Chord> {
     let places = slices.iter().flat_map(|s| s.tones.iter());
     let places = places.flat_map(|tone| tone.stands_for.into_iter().chain([tone.place]));
@@ -215,8 +215,9 @@ fn states(slices: &[Slice], weights: &[Weights<'_>]) -> Vec<Chord> {
     let chords = roots.flat_map(|root| Quality::ALL.map(|quality| Chord { root, quality }));
     let heard: BTreeSet<u64> = weights.iter().map(Weights::all_meant).collect();
     let is_heard = |chord: &Chord| {
-        let body = body(*chord);
-        heard.iter().any(|heard| heard & body == body)
+        let bodies = bodies(*chord);
+        let mut heard = heard.iter();
+        heard.any(|heard| bodies.iter().any(|body| heard & body == *body))
     };
     let mut chords: Vec<Chord> = chords.collect();
     chords.retain(|chord| said.contains(chord) || is_heard(chord));

@@ -4,7 +4,7 @@ use partwright_score::{Key, Mode, Score};
 
 use super::Segment;
 use super::chord::{Chord, Quality};
-use super::segments::{Cost, QUARTER, Slice};
+use super::slices::{Cost, QUARTER, Slice};
 use crate::mode::{fifths, named};
 
 /// A key by its tonic's place among the fifths.

@@ -3,11 +3,12 @@
 //! Nothing here is taken for truth: each answer says how much dearer the next best would be, and
 //! rules stay silent where that is little.
 
+mod aside;
 mod certainty;
 mod chord;
 mod decode;
 mod keys;
-mod segments;
+mod slices;
 mod stated;
 mod stretches;
 mod symbol;
@@ -21,7 +22,7 @@ use crate::figures::Dissonance;
 
 use decode::{Found, Search};
 use keys::Home;
-use segments::Slice;
+use slices::Slice;
 use stretches::Stretch;
 
 pub use certainty::SURE;
@@ -203,7 +204,6 @@ fn in_keys(found: Vec<Option<Found>>, slices: &[Slice], home: Option<Home>) -> V
 /// Reads a score in one go, however long: what [`Harmony`] must agree with.
 #[must_use]
 pub fn in_one_go(score: &Score, texture: &Texture, dissonances: &[Dissonance]) -> Vec<Segment> {
-    let all = 0..texture.sonorities().len();
-    let slices = segments::slices(score, texture, dissonances, all);
+    let slices = slices::slices(score, texture, dissonances);
     gather(read(&slices, keys::home(score)).into_iter())
 }

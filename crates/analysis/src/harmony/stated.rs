@@ -10,7 +10,7 @@ use partwright_score::{
 
 use super::chord::{Chord, Quality};
 use super::keys::LocalKey;
-use super::segments::Slice;
+use super::slices::Slice;
 use crate::mode;
 
 /// Every chord that is stated, in order of time.
@@ -166,11 +166,13 @@ fn local(key: StatedKey) -> Option<LocalKey> {
     })
 }
 
-/// Sets down in each slice what is stated there, from a sonority on.
-pub(super) fn said(score: &Score, texture: &Texture, from: usize, slices: &mut [Slice]) {
+/// Sets down in each slice what is stated there.
+pub(super) fn said(score: &Score, texture: &Texture, slices: &mut [Slice]) {
     let stated = stated(score, texture);
-    let sonorities = texture.sonorities().iter().skip(from);
-    for (slice, sonority) in slices.iter_mut().zip(sonorities) {
+    if stated.is_empty() {
+        return;
+    }
+    for (slice, sonority) in slices.iter_mut().zip(texture.sonorities()) {
         let before = stated.partition_point(|chord| chord.from <= sonority.onset);
         let chord = before.checked_sub(1).and_then(|i| stated.get(i));
         let chord = chord.filter(|chord| sonority.onset < chord.until);

@@ -11,7 +11,7 @@ use std::sync::Arc;
 use partwright_score::{Score, Texture};
 
 use super::keys::Home;
-use super::segments::{Slice, slices};
+use super::slices::{Slice, slices};
 use super::{Read, SURROUNDINGS, read};
 use crate::figures::Dissonance;
 
@@ -25,7 +25,7 @@ const MOST: usize = 512;
 #[derive(Clone, Debug)]
 pub(super) struct Stretch {
     /// Of its notes and those around it.
-    mark: (u64, u64),
+    mark: u64,
     /// One for each of its sonorities.
     pub read: Vec<Option<Read>>,
 }
@@ -38,11 +38,11 @@ pub(super) fn stretches(
     home: Option<Home>,
     earlier: &[Arc<Stretch>],
 ) -> Vec<Arc<Stretch>> {
-    let known: HashMap<(u64, u64), &Arc<Stretch>> = earlier
+    let known: HashMap<u64, &Arc<Stretch>> = earlier
         .iter()
         .map(|stretch| (stretch.mark, stretch))
         .collect();
-    let all = slices(score, texture, dissonances, 0..texture.sonorities().len());
+    let all = slices(score, texture, dissonances);
     let one = |range: Range<usize>| {
         let from = range.start.saturating_sub(SURROUNDINGS);
         let end = all.len().min(range.end + SURROUNDINGS);
@@ -82,13 +82,10 @@ fn bounds(score: &Score, texture: &Texture) -> Vec<Range<usize>> {
     bounds
 }
 
-/// Two hashes of everything the reading depends on.
-fn mark(around: &[Slice], before: usize, length: usize, home: Option<Home>) -> (u64, u64) {
-    let one = |salt: u8| {
-        let mut hasher = DefaultHasher::new();
-        (salt, before, length, home).hash(&mut hasher);
-        around.hash(&mut hasher);
-        hasher.finish()
-    };
-    (one(0), one(1))
+/// A hash of everything the reading depends on.
+fn mark(around: &[Slice], before: usize, length: usize, home: Option<Home>) -> u64 {
+    let mut hasher = DefaultHasher::new();
+    (before, length, home).hash(&mut hasher);
+    around.hash(&mut hasher);
+    hasher.finish()
 }

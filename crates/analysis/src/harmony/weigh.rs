@@ -1,7 +1,7 @@
 //! What a chord leaves out and lacks in one sonority.
 
 use super::chord::{Chord, Quality};
-use super::segments::{Cost, Slice};
+use super::slices::{Cost, Slice};
 
 /// How many notes of a sonority must be of the chord for it to be sure: two fit several chords.
 const ENOUGH: usize = 3;
@@ -38,10 +38,14 @@ fn places(chord: Chord) -> u64 {
     tones.fold(0, |bits, tone| bits | bit(chord.root + tone))
 }
 
-/// The places of its root and third: where they are not heard it is never sure.
-pub(super) fn body(chord: Chord) -> u64 {
-    let tones = chord.quality.tones().iter().take(2);
-    tones.fold(0, |bits, tone| bits | bit(chord.root + tone))
+/// What must be heard of a chord for it to be tried: root and third; or root and fifth, and the
+/// seventh if it has one.
+pub(super) fn bodies(chord: Chord) -> [u64; 2] {
+    let tone = |index: usize| {
+        let tone = chord.quality.tones().get(index);
+        tone.map_or(0, |tone| bit(chord.root + tone))
+    };
+    [tone(0) | tone(1), tone(0) | tone(2) | tone(3)]
 }
 
 impl<'a> Weights<'a> {
