@@ -9,6 +9,7 @@ pub mod figures;
 pub mod harmony;
 pub mod mode;
 
+use std::ops::Range;
 use std::sync::OnceLock;
 
 use partwright_score::{Score, Texture};
@@ -68,8 +69,16 @@ impl Analysis {
     /// The dissonances that begin at a sonority.
     #[must_use]
     pub fn dissonances_at(&self, sonority: usize) -> &[Dissonance] {
-        let first = self.dissonances.partition_point(|d| d.sonority < sonority);
-        let end = self.dissonances.partition_point(|d| d.sonority <= sonority);
+        self.dissonances_within(sonority..sonority + 1)
+    }
+
+    /// The dissonances that begin in a range of sonorities.
+    #[must_use]
+    pub fn dissonances_within(&self, range: Range<usize>) -> &[Dissonance] {
+        let first = self
+            .dissonances
+            .partition_point(|d| d.sonority < range.start);
+        let end = self.dissonances.partition_point(|d| d.sonority < range.end);
         self.dissonances.get(first..end).unwrap_or_default()
     }
 }

@@ -5,6 +5,7 @@ mod drawn;
 mod filter;
 mod finding;
 pub mod house;
+mod kept;
 mod licence;
 mod place;
 mod run;
@@ -23,6 +24,7 @@ use std::path::PathBuf;
 use std::sync::Arc;
 
 use house::HouseLicence;
+use kept::Kept;
 use partwright_rules::{Piece, Strictness};
 use partwright_score::{Score, Texture};
 use partwright_sheet::{Reading, Sheet};
@@ -120,6 +122,8 @@ pub struct Checked {
     pub strictness: Strictness,
     /// The findings, by place in the score, then by rule.
     pub findings: Vec<Finding>,
+    /// What the next check need not judge again.
+    kept: Kept,
 }
 
 impl Checked {
@@ -134,16 +138,16 @@ impl Checked {
     #[must_use]
     pub fn again(&self, text: &str, wishes: &Wishes) -> Checked {
         let sheet = Sheet::read_again(text, &self.sheet);
-        Checked::of(sheet, text, wishes, Some(&self.analysis))
+        Checked::of(sheet, text, wishes, Some(self))
     }
 
-    fn of(sheet: Sheet, text: &str, wishes: &Wishes, earlier: Option<&Analysis>) -> Checked {
+    fn of(sheet: Sheet, text: &str, wishes: &Wishes, earlier: Option<&Checked>) -> Checked {
         let reading = sheet.lower(text);
         let texture = Texture::of(&reading.score);
         let strictness = wishes.strictness(reading.score.style.as_deref());
         let mut findings = text::findings(&reading, wishes, &strictness);
         let analysis = match earlier {
-            Some(earlier) => Analysis::again(&reading.score, &texture, earlier),
+            Some(earlier) => Analysis::again(&reading.score, &texture, &earlier.analysis),
             None => Analysis::of(&reading.score, &texture),
         };
         let piece = Piece {
@@ -151,7 +155,8 @@ impl Checked {
             texture: &texture,
             analysis: &analysis,
         };
-        let notes = notes_findings(&piece, &strictness);
+        let kept = earlier.map(|earlier| &earlier.kept);
+        let (notes, kept) = run::findings_again(&piece, &strictness, kept);
         findings.extend(notes.into_iter().map(|f| place::in_text(f, &reading)));
         licence::apply_house(&wishes.house_licences(), &reading.score, &mut findings);
         for (id, problem) in licence::apply(&reading, &mut findings) {
@@ -169,6 +174,7 @@ impl Checked {
             analysis,
             strictness,
             findings,
+            kept,
         }
     }
 

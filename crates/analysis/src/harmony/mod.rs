@@ -29,6 +29,7 @@ pub use certainty::SURE;
 pub use chord::{Chord, Quality};
 pub use keys::LocalKey;
 pub use stated::stated;
+pub use stretches::bounds;
 
 /// A run of sonorities under one chord.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]

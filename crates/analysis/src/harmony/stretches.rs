@@ -60,8 +60,9 @@ pub(super) fn stretches(
     bounds(score, texture).into_iter().map(one).collect()
 }
 
-/// The sonorities of each stretch.
-fn bounds(score: &Score, texture: &Texture) -> Vec<Range<usize>> {
+/// The sonorities of each stretch into which a score is divided, so that an edit reaches few.
+#[must_use]
+pub fn bounds(score: &Score, texture: &Texture) -> Vec<Range<usize>> {
     let sonorities = texture.sonorities();
     let mut bounds = Vec::new();
     let mut from = 0;

@@ -1,5 +1,7 @@
 //! A chord as rules see it: as long as it lasts, with what each voice has of it.
 
+use std::ops::Range;
+
 use partwright_analysis::harmony::{LocalKey, Quality};
 use partwright_analysis::mode::{fifths, named};
 use partwright_score::{Pitch, Time};
@@ -57,6 +59,16 @@ impl<'a> Piece<'a> {
             segment,
         };
         segments.iter().enumerate().map(chord)
+    }
+
+    /// The chords that begin in a range of sonorities, sure or not.
+    pub fn chords_within(self, range: Range<usize>) -> impl Iterator<Item = Chord<'a>> {
+        let harmony = self.analysis.harmony(self.score, self.texture);
+        let first = harmony
+            .segments()
+            .partition_point(|s| s.first < range.start);
+        let chords = (first..).map_while(move |index| self.chord(index));
+        chords.take_while(move |chord| chord.segment.first < range.end)
     }
 
     fn chord(self, index: usize) -> Option<Chord<'a>> {
