@@ -34,6 +34,12 @@ fn hold(name: &str, text: &str, wishes: &Wishes) -> (usize, usize) {
         all += 1;
         with += usize::from(!offered.is_empty());
         for mend in &offered {
+            let elsewhere = finding.at.is_some_and(|at| at != mend.at);
+            assert!(
+                !elsewhere || mend.title.contains(" in bar "),
+                "where is it: {}",
+                mend.title
+            );
             let mended = apply(text, &mend.edits(&checked, text));
             let after = Checked::text(&mended, wishes);
             let here = format!(
