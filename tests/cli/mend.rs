@@ -2,6 +2,7 @@
 
 use std::fs;
 use std::io::Write;
+use std::path::Path;
 use std::process::{Command, Stdio};
 
 use crate::support::{CLEAN, FLAWED, Folder, Ran};
@@ -126,15 +127,25 @@ fn notes_move_only_when_asked_and_no_fault_comes_of_it() {
 
 #[test]
 fn the_demo_scores_are_mended_to_the_end() {
-    let root = concat!(env!("CARGO_MANIFEST_DIR"), "/demo-scores");
+    let root = Path::new(concat!(env!("CARGO_MANIFEST_DIR"), "/demo-scores"));
     let folder = Folder::new();
-    for entry in fs::read_dir(root).unwrap() {
-        let path = entry.unwrap().path();
-        let name = path.file_name().unwrap().to_str().unwrap().to_owned();
-        folder.write(&name, &fs::read(&path).unwrap());
-        let before = counts(&folder, &name);
-        assert_eq!(folder.run(&["mend", "--notes", "--write", &name]).status, 0);
-        let after = counts(&folder, &name);
+    let mut sheets = Vec::new();
+    for below in ["", "breakwater-press", "pilot-quartet"] {
+        for entry in fs::read_dir(root.join(below)).unwrap() {
+            let path = entry.unwrap().path();
+            if path.is_file() {
+                let name = path.strip_prefix(root).unwrap().to_str().unwrap();
+                folder.write(name, &fs::read(&path).unwrap());
+                sheets.extend(name.ends_with(".voices").then(|| name.to_owned()));
+            }
+        }
+    }
+    assert!(sheets.len() >= 9);
+    for name in &sheets {
+        let before = counts(&folder, name);
+        let ran = folder.run(&["mend", "--notes", "--write", name]);
+        assert_eq!(ran.status, 0);
+        let after = counts(&folder, name);
         let sums = |counts: [usize; 3]| [counts[0], counts[0] + counts[1], counts.iter().sum()];
         let worse = sums(after)
             .iter()
@@ -142,13 +153,20 @@ fn the_demo_scores_are_mended_to_the_end() {
             .any(|(after, before)| *after > before);
         assert!(!worse, "{name}: {before:?} {after:?}");
         assert_eq!(
-            folder.run(&["mend", "--notes", &name]).out,
+            folder.run(&["mend", "--notes", name]).out,
             "",
             "{name} has settled"
         );
     }
-    let rest = counts(&folder, ".");
-    assert_eq!(rest[0], 0, "no fault is left in them");
+    // In the first draft that the publisher sends back there is a bar to write, two voices have to
+    // change places for longer than a note, and two chords to be written anew.
+    let left = folder.run(&["check", "--report", "json", "."]).findings();
+    let left: Vec<&str> = left
+        .iter()
+        .filter(|finding| finding["severity"] == "fault")
+        .map(|finding| finding["rule"].as_str().unwrap())
+        .collect();
+    assert_eq!(left, ["crossing", "spacing", "unwritten"]);
 }
 
 #[test]

@@ -1,7 +1,8 @@
 //! Expectations drawn under the notes: how rule pages and demo scores state their findings.
 //!
 //! A comment line of carets and words, `//     ^ parallel fifths: S and B`, stands under the row
-//! whose note it means; the severity follows in brackets where it is not a fault.
+//! whose note it means; the severity follows in brackets where it is not a fault, and `licensed`
+//! where a licence lifts it.
 
 use partwright_rules::Severity;
 use partwright_sheet::{Lines, drawn_marks};
@@ -55,6 +56,7 @@ pub fn unlike_drawn(text: &str, checked: &Checked, rule: Option<&str>) -> Vec<St
 fn words(finding: &Finding, checked: &Checked) -> String {
     let name = finding.rule.replace('-', " ");
     let severity = match finding.severity {
+        _ if finding.licence.is_some() => " (licensed)".to_owned(),
         Severity::Fault => String::new(),
         other => format!(" ({other})"),
     };

@@ -303,7 +303,8 @@ fn title(
         .at
         .is_some_and(|at| movable.at < at && finding.until.is_none());
     let place = score.place(movable.at);
-    let what = if earlier {
+    // What is found of a passage or a whole line stands at its beginning: the note may be far on.
+    let what = if finding.at.is_some_and(|at| movable.at != at) {
         format!(
             "Move {name} to {pitch} in bar {}, beat {}",
             place.bar,
