@@ -57,8 +57,8 @@ fn a_client_that_refuses_to_watch_files_keeps_the_settings() {
     let (mut client, files, settings) = asked_for_both();
     client.refuse(&files);
     grant(&mut client, &settings);
-    // Soprano and tenor lie too far apart for a chorale, and for no other style.
-    let text = "S | G5 F |\nA | B4 C5 |\nT | B3 D4 |\nB | B2 C3 |\n";
+    // Alto and tenor lie too far apart for a chorale, and for no other style.
+    let text = "S | G5 F |\nA | B4 C5 |\nT | G3 A3 |\nB | E3 F3 |\n";
     Document::open(&mut client, "file:///a.voices", text);
     until(&mut client, 1);
     let style = json!({ "settings": { "partwright": { "style": "chorale" } } });

@@ -122,13 +122,15 @@ fn check(chord: &Chord<'_>, found: &mut Found<'_>) {
         return;
     }
     let voices: Vec<usize> = there.piece.texture.sounding(there.index).collect();
+    let Some(bass) = there.bass() else { return };
     found.sonority(case, &voices, there.onset(), || {
         format!(
-            "Incomplete chord: {} have no {} of {}, its {}. Give it to a voice that doubles.",
-            there.piece.names(&voices),
-            chord.note_name(tone).unwrap_or_default(),
+            "Incomplete chord: {} over {} in {} is without its {}, {}. Give it to a voice that doubles.",
             chord.name(),
+            there.pitch_text(bass),
+            there.piece.name(bass),
             tone.name(),
+            chord.note_name(tone).unwrap_or_default(),
         )
     });
 }
