@@ -35,7 +35,7 @@ impl Sound {
 }
 
 /// A note, a rest, or a while not written yet.
-#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+#[derive(Clone, Copy, Debug, PartialEq, Eq, Hash)]
 pub struct Note {
     /// Where it begins, in whole notes from the start.
     pub onset: Time,

@@ -75,6 +75,8 @@ struct Read {
 pub struct Harmony {
     stretches: Vec<Arc<Stretch>>,
     segments: Vec<Segment>,
+    /// The segment of each sonority.
+    at: Vec<Option<u32>>,
 }
 
 impl Harmony {
@@ -96,14 +98,17 @@ impl Harmony {
         let earlier = earlier.map_or(&[][..], |earlier| &earlier.stretches);
         let home = keys::home(score);
         let stretches = stretches::stretches(score, texture, dissonances, home, earlier);
-        let segments = gather(
-            stretches
-                .iter()
-                .flat_map(|stretch| stretch.read.iter().copied()),
-        );
+        let reads = stretches.iter().flat_map(|stretch| &stretch.read);
+        let segments = gather(reads.copied());
+        let mut at = vec![None; texture.sonorities().len()];
+        for (index, segment) in (0..).zip(&segments) {
+            let own = at.get_mut(segment.first..segment.end);
+            own.unwrap_or_default().fill(Some(index));
+        }
         Harmony {
             stretches,
             segments,
+            at,
         }
     }
 
@@ -116,10 +121,11 @@ impl Harmony {
     /// The chord of a sonority, by its place among the segments.
     #[must_use]
     pub fn index_at(&self, sonority: usize) -> Option<usize> {
-        let after = self.segments.partition_point(|s| s.first <= sonority);
-        let index = after.checked_sub(1)?;
-        self.segments.get(index).filter(|s| sonority < s.end)?;
-        Some(index)
+        self.at
+            .get(sonority)
+            .copied()
+            .flatten()
+            .map(|at| at as usize)
     }
 
     /// The chord of a sonority.

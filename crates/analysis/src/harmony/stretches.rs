@@ -4,14 +4,15 @@
 //! have changed is not read again.
 
 use std::collections::HashMap;
-use std::hash::{DefaultHasher, Hash, Hasher};
+use std::hash::{BuildHasher, Hash, Hasher};
 use std::ops::Range;
 use std::sync::Arc;
 
 use partwright_score::{Score, Texture};
+use rustc_hash::{FxBuildHasher, FxHasher};
 
 use super::keys::Home;
-use super::slices::{Slice, slices};
+use super::slices::slices;
 use super::{Read, SURROUNDINGS, read};
 use crate::figures::Dissonance;
 
@@ -43,12 +44,17 @@ pub(super) fn stretches(
         .map(|stretch| (stretch.mark, stretch))
         .collect();
     let all = slices(score, texture, dissonances);
+    let marks: Vec<u64> = all
+        .iter()
+        .map(|slice| FxBuildHasher.hash_one(slice))
+        .collect();
     let one = |range: Range<usize>| {
         let from = range.start.saturating_sub(SURROUNDINGS);
         let end = all.len().min(range.end + SURROUNDINGS);
         let around = all.get(from..end).unwrap_or_default();
         let home = home.map(|home| home.at_start(from == 0));
-        let mark = mark(around, range.start - from, range.len(), home);
+        let marks = marks.get(from..end).unwrap_or_default();
+        let mark = mark(marks, range.start - from, range.len(), home);
         if let Some(same) = known.get(&mark) {
             return Arc::clone(same);
         }
@@ -84,8 +90,8 @@ pub fn bounds(score: &Score, texture: &Texture) -> Vec<Range<usize>> {
 }
 
 /// A hash of everything the reading depends on.
-fn mark(around: &[Slice], before: usize, length: usize, home: Option<Home>) -> u64 {
-    let mut hasher = DefaultHasher::new();
+fn mark(around: &[u64], before: usize, length: usize, home: Option<Home>) -> u64 {
+    let mut hasher = FxHasher::default();
     (before, length, home).hash(&mut hasher);
     around.hash(&mut hasher);
     hasher.finish()

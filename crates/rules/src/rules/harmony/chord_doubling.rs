@@ -138,7 +138,7 @@ fn check(chord: &Chord<'_>, found: &mut Found<'_>) {
     let note = doubling.members.first().map(|m| m.pitch.class_name());
     found.sonority(case, &voices, doubling.there.onset(), || {
         format!(
-            "Chord doubling: {} both have {} of {} ({name}). Give one of them another note of the chord{}.",
+            "Chord doubling: {} have {} of {} ({name}). Give one of them another note of the chord{}.",
             doubling.there.piece.names(&voices),
             note.unwrap_or_default(),
             chord.name(),

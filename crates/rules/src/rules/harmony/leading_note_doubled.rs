@@ -113,7 +113,7 @@ fn check(chord: &Chord<'_>, found: &mut Found<'_>) {
     let voices: Vec<usize> = leading.iter().map(|m| m.voice).collect();
     found.sonority(case, &voices, there.onset(), || {
         format!(
-            "Leading note doubled: {} both have {} of {}. Give one of them another note of the chord.",
+            "Leading note doubled: {} have {} of {}. Give one of them another note of the chord.",
             there.piece.names(&voices),
             first.pitch.class_name(),
             chord.name(),

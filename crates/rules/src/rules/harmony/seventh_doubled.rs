@@ -83,7 +83,7 @@ fn check(chord: &Chord<'_>, found: &mut Found<'_>) {
     let voices: Vec<usize> = members.iter().map(|m| m.voice).collect();
     found.sonority(&ORDINARY, &voices, there.onset(), || {
         format!(
-            "Seventh doubled: {} both have {} of {}. Give one of them the root or the fifth.",
+            "Seventh doubled: {} have {} of {}. Give one of them the root or the fifth.",
             there.piece.names(&voices),
             first.pitch.class_name(),
             chord.name(),

@@ -89,7 +89,7 @@ fn check(there: &Sounding<'_>, found: &mut Found<'_>) {
     found.sonority(&ORDINARY, &voices, there.onset(), || {
         let note = voices.first().and_then(|&voice| there.pitch(voice));
         format!(
-            "Six-four doubling: {} both have {}. Let one of them double the bass.",
+            "Six-four doubling: {} have {}. Let one of them double the bass.",
             there.piece.names(&voices),
             note.map(|pitch| pitch.class_name()).unwrap_or_default(),
         )
