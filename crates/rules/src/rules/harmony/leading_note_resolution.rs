@@ -73,7 +73,7 @@ pub const RULE: Rule = Rule {
 
 static OUTER: Case = Case {
     name: "",
-    when: "a dominant goes to its tonic, and the highest or the lowest voice leaves the leading note for another note than the one a semitone above; not down the scale 8-7-6, nor by a chromatic semitone",
+    when: "a dominant goes to its tonic, and the highest or the lowest voice leaves the leading note for another note than the one a semitone above; not down the scale 8-7-6, nor by a chromatic semitone, nor where the dominant only passes between beats or the tonic stands over its fifth",
     settings: &[
         weakness(Style::Free, "instruments may cover it"),
         fault(Style::Chorale, "the outer voices are heard"),
@@ -104,9 +104,13 @@ static DROP: Case = Case {
 };
 
 fn check(chord: &Chord<'_>, found: &mut Found<'_>) {
-    let Some(tonic) = chord.resolves_to() else {
+    let Some(tonic) = chord.resolves_to().filter(|_| chord.is_on_beat()) else {
         return;
     };
+    // Over its fifth the tonic only delays: the dominant goes on in the bass.
+    if tonic.bass_tone() == Some(Tone::Fifth) {
+        return;
+    }
     for leaving in chord.leavings() {
         let resolves = leaving.rises_semitone() || leaving.stays() || leaving.is_chromatic();
         if resolves || !chord.is_leading_note(leaving.from.pitch) || leaving.passes_down() {
