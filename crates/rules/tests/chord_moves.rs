@@ -106,7 +106,18 @@ fn what_a_musician_lets_pass_is_silent() {
             "consonant-fourth",
             "key Eb major\nmetre 4/4\n\nS | G4 F4 Bb4 -.Ab4 | G4 Eb5.D5 B4 - |\nA | Eb4 D4 E4 F4 | D4 G4 F4 - |\nT | Bb3 Bb3 Bb3 C4 | B3 C4 D4 - |\nB | Eb3 Bb3.Ab3 G3 F3 | - Eb3 D3 - |",
         ),
+        (
+            "cross-relation",
+            "key G minor\nmetre 4/4\n\nS | Bb4 C5 Bb4 - | A4 - G4 - |\nA | G4 -.A4 -.G4 - | G4.-.F#4.E4 F#4 D4 - |\nT | B3 C4.Eb4 D4 - | Eb4.C4 A3.-.D4.C4 Bb3 - |\nB | D3 Eb3.C3 G2 Bb2 | C3.A2 D3 G2 - |",
+        ),
     ];
     let loud = places.map(|(rule, music)| told(music, "").contains(&rule).then_some(rule));
-    assert_eq!(loud, [None; 9]);
+    assert_eq!(loud, [None; 10]);
+}
+
+/// Where no key is sure, the key of the chord it goes to tells the leading note.
+#[test]
+fn the_chord_it_goes_to_tells_the_leading_note() {
+    let music = "key C major\nmetre 3/4\n\nS | G4 G4 A4 | B4 G4 - | A4 A4 - |\nA | E4 E4 F#4 | G4.F4 E4 - | F4 - - |\nT | B3 B3 D4 | D4 C4 - | C4 - - |\nB | E3 E3 D3 | G2 C3 - | F3 - - |";
+    assert!(told(music, "").contains(&"leading-note-resolution"));
 }
