@@ -337,18 +337,25 @@ impl<'a> Chord<'a> {
     /// Whether a pitch is the leading note of the chord: the third of a dominant, or the root of a
     /// diminished chord, in the local key; or of one applied to another degree, which a dominant
     /// seventh or a note strange to the key tells, or, where no key is sure, that it goes to a
-    /// minor tonic.
+    /// minor tonic or to the tonic of a sure key.
     #[must_use]
     pub fn is_leading_note(&self, pitch: Pitch) -> bool {
         let Some(tonic) = self.leads_to().filter(|tonic| fifths(pitch) == tonic + 5) else {
             return false;
         };
+        let has_seventh = self.quality() == Quality::DominantSeventh;
         let Some(key) = self.key() else {
-            let minor = |next: Chord<'_>| next.quality().triad() == Quality::Minor;
-            return (self.quality() == Quality::DominantSeventh && self.seventh_is_sure())
-                || self.resolves_to().is_some_and(minor);
+            let tells = |next: Chord<'_>| {
+                next.quality().triad() == Quality::Minor
+                    || next.key().is_some_and(|key| key.tonic == tonic)
+            };
+            return (has_seventh && self.seventh_is_sure())
+                || self.resolves_to().is_some_and(tells);
         };
-        let is_dominant = self.quality() == Quality::DominantSeventh && self.seventh_is_sure();
+        // A seventh strange to the key makes a dominant even in passing: E flat over F in F major.
+        let strange = degree(key, self.segment.chord.root - 2).is_none();
+        let lasts = self.until() - self.onset() >= Time::new(1, 8);
+        let is_dominant = has_seventh && (self.seventh_is_sure() || (strange && lasts));
         key.tonic == tonic || is_dominant || degree(key, fifths(pitch)).is_none()
     }
 }

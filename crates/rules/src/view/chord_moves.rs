@@ -136,7 +136,11 @@ impl Sounding<'_> {
         let first = letter(note).filter(|p| p.sign != second.sign)?;
         let own = &self.piece.score.voices.get(to)?.notes;
         let has_it_too = has_letter(own.get(..index)?, note.onset, second);
-        if has_it_too || self.is_ornament(from, note) || self.is_ornament(to, struck) {
+        if has_it_too
+            || self.is_ornament(from, note)
+            || self.is_ornament(to, struck)
+            || self.turns_back(to, struck)
+        {
             return None;
         }
         Some(CrossRelation {
@@ -145,6 +149,15 @@ impl Sounding<'_> {
             at: note.onset,
             between: note.end() < onset,
         })
+    }
+
+    /// Between beats a voice steps to a note shorter than an eighth and back, as to F# E F#.
+    fn turns_back(self, voice: usize, note: &Note) -> bool {
+        let around = self.steps_around(voice);
+        let is_short = note.length < Time::new(1, 8);
+        self.is_off_beat()
+            && is_short
+            && matches!(around, [Some(-1), Some(1)] | [Some(1), Some(-1)])
     }
 
     /// A figure accounts for a note, or it is strange to the sure chord in which it is struck.

@@ -1,5 +1,6 @@
 //! A dissonance as rules see it.
 
+use partwright_analysis::consonance::over_bass;
 use partwright_analysis::figures::{Held, Near, near_suspension};
 use partwright_analysis::{Dissonance, Figure};
 use partwright_score::{Interval, Note, Pitch, Time, ZERO};
@@ -169,12 +170,25 @@ impl<'a> Discord<'a> {
         self.dissonance.reading.is_none() && self.near_suspension().is_none()
     }
 
-    /// The dissonant note is one of the sure chord.
+    /// The dissonant note is one of the sure chord; or, where none is, what sounds is a whole triad
+    /// or seventh chord, or part of one over its root.
     #[must_use]
     pub fn is_of_chord(&self) -> bool {
         let there = self.sounding();
-        let chord = there.chord();
-        chord.is_some_and(|chord| chord.member(there.index, self.dissonant().0).is_some())
+        let voice = self.dissonant().0;
+        match there.chord() {
+            Some(chord) => chord.member(there.index, voice).is_some(),
+            None => {
+                let bass = there.bass().and_then(|bass| there.pitch(bass));
+                makes_chord(&self.unexplained_pitches(Some(voice)), bass)
+            }
+        }
+    }
+
+    /// The dissonant note is one of the sure chord.
+    #[must_use]
+    pub fn is_of_sure_chord(&self) -> bool {
+        self.sounding().chord().is_some() && self.is_of_chord()
     }
 
     /// No figure accounts for it, the chord is not sure, and can be none.
@@ -189,30 +203,60 @@ impl<'a> Discord<'a> {
     /// No chord of thirds, up to a seventh chord, holds the two notes together with what else sounds
     /// and is no ornament or suspension: neither can belong to the harmony.
     fn fits_no_chord(&self) -> bool {
+        self.sounding().sonority().is_some() && !fits_thirds(&self.unexplained_pitches(None))
+    }
+
+    /// What sounds here and is neither an ornament nor a suspension; and the note of one voice,
+    /// whatever it is.
+    fn unexplained_pitches(&self, with: Option<usize>) -> Vec<Pitch> {
         let there = self.sounding();
         let texture = self.piece.texture;
-        let Some(sonority) = there.sonority() else {
-            return false;
-        };
-        let from = sonority.onset - Time::new(2, 1);
+        let at = there.onset();
+        let list = self.piece.analysis.dissonances();
+        let first = list.partition_point(|d| d.at < at - Time::new(2, 1));
         let explained = |voice: usize| {
-            let note = texture.note(there.index, voice);
-            let list = self.piece.analysis.dissonances();
-            let first = list.partition_point(|d| d.at < from);
-            list.iter()
-                .skip(first)
-                .take_while(|d| d.at <= sonority.onset + Time::new(1, 1))
-                .any(|d| {
+            let Some(note) = texture.note(there.index, voice) else {
+                return false;
+            };
+            let near = list.iter().skip(first);
+            let mut near = near.take_while(|d| d.at <= at + Time::new(1, 1));
+            self.is_suspended((voice, note))
+                || near.any(|d| {
                     d.reading
-                        .is_some_and(|r| r.voice == voice && Some(r.note) == note)
+                        .is_some_and(|r| (r.voice, r.note) == (voice, note))
                 })
         };
-        let pitches: Vec<_> = texture
+        texture
             .sounding(there.index)
-            .filter(|&voice| !explained(voice))
+            .filter(|&voice| with == Some(voice) || !explained(voice))
             .filter_map(|voice| there.pitch(voice))
-            .collect();
-        !fits_thirds(&pitches)
+            .collect()
+    }
+
+    /// The upper note was there before and comes down to its resolution, and is not the one read.
+    #[must_use]
+    pub fn upper_resolves(&self) -> bool {
+        let upper = self.dissonance.upper;
+        upper == self.other()
+            && self
+                .note(upper)
+                .is_some_and(|note| note.onset < self.dissonance.at)
+            && self.resolves_round(upper)
+    }
+
+    /// On a beat, it was there before or is struck again, disagrees with the lowest note, and comes
+    /// down to its resolution: a suspension, though another may fall in with it.
+    fn is_suspended(&self, of: (usize, usize)) -> bool {
+        let there = self.sounding();
+        let held = self.note(of).is_some_and(|note| note.onset < there.onset());
+        let disagrees = there.bass().is_some_and(|bass| {
+            let gap = self.piece.texture.gap(there.index, of.0, bass);
+            gap.is_some_and(|gap| !over_bass(gap))
+        });
+        (held || self.steps_into(of) == Some(0))
+            && !there.is_off_beat()
+            && disagrees
+            && self.resolves_round(of)
     }
 
     /// Both notes are struck where they begin to disagree.
@@ -298,12 +342,30 @@ impl<'a> Discord<'a> {
 
 /// The letters are part of a stack of four thirds, and no letter has two signs.
 fn fits_thirds(pitches: &[Pitch]) -> bool {
+    stacked(pitches).next().is_some()
+}
+
+/// Such a part that has root, third and fifth, or its root in the bass.
+fn makes_chord(pitches: &[Pitch], bass: Option<Pitch>) -> bool {
+    let letters = letters_of(pitches);
+    stacked(pitches).any(|root| {
+        let triad: u8 = (0..3).map(|third| 1 << ((root + 2 * third) % 7)).sum();
+        letters & triad == triad || bass.is_some_and(|bass| usize::from(bass.letter()) == root)
+    })
+}
+
+fn letters_of(pitches: &[Pitch]) -> u8 {
+    pitches.iter().fold(0, |set, p| set | 1 << p.letter())
+}
+
+/// The roots, as letters, of the stacks of four thirds that hold all of the notes.
+fn stacked(pitches: &[Pitch]) -> impl Iterator<Item = usize> + use<> {
     let consistent = pitches.iter().all(|a| {
         pitches
             .iter()
             .all(|b| a.letter() != b.letter() || a.sign == b.sign)
     });
-    let letters: u8 = pitches.iter().fold(0, |set, p| set | 1 << p.letter());
+    let letters = letters_of(pitches);
     let chord = |root: usize| -> u8 { (0..4).map(|third| 1 << ((root + 2 * third) % 7)).sum() };
-    consistent && (0..7).any(|root| letters & !chord(root) == 0)
+    (0..7).filter(move |&root| consistent && letters & !chord(root) == 0)
 }

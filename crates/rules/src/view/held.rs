@@ -208,9 +208,21 @@ impl Discord<'_> {
     /// The two notes disagree for longer than so many quarters.
     #[must_use]
     pub fn is_longer_than(&self, quarters: i32) -> bool {
+        self.lasts() > Time::new(quarters.into(), 4)
+    }
+
+    /// The two notes disagree for longer than a beat, and neither is held through more than that.
+    #[must_use]
+    pub fn is_longer_than_beat(&self) -> bool {
+        let beat = self.piece.cell_at(self.dissonance.at);
+        let other = self.note(self.other()).map_or(ZERO, |note| note.length);
+        let bar = Time::new(1, 1);
+        beat.is_some_and(|beat| self.lasts() > beat) && other <= bar
+    }
+
+    fn lasts(&self) -> Time {
         let end = |of| self.note(of).map_or(ZERO, Note::end);
-        let lasts = end(self.dissonant()).min(end(self.other())) - self.dissonance.at;
-        lasts > Time::new(quarters.into(), 4)
+        end(self.dissonant()).min(end(self.other())) - self.dissonance.at
     }
 
     /// It is an ornament struck where it begins to disagree: neither held over nor a pedal.

@@ -2,7 +2,7 @@
 
 use partwright_analysis::harmony::Quality;
 use partwright_analysis::mode::fifths;
-use partwright_score::{Interval, Note, Pair, Pitch};
+use partwright_score::{Interval, Note, Pair, Pitch, Time};
 use partwright_space::Gap;
 
 use super::{Altered, Chord, Member, PairMove, Piece, Sounding, Tone};
@@ -59,6 +59,16 @@ impl<'a> Chord<'a> {
                 })
             })
             .collect()
+    }
+
+    /// It lasts a quarter, or stands on a beat, or goes on from a chord on its root that does. What
+    /// only passes between beats is no chord that wants to go anywhere.
+    #[must_use]
+    pub fn is_on_beat(&self) -> bool {
+        let mut on_root = std::iter::successors(Some(*self), Chord::before)
+            .take_while(|chord| chord.keeps_root(self));
+        self.until() - self.onset() >= Time::new(1, 4)
+            || on_root.any(|chord| chord.soundings().any(|there| !there.is_off_beat()))
     }
 
     /// It is a seventh chord beyond doubt: the third is heard as well.

@@ -68,6 +68,10 @@ fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
     let Some(Figure::ConsonantFourth) = discord.figure() else {
         return;
     };
+    // The note over it may be the one that is held and resolves.
+    if found.style().has_chords() && discord.upper_resolves() {
+        return;
+    }
     let case = &ORDINARY;
     found.dissonance(case, discord, || {
         format!(

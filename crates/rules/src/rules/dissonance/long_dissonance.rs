@@ -24,6 +24,18 @@
 //! C | C4 - -  - | C4 - - - |
 //! ```
 //!
+//! In a chorale a beat is long enough:
+//!
+//! ```voices
+//! style chorale
+//!
+//! S | C5 - B4 - | C5 - - - | B4 - C5 - |
+//! A | G4 - G4 - | F4 - - - | G4 - G4 - |
+//! //              ^^ long dissonance (weakness): A and B
+//! T | E4 - D4 - | E4 - - - | D4 - E4 - |
+//! B | C3 - G3 - | C3 - - - | G3 - C3 - |
+//! ```
+//!
 //! # Passes
 //!
 //! ```voices
@@ -37,7 +49,7 @@
 //! # Does not apply
 //!
 //! ```voices
-//! style chorale
+//! style free
 //! metre 4/2
 //!
 //! S | E5 - - D5 | - - C5 - |
@@ -53,12 +65,13 @@ use crate::prelude::*;
 /// The rule.
 pub const RULE: Rule = Rule {
     looks: Looks::Dissonances(check),
-    cases: &[&MINIM, &QUARTER],
+    cases: &[&MINIM, &QUARTER, &BEAT],
     numbers: &[&MOST, &MOST_QUARTERS],
     sources: &[
         source::TINCTORIS_GAFFURIUS,
         source::JEPPESEN,
         source::FUX_FIGURES.at("no half passes in third species"),
+        source::CHORALES_READ.at("no ornament of more than a beat but over a held final"),
     ],
 };
 
@@ -94,12 +107,30 @@ static QUARTER: Case = Case {
     ],
 };
 
+static BEAT: Case = Case {
+    name: "beat",
+    when: "longer than a beat, where chords are heard and the sure chord does not have it; not over a bass or under a voice that is held throughout",
+    settings: &[
+        allow(Style::Free, "length is free"),
+        weakness(
+            Style::Chorale,
+            "in 156 chorales 7 last longer, all notes of the chord or over a held final",
+        ),
+    ],
+};
+
 fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
     // A leap to it is told by a rule of its own.
     if !discord.is_struck_ornament() || discord.figure() == Some(Figure::Appoggiatura) {
         return;
     }
     let style = found.style_of(&[discord.dissonant().0]);
+    if style.has_chords() {
+        if discord.is_longer_than_beat() && !discord.is_of_sure_chord() {
+            tell(&BEAT, discord, found);
+        }
+        return;
+    }
     let passes = matches!(discord.figure(), Some(Figure::Passing { accented: false }));
     let (case, most) = if !style.is_species() {
         (&MINIM, found.number(&MOST))
@@ -111,6 +142,10 @@ fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
     if !discord.is_longer_than(most) {
         return;
     }
+    tell(case, discord, found);
+}
+
+fn tell(case: &'static Case, discord: &Discord<'_>, found: &mut Found<'_>) {
     found.dissonance(case, discord, || {
         format!(
             "Long dissonance: {}. Shorten it, or prepare it as a suspension.",

@@ -107,6 +107,10 @@ fn check(discord: &Discord<'_>, found: &mut Found<'_>) {
     let Some((voice, beside)) = discord.resolution_in() else {
         return;
     };
+    // A note of the chord need not resolve.
+    if found.style().has_chords() && discord.is_of_sure_chord() {
+        return;
+    }
     let case = if beside { &BESIDE } else { &OCTAVE };
     found.dissonance(case, discord, || {
         format!(

@@ -68,7 +68,7 @@ pub const RULE: Rule = Rule {
 
 static ORDINARY: Case = Case {
     name: "",
-    when: "two forms of a letter in two voices, one straight after the other, neither an ornament; not where one of the two has both, nor in a melodic minor line, a diminished seventh chord, or the Neapolitan before its dominant",
+    when: "two forms of a letter in two voices, one straight after the other, neither an ornament nor a step and back between beats; not where one of the two has both, nor in a melodic minor line, a diminished seventh chord, or the Neapolitan before its dominant",
     settings: &[
         weakness(Style::Free, "handbooks warn of it (Feezell)"),
         fault(
