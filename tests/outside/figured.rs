@@ -279,7 +279,7 @@ fn the_roots_agree_with_the_figured_bass() {
         println!("figures, margin from {from}: {agree} of {of}");
     }
     println!(
-        "outside: of {} figured moments in {files} files {} have our root, of the surer {} of {}; \
+        "outside: {} figured moments in {files} files: {} have our root, of the surer {} of {}; \
          {} tell no root, {} stand under another bass",
         count.compared, count.agree, count.sure_agree, count.sure, count.no_root, count.other_bass
     );

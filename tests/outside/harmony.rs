@@ -312,7 +312,8 @@ fn the_inferred_harmony_agrees_with_the_analysts() {
     }
     let path = Path::new(env!("CARGO_MANIFEST_DIR")).join("tests/outside/harmony.md");
     let text = page(&places);
-    print!("outside: {text}");
+    print!("{text}");
+    println!("outside: {} moments of analysts", places.len());
     // What was measured may only grow.
     assert_eq!(places.len(), 2378);
     let unsettled = places.iter().filter(|place| !place.is_settled).count();
