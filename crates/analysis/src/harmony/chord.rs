@@ -76,15 +76,6 @@ impl Quality {
         self.tones().len() > 3
     }
 
-    /// An augmented sixth: the root's third or fifth lies flat, as the lower note of that sixth.
-    #[must_use]
-    pub const fn is_augmented_sixth(self) -> bool {
-        matches!(
-            self,
-            Quality::ItalianSixth | Quality::GermanSixth | Quality::FrenchSixth
-        )
-    }
-
     /// The triad in it: what stands under the seventh. The French sixth has none but itself.
     #[must_use]
     pub const fn triad(self) -> Quality {

@@ -283,14 +283,6 @@ impl<'a> Chord<'a> {
         Some((self.last_of(voice)?, next.first_of(voice)?))
     }
 
-    /// The voices that have one of its notes where it is plain.
-    #[must_use]
-    pub fn with_tone(&self, tone: Tone) -> Vec<Member> {
-        let mut members = self.plain().map_or(Vec::new(), |there| self.members(there));
-        members.retain(|member| member.tone == tone);
-        members
-    }
-
     /// The note in the lowest voice where it is plain: the root in root position, the third in
     /// the first inversion.
     #[must_use]

@@ -2,10 +2,10 @@
 
 use partwright_analysis::harmony::Quality;
 use partwright_analysis::mode::fifths;
-use partwright_score::{Interval, Note, Pair, Pitch, Time};
+use partwright_score::{Interval, Note, Pitch, Time};
 use partwright_space::Gap;
 
-use super::{Altered, Chord, Member, PairMove, Piece, Sounding, Tone};
+use super::{Altered, Chord, Member, Piece, Sounding, Tone};
 
 /// One voice going from its last note of a chord to its first of the next, ornaments between left
 /// out; no rest and no end of a phrase lies between.
@@ -317,26 +317,6 @@ impl<'a> Leaving<'a> {
         }
     }
 
-    /// The step of the two voices into the chord reached.
-    #[must_use]
-    pub fn pair_with(&self, other: &Leaving<'_>) -> Option<PairMove<'a>> {
-        let (upper, lower) = (
-            self.voice().min(other.voice()),
-            self.voice().max(other.voice()),
-        );
-        let sounding = self.arrival();
-        let step = self
-            .chord
-            .piece
-            .texture
-            .step(sounding.index, upper, lower)?;
-        Some(PairMove {
-            sounding,
-            pair: Pair { upper, lower },
-            step,
-        })
-    }
-
     /// Where it leaves: the sonority of its last note.
     #[must_use]
     pub fn departure(&self) -> Sounding<'a> {
@@ -438,16 +418,6 @@ impl<'a> Leaving<'a> {
     #[must_use]
     pub fn name(&self) -> std::borrow::Cow<'a, str> {
         self.chord.piece.name(self.voice())
-    }
-
-    /// The note a step under the one it leaves, as the next chord has it: `E`.
-    #[must_use]
-    pub fn resolution_name(&self) -> Option<String> {
-        let tones = [Tone::Root, Tone::Third, Tone::Fifth, Tone::Seventh];
-        let under = (self.from.pitch.letter() + 6) % 7;
-        let letter = *b"CDEFGAB".get(usize::from(under))?;
-        let mut names = tones.into_iter().filter_map(|t| self.next.note_name(t));
-        names.find(|name| name.as_bytes().first() == Some(&letter))
     }
 }
 
